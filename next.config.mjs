@@ -1,0 +1,12 @@
+import { dirname } from "node:path";
+import { fileURLToPath } from "node:url";
+
+/** @type {import('next').NextConfig} */
+const config = {
+  poweredByHeader: false,
+  reactStrictMode: true,
+  turbopack: { root: dirname(fileURLToPath(import.meta.url)) },
+  serverExternalPackages: ["pg", "pg-boss", "@node-rs/argon2", "pino", "sharp"],
+};
+
+export default config;

@@ -1,0 +1,32 @@
+import type { Kysely } from "kysely";
+import type { Database } from "../client";
+
+export interface Organisation {
+  readonly name: string;
+  readonly timeZone: string;
+  readonly currency: string;
+  readonly locale: string;
+  /** ISO weekdays, Monday 1. */
+  readonly workingDays: readonly number[];
+  readonly crewCostMinorPerHour: number;
+  readonly overtimeCostMinorPerHour: number;
+  readonly travelCostMinorPerKm: number;
+  readonly detourFactor: number;
+  readonly roadSpeedKmh: number;
+  readonly travelTableUrl: string | null;
+  readonly mapTileUrl: string | null;
+  readonly isDemonstration: boolean;
+}
+
+/** The organisation of this deployment, or null before it has been set up. */
+export async function findOrganisation(db: Kysely<Database>): Promise<Organisation | null> {
+  const row = await db.selectFrom("organisation").selectAll().executeTakeFirst();
+  return row ? { ...row, detourFactor: Number(row.detourFactor) } : null;
+}
+
+/** @throws Error when the deployment has no organisation yet */
+export async function getOrganisation(db: Kysely<Database>): Promise<Organisation> {
+  const organisation = await findOrganisation(db);
+  if (!organisation) throw new Error("No organisation yet: run `npm run first-administrator`.");
+  return organisation;
+}

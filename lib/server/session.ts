@@ -1,0 +1,51 @@
+import { createHash } from "node:crypto";
+import { redirect } from "next/navigation";
+import { cache } from "react";
+import { findActivePerson } from "@/db/queries/actors";
+import { findUsableApiKey } from "@/db/queries/api-keys";
+import { AppError } from "@/lib/errors";
+import type { Actor, PersonActor, Role } from "@/lib/usecases/use-case";
+import { auth } from "./auth";
+import { deps } from "./deps";
+
+/**
+ * Who is signed in, checked against the database on every request: a token alone
+ * cannot be revoked, so it carries the session version that the person row must still have.
+ */
+export const currentActor = cache(async (): Promise<PersonActor | null> => {
+  const session = await auth();
+  if (!session?.personId) return null;
+  const person = await findActivePerson(deps().db, session.personId);
+  if (!person || person.sessionVersion !== session.sessionVersion) return null;
+  return {
+    kind: "person",
+    personId: person.id,
+    name: person.name,
+    email: person.email,
+    roles: person.roles as Role[],
+    technicianId: person.technicianId,
+  };
+});
+
+/** For pages and actions: sends a visitor to the sign-in page. */
+export async function requireActor(): Promise<PersonActor> {
+  return (await currentActor()) ?? redirect("/sign-in");
+}
+
+/** For routes: an API key in the Authorization header, or the session cookie. */
+export async function actorOfRequest(request: Request): Promise<Actor> {
+  const header = request.headers.get("authorization");
+  if (header) return actorOfKey(header);
+  const person = await currentActor();
+  if (person) return person;
+  const origin = request.headers.get("x-forwarded-for")?.split(",")[0]?.trim() ?? "local";
+  return { kind: "visitor", origin };
+}
+
+async function actorOfKey(header: string): Promise<Actor> {
+  const secret = /^Bearer (\S+)$/.exec(header)?.[1];
+  const hash = secret && createHash("sha256").update(secret).digest("hex");
+  const key = hash ? await findUsableApiKey(deps().db, hash, deps().now()) : null;
+  if (!key) throw new AppError("not_signed_in", "This API key is unknown or was revoked.");
+  return { kind: "api-key", apiKeyId: key.id, scopes: key.scopes };
+}

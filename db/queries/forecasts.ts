@@ -1,4 +1,4 @@
-import type { Kysely, Transaction } from "kysely";
+import { type Kysely, sql, type Transaction } from "kysely";
 import type { Database } from "../client";
 
 /** Marks forecasts as older than what is known; keeps the first moment of staleness. */
@@ -28,3 +28,68 @@ export async function installedPackIds(
     .execute();
   return rows.map((row) => row.id);
 }
+
+export interface ForecastRow {
+  readonly packId: string;
+  readonly p05: Date;
+  readonly p20: Date;
+  readonly p50: Date;
+  readonly p80: Date;
+  readonly p95: Date;
+  readonly cdfDays: number[];
+  readonly shareLeftPermille: number;
+  readonly shareLeftLowPermille: number;
+  readonly shareLeftHighPermille: number;
+  readonly drawUa: number;
+  readonly outNowPermille: number;
+  readonly waitingCostMinorPerWeek: number;
+  readonly basis: Record<string, unknown>;
+  readonly weights: readonly unknown[];
+}
+
+/**
+ * Writes forecasts that rest on what was known at `knownAt`. Whatever was marked stale
+ * after that moment stays stale: its own job is still to come.
+ */
+export async function saveForecasts(
+  db: Kysely<Database>,
+  rows: readonly ForecastRow[],
+  knownAt: Date,
+): Promise<void> {
+  if (rows.length === 0) return;
+  const values = rows.map((row) => ({
+    ...row,
+    computedAt: knownAt,
+    basis: JSON.stringify(row.basis),
+    weights: JSON.stringify(row.weights),
+  }));
+  await db
+    .insertInto("forecast")
+    .values(values)
+    .onConflict((conflict) =>
+      conflict.column("packId").doUpdateSet((eb) => ({
+        ...Object.fromEntries(COLUMNS.map((column) => [column, eb.ref(`excluded.${column}`)])),
+        staleSince: sql<Date | null>`case when forecast.stale_since > ${knownAt}
+          then forecast.stale_since end`,
+      })),
+    )
+    .execute();
+}
+
+const COLUMNS = [
+  "computedAt",
+  "p05",
+  "p20",
+  "p50",
+  "p80",
+  "p95",
+  "cdfDays",
+  "shareLeftPermille",
+  "shareLeftLowPermille",
+  "shareLeftHighPermille",
+  "drawUa",
+  "outNowPermille",
+  "waitingCostMinorPerWeek",
+  "basis",
+  "weights",
+] as const;

@@ -3,6 +3,7 @@ import { connect } from "@/db/client";
 import { type Env, parseEnv } from "@/lib/env";
 import type { Deps } from "@/lib/usecases/use-case";
 import { transactionalJobs } from "./jobs";
+import { resendMailer } from "./mail";
 
 interface Process {
   readonly env: Env;
@@ -20,7 +21,16 @@ function process_(): Process {
 function create(): Process {
   const env = parseEnv(process.env);
   const db = connect(env.DATABASE_URL, { applicationName: "wanewright-web" });
-  return { env, deps: { db, now: currentTime, newId: randomUUID, jobs: transactionalJobs } };
+  return {
+    env,
+    deps: {
+      db,
+      now: currentTime,
+      newId: randomUUID,
+      jobs: transactionalJobs,
+      mailer: resendMailer(env),
+    },
+  };
 }
 
 /** The clock of this process. WANEWRIGHT_NOW fixes it, for tests that need a given day. */

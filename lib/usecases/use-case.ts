@@ -46,6 +46,28 @@ export interface JobQueue {
     options?: EnqueueOptions,
   ): Promise<void>;
 }
+export interface MailMessage {
+  readonly to: string;
+  readonly subject: string;
+  readonly html: string;
+  readonly text: string;
+  readonly attachments: readonly {
+    readonly filename: string;
+    readonly contentType: string;
+    readonly content: string;
+  }[];
+  readonly idempotencyKey: string;
+}
+/** Sends one mail. `retry` says whether another attempt could succeed. */
+export interface Mailer {
+  send(
+    message: MailMessage,
+  ): Promise<
+    | { readonly ok: true; readonly providerId: string }
+    | { readonly ok: false; readonly reason: string; readonly retry: boolean }
+  >;
+}
+
 export type JobName =
   "forecast" | "forecast-all" | "plan" | "mail" | "digests" | "import-check" | "import-apply";
 
@@ -54,6 +76,7 @@ export interface Deps {
   readonly now: () => Date;
   readonly newId: () => string;
   readonly jobs: JobQueue;
+  readonly mailer: Mailer;
 }
 
 export interface Allowed {

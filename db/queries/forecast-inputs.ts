@@ -1,0 +1,100 @@
+import type { Kysely } from "kysely";
+import { sql } from "kysely";
+import type { Database } from "../client";
+
+/** What every forecast of a run shares: few rows, read once. */
+export async function loadForecastCatalogue(db: Kysely<Database>) {
+  const [cellTypes, points, models, states, climates] = await Promise.all([
+    db.selectFrom("cellType").selectAll().execute(),
+    db.selectFrom("capacityPoint").selectAll().execute(),
+    db.selectFrom("deviceModel").select(["id", "cutoffMv", "silenceCostMinorPerHour"]).execute(),
+    db.selectFrom("dutyState").selectAll().orderBy("deviceModelId").orderBy("position").execute(),
+    db.selectFrom("climate").select(["id", "monthlyMeanDc"]).execute(),
+  ]);
+  return { cellTypes, points, models, states, climates };
+}
+export type ForecastCatalogueRows = Awaited<ReturnType<typeof loadForecastCatalogue>>;
+
+/** The installed packs among `packIds` with what bears on their life, one row a pack. */
+export async function loadPacksToForecast(db: Kysely<Database>, packIds: readonly string[]) {
+  return db
+    .selectFrom("pack")
+    .innerJoin("asset", "asset.id", "pack.assetId")
+    .innerJoin("site", "site.id", "asset.siteId")
+    .leftJoin("lot", "lot.id", "pack.lotId")
+    .leftJoinLateral(
+      (eb) =>
+        eb
+          .selectFrom("drawMeasurement")
+          .select(["averageUa", "at"])
+          .whereRef("drawMeasurement.assetId", "=", "asset.id")
+          .orderBy("at", "desc")
+          .limit(1)
+          .as("measured"),
+      (join) => join.onTrue(),
+    )
+    .select([
+      "pack.id as packId",
+      "pack.assetId",
+      "pack.cellTypeId",
+      "pack.series",
+      "pack.parallel",
+      "pack.installedAt",
+      "asset.deviceModelId",
+      "asset.silenceCostMinorPerHour",
+      "asset.lastHeardAt",
+      "site.climateId",
+      "measured.averageUa as measuredAverageUa",
+      sql<string | null>`coalesce(pack.made_on, lot.made_on)`.as("madeOn"),
+    ])
+    .where("pack.id", "in", packIds)
+    .where("pack.removedAt", "is", null)
+    .execute();
+}
+export type PackToForecast = Awaited<ReturnType<typeof loadPacksToForecast>>[number];
+
+/** Voltages of these packs in time order, the latest verdict applied; set-aside ones left out. */
+export async function loadReadingsToForecast(db: Kysely<Database>, packIds: readonly string[]) {
+  return db
+    .selectFrom("reading")
+    .leftJoinLateral(
+      (eb) =>
+        eb
+          .selectFrom("readingVerdict")
+          .select(["verdict", "correctedMv"])
+          .whereRef("readingVerdict.readingId", "=", "reading.id")
+          .orderBy("at", "desc")
+          .limit(1)
+          .as("judged"),
+      (join) => join.onTrue(),
+    )
+    .select([
+      "reading.id",
+      "reading.packId",
+      "reading.at",
+      "reading.kind",
+      "reading.loadUa",
+      "reading.temperatureDc",
+      "reading.accuracyMv",
+      (eb) => eb.fn.coalesce("judged.correctedMv", "reading.millivolts").as("millivolts"),
+    ])
+    .where("reading.packId", "in", packIds)
+    .where((eb) =>
+      eb.or([eb("judged.verdict", "is", null), eb("judged.verdict", "!=", "set_aside")]),
+    )
+    .orderBy("reading.packId")
+    .orderBy("reading.at")
+    .execute();
+}
+export type ReadingToForecast = Awaited<ReturnType<typeof loadReadingsToForecast>>[number];
+
+/** Events on these assets that bear on life: replacements, firmware, stops. */
+export async function loadDeviceEvents(db: Kysely<Database>, assetIds: readonly string[]) {
+  return db
+    .selectFrom("deviceEvent")
+    .select(["assetId", "at", "kind", "lastHeardAt"])
+    .where("assetId", "in", assetIds)
+    .orderBy("at")
+    .execute();
+}
+export type DeviceEventRow = Awaited<ReturnType<typeof loadDeviceEvents>>[number];

@@ -1,0 +1,97 @@
+import { z } from "zod";
+import {
+  loadDeviceEvents,
+  loadForecastCatalogue,
+  loadPacksToForecast,
+  loadReadingsToForecast,
+} from "@/db/queries/forecast-inputs";
+import { type ForecastRow, installedPackIds, saveForecasts } from "@/db/queries/forecasts";
+import { getOrganisation } from "@/db/queries/organisation";
+import { type Forecast, forecastPack } from "@/lib/battery";
+import { fromEpochDays } from "@/lib/units";
+import { waitingCostPerWeek } from "@/lib/planning";
+import {
+  arrangeCatalogue,
+  type ForecastCatalogue,
+  forecastInputOf,
+  groupBy,
+} from "./forecast-input";
+import { type Deps, defineUseCase } from "./use-case";
+
+/** Packs a batch: memory stays flat however large the fleet. */
+const BATCH = 500;
+
+/** Computes and stores the forecasts of these packs, or of every installed pack. */
+export const refreshForecasts = defineUseCase({
+  name: "refresh-forecasts",
+  allow: { system: true },
+  input: z.object({ packIds: z.array(z.uuid()).nullable() }),
+  async run(deps, _actor, { packIds }): Promise<{ refreshed: number }> {
+    const catalogue = arrangeCatalogue(await loadForecastCatalogue(deps.db));
+    const wanted = packIds ?? (await installedPackIds(deps.db, null));
+    let refreshed = 0;
+    for (let from = 0; from < wanted.length; from += BATCH) {
+      refreshed += await refreshBatch(deps, catalogue, wanted.slice(from, from + BATCH));
+    }
+    return { refreshed };
+  },
+});
+
+async function refreshBatch(
+  deps: Deps,
+  catalogue: ForecastCatalogue,
+  packIds: readonly string[],
+): Promise<number> {
+  const knownAt = deps.now();
+  const packs = await loadPacksToForecast(deps.db, packIds);
+  if (packs.length === 0) return 0;
+  const [readings, events] = await Promise.all([
+    loadReadingsToForecast(deps.db, packIds),
+    loadDeviceEvents(
+      deps.db,
+      packs.map((pack) => pack.assetId),
+    ),
+  ]);
+  const readingsOf = groupBy(readings, (row) => row.packId);
+  const eventsOf = groupBy(events, (row) => row.assetId);
+  const rows = packs.map((pack) => {
+    const forecast = forecastPack(
+      forecastInputOf(
+        catalogue,
+        pack,
+        readingsOf.get(pack.packId) ?? [],
+        eventsOf.get(pack.assetId) ?? [],
+        null,
+        knownAt,
+      ),
+    );
+    return rowOf(pack.packId, forecast);
+  });
+  await saveForecasts(deps.db, rows, knownAt);
+  return rows.length;
+}
+
+function rowOf(packId: string, forecast: Forecast): ForecastRow {
+  const { quantiles: q, shareLeft } = forecast;
+  return {
+    packId,
+    p05: fromEpochDays(q.p05),
+    p20: fromEpochDays(q.p20),
+    p50: fromEpochDays(q.p50),
+    p80: fromEpochDays(q.p80),
+    p95: fromEpochDays(q.p95),
+    cdfDays: [...forecast.cdfDays],
+    shareLeftPermille: permille(shareLeft.p50),
+    shareLeftLowPermille: permille(shareLeft.p05),
+    shareLeftHighPermille: permille(shareLeft.p95),
+    drawUa: forecast.drawUa.p50,
+    outNowPermille: permille(forecast.outNow),
+    waitingCostMinorPerWeek: 0,
+    basis: { ...forecast.basis, drawUa: forecast.drawUa },
+    weights: forecast.weights,
+  };
+}
+
+function permille(share: number): number {
+  return Math.round(share * 1000);
+}

@@ -5,7 +5,7 @@ import pg from "pg";
 import type { TestProject } from "vitest/node";
 import { connect } from "@/db/client";
 import { migrateToLatest } from "@/db/migrate";
-import { startQueueSchema } from "./queue-schema";
+import { prepareQueues } from "../../scripts/queue-schema";
 
 declare module "vitest" {
   interface ProvidedContext {
@@ -53,7 +53,7 @@ async function makeTemplate(admin: pg.Client, server: string, template: string):
   const db = connect(url.href, { max: 1, applicationName: "wanewright-template" });
   try {
     await migrateToLatest(db);
-    await startQueueSchema(url.href);
+    await prepareQueues(url.href);
   } finally {
     await db.destroy();
   }

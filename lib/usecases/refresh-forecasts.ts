@@ -9,7 +9,6 @@ import { type ForecastRow, installedPackIds, saveForecasts } from "@/db/queries/
 import { getOrganisation } from "@/db/queries/organisation";
 import { type Forecast, forecastPack } from "@/lib/battery";
 import { fromEpochDays } from "@/lib/units";
-import { waitingCostPerWeek } from "@/lib/planning";
 import {
   arrangeCatalogue,
   type ForecastCatalogue,

@@ -29,6 +29,7 @@ function create(): Process {
       newId: randomUUID,
       jobs: transactionalJobs,
       mailer: resendMailer(env),
+      appUrl: env.APP_URL.replace(/\/+$/, ""),
     },
   };
 }

@@ -1,12 +1,16 @@
 import { createHash } from "node:crypto";
+import { headers } from "next/headers";
 import { redirect } from "next/navigation";
 import { cache } from "react";
 import { findActivePerson } from "@/db/queries/actors";
 import { findUsableApiKey } from "@/db/queries/api-keys";
 import { AppError } from "@/lib/errors";
-import type { Actor, PersonActor, Role } from "@/lib/usecases/use-case";
+import type { Actor, PersonActor, Role, VisitorActor } from "@/lib/usecases/use-case";
 import { auth } from "./auth";
 import { deps } from "./deps";
+import { originOf } from "./origin";
+import { PATH_HEADER } from "./path-header";
+import { safeReturnPath } from "./return-path";
 
 /**
  * Who is signed in, checked against the database on every request: a token alone
@@ -27,19 +31,26 @@ export const currentActor = cache(async (): Promise<PersonActor | null> => {
   };
 });
 
-/** For pages and actions: sends a visitor to the sign-in page. */
+/** For pages: sends a visitor to the sign-in page, and back here afterwards. */
 export async function requireActor(): Promise<PersonActor> {
-  return (await currentActor()) ?? redirect("/sign-in");
+  return (await currentActor()) ?? redirect(await signInPath());
+}
+
+async function signInPath(): Promise<string> {
+  const from = safeReturnPath((await headers()).get(PATH_HEADER));
+  return from === "/" ? "/sign-in" : `/sign-in?from=${encodeURIComponent(from)}`;
+}
+
+/** For the pages and actions that need no sign-in. */
+export async function visitor(): Promise<VisitorActor> {
+  return { kind: "visitor", origin: originOf(await headers()) };
 }
 
 /** For routes: an API key in the Authorization header, or the session cookie. */
 export async function actorOfRequest(request: Request): Promise<Actor> {
   const header = request.headers.get("authorization");
   if (header) return actorOfKey(header);
-  const person = await currentActor();
-  if (person) return person;
-  const origin = request.headers.get("x-forwarded-for")?.split(",")[0]?.trim() ?? "local";
-  return { kind: "visitor", origin };
+  return (await currentActor()) ?? { kind: "visitor", origin: originOf(request.headers) };
 }
 
 async function actorOfKey(header: string): Promise<Actor> {

@@ -77,6 +77,8 @@ export interface Deps {
   readonly newId: () => string;
   readonly jobs: JobQueue;
   readonly mailer: Mailer;
+  /** The address people type, without a slash at its end; links in mails start with it. */
+  readonly appUrl: string;
 }
 
 export interface Allowed {

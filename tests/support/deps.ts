@@ -25,6 +25,7 @@ export function testDeps(db: Kysely<Database>, now = new Date("2026-12-01T09:00:
       clock = next;
     },
     newId: randomUUID,
+    appUrl: "https://wanewright.example",
     jobs: {
       enqueue: async (_db, name, data) => {
         enqueued.push({ name, data });

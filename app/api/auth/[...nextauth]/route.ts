@@ -1,0 +1,3 @@
+import { handlers } from "@/lib/server/auth";
+
+export const { GET, POST } = handlers;

@@ -1,4 +1,5 @@
 import type { ReactNode } from "react";
+import { toneText } from "@/components/charts/tone-class";
 import type { Tone } from "@/lib/present/tone";
 
 export interface FigureProps {
@@ -10,21 +11,13 @@ export interface FigureProps {
   tone?: Tone;
 }
 
-const tones: Record<Tone, string> = {
-  order: "text-ink",
-  soon: "text-honey-ink",
-  out: "text-brick-ink",
-  visit: "text-dusk-ink",
-  quiet: "text-soft",
-};
-
 /** One large serif figure with its label and its range. Use inside FigureRow. */
 export function Figure({ label, value, range, tone = "order" }: FigureProps) {
   return (
     <div className="flex min-w-0 flex-col justify-between gap-0.5 border-rule py-1.5 pr-4 pb-3 not-first:border-l not-first:pl-4">
       <dt className="caps">{label}</dt>
       <dd className="flex flex-wrap items-baseline gap-x-2">
-        <span className={`font-serif text-3xl font-medium tracking-tight ${tones[tone]}`}>
+        <span className={`font-serif text-3xl font-medium tracking-tight ${toneText[tone]}`}>
           {value}
         </span>
         {range && <span className="text-soft">{range}</span>}

@@ -1,0 +1,84 @@
+import { tz } from "@date-fns/tz";
+import { getISOWeek, getISOWeekYear } from "date-fns";
+import { MS_PER_DAY, type IsoDay } from "@/lib/units";
+import { dayNumber, dayOfInstant } from "./calendar-days";
+import { EN_DASH, NBSP, type Presentation } from "./locale";
+
+export interface DayStyle {
+  weekday?: boolean;
+  /** "auto" (the default) writes the year where the day could be mistaken without it. */
+  year?: boolean | "auto";
+  /** For "auto": the day from which it is read. Without it the year is written. */
+  today?: IsoDay;
+}
+
+/** A day and month without a year is plain only within half a year of today. */
+const MISTAKEN_BEYOND_DAYS = 182;
+
+/** A calendar day: "1 Dec", "Tue 1 Dec", "7 Jun 2027" (en-GB), "7. Juni 2027" (de-DE). */
+export function formatDay(day: IsoDay, locale: string, style: DayStyle = {}): string {
+  const { weekday = false, year = "auto", today } = style;
+  const near =
+    today !== undefined && Math.abs(dayNumber(day) - dayNumber(today)) <= MISTAKEN_BEYOND_DAYS;
+  const withYear = year === "auto" ? !near : year;
+  const text = new Intl.DateTimeFormat(locale, {
+    timeZone: "UTC",
+    day: "numeric",
+    month: "short",
+    ...(weekday && { weekday: "short" }),
+    ...(withYear && { year: "numeric" }),
+  }).format(new Date(dayNumber(day) * MS_PER_DAY));
+  // Some versions of the locale data put a comma after the weekday ("Tue, 1 Dec"); we never do.
+  return text.replace(/^(\p{L}+), /u, "$1 ");
+}
+
+/** Likely cut-off and its range as calendar days. */
+export interface CutoffDays {
+  readonly p5: IsoDay;
+  readonly p50: IsoDay;
+  readonly p95: IsoDay;
+}
+
+export interface WindowLabel {
+  readonly from: string;
+  readonly likely: string;
+  readonly to: string;
+  /** "5 Dec – 1 Jan, likely 15 Dec", for reading out and for plain text. */
+  readonly text: string;
+}
+
+/** The cut-off window: from the 5th to the 95th percentile, with the median. */
+export function formatWindow(window: CutoffDays, locale: string, today: IsoDay): WindowLabel {
+  const [from, likely, to] = [window.p5, window.p50, window.p95].map((day) =>
+    formatDay(day, locale, { today }),
+  ) as [string, string, string];
+  return { from, likely, to, text: `${from} ${EN_DASH} ${to}, likely ${likely}` };
+}
+
+/** ISO 8601 week of a calendar day; the week's year may differ from the day's. */
+export function isoWeek(day: IsoDay): { year: number; week: number } {
+  const at = new Date(dayNumber(day) * MS_PER_DAY);
+  const context = { in: tz("UTC") };
+  return { year: getISOWeekYear(at, context), week: getISOWeek(at, context) };
+}
+
+/** "week 49", with the week's year where it is not today's. */
+export function weekLabel(day: IsoDay, today: IsoDay): string {
+  const { year, week } = isoWeek(day);
+  return `week${NBSP}${week}${year === isoWeek(today).year ? "" : ` of ${year}`}`;
+}
+
+/** For the masthead: "Tue 1 Dec 2026 · week 49". */
+export function formatToday(now: Date, { locale, timeZone }: Presentation): string {
+  const today = dayOfInstant(now, timeZone);
+  return `${formatDay(today, locale, { weekday: true, year: true })} · ${weekLabel(today, today)}`;
+}
+
+/** Distance in days in words: "today", "in 3 days", "5 days ago". */
+export function formatDaysAway(day: IsoDay, today: IsoDay): string {
+  const days = dayNumber(day) - dayNumber(today);
+  if (days === 0) return "today";
+  if (days === 1) return "tomorrow";
+  if (days === -1) return "yesterday";
+  return days > 0 ? `in ${days}${NBSP}days` : `${-days}${NBSP}days ago`;
+}

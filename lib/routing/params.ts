@@ -1,0 +1,35 @@
+/** Settings of the search. The defaults were tuned on public instances; see README.md. */
+export interface Params {
+  /** Mean number of stops taken out by a ruin, and the longest string taken from one route. */
+  readonly meanRemoved: number;
+  readonly longestString: number;
+  /** Share of strings that keep a part inside, and the chance to lengthen that part by one. */
+  readonly splitShare: number;
+  readonly splitGrowth: number;
+  /** Share of insertion positions passed over. */
+  readonly blinkShare: number;
+  /** Share of turns that empty a whole route, and that open an empty slot. */
+  readonly closeShare: number;
+  readonly openShare: number;
+  /** Sites left out that each turn tries to bring in. */
+  readonly absentTried: number;
+  /** First and last temperature, as multiples of the start plan's mean price of a leg. */
+  readonly startHeat: number;
+  readonly endHeat: number;
+  /** Turns between two looks at the stop function. */
+  readonly stride: number;
+}
+
+export const DEFAULT_PARAMS: Params = {
+  meanRemoved: 10,
+  longestString: 10,
+  splitShare: 0.5,
+  splitGrowth: 0.5,
+  blinkShare: 0.01,
+  closeShare: 0.02,
+  openShare: 0.03,
+  absentTried: 12,
+  startHeat: 1,
+  endHeat: 0.02,
+  stride: 64,
+};

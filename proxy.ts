@@ -1,6 +1,6 @@
 import { type NextRequest, NextResponse } from "next/server";
 import { env } from "@/lib/server/deps";
-import { contentSecurityPolicy, securityHeaders } from "@/lib/server/headers";
+import { contentSecurityPolicy, isDevelopment, securityHeaders } from "@/lib/server/headers";
 import { PATH_HEADER } from "@/lib/server/path-header";
 import { hasSignedSession, sessionIsSecure } from "@/lib/server/session-cookie";
 import { tileOrigin } from "@/lib/server/tile-origin";
@@ -16,11 +16,10 @@ export async function proxy(request: NextRequest): Promise<NextResponse> {
   const { AUTH_SECRET, APP_URL } = env();
   const secure = sessionIsSecure(APP_URL);
   const nonce = btoa(crypto.randomUUID());
-  const development = process.env.NODE_ENV === "development";
   const policy = contentSecurityPolicy({
     nonce,
     secure,
-    development,
+    development: isDevelopment(),
     tileOrigin: await tileOrigin(),
   });
   const response =

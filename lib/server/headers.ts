@@ -47,3 +47,8 @@ export function securityHeaders(secure: boolean): Record<string, string> {
     ...(secure ? { "Strict-Transport-Security": "max-age=31536000; includeSubDomains" } : {}),
   };
 }
+
+/** Whether this is Next's development server, which needs a laxer policy. */
+export function isDevelopment(): boolean {
+  return process.env.NODE_ENV === "development";
+}

@@ -18,7 +18,9 @@ const MENDS: Record<string, string> = {
 
 interface Outcome {
   readonly ran: readonly string[];
+  /** No organisation yet. */
   readonly empty: boolean;
+  readonly demonstration: boolean;
 }
 
 /** Brings the schema and the job queues up to date. */
@@ -28,8 +30,12 @@ async function migrate(databaseUrl: string): Promise<Outcome> {
     await sql`select 1`.execute(db);
     const ran = await migrateToLatest(db);
     await prepareQueues(databaseUrl);
-    const found = await sql`select 1 from organisation`.execute(db);
-    return { ran, empty: found.rows.length === 0 };
+    const found = await sql<{
+      isDemonstration: boolean;
+    }>`select is_demonstration from organisation`.execute(db);
+    const organisation = found.rows[0];
+    const demonstration = organisation?.isDemonstration ?? false;
+    return { ran, empty: organisation === undefined, demonstration };
   } finally {
     await db.destroy();
   }

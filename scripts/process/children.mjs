@@ -23,12 +23,15 @@ import { Trouble } from "./trouble.mjs";
  * @param {string} options.cwd
  * @param {string} options.log
  * @param {(child: Child, how: string) => void} options.onDeath it ended without being stopped
+ * @param {number} [options.patienceMs] how long it may take to stop
  * @returns {Child}
  */
-export function startChild(name, args, { env, cwd, log, onDeath }) {
+export function startChild(name, args, { env, cwd, log, onDeath, patienceMs }) {
   const file = new RotatingLog(log);
-  const stdio = /** @type {const} */ (["ignore", "pipe", "pipe"]);
-  const child = spawn(process.execPath, args, { cwd, env, stdio, detached: true });
+  const child = spawn(process.execPath, args, {
+    ...{ cwd, env, detached: true },
+    stdio: ["ignore", "pipe", "pipe"],
+  });
   let recent = "";
   let stopping = false;
   let ended = false;
@@ -49,7 +52,7 @@ export function startChild(name, args, { env, cwd, log, onDeath }) {
     ended: () => ended,
     stop: async () => {
       stopping = true;
-      if (pid) await stopGroup(pid);
+      if (pid) await stopGroup(pid, patienceMs);
     },
   };
   /** @param {string} how */

@@ -16,7 +16,7 @@ export function runScript(root, script, args, env) {
  * Brings the schema up to date.
  * @param {string} root
  * @param {NodeJS.ProcessEnv} env
- * @returns {Promise<{ ran: string[], empty: boolean }>} `empty`: no organisation yet
+ * @returns {Promise<{ ran: string[], empty: boolean, demonstration: boolean }>}
  */
 export async function migrate(root, env) {
   const done = await runScript(root, "scripts/migrate.ts", ["--json"], env);

@@ -25,7 +25,7 @@ export function VoltageChart({ model }: { model: VoltageChartModel }) {
         strokeWidth="1.5"
         strokeDasharray="5 3"
       />
-      <text x={plot.left + 4} y={model.cutoffY - 4} className="fill-brick-ink">
+      <text x={plot.right - 4} y={model.cutoffY - 4} textAnchor="end" className="fill-brick-ink">
         {model.cutoffLabel}
       </text>
       {model.installXs.map((x) => (

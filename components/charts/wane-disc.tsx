@@ -39,3 +39,13 @@ export function WaneDisc({ model, size = 20, decorative }: WaneDiscProps) {
     </ChartFrame>
   );
 }
+
+/** The disc with its word: how it stands in tables and lists. */
+export function WaneLabel({ model, size = 20 }: Omit<WaneDiscProps, "decorative">) {
+  return (
+    <span className="inline-flex items-center gap-2 align-middle whitespace-nowrap">
+      <WaneDisc model={model} size={size} decorative />
+      {model.label}
+    </span>
+  );
+}

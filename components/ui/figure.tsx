@@ -14,7 +14,7 @@ export interface FigureProps {
 /** One large serif figure with its label and its range. Use inside FigureRow. */
 export function Figure({ label, value, range, tone = "order" }: FigureProps) {
   return (
-    <div className="flex min-w-0 flex-col justify-between gap-0.5 border-rule py-1.5 pr-4 pb-3 not-first:border-l not-first:pl-4">
+    <div className="flex min-w-0 flex-col justify-between gap-0.5 border-rule py-1.5 pr-4 pb-3 border-l pl-4">
       <dt className="caps">{label}</dt>
       <dd className="flex flex-wrap items-baseline gap-x-2">
         <span className={`font-serif text-3xl font-medium tracking-tight ${toneText[tone]}`}>
@@ -30,9 +30,12 @@ export function Figure({ label, value, range, tone = "order" }: FigureProps) {
 export function FigureRow({ children, actions }: { children: ReactNode; actions?: ReactNode }) {
   return (
     <div className="mb-3.5 flex flex-wrap items-end gap-x-6 border-b border-ink">
-      <dl className="grid min-w-0 flex-1 grid-cols-[repeat(auto-fit,minmax(11.5rem,1fr))]">
-        {children}
-      </dl>
+      {/* Pulled to the left and cut, so that no row of figures begins with a rule. */}
+      <div className="min-w-0 flex-1 overflow-hidden">
+        <dl className="-ml-[1.0625rem] grid grid-cols-[repeat(auto-fit,minmax(9rem,1fr))]">
+          {children}
+        </dl>
+      </div>
       {actions && <div className="flex flex-wrap gap-2 pb-3">{actions}</div>}
     </div>
   );

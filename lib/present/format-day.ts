@@ -49,10 +49,15 @@ export interface WindowLabel {
 
 /** The cut-off window: from the 5th to the 95th percentile, with the median. */
 export function formatWindow(window: CutoffDays, locale: string, today: IsoDay): WindowLabel {
-  const [from, likely, to] = [window.p5, window.p50, window.p95].map((day) =>
-    formatDay(day, locale, { today }),
-  ) as [string, string, string];
+  const to = formatDay(window.p95, locale, { today });
+  const likely = formatDay(window.p50, locale, yearUnlessSameAs(window.p95, window.p50, today));
+  const from = formatDay(window.p5, locale, yearUnlessSameAs(window.p50, window.p5, today));
   return { from, likely, to, text: `${from} ${EN_DASH} ${to}, likely ${likely}` };
+}
+
+/** Within a range the year is written once: a day borrows it from the one that follows. */
+function yearUnlessSameAs(next: IsoDay, day: IsoDay, today: IsoDay): DayStyle {
+  return day.slice(0, 4) === next.slice(0, 4) ? { year: false } : { today };
 }
 
 /** ISO 8601 week of a calendar day; the week's year may differ from the day's. */

@@ -21,7 +21,7 @@ export function xOf(axis: Pick<TimeAxis, "fromDay" | "toDay" | "widthPx">, day: 
   return Math.round(share * axis.widthPx * 10) / 10;
 }
 
-const MIN_TICK_PX = 34;
+const MIN_TICK_PX = 46;
 const LABEL_PX = 40;
 
 export interface TimeAxisInput {

@@ -1,4 +1,4 @@
-import { shareSentence } from "./format-share";
+import { shareLabel, shareSentence } from "./format-share";
 import type { Tone } from "./tone";
 
 /** Radius of the disc in its own units; the component scales it. */
@@ -6,6 +6,8 @@ export const DISC_RADIUS = 10;
 
 export interface WaneDiscModel {
   readonly title: string;
+  /** The word that stands beside the disc: "9 %", "out". */
+  readonly label: string;
   readonly tone: Tone;
   /** "lit": a waning disc. "out": a ring with a cross. "unknown": a dashed ring. */
   readonly state: "lit" | "out" | "unknown";
@@ -24,9 +26,10 @@ export interface WaneDiscInput {
 /** The share of charge left as a waning disc, lit from the left. */
 export function waneDisc({ share, isOut, tone, locale }: WaneDiscInput): WaneDiscModel {
   const title = shareSentence({ share, isOut }, locale);
-  if (isOut) return { title, tone: "out", state: "out", litPath: null };
-  if (share === null) return { title, tone: "quiet", state: "unknown", litPath: null };
-  return { title, tone, state: "lit", litPath: share > 0 ? litPath(share) : null };
+  const words = { title, label: shareLabel({ share, isOut }, locale) };
+  if (isOut) return { ...words, tone: "out", state: "out", litPath: null };
+  if (share === null) return { ...words, tone: "quiet", state: "unknown", litPath: null };
+  return { ...words, tone, state: "lit", litPath: share > 0 ? litPath(share) : null };
 }
 
 /**

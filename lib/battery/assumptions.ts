@@ -1,0 +1,34 @@
+/**
+ * Every spread the forecast assumes, in one place. Shares and factors are one standard
+ * deviation unless they say otherwise. They are priors: readings and the fleet move them.
+ */
+export const ASSUMED = {
+  /** Cell-to-cell and lot-to-lot capacity (5-10 % across brands of LR6 under one load). */
+  capacitySd: 0.08,
+  /** Device draw against its duty cycle. */
+  drawSd: 0.15,
+  /** Wander of ln(draw) in a year, as a random walk. */
+  drawWalkPerYear: 0.1,
+  /** Draw after a firmware or device change, against the duty cycle. */
+  changedDrawSd: 0.35,
+  /** Depth at which a new pack starts, beside shelf ageing. */
+  startDepthSd: 0.01,
+  /** Where on the depth axis the curve of this very pack lies. */
+  curveDepthSd: 0.015,
+  /** Depth at which this very device stops. */
+  endDepthSd: 0.015,
+  /** Internal resistance against the table. */
+  resistanceSd: 0.3,
+  /** Chance that a reading is not of this pack, mistyped, or of another state. */
+  outlierShare: 0.04,
+  /** Instrument accuracy when none is given, mV. */
+  accuracyMv: 10,
+  /** Temperature of a reading when only the month's mean is known, K. */
+  temperatureSdK: 5,
+  /** A Li-SOCl2 pack not loaded on purpose for this long may be passivated, days. */
+  passivationRestDays: 30,
+  /** Readings above this multiple of the fresh resting voltage are impossible. */
+  impossibleShare: 1.25,
+  /** No date lies further ahead of `now` or the installation than this, days. */
+  horizonDays: 40 * 365.2425,
+} as const;

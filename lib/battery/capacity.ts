@@ -1,0 +1,110 @@
+/**
+ * Capacity by table. Between measured currents it is interpolated over log(current), at
+ * each current over cut-off, then over temperature; outside the table the nearest measured
+ * value holds. Nothing is extrapolated, Peukert's law least of all: its exponent is not a
+ * constant of the cell (Linden 4e Fig. 14.17 gives 2.17 to 0.95 over one table).
+ */
+import type { Decicelsius, Microamps, MilliampHours, Millivolts } from "../units";
+import { interpolate } from "../stats/interpolate";
+import { capacityFactor } from "./curves";
+import type { CapacityPoint, CellSpec } from "./pack";
+import { selfDischargeUa } from "./self-discharge";
+
+/** Every point of the table, the rated one included once. */
+export function capacityPoints(cell: CellSpec): readonly CapacityPoint[] {
+  return [...cell.capacityTable, cell.rated];
+}
+
+type Axis = (point: CapacityPoint) => number;
+
+/** Group points by an axis, ascending; the first point of equals wins its place. */
+function groups(points: readonly CapacityPoint[], axis: Axis): [number, CapacityPoint[]][] {
+  const byValue = new Map<number, CapacityPoint[]>();
+  for (const point of points) {
+    const group = byValue.get(axis(point));
+    if (group) group.push(point);
+    else byValue.set(axis(point), [point]);
+  }
+  return [...byValue].sort(([a], [b]) => a - b);
+}
+
+const mean = (points: readonly CapacityPoint[]): number =>
+  points.reduce((sum, p) => sum + p.capacityMah, 0) / points.length;
+
+function overCutoff(points: readonly CapacityPoint[], cutoffMv: Millivolts): number {
+  const steps = groups(points, (p) => p.cutoffMv);
+  return interpolate(
+    steps.map(([mv]) => mv),
+    steps.map(([, same]) => mean(same)),
+    cutoffMv,
+  );
+}
+
+function overCurrent(points: readonly CapacityPoint[], ua: Microamps, cutoffMv: Millivolts) {
+  const steps = groups(points, (p) => Math.log(Math.max(p.currentUa, 1e-3)));
+  return interpolate(
+    steps.map(([log]) => log),
+    steps.map(([, same]) => overCutoff(same, cutoffMv)),
+    Math.log(Math.max(ua, 1e-3)),
+  );
+}
+
+/**
+ * Charge one cell gives at a constant current down to a cut-off at a temperature, mAh.
+ * Where the table holds one temperature only, the chemistry's cold table scales it.
+ */
+export function usableCapacity(
+  cell: CellSpec,
+  currentUa: Microamps,
+  cutoffMv: Millivolts,
+  temperatureDc: Decicelsius,
+  points: readonly CapacityPoint[] = capacityPoints(cell),
+): MilliampHours {
+  const steps = groups(points, (p) => p.temperatureDc);
+  const measured = steps.map(([, same]) => overCurrent(same, currentUa, cutoffMv));
+  if (steps.length > 1) {
+    return interpolate(
+      steps.map(([dc]) => dc),
+      measured,
+      temperatureDc,
+    );
+  }
+  const at = capacityFactor(cell.chemistry, steps[0]![0]);
+  return (measured[0]! * capacityFactor(cell.chemistry, temperatureDc)) / Math.max(at, 0.01);
+}
+
+/**
+ * The same, with the charge that leaked away during each measurement put back, so that
+ * self-discharge can run beside the load as a current s of its own: C (1 + s/I) at each
+ * point. Without this a table that falls at low current would count the leak twice.
+ */
+export function grossCapacity(
+  cell: CellSpec,
+  currentUa: Microamps,
+  cutoffMv: Millivolts,
+  temperatureDc: Decicelsius,
+): MilliampHours {
+  const leakUa = selfDischargeUa(cell.rated.capacityMah, cell.selfDischargePpmPerYear);
+  const restored = capacityPoints(cell).map((p) => ({
+    ...p,
+    capacityMah: p.capacityMah * (1 + leakUa / Math.max(p.currentUa, leakUa, 1e-9)),
+  }));
+  return usableCapacity(cell, currentUa, cutoffMv, temperatureDc, restored);
+}
+
+/** Lowest cut-off of the table: the one on which depth of discharge is measured, mV. */
+export function baseCutoffMv(cell: CellSpec): Millivolts {
+  return cell.capacityTable.reduce((low, p) => Math.min(low, p.cutoffMv), cell.rated.cutoffMv);
+}
+
+/** Hours one cell lasts at a constant current, self-discharge beside the load. */
+export function dischargeHours(
+  cell: CellSpec,
+  currentUa: Microamps,
+  cutoffMv: Millivolts,
+  temperatureDc: Decicelsius,
+): number {
+  const leakUa = selfDischargeUa(cell.rated.capacityMah, cell.selfDischargePpmPerYear);
+  const gross = grossCapacity(cell, currentUa, cutoffMv, temperatureDc);
+  return (gross * 1000) / (currentUa + leakUa);
+}

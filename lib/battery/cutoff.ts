@@ -1,0 +1,87 @@
+/**
+ * End of life: the depth of discharge at which the voltage under the device's peak current
+ * meets the cut-off. The pulse decides it, not the average; cold raises the resistance and
+ * so brings the end forward.
+ */
+import type { Decicelsius, Microamps, Millivolts } from "../units";
+import { CURVE_STEPS, atDepth, elementsOf, resistanceFactor, sampledCurves } from "./curves";
+import { CURVES } from "./curve-tables";
+import type { PackSpec } from "./pack";
+
+/** Voltage of a whole pack: k rest(x) + drift(T) - I R(x) factor(T). */
+export interface PackCurve {
+  readonly restMv: Float64Array;
+  readonly resistance: Float64Array;
+  /** Elements in series: millivolts of the pack per millivolt of the element. */
+  readonly restScale: number;
+  readonly driftMvPerKelvin: number;
+  /** Resistance of the fresh pack at 20 °C, milliohms. */
+  readonly freshMohm: number;
+}
+
+export function packCurve(pack: PackSpec): PackCurve {
+  const restScale = pack.series * elementsOf(pack.cell);
+  return {
+    ...sampledCurves(pack.cell.chemistry),
+    restScale,
+    driftMvPerKelvin: restScale * CURVES[pack.cell.chemistry].restMvPerKelvin,
+    freshMohm: (pack.cell.resistanceMohm * pack.series) / pack.parallel,
+  };
+}
+
+/** Fall of the fresh pack's voltage under a current at a temperature, mV. */
+export function freshDropMv(
+  pack: PackSpec,
+  curve: PackCurve,
+  currentUa: Microamps,
+  temperatureDc: Decicelsius,
+): Millivolts {
+  // microamps times milliohms are nanovolts
+  return (currentUa * curve.freshMohm * resistanceFactor(pack.cell.chemistry, temperatureDc)) / 1e6;
+}
+
+/** Voltage of the pack at a depth under a current, mV; current 0 is at rest. */
+export function packMv(
+  pack: PackSpec,
+  curve: PackCurve,
+  depth: number,
+  currentUa: Microamps,
+  temperatureDc: Decicelsius,
+): Millivolts {
+  const rest = curve.restScale * atDepth(curve.restMv, depth);
+  const drift = curve.driftMvPerKelvin * (temperatureDc / 10 - 20);
+  const drop = freshDropMv(pack, curve, currentUa, temperatureDc);
+  return rest + drift - drop * atDepth(curve.resistance, depth);
+}
+
+/**
+ * First depth, 0..1, at which `k rest + drift - drop R` is at or below the cut-off; 1 when
+ * it holds to the end of the table; 0 when even the fresh pack is below.
+ */
+export function endDepth(
+  curve: PackCurve,
+  cutoffMv: Millivolts,
+  driftMv: Millivolts,
+  dropMv: Millivolts,
+): number {
+  const { restMv, resistance, restScale } = curve;
+  let before = restScale * restMv[0]! + driftMv - dropMv * resistance[0]! - cutoffMv;
+  if (!(before > 0)) return 0;
+  for (let i = 1; i <= CURVE_STEPS; i++) {
+    const after = restScale * restMv[i]! + driftMv - dropMv * resistance[i]! - cutoffMv;
+    if (after <= 0) return (i - 1 + before / (before - after)) / CURVE_STEPS;
+    before = after;
+  }
+  return 1;
+}
+
+/** End depth of a pack under a current at a temperature. */
+export function packEndDepth(
+  pack: PackSpec,
+  currentUa: Microamps,
+  temperatureDc: Decicelsius,
+): number {
+  const curve = packCurve(pack);
+  const drift = curve.driftMvPerKelvin * (temperatureDc / 10 - 20);
+  return endDepth(curve, pack.cutoffMv, drift, freshDropMv(pack, curve, currentUa, temperatureDc));
+}

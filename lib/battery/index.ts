@@ -1,0 +1,23 @@
+/** The battery core's public face. Everything else in this folder may change freely. */
+export type {
+  CapacityPoint,
+  CellSpec,
+  Chemistry,
+  DutyState,
+  FleetPrior,
+  Forecast,
+  ForecastInput,
+  PackEvent,
+  PackReading,
+  PackSpec,
+  ReadingWeight,
+} from "./pack";
+export { CHEMISTRIES } from "./pack";
+export { averageUa, holdUpCapacitorUf, packAverageUa, packPeakUa, peakUa } from "./duty";
+export { dischargeHours, usableCapacity } from "./capacity";
+export { resistanceMohm, restingMv } from "./curves";
+export { packEndDepth } from "./cutoff";
+export { ageing, equivalentCelsius, selfDischargeUa, tenDegreeFactor } from "./self-discharge";
+export { CDF_PROBABILITIES, chanceOutBy, forecastPack } from "./forecast";
+export { type ExpectedVoltage, type VoltageQuery, expectedVoltage } from "./voltage-band";
+export { forecastFaults } from "./validate";

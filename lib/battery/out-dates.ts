@@ -1,0 +1,145 @@
+/**
+ * From the filter's grid to the dates on which the device stops. Each grid cell has a time
+ * left at its own rate; these are collected on an even axis, widened by what the draw may
+ * still do, carried through the seasons (a cold month stops a pack that a warm one would
+ * still run) and cut to what is known (alive then, found stopped then).
+ */
+import { gridQuantile } from "../stats/grid-quantile";
+import type { EpochDays } from "../units";
+import { ASSUMED } from "./assumptions";
+import { DAYS_PER_YEAR } from "./climate";
+import type { Filtered } from "./filter";
+import { seasonalClock } from "./season-clock";
+
+const BINS = 400;
+const IGNORED = 1e-8;
+/** Slower than this a pack outlasts every horizon; keeps idle packs finite. */
+const SLOWEST_PER_DAY = 1 / (4 * ASSUMED.horizonDays);
+const LONGEST_DAYS = 4 * ASSUMED.horizonDays;
+/** Nodes and weights of a 7-point normal: equal spacing, moments 0..2 exact to 1 %. */
+const SPREAD_Z = [-2.4, -1.6, -0.8, 0, 0.8, 1.6, 2.4] as const;
+const SPREAD_W = [0.018, 0.0892, 0.2328, 0.32, 0.2328, 0.0892, 0.018] as const;
+/** When the evidence leaves no mass at all, the stop is put into this many days. */
+const FALLBACK_DAYS = 30;
+
+/** Mass over days left, counted from `at` on a clock of mean consumption. */
+interface TimeLeft {
+  readonly mass: Float64Array;
+  readonly from: number;
+  readonly step: number;
+  /** Mean total share consumed per day. */
+  readonly ratePerDay: number;
+}
+
+export interface OutDates {
+  /** Day by which the device has stopped with this probability. */
+  quantile(probability: number): EpochDays;
+  /** Probability of having stopped by `now`. */
+  readonly outNow: number;
+}
+
+/** Distribution of the day the device stops. */
+export function outDates(filtered: Filtered, now: EpochDays): OutDates {
+  const { model, at, aliveAt, stoppedAt } = filtered;
+  const left = widen(collect(filtered), model.endSd);
+  const clock = seasonalClock(model, at, left.ratePerDay);
+  const earliest = model.pack.installedAt;
+  const latest = Math.max(now, earliest) + ASSUMED.horizonDays;
+  const below = aliveAt === null ? 0 : massBelow(left, aliveAt - at);
+  const above = stoppedAt === null ? 1 : massBelow(left, stoppedAt - at);
+  const quantile = (probability: number): EpochDays => {
+    if (!(above - below > 1e-9)) return fallback(probability, aliveAt, stoppedAt, at);
+    const days = gridQuantile(
+      left.mass,
+      left.from,
+      left.step,
+      below + probability * (above - below),
+    );
+    const day = clock.dateOf(days);
+    return Math.min(stoppedAt ?? latest, Math.max(aliveAt ?? earliest, day));
+  };
+  if (stoppedAt !== null) return { quantile, outNow: 1 };
+  const gone = massBelow(left, clock.reachedAt(now));
+  const outNow = above - below > 1e-9 ? Math.max(0, gone - below) / (above - below) : 0;
+  return { quantile, outNow: Math.min(1, outNow) };
+}
+
+function fallback(
+  probability: number,
+  aliveAt: EpochDays | null,
+  stoppedAt: EpochDays | null,
+  at: EpochDays,
+): EpochDays {
+  const from = aliveAt ?? (stoppedAt ?? at) - FALLBACK_DAYS;
+  const to = stoppedAt ?? from + FALLBACK_DAYS;
+  return from + probability * (to - from);
+}
+
+function massBelow(left: TimeLeft, days: number): number {
+  const place = (days - left.from) / left.step + 0.5;
+  if (!(place > 0)) return 0;
+  const whole = Math.min(left.mass.length, Math.floor(place));
+  let sum = 0;
+  for (let i = 0; i < whole; i++) sum += left.mass[i]!;
+  if (whole < left.mass.length) sum += (place - whole) * left.mass[whole]!;
+  return Math.min(1, sum);
+}
+
+/** Days left of every grid cell, (end - depth) / rate, as a histogram. */
+function collect({ model, grid }: Filtered): TimeLeft {
+  const leak = model.leakPerDay * model.ageing.meanFactor;
+  const perDay = grid.rate.map((rate) => Math.max(SLOWEST_PER_DAY, model.drawPerDay * rate + leak));
+  const joint = new Float64Array(grid.nr * grid.nx);
+  for (let k = 0; k < grid.p.length; k++) joint[k % joint.length]! += grid.p[k]!;
+  const days = new Float64Array(joint.length);
+  let from = Infinity;
+  let to = -Infinity;
+  let meanRate = 0;
+  for (let k = 0; k < joint.length; k++) {
+    const rate = perDay[Math.floor(k / grid.nx)]!;
+    const room = model.endWarm - (grid.depthFrom + (k % grid.nx) * grid.depthStep);
+    days[k] = Math.max(-LONGEST_DAYS, Math.min(LONGEST_DAYS, room / rate));
+    meanRate += joint[k]! * rate;
+    if (joint[k]! < IGNORED) continue;
+    from = Math.min(from, days[k]!);
+    to = Math.max(to, days[k]!);
+  }
+  const step = Math.max((to - from) / (BINS - 1), 1e-3);
+  const mass = new Float64Array(BINS);
+  for (let k = 0; k < joint.length; k++) deposit(mass, (days[k]! - from) / step, joint[k]!);
+  return { mass, from, step, ratePerDay: meanRate };
+}
+
+/** Split a mass between the two nearest bins; beyond the ends it goes to the last. */
+function deposit(mass: Float64Array, place: number, amount: number): void {
+  if (amount === 0) return;
+  const inside = Math.min(mass.length - 1, Math.max(0, place));
+  const low = Math.min(mass.length - 2, Math.floor(inside));
+  mass[low]! += amount * (1 - (inside - low));
+  mass[low + 1]! += amount * (inside - low);
+}
+
+/**
+ * Widen by the draw's walk still to come (the mean of a random walk over T has variance
+ * T/3 of its yearly one) and by the unknown depth at which this device stops.
+ */
+function widen(left: TimeLeft, endSd: number): TimeLeft {
+  const endDays = endSd / left.ratePerDay;
+  const spread = (t: number): number => {
+    const walk = t > 0 ? ASSUMED.drawWalkPerYear * Math.sqrt(t / DAYS_PER_YEAR / 3) * t : 0;
+    return Math.hypot(Math.min(walk, 0.4 * t), endDays);
+  };
+  const last = left.from + left.step * (BINS - 1);
+  const from = left.from - 2.4 * endDays;
+  const step = (last + 2.4 * spread(last) - from) / (BINS - 1);
+  const mass = new Float64Array(BINS);
+  for (let i = 0; i < BINS; i++) {
+    if (left.mass[i] === 0) continue;
+    const t = left.from + i * left.step;
+    const sd = spread(t);
+    for (let z = 0; z < SPREAD_Z.length; z++) {
+      deposit(mass, (t + SPREAD_Z[z]! * sd - from) / step, left.mass[i]! * SPREAD_W[z]!);
+    }
+  }
+  return { mass, from, step, ratePerDay: left.ratePerDay };
+}

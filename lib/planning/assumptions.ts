@@ -1,0 +1,20 @@
+/** Figures that the organisation is not asked for; each says where it comes from. */
+
+/** Getting out of the van, signing the book, walking to the gate. Common practice, no source. */
+export const ARRIVAL_S = 300;
+/** Loading the van and reading the sheet before a round. Common practice, no source. */
+export const LOADING_S = 900;
+/** How far a return may lie beyond the shift's end. Common practice, no source. */
+export const OVERTIME_S = 1800;
+/** Stops of a usual round, for the share of a drive that a later visit would pay. */
+export const STOPS_OF_A_ROUND = 8;
+/** Hours until an urgent trip reaches a site, silence running meanwhile. */
+export const URGENT_RESPONSE_H = 24;
+/** What an urgent trip costs beside its own drive and work: a planned round is torn up. */
+export const URGENT_DISRUPTION_H = 1;
+/** How far ahead a later visit is looked for. */
+export const LATER_DAYS = 900;
+/** Visit, drive and overtime are priced in thousandths of a minor unit: rounding stays unseen. */
+export const COST_UNITS_A_MINOR = 1000;
+/** A changed day or technician of a published visit: a message, a phone call. */
+export const CHANGE_MINOR = { day: 600, technician: 300, drop: 600 } as const;

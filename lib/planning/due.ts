@@ -1,0 +1,123 @@
+/**
+ * Which packs a visit to a site would swap: those that are due, and near-due ones where doing
+ * them on the way is cheaper than a trip of their own later.
+ */
+import type { Minor } from "@/lib/units";
+import { daysBetween } from "./local-time";
+import type { PlannedTask, PlanningSite } from "./fleet";
+import { expectation } from "./life";
+import type { PackOutlook } from "./outlook";
+
+/** Later visits within so many days of each other would be one trip. Common practice, no source. */
+const ONE_TRIP_DAYS = 28;
+/** A voltage is worth taking where the pack is due within so many days ... */
+const READ_WITHIN_DAYS = 400;
+/** ... and its spread (p95 − p05) is at least this share of the time left. */
+const READ_SPREAD = 0.6;
+
+export interface DueSite {
+  readonly site: PlanningSite;
+  readonly outlooks: readonly PackOutlook[];
+  /** Outlooks of the packs that the visit would swap. */
+  readonly swaps: readonly PackOutlook[];
+  readonly tasks: readonly PlannedTask[];
+  /** Due or near packs without a swap, because there are not enough cells. */
+  readonly withoutCells: readonly PackOutlook[];
+  /** Trips that the visit saves later. */
+  readonly laterTrips: number;
+}
+
+/** Groups outlooks whose best later visits lie close together. */
+function laterGroups(outlooks: readonly PackOutlook[]): PackOutlook[][] {
+  const sorted = [...outlooks].sort((a, b) => (a.later.day < b.later.day ? -1 : 1));
+  const groups: PackOutlook[][] = [];
+  for (const outlook of sorted) {
+    const group = groups.at(-1);
+    const last = group?.at(-1);
+    if (group && last && daysBetween(last.later.day, outlook.later.day) <= ONE_TRIP_DAYS) {
+      group.push(outlook);
+    } else groups.push([outlook]);
+  }
+  return groups;
+}
+
+/** Packs worth swapping in one visit: all due ones, and near ones by groups that save a trip. */
+export function worthSwapping(
+  outlooks: readonly PackOutlook[],
+  tripShareMinor: Minor,
+): PackOutlook[] {
+  const due = outlooks.filter((outlook) => outlook.standing === "due");
+  const near = laterGroups(outlooks.filter((outlook) => outlook.standing === "near"));
+  const joining = near.filter(
+    (group) => group.reduce((sum, o) => sum + o.gainMinor, tripShareMinor) > 0,
+  );
+  return [...due, ...joining.flat()];
+}
+
+/** Trips that visiting now saves later. */
+export function tripsSaved(swaps: readonly PackOutlook[]): number {
+  return laterGroups(swaps).length;
+}
+
+function worthReading({ pack }: PackOutlook, now: number): boolean {
+  const left = expectation(pack.life, (t) => Math.max(0, t - now));
+  const low = pack.life[Math.floor(pack.life.length * 0.05)]!;
+  const high = pack.life[Math.floor(pack.life.length * 0.95)]!;
+  return left <= READ_WITHIN_DAYS && high - low >= READ_SPREAD * left;
+}
+
+export function swapTask({ pack }: PackOutlook): PlannedTask {
+  const { assetId, packId, cellTypeId, cells } = pack;
+  return { kind: "swap", assetId, packId, cellTypeId, cells };
+}
+
+function readTask({ pack }: PackOutlook): PlannedTask {
+  const { assetId, packId } = pack;
+  return { kind: "read", assetId, packId, cellTypeId: null, cells: 0 };
+}
+
+/** Cells that may still be given out, by cell type; types that are missing have none. */
+export type CellsOnHand = ReadonlyMap<string, number>;
+
+/** Gives cells to the most urgent packs first. @returns packs that get none */
+function rationCells(wanted: readonly PackOutlook[], onHand: CellsOnHand): Set<PackOutlook> {
+  const left = new Map(onHand);
+  const without = new Set<PackOutlook>();
+  for (const outlook of [...wanted].sort((a, b) => b.gainMinor - a.gainMinor)) {
+    const { cellTypeId, cells } = outlook.pack;
+    const have = left.get(cellTypeId) ?? 0;
+    if (have < cells) without.add(outlook);
+    else left.set(cellTypeId, have - cells);
+  }
+  return without;
+}
+
+export interface SiteOutlooks {
+  readonly site: PlanningSite;
+  readonly outlooks: readonly PackOutlook[];
+  readonly tripShareMinor: Minor;
+}
+
+/**
+ * The sites that may go into a plan, with the work that a visit would do there. Cells go to the
+ * packs that lose most by waiting.
+ */
+export function dueSites(sites: readonly SiteOutlooks[], onHand: CellsOnHand, now: number) {
+  const wanted = sites.map((s) => worthSwapping(s.outlooks, s.tripShareMinor));
+  const without = rationCells(wanted.flat(), onHand);
+  return sites.flatMap(({ site, outlooks }, i): DueSite[] => {
+    if (wanted[i]!.length === 0) return [];
+    const swaps = wanted[i]!.filter((outlook) => !without.has(outlook));
+    const stays = outlooks.filter((outlook) => !swaps.includes(outlook));
+    const reads = swaps.length > 0 ? stays.filter((o) => worthReading(o, now)) : [];
+    const due: DueSite = {
+      site,
+      outlooks,
+      swaps,
+      tasks: [...swaps.map(swapTask), ...reads.map(readTask)],
+      withoutCells: wanted[i]!.filter((outlook) => without.has(outlook)),
+      laterTrips: tripsSaved(swaps),
+    };
+    return [due];
+  });
+}

@@ -1,0 +1,178 @@
+/** What a plan leaves out, and why, in words. */
+import type { IsoDay, Minor } from "@/lib/units";
+import { whyLeftOut } from "../routing/evaluate";
+import type { Routes } from "../routing/problem";
+import type { RefusalCode } from "../routing/schedule";
+import type { DueSite } from "./due";
+import { addDays, daysBetween, localDay } from "./local-time";
+import type { PackOutlook } from "./outlook";
+import type { RoundsProblem } from "./problem";
+import { ticketWords } from "./refusal-words";
+import { closureOn } from "./site-days";
+import { greatCircleM } from "./travel";
+import type { Visit } from "./visit";
+
+export type LeftOutReason =
+  | "cheaper_later"
+  | "notice"
+  | "closed"
+  | "no_ticket"
+  | "no_cells"
+  | "no_time"
+  | "too_far"
+  | "excluded";
+
+export interface LeftOut {
+  readonly assetId: string;
+  readonly packId: string;
+  readonly reason: LeftOutReason;
+  /** Words without a date; the earliest day is beside them. */
+  readonly detail: string;
+  readonly earliestDay: IsoDay | null;
+  readonly waitingMinorPerWeek: Minor;
+}
+
+/** Sites whose next visit may be one trip: within this distance and time. No source. */
+const NEIGHBOUR_M = 2500;
+const NEIGHBOUR_DAYS = 28;
+
+interface Why {
+  readonly reason: LeftOutReason;
+  readonly detail: string;
+  readonly earliestDay: IsoDay | null;
+}
+
+function firstOpenDay(visit: Visit, after: IsoDay): IsoDay | null {
+  for (let ahead = 1; ahead <= 366; ahead++) {
+    const day = addDays(after, ahead);
+    if (!closureOn(visit.site.closures, day)) return day;
+  }
+  return null;
+}
+
+function ofNotice(visit: Visit, today: IsoDay): Why {
+  const { noticeDays } = visit.site;
+  const days = noticeDays === 1 ? "1 day's" : `${noticeDays} days'`;
+  return {
+    reason: "notice",
+    detail: `needs ${days} notice`,
+    earliestDay: addDays(today, noticeDays),
+  };
+}
+
+function ofClosure(visit: Visit, rounds: RoundsProblem): Why {
+  const season = closureOn(visit.site.closures, rounds.frame.firstDay);
+  const because = season?.reason ? `: ${season.reason}` : "";
+  return {
+    reason: "closed",
+    detail: `closed on every working day of this plan${because}`,
+    earliestDay: firstOpenDay(visit, rounds.frame.lastDay),
+  };
+}
+
+function neighboursOf(visit: Visit, day: IsoDay, others: readonly Visit[]): number {
+  return others.filter(
+    (other) =>
+      other !== visit &&
+      greatCircleM(visit.site, other.site) <= NEIGHBOUR_M &&
+      other.outlooks.some((o) => Math.abs(daysBetween(day, o.later.day)) <= NEIGHBOUR_DAYS),
+  ).length;
+}
+
+function ofCost(visit: Visit, outlook: PackOutlook, others: readonly Visit[]): Why {
+  const { day } = outlook.later;
+  const count = neighboursOf(visit, day, others);
+  const company =
+    count === 0 ? "" : count === 1 ? " with its neighbour" : ` with its ${count} neighbours`;
+  return { reason: "cheaper_later", detail: `cheaper later${company}`, earliestDay: day };
+}
+
+/** Whether every technician-day refuses for one of these reasons. */
+function everywhere(
+  refusals: readonly (readonly RefusalCode[])[],
+  ...codes: readonly RefusalCode[]
+): boolean {
+  return refusals.every((slot) => slot.some((code) => codes.includes(code)));
+}
+
+function ofRefusals(
+  rounds: RoundsProblem,
+  visit: Visit,
+  outlook: PackOutlook,
+  refusals: readonly (readonly RefusalCode[])[],
+  others: readonly Visit[],
+): Why {
+  const today = localDay(rounds.frame.now, rounds.frame.timeZone);
+  const tickets = visit.site.tickets.map(ticketWords).join(" and a ");
+  if (refusals.length === 0) {
+    return { reason: "no_time", detail: "nobody works in this plan", earliestDay: null };
+  }
+  if (everywhere(refusals, "notice")) return ofNotice(visit, today);
+  if (everywhere(refusals, "site_closed")) return ofClosure(visit, rounds);
+  if (everywhere(refusals, "skill_missing")) {
+    return {
+      reason: "no_ticket",
+      detail: `nobody in this plan holds a ${tickets}`,
+      earliestDay: null,
+    };
+  }
+  if (everywhere(refusals, "notice", "site_closed", "skill_missing")) return ofNoDay(visit, today);
+  if (refusals.every((slot) => slot.length > 0)) {
+    return {
+      reason: "no_time",
+      detail: "every round that may go there is full",
+      earliestDay: addDays(rounds.frame.lastDay, 1),
+    };
+  }
+  return ofCost(visit, outlook, others);
+}
+
+function ofNoDay(visit: Visit, today: IsoDay): Why {
+  const earliestDay = addDays(today, visit.site.noticeDays);
+  const reason = visit.site.noticeDays > 0 ? "notice" : "closed";
+  return {
+    reason,
+    detail: "notice, opening days and tickets leave no round that may go there",
+    earliestDay,
+  };
+}
+
+function row(outlook: PackOutlook, why: Why): LeftOut {
+  return {
+    assetId: outlook.pack.assetId,
+    packId: outlook.pack.packId,
+    waitingMinorPerWeek: Math.round(outlook.waitingMinorPerWeek),
+    ...why,
+  };
+}
+
+/** Due and near-due packs in no round of the plan, the dearest to wait for first. */
+export function leftOut(
+  rounds: RoundsProblem,
+  routes: Routes,
+  due: readonly DueSite[],
+  excludedAssets: ReadonlySet<string>,
+): LeftOut[] {
+  const visited = new Set(routes.flat());
+  const absent = rounds.visits.filter((_, i) => !visited.has(i));
+  const rows: LeftOut[] = [];
+  rounds.visits.forEach((visit, s) => {
+    if (visited.has(s)) return;
+    const refusals = whyLeftOut(rounds.problem, routes, s).map((slot) => slot.map((r) => r.code));
+    const swaps = new Set(visit.tasks.flatMap((t) => (t.kind === "swap" ? [t.assetId] : [])));
+    for (const outlook of visit.outlooks.filter((o) => swaps.has(o.pack.assetId))) {
+      rows.push(row(outlook, ofRefusals(rounds, visit, outlook, refusals, absent)));
+    }
+  });
+  for (const outlook of due.flatMap((site) => site.withoutCells)) {
+    const detail = `not enough ${outlook.pack.designation} on hand`;
+    rows.push(row(outlook, { reason: "no_cells", detail, earliestDay: null }));
+  }
+  return rows
+    .map((r) =>
+      excludedAssets.has(r.assetId)
+        ? { ...r, reason: "excluded" as const, detail: "taken out by hand", earliestDay: null }
+        : r,
+    )
+    .sort((a, b) => b.waitingMinorPerWeek - a.waitingMinorPerWeek);
+}

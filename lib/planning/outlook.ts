@@ -1,0 +1,163 @@
+/**
+ * One pack seen from one plan: what a visit costs on each of its days, what the best later visit
+ * would cost, and what follows from the two. The Horizon, the plan and its explanations all read
+ * these numbers.
+ */
+import type { EpochDays, IsoDay, Minor } from "@/lib/units";
+import {
+  ARRIVAL_S,
+  LATER_DAYS,
+  STOPS_OF_A_ROUND,
+  URGENT_DISRUPTION_H,
+  URGENT_RESPONSE_H,
+} from "./assumptions";
+import type {
+  PlanningFrame,
+  PlanningPack,
+  PlanningPrices,
+  PlanningSite,
+  PointOnEarth,
+} from "./fleet";
+import { addDays, daysFrom, midday, weekdayOf } from "./local-time";
+import { closureOn } from "./site-days";
+import { greatCircleM, type RoadAssumption } from "./travel";
+import {
+  cheapestVisit,
+  keepCostPerDay,
+  priceVisit,
+  waitingCostPerWeek,
+  type VisitPrice,
+  type WaitingPack,
+} from "./waiting-cost";
+
+/**
+ * due: waiting until after this plan costs more than the life thrown away.
+ * near: it does not, but by less than the share of a drive that a later visit would pay.
+ */
+export type Standing = "due" | "near" | "later";
+
+export interface PackOutlook {
+  readonly pack: PlanningPack;
+  /** One price a day of the plan. */
+  readonly visits: readonly VisitPrice[];
+  readonly later: { readonly day: IsoDay; readonly price: VisitPrice };
+  /** Best later visit less best visit in this plan; what not going costs. */
+  readonly gainMinor: Minor;
+  readonly standing: Standing;
+  readonly waitingMinorPerWeek: Minor;
+}
+
+/** What outlooks of one plan share. */
+export interface OutlookContext {
+  readonly now: EpochDays;
+  readonly days: readonly IsoDay[];
+  readonly moments: readonly EpochDays[];
+  /** Days after the plan on which a later visit is looked for, nearest first. */
+  readonly laterDays: readonly IsoDay[];
+  readonly laterMoments: readonly EpochDays[];
+  readonly prices: PlanningPrices;
+  readonly depots: readonly PointOnEarth[];
+  readonly road: RoadAssumption;
+}
+
+/** A day in each later week for a year, in every fourth thereafter: mid-week where they work. */
+function laterDaysOf(frame: PlanningFrame): IsoDay[] {
+  const inWeek = [3, 2, 4, 1, 5, 6, 7].find((weekday) => frame.workingDays.includes(weekday)) ?? 3;
+  let day = addDays(frame.lastDay, 1);
+  while (weekdayOf(day) !== inWeek) day = addDays(day, 1);
+  const days: IsoDay[] = [];
+  for (let ahead = 0; ahead <= LATER_DAYS; ahead += ahead < 364 ? 7 : 28) {
+    days.push(addDays(day, ahead));
+  }
+  return days;
+}
+
+/** Prepares what the outlooks of one plan share. */
+export function outlookContext(
+  frame: PlanningFrame,
+  prices: PlanningPrices,
+  depots: readonly PointOnEarth[],
+  road: RoadAssumption,
+): OutlookContext {
+  const days = daysFrom(frame.firstDay, frame.lastDay);
+  const laterDays = laterDaysOf(frame);
+  const at = (day: IsoDay) => midday(day, frame.timeZone);
+  return {
+    now: frame.now.getTime() / 86_400_000,
+    days,
+    moments: days.map(at),
+    laterDays,
+    laterMoments: laterDays.map(at),
+    prices,
+    depots,
+    road,
+  };
+}
+
+interface SiteTrip {
+  /** Share of a round's drive that one stop here pays, with the walk to the gate. */
+  readonly shareMinor: Minor;
+  /** A trip to this site alone, out of turn, without the work. */
+  readonly urgentMinor: Minor;
+}
+
+/** What driving to a site costs, as a share of a usual round and as a trip of its own. */
+export function tripOf(site: PlanningSite, context: OutlookContext): SiteTrip {
+  const { prices, road } = context;
+  const distances = context.depots.map((depot) => greatCircleM(depot, site));
+  const oneWayM = (distances.length > 0 ? Math.min(...distances) : 0) * road.detourFactor;
+  const driveMinor = (metres: number) =>
+    (metres / 1000) *
+    (prices.travelMinorPerKm + prices.crewMinorPerHour / Math.max(1, road.speedKmh));
+  return {
+    shareMinor:
+      driveMinor((2 * oneWayM) / STOPS_OF_A_ROUND) + (ARRIVAL_S / 3600) * prices.crewMinorPerHour,
+    urgentMinor: driveMinor(2 * oneWayM) + URGENT_DISRUPTION_H * prices.crewMinorPerHour,
+  };
+}
+
+/** The pack as the pricing of waiting sees it. */
+export function waitingPack(
+  pack: PlanningPack,
+  trip: SiteTrip,
+  prices: PlanningPrices,
+): WaitingPack {
+  const workMinor = (pack.swapS / 3600) * prices.crewMinorPerHour;
+  return {
+    life: pack.life,
+    silenceMinorPerHour: pack.silenceMinorPerHour,
+    urgentTripMinor: trip.urgentMinor + workMinor,
+    urgentResponseH: URGENT_RESPONSE_H,
+    keepMinorPerDay: keepCostPerDay(
+      pack.life,
+      pack.installedAt,
+      pack.cellsMinor + workMinor + trip.shareMinor,
+    ),
+  };
+}
+
+/** The outlook of one pack. */
+export function outlookOf(
+  pack: PlanningPack,
+  site: PlanningSite,
+  context: OutlookContext,
+): PackOutlook {
+  const trip = tripOf(site, context);
+  const waiting = waitingPack(pack, trip, context.prices);
+  const visits = context.moments.map((moment) => priceVisit(waiting, context.now, moment));
+  const open = context.laterDays.flatMap((day, i) => (closureOn(site.closures, day) ? [] : [i]));
+  const choices = open.length > 0 ? open : context.laterDays.map((_, i) => i);
+  const moments = choices.map((i) => context.laterMoments[i]!);
+  const best = cheapestVisit(waiting, context.now, moments);
+  const cheapestNow = Math.min(...visits.map((visit) => visit.totalMinor));
+  const gainMinor = best.price.totalMinor - cheapestNow;
+  const last = context.moments.at(-1)!;
+  return {
+    pack,
+    visits,
+    later: { day: context.laterDays[choices[best.index]!]!, price: best.price },
+    gainMinor,
+    standing: gainMinor >= 0 ? "due" : gainMinor >= -trip.shareMinor ? "near" : "later",
+    waitingMinorPerWeek: waitingCostPerWeek(waiting, context.now, last),
+  };
+}

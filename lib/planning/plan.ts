@@ -1,0 +1,147 @@
+/** The whole way from a fleet to a plan, in steps that a caller may drive by itself. */
+import { solve, type OnProgress, type Options, type Stop } from "../routing/solve";
+import type { Routes } from "../routing/problem";
+import type { Rng } from "../routing/rng";
+import { dueSites, type CellsOnHand, type DueSite, type SiteOutlooks } from "./due";
+import type {
+  KnownVisit,
+  PlannedTask,
+  PlanningFrame,
+  PlanningPack,
+  PlanningPrices,
+  PlanningSite,
+  PlanningTechnician,
+  TravelTable,
+} from "./fleet";
+import { leftOut, type LeftOut } from "./left-out";
+import { outlookContext, outlookOf, tripOf, type OutlookContext } from "./outlook";
+import { knownRoutes, roundsProblem, type RoundsProblem } from "./problem";
+import { planFigures, roundsOf, type PlanFigures, type PlannedRound } from "./rounds";
+import type { RoadAssumption } from "./travel";
+import { visitOf, type Visit } from "./visit";
+
+export interface PlanInput {
+  readonly frame: PlanningFrame;
+  readonly prices: PlanningPrices;
+  readonly road: RoadAssumption;
+  readonly technicians: readonly PlanningTechnician[];
+  readonly sites: readonly PlanningSite[];
+  readonly packs: readonly PlanningPack[];
+  readonly cellsOnHand: CellsOnHand;
+  /** Visits that stand in the plan being changed or in rounds that people know. */
+  readonly known: readonly KnownVisit[];
+  /** Assets that the dispatcher took out by hand. */
+  readonly excludedAssets: ReadonlySet<string>;
+}
+
+export interface PreparedPlan {
+  readonly input: PlanInput;
+  readonly context: OutlookContext;
+  readonly outlooks: readonly SiteOutlooks[];
+  readonly due: readonly DueSite[];
+  readonly visits: readonly Visit[];
+}
+
+/** Outlooks of every pack, by site. */
+export function siteOutlooks(
+  sites: readonly PlanningSite[],
+  packs: readonly PlanningPack[],
+  context: OutlookContext,
+): SiteOutlooks[] {
+  const bySite = new Map<string, PlanningPack[]>();
+  for (const pack of packs) bySite.set(pack.siteId, [...(bySite.get(pack.siteId) ?? []), pack]);
+  return sites.map((site) => ({
+    site,
+    outlooks: (bySite.get(site.siteId) ?? []).map((pack) => outlookOf(pack, site, context)),
+    tripShareMinor: tripOf(site, context).shareMinor,
+  }));
+}
+
+function mergedTasks(known: KnownVisit | undefined, due: DueSite | undefined): PlannedTask[] {
+  const kept = known?.tasks ?? [];
+  const assets = new Set(kept.map((task) => task.assetId));
+  return [...kept, ...(due?.tasks ?? []).filter((task) => !assets.has(task.assetId))];
+}
+
+/** Prices waiting for every pack and decides which visits the plan may make. */
+export function preparePlan(input: PlanInput): PreparedPlan {
+  const { frame, prices, road } = input;
+  const depots = input.technicians.map((technician) => technician.depot);
+  const context = outlookContext(frame, prices, depots, road);
+  const outlooks = siteOutlooks(input.sites, input.packs, context);
+  const wanted = outlooks.map((site) => ({
+    ...site,
+    outlooks: site.outlooks.filter((o) => !input.excludedAssets.has(o.pack.assetId)),
+  }));
+  const due = dueSites(wanted, input.cellsOnHand, context.now);
+  const dueBySite = new Map(due.map((d) => [d.site.siteId, d]));
+  const knownBySite = new Map(input.known.map((k) => [k.siteId, k]));
+  const visits = outlooks.flatMap(({ site, outlooks: all }) => {
+    const tasks = mergedTasks(knownBySite.get(site.siteId), dueBySite.get(site.siteId));
+    return tasks.length > 0 ? [visitOf(site, tasks, all, context)] : [];
+  });
+  return { input, context, outlooks, due, visits };
+}
+
+/** The visits that stand already, and `extra` ones, with nothing else: enough to price edits. */
+export function prepareKnown(
+  input: PlanInput,
+  extra: readonly { readonly siteId: string; readonly tasks: readonly PlannedTask[] }[],
+): PreparedPlan {
+  const depots = input.technicians.map((technician) => technician.depot);
+  const context = outlookContext(input.frame, input.prices, depots, input.road);
+  const outlooks = siteOutlooks(input.sites, input.packs, context);
+  const tasksOf = new Map([...input.known, ...extra].map((v) => [v.siteId, v.tasks]));
+  const visits = outlooks.flatMap(({ site, outlooks: all }) => {
+    const tasks = tasksOf.get(site.siteId);
+    return tasks ? [visitOf(site, tasks, all, context)] : [];
+  });
+  return { input, context, outlooks, due: [], visits };
+}
+
+/** The routing problem of a prepared plan; `travel` covers its technicians' depots and visits. */
+export function problemOf(prepared: PreparedPlan, travel: TravelTable): RoundsProblem {
+  const { frame, prices, technicians, known } = prepared.input;
+  return roundsProblem({ frame, prices, technicians, known, travel, visits: prepared.visits });
+}
+
+export interface FinishedPlan {
+  readonly rounds: readonly PlannedRound[];
+  readonly figures: PlanFigures;
+  readonly leftOut: readonly LeftOut[];
+  readonly routes: Routes;
+}
+
+/** Rounds, figures and what is left out, from the routes of a prepared plan. */
+export function finishPlan(
+  prepared: PreparedPlan,
+  problem: RoundsProblem,
+  routes: Routes,
+): FinishedPlan {
+  return {
+    rounds: roundsOf(problem, routes),
+    figures: planFigures(problem, routes),
+    leftOut: leftOut(problem, routes, prepared.due, prepared.input.excludedAssets),
+    routes,
+  };
+}
+
+export interface Search {
+  readonly stop: Stop;
+  readonly rng: Rng;
+  readonly options?: Options;
+  readonly onProgress?: OnProgress;
+}
+
+/** Plans the rounds. Same input, seed and iterations: same plan. */
+export function makePlan(
+  prepared: PreparedPlan,
+  travel: TravelTable,
+  search: Search,
+): FinishedPlan {
+  const problem = problemOf(prepared, travel);
+  const start = knownRoutes(problem, prepared.input.known);
+  const options = { ...search.options, ...(start.some((r) => r.length > 0) && { start }) };
+  const { routes } = solve(problem.problem, search.stop, search.rng, options, search.onProgress);
+  return finishPlan(prepared, problem, routes);
+}

@@ -1,4 +1,4 @@
-import type { Kysely } from "kysely";
+import type { Kysely, Transaction } from "kysely";
 import type { Database } from "../client";
 
 /** Who signs in, with what is needed to check them. The hash never leaves the use cases. */
@@ -45,4 +45,35 @@ export async function markSeen(db: Kysely<Database>, personId: string, at: Date)
     .set((eb) => ({ lastSeenAt: at, joinedAt: eb.fn.coalesce("joinedAt", eb.val(at)) }))
     .where("id", "=", personId)
     .execute();
+}
+
+/** Stores a new password hash and ends every session. */
+export async function storePassword(
+  trx: Transaction<Database>,
+  personId: string,
+  passwordHash: string,
+): Promise<void> {
+  await trx
+    .updateTable("person")
+    .set((eb) => ({ passwordHash, sessionVersion: eb("sessionVersion", "+", 1) }))
+    .where("id", "=", personId)
+    .execute();
+}
+
+/** Ends every session of a person. @returns false when there is no such person */
+export async function endSessions(trx: Transaction<Database>, personId: string): Promise<boolean> {
+  const result = await trx
+    .updateTable("person")
+    .set((eb) => ({ sessionVersion: eb("sessionVersion", "+", 1) }))
+    .where("id", "=", personId)
+    .executeTakeFirst();
+  return result.numUpdatedRows > 0n;
+}
+
+export async function renamePerson(
+  trx: Transaction<Database>,
+  personId: string,
+  name: string,
+): Promise<void> {
+  await trx.updateTable("person").set({ name }).where("id", "=", personId).execute();
 }

@@ -4,14 +4,18 @@ import type { Database } from "../client";
 
 /** What every forecast of a run shares: few rows, read once. */
 export async function loadForecastCatalogue(db: Kysely<Database>) {
-  const [cellTypes, points, models, states, climates] = await Promise.all([
+  const [cellTypes, points, models, states, climates, depots] = await Promise.all([
     db.selectFrom("cellType").selectAll().execute(),
     db.selectFrom("capacityPoint").selectAll().execute(),
-    db.selectFrom("deviceModel").select(["id", "cutoffMv", "silenceCostMinorPerHour"]).execute(),
+    db
+      .selectFrom("deviceModel")
+      .select(["id", "cutoffMv", "silenceCostMinorPerHour", "swapMinutes"])
+      .execute(),
     db.selectFrom("dutyState").selectAll().orderBy("deviceModelId").orderBy("position").execute(),
     db.selectFrom("climate").select(["id", "monthlyMeanDc"]).execute(),
+    db.selectFrom("depot").select(["latitude", "longitude"]).execute(),
   ]);
-  return { cellTypes, points, models, states, climates };
+  return { cellTypes, points, models, states, climates, depots };
 }
 export type ForecastCatalogueRows = Awaited<ReturnType<typeof loadForecastCatalogue>>;
 
@@ -44,6 +48,8 @@ export async function loadPacksToForecast(db: Kysely<Database>, packIds: readonl
       "asset.silenceCostMinorPerHour",
       "asset.lastHeardAt",
       "site.climateId",
+      "site.latitude",
+      "site.longitude",
       "measured.averageUa as measuredAverageUa",
       sql<string | null>`coalesce(pack.made_on, lot.made_on)`.as("madeOn"),
     ])

@@ -102,7 +102,10 @@ interface SiteTrip {
 }
 
 /** What driving to a site costs, as a share of a usual round and as a trip of its own. */
-export function tripOf(site: PlanningSite, context: OutlookContext): SiteTrip {
+export function tripOf(
+  site: PointOnEarth,
+  context: Pick<OutlookContext, "prices" | "road" | "depots">,
+): SiteTrip {
   const { prices, road } = context;
   const distances = context.depots.map((depot) => greatCircleM(depot, site));
   const oneWayM = (distances.length > 0 ? Math.min(...distances) : 0) * road.detourFactor;
@@ -118,7 +121,7 @@ export function tripOf(site: PlanningSite, context: OutlookContext): SiteTrip {
 
 /** The pack as the pricing of waiting sees it. */
 export function waitingPack(
-  pack: PlanningPack,
+  pack: Pick<PlanningPack, "life" | "installedAt" | "silenceMinorPerHour" | "swapS" | "cellsMinor">,
   trip: SiteTrip,
   prices: PlanningPrices,
 ): WaitingPack {

@@ -27,9 +27,17 @@ export interface ForecastCatalogue {
   readonly cells: ReadonlyMap<string, CellSpec>;
   readonly models: ReadonlyMap<
     string,
-    { cutoffMv: number; silenceCostMinorPerHour: number; duty: readonly DutyState[] }
+    {
+      cutoffMv: number;
+      silenceCostMinorPerHour: number;
+      swapMinutes: number;
+      duty: readonly DutyState[];
+    }
   >;
   readonly climates: ReadonlyMap<string, readonly number[]>;
+  /** Price of one cell, minor units. */
+  readonly cellPrices: ReadonlyMap<string, number>;
+  readonly depots: readonly { latitude: number; longitude: number }[];
 }
 
 export function arrangeCatalogue(rows: ForecastCatalogueRows): ForecastCatalogue {
@@ -41,6 +49,8 @@ export function arrangeCatalogue(rows: ForecastCatalogueRows): ForecastCatalogue
     ),
     models: new Map(rows.models.map((row) => [row.id, { ...row, duty: states.get(row.id) ?? [] }])),
     climates: new Map(rows.climates.map((row) => [row.id, row.monthlyMeanDc])),
+    cellPrices: new Map(rows.cellTypes.map((row) => [row.id, row.unitCostMinor])),
+    depots: rows.depots,
   };
 }
 

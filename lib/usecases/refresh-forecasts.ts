@@ -6,7 +6,7 @@ import {
   loadReadingsToForecast,
 } from "@/db/queries/forecast-inputs";
 import { type ForecastRow, installedPackIds, saveForecasts } from "@/db/queries/forecasts";
-import { getOrganisation } from "@/db/queries/organisation";
+import { findOrganisation } from "@/db/queries/organisation";
 import { type Forecast, forecastPack } from "@/lib/battery";
 import { fromEpochDays } from "@/lib/units";
 import {
@@ -16,6 +16,7 @@ import {
   groupBy,
 } from "./forecast-input";
 import { type Deps, defineUseCase } from "./use-case";
+import { type WaitingPrices, waitingMinorPerWeek } from "./waiting-price";
 
 /** Packs a batch: memory stays flat however large the fleet. */
 const BATCH = 500;
@@ -26,11 +27,18 @@ export const refreshForecasts = defineUseCase({
   allow: { system: true },
   input: z.object({ packIds: z.array(z.uuid()).nullable() }),
   async run(deps, _actor, { packIds }): Promise<{ refreshed: number }> {
+    const organisation = await findOrganisation(deps.db);
+    if (!organisation) return { refreshed: 0 };
     const catalogue = arrangeCatalogue(await loadForecastCatalogue(deps.db));
     const wanted = packIds ?? (await installedPackIds(deps.db, null));
     let refreshed = 0;
     for (let from = 0; from < wanted.length; from += BATCH) {
-      refreshed += await refreshBatch(deps, catalogue, wanted.slice(from, from + BATCH));
+      refreshed += await refreshBatch(
+        deps,
+        catalogue,
+        organisation,
+        wanted.slice(from, from + BATCH),
+      );
     }
     return { refreshed };
   },
@@ -39,6 +47,7 @@ export const refreshForecasts = defineUseCase({
 async function refreshBatch(
   deps: Deps,
   catalogue: ForecastCatalogue,
+  prices: WaitingPrices,
   packIds: readonly string[],
 ): Promise<number> {
   const knownAt = deps.now();
@@ -64,13 +73,14 @@ async function refreshBatch(
         knownAt,
       ),
     );
-    return rowOf(pack.packId, forecast);
+    const waiting = waitingMinorPerWeek(catalogue, prices, pack, forecast, knownAt);
+    return rowOf(pack.packId, forecast, waiting);
   });
   await saveForecasts(deps.db, rows, knownAt);
   return rows.length;
 }
 
-function rowOf(packId: string, forecast: Forecast): ForecastRow {
+function rowOf(packId: string, forecast: Forecast, waiting: number): ForecastRow {
   const { quantiles: q, shareLeft } = forecast;
   return {
     packId,
@@ -85,7 +95,7 @@ function rowOf(packId: string, forecast: Forecast): ForecastRow {
     shareLeftHighPermille: permille(shareLeft.p95),
     drawUa: forecast.drawUa.p50,
     outNowPermille: permille(forecast.outNow),
-    waitingCostMinorPerWeek: 0,
+    waitingCostMinorPerWeek: waiting,
     basis: { ...forecast.basis, drawUa: forecast.drawUa },
     weights: forecast.weights,
   };

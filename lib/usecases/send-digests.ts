@@ -20,15 +20,15 @@ type Reader = Awaited<ReturnType<typeof listDigestSettings>>[number];
 export const sendDigests = defineUseCase({
   name: "send-digests",
   allow: { system: true },
-  input: z.object({ appUrl: z.url() }),
-  async run(deps, _actor, { appUrl }): Promise<{ ordered: number }> {
+  input: z.object({}),
+  async run(deps): Promise<{ ordered: number }> {
     const organisation = await findOrganisation(deps.db);
     if (!organisation) return { ordered: 0 };
     const readers = await listDigestSettings(deps.db);
     let ordered = 0;
     for (const reader of readers) {
       if (!digestDue(reader, deps.now(), organisation.timeZone)) continue;
-      if (await orderDigest(deps, organisation, reader, appUrl)) ordered += 1;
+      if (await orderDigest(deps, organisation, reader)) ordered += 1;
     }
     return { ordered };
   },
@@ -38,10 +38,9 @@ async function orderDigest(
   deps: Deps,
   organisation: Organisation,
   reader: Reader,
-  appUrl: string,
 ): Promise<boolean> {
   const day = dayOfInstant(deps.now(), organisation.timeZone);
-  const props = await digestProps(deps, organisation, reader, day, appUrl);
+  const props = await digestProps(deps, organisation, reader, day);
   return deps.db.transaction().execute(async (trx) => {
     if (!(await claimDigest(trx, reader.personId, day))) return false;
     await queueMail(trx, deps, {
@@ -61,7 +60,6 @@ async function digestProps(
   organisation: Organisation,
   reader: Reader,
   day: string,
-  appUrl: string,
 ): Promise<DigestProps> {
   const { locale, timeZone, currency } = organisation;
   const now = deps.now();
@@ -91,7 +89,7 @@ async function digestProps(
     timeZone,
     currency,
     name: reader.name,
-    url: `${appUrl}/horizon`,
+    url: `${deps.appUrl}/horizon`,
     day,
     horizonDays: reader.horizonDays,
     outNow: listed.filter((line) => line.isOut),

@@ -1,0 +1,14 @@
+import { deliverMail } from "@/lib/usecases/deliver-mail";
+import { refreshForecasts } from "@/lib/usecases/refresh-forecasts";
+import { sendDigests } from "@/lib/usecases/send-digests";
+import type { Actor, Deps, JobName } from "@/lib/usecases/use-case";
+
+const system: Actor = { kind: "system" };
+
+/** What the worker does for each queue. Every handler may run twice for one job. */
+export const HANDLERS: Record<JobName, (deps: Deps, data: never) => Promise<unknown>> = {
+  forecast: (deps, data) => refreshForecasts(deps, system, data),
+  "forecast-all": (deps) => refreshForecasts(deps, system, { packIds: null }),
+  mail: (deps, data) => deliverMail(deps, system, data),
+  digests: (deps) => sendDigests(deps, system, {}),
+};

@@ -65,9 +65,9 @@ export async function sendLink(
   purpose: TokenPurpose,
 ): Promise<void> {
   const link = await makeLink(trx, deps, person.id, purpose);
-  const { name: organisation, locale, timeZone } = await getOrganisation(trx);
+  const { name: organisation, locale, timeZone, currency } = await getOrganisation(trx);
   const props: LinkMailProps = {
-    ...{ organisation, locale, timeZone, name: person.name, url: link.url },
+    ...{ organisation, locale, timeZone, currency, name: person.name, url: link.url },
     expiresAt: link.expiresAt.toISOString(),
   };
   await queueMail(trx, deps, {

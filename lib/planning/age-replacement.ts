@@ -63,7 +63,9 @@ export function bestAge(
   let best = 1;
   for (let i = 2; i <= STEPS; i++) if (rate(i) < rate(best)) best = i;
   const runToFailureRate = prices.failed / service[STEPS]!;
-  if (best >= STEPS - 1) return { age: Infinity, costRate: runToFailureRate, runToFailureRate };
+  // Beyond the longest lives the rate is flat; what is left of its fall is rounding.
+  const waits = best >= STEPS - 1 || rate(best) > runToFailureRate * (1 - 1e-9);
+  if (waits) return { age: Infinity, costRate: runToFailureRate, runToFailureRate };
   const [a, b, c] = [rate(best - 1), rate(best), rate(best + 1)] as const;
   // The parabola through the three lowest points finds the minimum between grid ages.
   const shift = a + c > 2 * b ? (a - c) / (2 * (a - 2 * b + c)) : 0;

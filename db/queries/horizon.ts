@@ -145,6 +145,7 @@ export async function horizonPage(
     .orderBy(ORDER[page.order], (order) =>
       page.descending ? order.desc().nullsLast() : order.asc().nullsLast(),
     )
+    .orderBy("forecast.p50", (order) => order.asc().nullsLast())
     .orderBy("asset.tag")
     .limit(page.limit)
     .offset(page.offset)

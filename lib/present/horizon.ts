@@ -143,7 +143,8 @@ export function horizonRow(
 }
 
 function waitingWords(minor: number | null, presentation: Presentation): string {
-  if (minor === null) return NOTHING;
+  // Nothing is lost by waiting a week yet.
+  if (minor === null || minor === 0) return NOTHING;
   return formatMoney(minor, presentation, { whole: true, per: "wk" });
 }
 

@@ -15,7 +15,7 @@ export function VoltagePlate({ model, decorative }: VoltagePlateProps) {
       description={model.description}
       viewBox={`0 0 ${width} ${height}`}
       decorative={decorative}
-      className="block w-full max-w-md font-cond text-xs"
+      className="block w-full max-w-md font-cond text-base"
     >
       {band && (
         <rect

@@ -31,7 +31,7 @@ export interface ReliabilityPlotModel {
 }
 
 const SIZE = 300;
-const PLOT = { left: 46, top: 10, right: 280, bottom: 254 };
+const PLOT = { left: 46, top: 10, right: 280, bottom: 244 };
 
 /** Forecast chance across, share that came true upward; sound forecasts lie on the diagonal. */
 export function reliabilityPlot(input: {

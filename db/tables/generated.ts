@@ -327,11 +327,19 @@ export interface Plan {
   cost: Json | null;
   createdAt: Timestamp;
   createdBy: string | null;
+  /**
+   * The crews whose technicians the plan sends out; empty: all crews.
+   */
+  crewIds: Generated<string[]>;
   firstDay: string;
   id: string;
   lastDay: string;
   name: string;
   problem: string | null;
+  /**
+   * How the build goes, while the state is building or draft.
+   */
+  progress: Json | null;
   publishedAt: Timestamp | null;
   publishedBy: string | null;
   state: Generated<string>;
@@ -348,6 +356,16 @@ export interface PlanLeftOut {
   planId: string;
   reason: string;
   waitingCostMinorPerWeek: Generated<number>;
+}
+
+export interface PlanStep {
+  act: string;
+  content: Json;
+  planId: string;
+  takenAt: Timestamp;
+  takenBy: string | null;
+  version: number;
+  words: string;
 }
 
 export interface RateEvent {
@@ -399,6 +417,7 @@ export interface Round {
   icalSequence: Generated<number>;
   icalUid: string;
   id: string;
+  overtimeS: Generated<number>;
   planId: string;
   publishedAt: Timestamp | null;
   startedAt: Timestamp | null;
@@ -468,6 +487,7 @@ export interface Stop {
   arrivesAt: Timestamp;
   cannotNote: Generated<string>;
   cannotReason: string | null;
+  contactToldAt: Timestamp | null;
   departsAt: Timestamp;
   doneAt: Timestamp | null;
   id: string;
@@ -547,6 +567,7 @@ export interface DB {
   person: Person;
   plan: Plan;
   planLeftOut: PlanLeftOut;
+  planStep: PlanStep;
   rateEvent: RateEvent;
   reading: Reading;
   readingVerdict: ReadingVerdict;

@@ -28,6 +28,16 @@ const WORDS: Readonly<Record<string, { field: string; message: string }>> = {
   lot_code_key: { field: "code", message: "Another lot has this code." },
   stock_place_name_key: { field: "name", message: "Another place has this name." },
   climate_name_key: { field: "name", message: "Another climate has this name." },
+  person_email_key: { field: "email", message: "Somebody with this mail address has an account." },
+  depot_name_key: { field: "name", message: "Another depot has this name." },
+  crew_name_key: { field: "name", message: "Another crew has this name." },
+  van_name_key: { field: "name", message: "Another van has this name." },
+  technician_person_id_key: { field: "personId", message: "This person is a technician already." },
+  technician_van_id_key: { field: "vanId", message: "Another technician drives this van." },
+  absence_technician_id_daterange_excl: {
+    field: "firstDay",
+    message: "Another absence of this technician covers some of these days.",
+  },
 };
 
 /**

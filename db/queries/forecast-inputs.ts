@@ -19,8 +19,15 @@ export async function loadForecastCatalogue(db: Kysely<Database>) {
 }
 export type ForecastCatalogueRows = Awaited<ReturnType<typeof loadForecastCatalogue>>;
 
-/** The installed packs among `packIds` with what bears on their life, one row a pack. */
-export async function loadPacksToForecast(db: Kysely<Database>, packIds: readonly string[]) {
+/**
+ * Those of `packIds` that are in service with what bears on their life, one row a pack; or,
+ * for judging forecasts afterwards, those that came out.
+ */
+export async function loadPacksToForecast(
+  db: Kysely<Database>,
+  packIds: readonly string[],
+  which: "installed" | "removed" = "installed",
+) {
   return db
     .selectFrom("pack")
     .innerJoin("asset", "asset.id", "pack.assetId")
@@ -44,6 +51,8 @@ export async function loadPacksToForecast(db: Kysely<Database>, packIds: readonl
       "pack.series",
       "pack.parallel",
       "pack.installedAt",
+      "pack.removedAt",
+      "pack.stoppedAt",
       "asset.deviceModelId",
       "asset.silenceCostMinorPerHour",
       "asset.lastHeardAt",
@@ -54,7 +63,7 @@ export async function loadPacksToForecast(db: Kysely<Database>, packIds: readonl
       sql<string | null>`coalesce(pack.made_on, lot.made_on)`.as("madeOn"),
     ])
     .where("pack.id", "in", packIds)
-    .where("pack.removedAt", "is", null)
+    .where("pack.removedAt", which === "installed" ? "is" : "is not", null)
     .execute();
 }
 export type PackToForecast = Awaited<ReturnType<typeof loadPacksToForecast>>[number];

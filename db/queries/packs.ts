@@ -135,10 +135,13 @@ export async function settleForecast(
 ): Promise<void> {
   await sql`
     insert into forecast_outcome
-      (pack_id, recorded_at, forecast_at, p05, p20, p50, p80, p95, share_left_permille, censored, ended_at)
+      (pack_id, recorded_at, forecast_at, p05, p20, p50, p80, p95, share_left_permille, censored,
+       ended_at, chance_stopped_permille)
     select pack_id, ${outcome.recordedAt}::timestamptz, computed_at, p05, p20, p50, p80, p95,
-      share_left_permille, ${outcome.censored}::boolean, ${outcome.endedAt}::timestamptz
-    from forecast where pack_id = ${packId}
+      share_left_permille, ${outcome.censored}::boolean, ${outcome.endedAt}::timestamptz,
+      (select count(*) * 20 from unnest(cdf_days) as day
+        where day <= extract(epoch from pack.removed_at) / 86400)
+    from forecast join pack on pack.id = pack_id where pack_id = ${packId}
     on conflict (pack_id) do nothing`.execute(trx);
   await trx.deleteFrom("forecast").where("packId", "=", packId).execute();
 }

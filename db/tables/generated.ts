@@ -5,10 +5,9 @@
 
 import type { ColumnType } from "kysely";
 
-export type Generated<T> =
-  T extends ColumnType<infer S, infer I, infer U>
-    ? ColumnType<S, I | undefined, U>
-    : ColumnType<T, T | undefined, T>;
+export type Generated<T> = T extends ColumnType<infer S, infer I, infer U>
+  ? ColumnType<S, I | undefined, U>
+  : ColumnType<T, T | undefined, T>;
 
 export type Json = JsonValue;
 
@@ -203,8 +202,16 @@ export interface Forecast {
 
 export interface ForecastOutcome {
   censored: boolean;
+  /**
+   * Chance, by that forecast, that the device had stopped when the pack came out.
+   */
+  chanceStoppedPermille: Generated<number>;
   endedAt: Timestamp;
   forecastAt: Timestamp;
+  /**
+   * Worked out afterwards from nothing but what was known before the visit (imported history).
+   */
+  inHindsight: Generated<boolean>;
   p05: Timestamp;
   p20: Timestamp;
   p50: Timestamp;

@@ -1,4 +1,5 @@
 import { deliverMail } from "@/lib/usecases/deliver-mail";
+import { judgeHistory } from "@/lib/usecases/judge-history";
 import { refreshForecasts } from "@/lib/usecases/refresh-forecasts";
 import { sendDigests } from "@/lib/usecases/send-digests";
 import type { Actor, Deps, JobName } from "@/lib/usecases/use-case";
@@ -8,7 +9,10 @@ const system: Actor = { kind: "system" };
 /** What the worker does for each queue. Every handler may run twice for one job. */
 export const HANDLERS: Record<JobName, (deps: Deps, data: never) => Promise<unknown>> = {
   forecast: (deps, data) => refreshForecasts(deps, system, data),
-  "forecast-all": (deps) => refreshForecasts(deps, system, { packIds: null }),
+  "forecast-all": async (deps) => ({
+    ...(await refreshForecasts(deps, system, { packIds: null })),
+    ...(await judgeHistory(deps, system, {})),
+  }),
   mail: (deps, data) => deliverMail(deps, system, data),
   digests: (deps) => sendDigests(deps, system, {}),
 };

@@ -1,0 +1,86 @@
+import { type Kysely, sql, type SqlBool } from "kysely";
+import type { Insertable } from "kysely";
+import type { Database } from "../client";
+
+export type OutcomeRow = Insertable<Database["forecastOutcome"]>;
+
+/** Packs that came out and have no outcome kept, oldest first. */
+export async function unjudgedPackIds(db: Kysely<Database>, limit: number): Promise<string[]> {
+  const rows = await db
+    .selectFrom("pack")
+    .leftJoin("forecastOutcome", "forecastOutcome.packId", "pack.id")
+    .select("pack.id")
+    .where("pack.removedAt", "is not", null)
+    .where("forecastOutcome.packId", "is", null)
+    .orderBy("pack.removedAt")
+    .orderBy("pack.id")
+    .limit(limit)
+    .execute();
+  return rows.map((row) => row.id);
+}
+
+/** Keeps outcomes; one that is kept already stays as it is. */
+export async function insertOutcomes(
+  db: Kysely<Database>,
+  rows: readonly OutcomeRow[],
+): Promise<void> {
+  if (rows.length === 0) return;
+  await db
+    .insertInto("forecastOutcome")
+    .values([...rows])
+    .onConflict((conflict) => conflict.column("packId").doNothing())
+    .execute();
+}
+
+export interface OutcomeFilter {
+  /** Removals since then. */
+  readonly since: Date;
+  readonly chemistry: string | null;
+  readonly deviceModelId: string | null;
+  readonly crewId: string | null;
+}
+
+/** Removals with the forecast that stood the day before, newest first. */
+export async function listOutcomes(db: Kysely<Database>, filter: OutcomeFilter) {
+  return db
+    .selectFrom("forecastOutcome as outcome")
+    .innerJoin("pack", "pack.id", "outcome.packId")
+    .innerJoin("asset", "asset.id", "pack.assetId")
+    .innerJoin("deviceModel", "deviceModel.id", "asset.deviceModelId")
+    .innerJoin("site", "site.id", "asset.siteId")
+    .leftJoin("crew", "crew.id", "site.crewId")
+    .innerJoin("cellType", "cellType.id", "pack.cellTypeId")
+    .select([
+      "outcome.packId",
+      "asset.tag",
+      "asset.name as assetName",
+      "deviceModel.name as modelName",
+      "crew.name as crewName",
+      "cellType.designation",
+      "cellType.chemistry",
+      "pack.installedAt",
+      "pack.removedAt",
+      "pack.stoppedAt",
+      "pack.reasonOut",
+      "outcome.p05",
+      "outcome.p20",
+      "outcome.p50",
+      "outcome.p80",
+      "outcome.p95",
+      "outcome.shareLeftPermille",
+      "outcome.chanceStoppedPermille",
+      "outcome.censored",
+      "outcome.inHindsight",
+    ])
+    .where(sql<SqlBool>`pack.removed_at >= ${filter.since}`)
+    .$if(filter.chemistry !== null, (q) =>
+      q.where("cellType.chemistry", "=", filter.chemistry ?? ""),
+    )
+    .$if(filter.deviceModelId !== null, (q) =>
+      q.where("asset.deviceModelId", "=", filter.deviceModelId ?? ""),
+    )
+    .$if(filter.crewId !== null, (q) => q.where("site.crewId", "=", filter.crewId ?? ""))
+    .orderBy("pack.removedAt", "desc")
+    .execute();
+}
+export type OutcomeLine = Awaited<ReturnType<typeof listOutcomes>>[number];

@@ -1,4 +1,4 @@
-import type { Kysely } from "kysely";
+import type { Kysely, Transaction } from "kysely";
 import type { Database } from "../client";
 
 export interface Organisation {
@@ -29,4 +29,30 @@ export async function getOrganisation(db: Kysely<Database>): Promise<Organisatio
   const organisation = await findOrganisation(db);
   if (!organisation) throw new Error("No organisation yet: run `npm run first-administrator`.");
   return organisation;
+}
+
+export type OrganisationChange = Omit<Organisation, "isDemonstration">;
+
+export async function updateOrganisation(
+  trx: Transaction<Database>,
+  { workingDays, ...change }: OrganisationChange,
+): Promise<void> {
+  await trx
+    .updateTable("organisation")
+    .set({ ...change, workingDays: [...workingDays] })
+    .execute();
+}
+
+/** Makes the organisation of an empty deployment. @returns false when there is one already */
+export async function insertOrganisation(
+  trx: Transaction<Database>,
+  organisation: Pick<Organisation, "name" | "timeZone" | "currency" | "locale">,
+): Promise<boolean> {
+  const row = await trx
+    .insertInto("organisation")
+    .values(organisation)
+    .onConflict((conflict) => conflict.doNothing())
+    .returning("id")
+    .executeTakeFirst();
+  return row !== undefined;
 }

@@ -172,7 +172,7 @@ module.exports = {
   forbidden: [...cores, ...layers, ...entrances, ...frozen, ...general],
   options: {
     doNotFollow: { path: "node_modules" },
-    exclude: { path: "^(\\.next|\\.wanewright|public)/" },
+    exclude: { path: "^(\\.next[^/]*|\\.wanewright|public)/" },
     tsPreCompilationDeps: true,
     tsConfig: { fileName: "tsconfig.json" },
     combinedDependencies: false,

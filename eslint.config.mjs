@@ -61,7 +61,7 @@ const NEXT_FILES = ["app/**/*.{ts,tsx}", "proxy.ts", "*.config.{ts,mjs}", "instr
 
 /** @type {import("eslint").Linter.Config[]} */
 const config = [
-  { ignores: [".next/**", ".wanewright/**", "coverage/**", "public/**", "next-env.d.ts"] },
+  { ignores: [".next*/**", ".wanewright/**", "coverage/**", "public/**", "next-env.d.ts"] },
   ...next,
   ...typescript,
   {

@@ -105,3 +105,10 @@ function addTo(hash, root, path) {
   }
   hash.update(`\0${path}\0`).update(readFileSync(full));
 }
+
+/**
+ * Whether the build that is there was made from the sources that are there.
+ * @param {string} root
+ * @param {string} dist
+ */
+export const isBuilt = (root, dist) => lastBuild(root, dist) === hashOfSources(root);

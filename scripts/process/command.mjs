@@ -16,13 +16,13 @@ const interruptible = new Set();
  * @param {string} [options.cwd]
  * @param {NodeJS.ProcessEnv} [options.env] replaces the environment
  * @param {string} [options.log] file that receives the whole output
- * @param {boolean} [options.loud] shows the output on the terminal
  * @param {boolean} [options.mustFinish] is not stopped by an interrupt (package managers)
  * @param {string} [options.input] text for standard input
+ * @param {number} [options.minutes] longest time; then the whole group is stopped
  * @returns {Promise<{ code: number, output: string, seconds: number }>}
  */
 export function run(command, args, options = {}) {
-  const { cwd, env = process.env, loud = false, mustFinish = false, input } = options;
+  const { cwd, env = process.env, mustFinish = false, input, minutes = 60 } = options;
   const began = performance.now();
   return new Promise((resolve) => {
     const log = options.log ? createWriteStream(options.log, { flags: "w" }) : undefined;
@@ -38,14 +38,18 @@ export function run(command, args, options = {}) {
       stream.on("data", (text) => {
         output = (output + text).slice(-REMEMBERED);
         log?.write(text);
-        if (loud) process.stdout.write(text);
       });
     }
+    const limit = setTimeout(() => {
+      output += `\nStopped: it took longer than ${minutes} minutes.`;
+      if (pid !== undefined) signalGroup(pid, "SIGKILL");
+    }, minutes * 60_000);
     let settled = false;
     /** @param {number} code */
     const finish = (code) => {
       if (settled) return;
       settled = true;
+      clearTimeout(limit);
       if (pid !== undefined) interruptible.delete(pid);
       log?.end();
       resolve({ code, output, seconds: (performance.now() - began) / 1000 });

@@ -8,7 +8,7 @@ import { Trouble } from "./trouble.mjs";
  * @param {readonly string[]} args
  * @param {NodeJS.ProcessEnv} env
  */
-export function runScript(root, script, args, env) {
+function runScript(root, script, args, env) {
   return run(process.execPath, ["--import", "tsx", script, ...args], { cwd: root, env });
 }
 
@@ -28,6 +28,20 @@ export async function migrate(root, env) {
     `Bringing the database up to date failed:\n${tail(done.output, 12)}`,
     "Nothing was changed: all missing migrations run in one transaction. Run `npm run doctor`.",
   );
+}
+
+/**
+ * What the database lacks, without changing it.
+ * @param {string} root
+ * @param {NodeJS.ProcessEnv} env
+ * @returns {Promise<string[]>} the missing migrations
+ */
+export async function missingMigrations(root, env) {
+  const done = await runScript(root, "scripts/migrate.ts", ["--check", "--json"], env);
+  const line = done.output.split("\n").find((text) => text.startsWith("{"));
+  const result = line && JSON.parse(line);
+  if (done.code === 0 && result) return result.missing;
+  throw new Trouble(result?.what ?? tail(done.output, 5), result?.mend ?? "Run `npm ci`.");
 }
 
 /**

@@ -52,10 +52,11 @@ export async function startWeb(setting, port) {
 /**
  * @param {Setting} setting
  * @param {number} port
+ * @param {string | null} folder where mails are kept; null: in memory only
  */
-export async function startMailFake(setting, port) {
+export async function startMailFake(setting, port, folder) {
   const args = ["--import", "tsx", "scripts/mail-fake/run.ts"];
-  const more = { MAIL_FAKE_PORT: String(port), MAIL_FAKE_FOLDER: join(setting.home, "mails") };
+  const more = { MAIL_FAKE_PORT: String(port), MAIL_FAKE_FOLDER: folder ?? "" };
   const child = start(setting, "mail page", args, more);
   const { check } = setting;
   await waitUntilAnswers(`http://127.0.0.1:${port}/_health`, { child, check });

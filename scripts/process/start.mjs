@@ -116,7 +116,7 @@ async function fill(steps, database, home, env) {
   const { empty, demonstration } = await steps.step(
     "Schema",
     () => migrate(ROOT, env),
-    ({ ran }) => (ran.length ? `${ran.length} migrations run` : "up to date"),
+    ({ ran }) => (ran.length ? `migrations run: ${ran.length}` : "up to date"),
   );
   const scenario = env.WANEWRIGHT_SCENARIO ?? (database.fresh ? "quillmere" : "none");
   const seeds = empty && scenario !== "none";
@@ -165,7 +165,7 @@ async function startServices(steps, life, { home, env, ports, record }) {
   const { mail } = ports;
   if (mail !== undefined) {
     const tell = () => `http://127.0.0.1:${mail}`;
-    await steps.step("Mail page", () => startMailFake(setting, mail), tell);
+    await steps.step("Mail page", () => startMailFake(setting, mail, join(home, "mails")), tell);
   }
   const tellWeb = () => `listening on 127.0.0.1:${ports.web}`;
   await steps.step("Web", () => startWeb(setting, ports.web), tellWeb);

@@ -37,20 +37,24 @@ function hash(text: string): State {
 }
 
 class Sfc32 implements Rng {
+  private a: number;
+  private b: number;
+  private c: number;
+  private d: number;
+
   constructor(
     private readonly name: string,
-    private state: State,
-  ) {}
+    [a, b, c, d]: State,
+  ) {
+    [this.a, this.b, this.c, this.d] = [a, b, c, d];
+  }
 
   next(): number {
-    const [a, b, c, d] = this.state;
-    const t = (((a + b) | 0) + d) | 0;
-    this.state = [
-      b ^ (b >>> 9),
-      (c + (c << 3)) | 0,
-      (((c << 21) | (c >>> 11)) + t) | 0,
-      (d + 1) | 0,
-    ];
+    const t = (((this.a + this.b) | 0) + this.d) | 0;
+    this.d = (this.d + 1) | 0;
+    this.a = this.b ^ (this.b >>> 9);
+    this.b = (this.c + (this.c << 3)) | 0;
+    this.c = (((this.c << 21) | (this.c >>> 11)) + t) | 0;
     return (t >>> 0) / 4294967296;
   }
 
@@ -94,7 +98,7 @@ class Sfc32 implements Rng {
   }
 
   clone(): Rng {
-    return new Sfc32(this.name, [...this.state]);
+    return new Sfc32(this.name, [this.a, this.b, this.c, this.d]);
   }
 }
 

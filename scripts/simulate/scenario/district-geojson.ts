@@ -34,7 +34,7 @@ function line(points: readonly Point[], properties: Feature["properties"]): Feat
 }
 
 function polygon(ring: readonly Point[], properties: Feature["properties"]): Feature {
-  const geometry = { type: "Polygon", coordinates: [ring.map(position)] } as const;
+  const geometry = { type: "Polygon" as const, coordinates: [ring.map(position)] };
   return { type: "Feature", properties, geometry };
 }
 

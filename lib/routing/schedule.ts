@@ -142,6 +142,29 @@ function routeCost(
   return { driving: spent.driving, duty, overtime, opening, visits, changes, skipped: 0, total };
 }
 
+/** Drives the whole route and notes what is wrong with it. */
+function driveRoute(problem: Problem, r: number, route: readonly number[], load: number[]): Walk {
+  const slot = problem.slots[r]!;
+  const walk: Walk = {
+    stops: [],
+    refusals: [],
+    nowS: workedS(slot.breaks, slot.startS),
+    place: slot.startPlace,
+    driveS: 0,
+    driveM: 0,
+    waitS: 0,
+    driving: 0,
+  };
+  for (const s of route) visit(problem, walk, r, s);
+  if (route.length > 0) drive(problem, walk, slot.endPlace);
+  if (route.length > slot.frozen.length) {
+    const excess = walk.nowS - workedS(slot.breaks, slot.endS + slot.overtimeS);
+    if (excess > 0) walk.refusals.push({ code: "outside_shift", slot: r, excess });
+    walk.refusals.push(...loadRefusals(slot, r, load));
+  }
+  return walk;
+}
+
 /**
  * Drives one route: arrival, wait, start and leaving time of each stop, the return, load, cost by
  * cause, and every reason why it may not be driven. Times are wall-clock seconds from midnight.
@@ -153,27 +176,11 @@ export function scheduleRoute(
 ): RouteSchedule {
   const slot = problem.slots[r]!;
   const sites = route.map((s) => problem.sites[s]!);
-  const walk: Walk = {
-    stops: [],
-    refusals: [],
-    nowS: workedS(slot.breaks, slot.startS),
-    place: slot.startPlace,
-    driveS: 0,
-    driveM: 0,
-    waitS: 0,
-    driving: 0,
-  };
-  const fromS = walk.nowS;
-  for (const s of route) visit(problem, walk, r, s);
-  if (route.length > 0) drive(problem, walk, slot.endPlace);
+  const load = loadOf(slot, sites);
+  const walk = driveRoute(problem, r, route, load);
+  const fromS = workedS(slot.breaks, slot.startS);
   const dutyS = walk.nowS - fromS;
   const overtimeS = Math.max(0, walk.nowS - workedS(slot.breaks, slot.endS));
-  const beyond = walk.nowS - workedS(slot.breaks, slot.endS + slot.overtimeS);
-  const load = loadOf(slot, sites);
-  if (route.length > slot.frozen.length) {
-    if (beyond > 0) walk.refusals.push({ code: "outside_shift", slot: r, excess: beyond });
-    walk.refusals.push(...loadRefusals(slot, r, load));
-  }
   return {
     slot: r,
     stops: walk.stops,

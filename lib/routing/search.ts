@@ -1,4 +1,5 @@
 /** One annealing search: ruin, recreate, accept or take back. */
+import { exportRoutes, fits, importRoutes } from "./elite";
 import { Inserter } from "./insertion";
 import { FORBIDDEN, type Model } from "./model";
 import type { Params } from "./params";
@@ -30,9 +31,9 @@ export class Search {
     this.inserter = new Inserter(model, this.state, rng, params.blinkShare);
     this.ruin = new Ruin(model, this.state, rng, params);
     this.recreate = new Recreate(model, this.state, this.inserter, rng);
-    if (start) this.state.take(start);
+    if (start) importRoutes(this.state, start);
     this.construct();
-    this.bestRoutes = this.state.routes();
+    this.bestRoutes = exportRoutes(this.state);
     this.bestTotal = this.state.total;
     this.typicalLeg = this.meanLeg();
   }
@@ -88,7 +89,7 @@ export class Search {
     }
     if (state.total < this.bestTotal) {
       this.bestTotal = state.total;
-      this.bestRoutes = state.routes();
+      this.bestRoutes = exportRoutes(state);
     }
   }
 
@@ -112,7 +113,7 @@ export class Search {
     if (state.absentCount === 0) return;
     const site = state.absent[rng.below(state.absentCount)]!;
     const r = this.drawEmptySlot(site);
-    if (r < 0 || !state.fits(site, r, 0)) return;
+    if (r < 0 || !fits(state, site, r, 0)) return;
     state.insert(site, r, 0);
     const row = site * model.near;
     let offered = 0;
@@ -139,13 +140,13 @@ export class Search {
 
   /** Takes a better plan over as the current and best one. */
   take(routes: Routes): void {
-    this.state.take(routes);
+    importRoutes(this.state, routes);
     this.construct();
     if (this.state.total < this.bestTotal) {
       this.bestTotal = this.state.total;
-      this.bestRoutes = this.state.routes();
+      this.bestRoutes = exportRoutes(this.state);
     } else {
-      this.state.take(this.bestRoutes);
+      importRoutes(this.state, this.bestRoutes);
     }
   }
 }

@@ -7,8 +7,7 @@
  * seconds from start of work here to the return if nothing waits. Position 0 is the start depot,
  * `length + 1` the end depot.
  */
-import { FORBIDDEN, type Model } from "./model";
-import type { Routes } from "./problem";
+import type { Model } from "./model";
 
 export const NODE = 0;
 export const LEAVE = 1;
@@ -291,41 +290,5 @@ export class RouteState {
       }
     }
     return true;
-  }
-
-  /** Whether a site may be put behind position k of a route: the O(1) test. */
-  fits(site: number, r: number, k: number): boolean {
-    const { model, data } = this;
-    if (model.visit[site * model.slots + r] === FORBIDDEN || !this.fitsVan(site, r)) return false;
-    const at = r * this.row + k * FIELDS;
-    const row = site * model.nodes;
-    const window = model.windowRow[r]! + site;
-    const arrive = data[at + LEAVE]! + model.timeInto[row + data[at + NODE]!]!;
-    const start = Math.max(arrive, model.open[window]!);
-    const next = start + model.service[site]! + model.timeOut[row + data[at + FIELDS + NODE]!]!;
-    return start <= model.close[window]! && next <= data[at + FIELDS + LATEST]!;
-  }
-
-  /** The plan in the problem's words. */
-  routes(): number[][] {
-    return Array.from(this.length, (length, r) =>
-      Array.from({ length }, (_, k) => this.siteAt(r, k + 1)),
-    );
-  }
-
-  /** Takes a plan over as far as it can be driven; other stops stay out. */
-  take(routes: Routes): void {
-    this.mark();
-    for (let r = 0; r < this.model.slots; r++) {
-      const free = this.length[r]! - this.model.frozen[r]!;
-      if (free > 0) this.remove(r, this.model.frozen[r]! + 1, free);
-    }
-    routes.slice(0, this.model.slots).forEach((route, r) => {
-      for (const site of route) {
-        const known = site >= 0 && site < this.model.sites && this.routeOf[site] === -1;
-        if (known && this.fits(site, r, this.length[r]!)) this.insert(site, r, this.length[r]!);
-      }
-    });
-    this.mark();
   }
 }

@@ -151,18 +151,24 @@ interface FieldJson {
   }[];
 }
 
+function fieldSlots(data: FieldJson, day: number): Slot[] {
+  return data.technicians.map((tech) => ({
+    ...{ id: `t${tech.id}d${day}`, technician: tech.id, day },
+    ...{ startPlace: tech.depot, endPlace: tech.depot },
+    ...{ startS: tech.shift[0], endS: tech.shift[1], overtimeS: 0, overtimePerS: 0, breaks: [] },
+    ...{ capacity: [tech.vanBatteries], capacityTotal: tech.vanBatteries },
+    ...{ skills: 0, openingCost: 0, frozen: [] },
+  }));
+}
+
 /** The multi-day technician format; its minutes serve as the engine's seconds. */
 export function readField(text: string): Problem {
   const data = JSON.parse(text) as FieldJson;
   const points = [...data.depots.map(([x, y]) => ({ x, y })), ...data.clients];
-  const side = points.length;
-  const travelS = new Int32Array(side * side);
-  points.forEach((a, i) =>
-    points.forEach((b, j) => {
-      const length = Math.sqrt((a.x - b.x) ** 2 + (a.y - b.y) ** 2);
-      travelS[i * side + j] = Math.ceil(length / data.speedUnitsPerMinute);
-    }),
-  );
+  const places = points.length;
+  const minutes = (a: Point, b: Point) =>
+    Math.ceil(Math.sqrt((a.x - b.x) ** 2 + (a.y - b.y) ** 2) / data.speedUnitsPerMinute);
+  const travelS = Int32Array.from(points.flatMap((a) => points.map((b) => minutes(a, b))));
   const days = Array.from({ length: data.days }, (_, day) => day);
   const sites = data.clients.map((client, i): Site => ({
     id: String(client.id),
@@ -176,24 +182,7 @@ export function readField(text: string): Problem {
     demand: [client.batteries],
     firstDay: 0,
   }));
-  const slots = days.flatMap((day) =>
-    data.technicians.map((tech): Slot => ({
-      ...{ id: `t${tech.id}d${day}`, technician: tech.id, day },
-      ...{ startPlace: tech.depot, endPlace: tech.depot },
-      ...{ startS: tech.shift[0], endS: tech.shift[1], overtimeS: 0, overtimePerS: 0, breaks: [] },
-      ...{ capacity: [tech.vanBatteries], capacityTotal: tech.vanBatteries },
-      ...{ skills: 0, openingCost: 0, frozen: [] },
-    })),
-  );
+  const slots = days.flatMap((day) => fieldSlots(data, day));
   const prices = { drivingPerS: 1, dutyPerS: 0, perM: 0 };
-  return {
-    days: data.days,
-    cellTypes: 1,
-    sites,
-    slots,
-    places: side,
-    travelS,
-    travelM: travelS,
-    prices,
-  };
+  return { days: data.days, cellTypes: 1, sites, slots, places, travelS, travelM: travelS, prices };
 }

@@ -1,0 +1,42 @@
+/** Plans in and out of the search: what two searches hand each other. */
+import { FORBIDDEN } from "./model";
+import type { Routes } from "./problem";
+import { FIELDS, LATEST, LEAVE, NODE, type RouteState } from "./state";
+
+/** Whether a site may be put behind position k of a route: the O(1) test. */
+export function fits(state: RouteState, site: number, r: number, k: number): boolean {
+  const { model, data } = state;
+  if (model.visit[site * model.slots + r] === FORBIDDEN || !state.fitsVan(site, r)) return false;
+  const at = r * state.row + k * FIELDS;
+  const row = site * model.nodes;
+  const window = model.windowRow[r]! + site;
+  const arrive = data[at + LEAVE]! + model.timeInto[row + data[at + NODE]!]!;
+  const start = Math.max(arrive, model.open[window]!);
+  const next = start + model.service[site]! + model.timeOut[row + data[at + FIELDS + NODE]!]!;
+  return start <= model.close[window]! && next <= data[at + FIELDS + LATEST]!;
+}
+
+/** The plan in the problem's words. */
+export function exportRoutes(state: RouteState): number[][] {
+  return Array.from(state.length, (length, r) =>
+    Array.from({ length }, (_, k) => state.siteAt(r, k + 1)),
+  );
+}
+
+/** Takes a plan over as far as it can be driven; other stops stay out. */
+export function importRoutes(state: RouteState, routes: Routes): void {
+  const { model } = state;
+  state.mark();
+  for (let r = 0; r < model.slots; r++) {
+    const free = state.length[r]! - model.frozen[r]!;
+    if (free > 0) state.remove(r, model.frozen[r]! + 1, free);
+  }
+  routes.slice(0, model.slots).forEach((route, r) => {
+    for (const site of route) {
+      const known = site >= 0 && site < model.sites && state.routeOf[site] === -1;
+      const last = state.length[r]!;
+      if (known && fits(state, site, r, last)) state.insert(site, r, last);
+    }
+  });
+  state.mark();
+}

@@ -37,7 +37,12 @@ export function ReliabilityPlot({ model }: { model: ReliabilityPlotModel }) {
           />
         </g>
       ))}
-      <text x={(plot.left + plot.right) / 2} y={size - 8} textAnchor="middle" className="fill-soft">
+      <text
+        x={(plot.left + plot.right) / 2}
+        y={size - 20}
+        textAnchor="middle"
+        className="fill-soft"
+      >
         chance forecast
       </text>
       <text

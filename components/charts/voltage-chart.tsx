@@ -1,8 +1,45 @@
+import type { ReactNode } from "react";
 import { ChartFrame } from "@/components/charts/frame";
 import type { PlotDot, VoltageChartModel } from "@/lib/present/voltage-chart";
 
-/** An asset's voltages over time. Resting: open dot. Under load: filled square. Doubtful: cross. */
+/** An asset's voltages over time, with the key to its marks. */
 export function VoltageChart({ model }: { model: VoltageChartModel }) {
+  return (
+    <figure>
+      <Plot model={model} />
+      <figcaption className="mt-1 flex flex-wrap gap-x-4 pl-3 text-sm text-soft">
+        <Key mark={<Dot dot={{ ...keyDot, kind: "resting" }} />}>resting</Key>
+        <Key mark={<Dot dot={{ ...keyDot, kind: "loaded" }} />}>under load</Key>
+        <Key mark={<Dot dot={{ ...keyDot, kind: "resting", doubtful: true }} />}>
+          kept, but unlikely
+        </Key>
+        {model.bandPath && (
+          <Key mark={<rect y="3" width="16" height="10" className="fill-spruce-tint" />}>
+            expected at rest
+          </Key>
+        )}
+        {model.installXs.length > 0 && (
+          <Key mark={<line x1="8" x2="8" y2="16" className="stroke-dusk-line" />}>pack put in</Key>
+        )}
+      </figcaption>
+    </figure>
+  );
+}
+
+const keyDot = { x: 8, y: 8, doubtful: false, label: "" };
+
+function Key({ mark, children }: { mark: ReactNode; children: ReactNode }) {
+  return (
+    <span className="inline-flex items-center gap-1.5">
+      <svg aria-hidden="true" width="16" height="16" viewBox="0 0 16 16">
+        {mark}
+      </svg>
+      {children}
+    </span>
+  );
+}
+
+function Plot({ model }: { model: VoltageChartModel }) {
   const { plot } = model;
   return (
     <ChartFrame
@@ -25,7 +62,13 @@ export function VoltageChart({ model }: { model: VoltageChartModel }) {
         strokeWidth="1.5"
         strokeDasharray="5 3"
       />
-      <text x={plot.right - 4} y={model.cutoffY - 4} textAnchor="end" className="fill-brick-ink">
+      <text
+        x={plot.right - 4}
+        y={model.cutoffY - 4}
+        textAnchor="end"
+        className="fill-brick-ink stroke-sheet [paint-order:stroke]"
+        strokeWidth="3"
+      >
         {model.cutoffLabel}
       </text>
       {model.installXs.map((x) => (
@@ -87,7 +130,7 @@ function Dot({ dot }: { dot: PlotDot }) {
   const { x, y } = dot;
   return (
     <g>
-      <title>{dot.label}</title>
+      {dot.label && <title>{dot.label}</title>}
       {dot.kind === "resting" ? (
         <circle cx={x} cy={y} r="3.6" className="fill-sheet stroke-ink" strokeWidth="1.4" />
       ) : (

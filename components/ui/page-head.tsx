@@ -40,7 +40,7 @@ export function PageHead({ title, crumb, lede, tag, actions }: PageHeadProps) {
 export function Section(props: { title: string; aside?: ReactNode; children: ReactNode }) {
   return (
     <section className="mb-5 border border-rule bg-sheet">
-      <div className="flex flex-wrap items-baseline justify-between gap-x-4 border-b border-ink px-3 py-2">
+      <div className="flex min-h-9.5 flex-wrap items-center justify-between gap-x-4 border-b border-ink px-3 py-1.5">
         <h2 className="caps">{props.title}</h2>
         {props.aside && <div className="text-sm text-soft">{props.aside}</div>}
       </div>

@@ -95,7 +95,8 @@ describe("every chart", () => {
   // SVG-AAM 1.0, 8.1: role="img" takes its name from the first child <title>.
   it.each(every)("%s is an image with an accessible name", (_, element, name) => {
     const html = renderToStaticMarkup(element);
-    const [, attributes = "", title = ""] = /^<svg([^>]*)><title>([^<]+)<\/title>/.exec(html) ?? [];
+    const [, attributes = "", title = ""] =
+      /^(?:<figure>)?<svg([^>]*)><title>([^<]+)<\/title>/.exec(html) ?? [];
     expect(attributes).toContain('role="img"');
     expect(title).toMatch(name);
   });

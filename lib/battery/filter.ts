@@ -7,7 +7,9 @@ import { normalCdf } from "../stats/normal";
 import type { EpochDays } from "../units";
 import { ASSUMED } from "./assumptions";
 import { DAYS_PER_YEAR, monthOf } from "./climate";
-import { type Grid, consume, newGrid, openRate, wander, weighDepth } from "./grid";
+import { consume } from "./consume";
+import { openRate, wander } from "./draw-walk";
+import { type Grid, newGrid, normalise, weighDepth } from "./grid";
 import type { ForecastInput, PackEvent, PackReading, ReadingWeight } from "./pack";
 import { type PackModel, leakBetween, packModel } from "./pack-model";
 import { impossibleAboveMv, observe } from "./reading";
@@ -63,6 +65,7 @@ export function filterPack(input: ForecastInput): Filtered {
   // a stopped device draws no more: the grid stays at the day it was found
   const end = bounds.stoppedAt ?? until;
   elapse(model, grid, at, end);
+  normalise(grid);
   const ordered = input.readings.map((r) => weights.get(r.id) ?? passedOver(r, input));
   return { model, grid, at: end, weights: ordered, ...bounds };
 }
@@ -154,8 +157,7 @@ export function elapse(model: PackModel, grid: Grid, from: EpochDays, to: EpochD
   for (let s = 0; s < steps; s++) {
     const start = from + (days * s) / steps;
     const end = from + (days * (s + 1)) / steps;
-    wander(grid, variance / 2);
+    wander(grid, variance);
     consume(grid, model.drawPerDay * (end - start), leakBetween(model, start, end));
-    wander(grid, variance / 2);
   }
 }

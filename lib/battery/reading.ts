@@ -8,79 +8,91 @@
  * pack and an unmeasured temperature. The weight reported is the posterior probability of
  * the first term.
  */
-import { gridQuantile } from "../stats/grid-quantile";
 import { ASSUMED } from "./assumptions";
 import { temperatureAt } from "./climate";
 import { CURVES } from "./curve-tables";
-import { CURVE_STEPS, atDepth } from "./curves";
+import { CURVE_STEPS } from "./curves";
 import { freshDropMv } from "./cutoff";
 import { type Grid, depthMarginal, normalise } from "./grid";
 import type { PackReading, ReadingWeight } from "./pack";
 import type { PackModel } from "./pack-model";
 
-const SLOPE_REACH = 5 / CURVE_STEPS;
+/** Half the span over which the curve's slope is taken, in table steps: 1 % of depth. */
+const SLOPE_STEPS = 5;
 const Z90 = 1.6448536269514722;
-
-interface Expected {
-  /** At each depth node: mean and variance of the voltage, mV, offset aside. */
-  readonly mean: Float64Array;
-  readonly variance: Float64Array;
-}
+/** A mass below this is brought back to 1 before it can vanish. */
+const FAINT = 1e-60;
 
 /** Highest voltage the pack could show with the widest margin, mV. */
 export function impossibleAboveMv(model: PackModel): number {
   return model.curve.restScale * model.curve.restMv[0]! * ASSUMED.impossibleShare;
 }
 
-/** Expected voltage of a reading at every depth node. */
-export function expectAt(
-  model: PackModel,
-  grid: Grid,
-  reading: Pick<PackReading, "at" | "kind" | "loadUa" | "temperatureDc" | "accuracyMv">,
-): Expected {
+type Circumstances = Pick<PackReading, "at" | "kind" | "loadUa" | "temperatureDc" | "accuracyMv">;
+
+/** Mean (nodeA) and variance (nodeB) of a reading at every depth node, offset aside; mV. */
+function expectAt(model: PackModel, grid: Grid, reading: Circumstances): void {
   const { curve, pack } = model;
+  const { nodeA: mean, nodeB: variance } = grid;
   const dc = reading.temperatureDc ?? temperatureAt(pack.monthlyMeanDc, reading.at);
   const ua = reading.kind === "loaded" ? (reading.loadUa ?? model.peakUa) : 0;
   const drop = freshDropMv(pack, curve, ua, dc);
   const drift = curve.driftMvPerKelvin * (dc / 10 - 20);
-  const volts = (depth: number): number =>
-    curve.restScale * atDepth(curve.restMv, depth) - drop * atDepth(curve.resistance, depth);
-  const warmth = reading.temperatureDc === null ? ASSUMED.temperatureSdK : 1;
-  const cell = curve.restScale * CURVES[pack.cell.chemistry].spreadMv * 0.5;
-  const fixed =
-    (reading.accuracyMv ?? ASSUMED.accuracyMv) ** 2 +
-    grid.offsetStepMv ** 2 / 12 +
-    cell ** 2 +
-    (curve.driftMvPerKelvin * warmth) ** 2 +
-    1e-6;
-  const mean = new Float64Array(grid.nx);
-  const variance = new Float64Array(grid.nx);
+  const fixed = fixedVariance(model, grid, reading);
+  const { restMv, resistance, restScale } = curve;
+  const last = CURVE_STEPS - 1;
+  const reach = SLOPE_STEPS;
+  const depthSd = (ASSUMED.curveDepthSd * (last + 1)) / (2 * reach);
   for (let i = 0; i < grid.nx; i++) {
-    const depth = grid.depthFrom + i * grid.depthStep;
-    const slope = (volts(depth - SLOPE_REACH) - volts(depth + SLOPE_REACH)) / (2 * SLOPE_REACH);
-    const resistive = ASSUMED.resistanceSd * drop * atDepth(curve.resistance, depth);
-    mean[i] = volts(depth) + drift;
-    variance[i] = fixed + (slope * ASSUMED.curveDepthSd) ** 2 + resistive ** 2;
+    const place = (grid.depthFrom + i * grid.depthStep) * (last + 1);
+    const k = Math.min(last, Math.max(0, Math.floor(place)));
+    const part = Math.min(1, Math.max(0, place - k));
+    const rest = restMv[k]! + part * (restMv[k + 1]! - restMv[k]!);
+    const drops = drop * (resistance[k]! + part * (resistance[k + 1]! - resistance[k]!));
+    const a = Math.max(0, k - reach);
+    const b = Math.min(last + 1, k + reach);
+    const fall = restScale * (restMv[a]! - restMv[b]!) + drop * (resistance[b]! - resistance[a]!);
+    mean[i] = restScale * rest + drift - drops;
+    variance[i] = fixed + (fall * depthSd) ** 2 + (ASSUMED.resistanceSd * drops) ** 2;
   }
-  return { mean, variance };
 }
 
-/** 5th, 50th and 95th percentile of a voltage to be read, mV. */
-export function expectedBand(grid: Grid, expected: Expected): [number, number, number] {
-  const marginal = depthMarginal(grid);
-  const at = (probability: number): number => {
-    const depth = gridQuantile(marginal, 0, 1, probability);
-    return Math.min(grid.nx - 1, Math.max(0, Math.round(depth)));
-  };
-  const low = at(0.95);
-  const middle = at(0.5);
-  const high = at(0.05);
-  const noise = Z90 * Math.sqrt(expected.variance[middle]! + 0.5 * grid.offsetStepMv ** 2);
-  const centre = expected.mean[middle]!;
+/** The part of a reading's variance that does not depend on depth, mV². */
+function fixedVariance(model: PackModel, grid: Grid, reading: Circumstances): number {
+  const warmth = reading.temperatureDc === null ? ASSUMED.temperatureSdK : 1;
+  const cell = 0.5 * model.curve.restScale * CURVES[model.pack.cell.chemistry].spreadMv;
+  const accuracy = reading.accuracyMv ?? ASSUMED.accuracyMv;
+  return (
+    accuracy ** 2 +
+    grid.offsetStepMv ** 2 / 12 +
+    cell ** 2 +
+    (model.curve.driftMvPerKelvin * warmth) ** 2 +
+    1e-6
+  );
+}
+
+/** 5th, 50th and 95th percentile of a voltage to be read, mV, after `expectAt`. */
+function expectedBand(grid: Grid): [number, number, number] {
+  const marginal = depthMarginal(grid, grid.nodeC);
+  let total = 0;
+  for (let i = 0; i < grid.nx; i++) total += marginal[i]!;
+  const mean = grid.nodeA;
+  let low = mean[0]!;
+  let middle = 0;
+  let high = low;
+  let sum = 0;
+  for (let i = 0; i < grid.nx; i++) {
+    if (sum <= 0.05 * total) high = mean[i]!;
+    if (sum <= 0.5 * total) middle = i;
+    if (sum <= 0.95 * total) low = mean[i]!;
+    sum += marginal[i]!;
+  }
+  const noise = Z90 * Math.sqrt(grid.nodeB[middle]! + 0.5 * grid.offsetStepMv ** 2);
+  const centre = mean[middle]!;
   return [
-    centre - Math.hypot(expected.mean[low]! - centre, noise),
+    centre - Math.hypot(low - centre, noise),
     centre,
-    centre + Math.hypot(expected.mean[high]! - centre, noise),
+    centre + Math.hypot(high - centre, noise),
   ];
 }
 
@@ -91,46 +103,48 @@ export function observe(
   reading: PackReading,
   passivated: boolean,
 ): ReadingWeight {
-  const expected = expectAt(model, grid, reading);
-  const [low, middle, high] = expectedBand(grid, expected);
-  const said = {
+  expectAt(model, grid, reading);
+  const [low, middle, high] = expectedBand(grid);
+  // the film's transient minimum says nothing about charge; a higher voltage would
+  const dip = passivated && reading.millivolts < middle;
+  const weight = dip ? 0 : multiply(grid, reading.millivolts, impossibleAboveMv(model));
+  const reason = dip ? "passivation" : weight >= 0.5 ? "fits" : "doubtful";
+  return {
     readingId: reading.id,
+    weight,
     expectedMv: middle,
     expectedLowMv: low,
     expectedHighMv: high,
+    reason,
   };
-  if (passivated && reading.millivolts < middle) {
-    // the film's transient minimum says nothing about charge; a higher voltage would
-    return { ...said, weight: 0, reason: "passivation" };
-  }
-  const weight = multiply(grid, expected, reading.millivolts, impossibleAboveMv(model));
-  return { ...said, weight, reason: weight >= 0.5 ? "fits" : "doubtful" };
 }
 
 /** Multiply by the mixture likelihood; returns the weight of its first term. */
-function multiply(grid: Grid, expected: Expected, millivolts: number, rangeMv: number): number {
-  const { p, nx, nr, no } = grid;
+function multiply(grid: Grid, millivolts: number, rangeMv: number): number {
+  const { p, nx, nr, no, nodeA: mean, nodeB: variance, nodeC: fit, rowMass } = grid;
   const outlier = ASSUMED.outlierShare / rangeMv;
-  const fit = new Float64Array(nx);
+  const share = (1 - ASSUMED.outlierShare) / Math.sqrt(2 * Math.PI);
   let fitting = 0;
+  let total = 0;
   for (let o = 0; o < no; o++) {
+    const offset = millivolts - grid.offsetMv[o]!;
     for (let i = 0; i < nx; i++) {
-      const off = millivolts - expected.mean[i]! - grid.offsetMv[o]!;
-      const v = expected.variance[i]!;
-      fit[i] =
-        ((1 - ASSUMED.outlierShare) * Math.exp((-0.5 * off * off) / v)) /
-        Math.sqrt(2 * Math.PI * v);
+      const off = offset - mean[i]!;
+      const v = variance[i]!;
+      fit[i] = (share * Math.exp((-0.5 * off * off) / v)) / Math.sqrt(v);
     }
-    for (let r = 0; r < nr; r++) {
-      const base = (o * nr + r) * nx;
-      for (let i = 0; i < nx; i++) {
-        const m = p[base + i]!;
-        const f = fit[i]!;
-        fitting += m * f;
-        p[base + i] = m * (f + outlier);
+    for (let row = o * nr; row < (o + 1) * nr; row++) {
+      if (rowMass[row] === 0) continue;
+      for (let i = 0, k = row * nx; i < nx; i++, k++) {
+        const m = p[k]!;
+        const fits = m * fit[i]!;
+        const all = fits + m * outlier;
+        fitting += fits;
+        total += all;
+        p[k] = all;
       }
     }
   }
-  const total = normalise(grid);
+  if (total < FAINT) normalise(grid);
   return total > 0 ? Math.min(1, fitting / total) : 0;
 }

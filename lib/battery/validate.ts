@@ -115,6 +115,10 @@ function checkHistory(input: ForecastInput, need: Need): void {
       i + 1,
     );
   });
+  checkEvents(input, need);
+}
+
+function checkEvents(input: ForecastInput, need: Need): void {
   input.events.forEach((e, i) => {
     need(isDay(e.at), "events.at", "Give the day of the event.", i + 1);
     const alive = e.lastAliveAt ?? e.at;

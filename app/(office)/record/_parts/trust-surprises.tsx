@@ -1,0 +1,78 @@
+import Link from "next/link";
+import { type Column, DataTable } from "@/components/ui/data-table";
+import { Section } from "@/components/ui/page-head";
+import { EmptyState } from "@/components/ui/states";
+import { dayOfInstant } from "@/lib/present/calendar-days";
+import { formatDay, formatWindow } from "@/lib/present/format-day";
+import { formatPercent } from "@/lib/present/format-share";
+import { NOTHING } from "@/lib/present/locale";
+import type { TrustView } from "@/lib/usecases/read-trust";
+
+type Surprise = TrustView["surprises"][number];
+
+/** Packs whose end had been given less than one chance in twenty. */
+export function TrustSurprises({ view }: { view: TrustView }) {
+  return (
+    <Section
+      title="Packs that surprised"
+      aside={`${view.surprises.length} of ${view.surprising} shown`}
+    >
+      <DataTable
+        caption="Packs that surprised, newest first"
+        columns={columns(view)}
+        rows={view.surprises}
+        rowKey={(row) => row.packId}
+        empty={<EmptyState title="None: every removal was within what had been said." />}
+      />
+    </Section>
+  );
+}
+
+function columns({ organisation, today }: TrustView): Column<Surprise>[] {
+  const { locale, timeZone } = organisation;
+  const day = (at: Date | null) =>
+    at ? formatDay(dayOfInstant(at, timeZone), locale, { today }) : NOTHING;
+  return [
+    {
+      key: "tag",
+      head: "Asset",
+      rowHeader: true,
+      cell: (row) => (
+        <Link
+          href={`/fleet/${encodeURIComponent(row.tag)}`}
+          className="font-mono text-xs font-semibold hover:underline"
+        >
+          {row.tag}
+        </Link>
+      ),
+    },
+    { key: "model", head: "Model", cell: (row) => row.modelName },
+    { key: "cell", head: "Cell", cell: (row) => row.designation },
+    {
+      key: "window",
+      head: "Window said",
+      cell: (row) =>
+        formatWindow(
+          {
+            p5: dayOfInstant(row.p05, timeZone),
+            p50: dayOfInstant(row.p50, timeZone),
+            p95: dayOfInstant(row.p95, timeZone),
+          },
+          locale,
+          today,
+        ).text,
+    },
+    {
+      key: "chance",
+      head: "Chance of having stopped",
+      align: "right",
+      cell: (row) => formatPercent(row.chanceStoppedPermille / 1000, locale),
+    },
+    {
+      key: "found",
+      head: "Found",
+      cell: (row) => (row.censored ? "still running" : `stopped ${day(row.stoppedAt)}`),
+    },
+    { key: "removed", head: "Came out", cell: (row) => day(row.removedAt) },
+  ];
+}

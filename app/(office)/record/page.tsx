@@ -1,0 +1,40 @@
+import type { Metadata } from "next";
+import { PageHead } from "@/components/ui/page-head";
+import { deps } from "@/lib/server/deps";
+import { requireActor } from "@/lib/server/session";
+import { readTrust } from "@/lib/usecases/read-trust";
+import { RecordTabs } from "./_parts/record-tabs";
+import { TrustFigures } from "./_parts/trust-figures";
+import { TrustFilters } from "./_parts/trust-filters";
+import { TrustGroups } from "./_parts/trust-groups";
+import { TrustPlot } from "./_parts/trust-plot";
+import { TrustSurprises } from "./_parts/trust-surprises";
+
+export const metadata: Metadata = { title: "Record" };
+
+export default async function RecordPage(props: {
+  searchParams: Promise<Record<string, string | undefined>>;
+}) {
+  const params = await props.searchParams;
+  const view = await readTrust(deps(), await requireActor(), {
+    days: params.days ?? "365",
+    group: (params.group ?? "chemistry") as never,
+    crew: params.crew ?? null,
+  });
+  return (
+    <main id="main" className="page">
+      <PageHead
+        title="Can the dates be trusted?"
+        lede="Each pack that came out is held against the forecast of the day before: how likely was it, then, that the device had stopped?"
+      />
+      <RecordTabs current="trust" />
+      <TrustFigures view={view} />
+      <TrustFilters view={view} params={params} />
+      <div className="grid gap-6 xl:grid-cols-[21rem_1fr]">
+        <TrustPlot view={view} />
+        <TrustGroups view={view} />
+      </div>
+      <TrustSurprises view={view} />
+    </main>
+  );
+}

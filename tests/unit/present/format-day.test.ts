@@ -1,4 +1,4 @@
-import { describe, expect, it } from "vitest";
+import { describe, expect, it, vi } from "vitest";
 import { axisDay, dayFromNumber, dayNumber, dayOfInstant } from "@/lib/present/calendar-days";
 import {
   formatDay,
@@ -91,6 +91,14 @@ describe("ISO 8601 weeks", () => {
     ["2027-01-04", 2027, 1],
   ])("%s lies in week %i-%i", (day, year, week) => {
     expect(isoWeek(day)).toEqual({ year, week });
+  });
+  it.each(["America/Los_Angeles", "Pacific/Kiritimati"])("does not ask the machine: %s", (zone) => {
+    vi.stubEnv("TZ", zone);
+    expect(new Date(0).getTimezoneOffset()).not.toBe(0);
+    expect(isoWeek("2027-01-04")).toEqual({ year: 2027, week: 1 });
+    expect(isoWeek("2027-01-03")).toEqual({ year: 2026, week: 53 });
+    expect(formatDay("2026-12-01", "en-GB", { today })).toBe("1 Dec");
+    vi.unstubAllEnvs();
   });
   it("names the week's year where it is another", () => {
     expect(weekLabel("2026-12-14", today)).toBe(`week${NBSP}51`);

@@ -1,9 +1,7 @@
-import { startDevelopmentDatabase } from "./process/development-database.mjs";
-import { printTrouble } from "./process/trouble.mjs";
-try {
-  const server = await startDevelopmentDatabase((line) => console.log(line));
-  console.log(`${server.adopted ? "Already running" : "Started"}: ${server.url("dev")}`);
-} catch (error) {
-  printTrouble(error, "starting the development database");
-  process.exitCode = 1;
-}
+/**
+ * `npm run dev`: the product with reloading, on the development database.
+ * `npm run dev -- database`: only the database, which stays up; tests use it too.
+ */
+import { develop } from "./process/develop.mjs";
+
+process.exitCode = await develop(process.argv.slice(2));

@@ -23,10 +23,11 @@ import { Trouble } from "./trouble.mjs";
  * @param {string} options.cwd
  * @param {string} options.log
  * @param {(child: Child, how: string) => void} options.onDeath it ended without being stopped
+ * @param {(text: string) => void} [options.hear] is told all that it prints
  * @param {number} [options.patienceMs] how long it may take to stop
  * @returns {Child}
  */
-export function startChild(name, args, { env, cwd, log, onDeath, patienceMs }) {
+export function startChild(name, args, { env, cwd, log, onDeath, hear, patienceMs }) {
   const file = new RotatingLog(log);
   const child = spawn(process.execPath, args, {
     ...{ cwd, env, detached: true },
@@ -40,6 +41,7 @@ export function startChild(name, args, { env, cwd, log, onDeath, patienceMs }) {
     stream.on("data", (text) => {
       recent = (recent + text).slice(-8192);
       file.write(text);
+      hear?.(text);
     });
   }
   const pid = child.pid ?? 0;

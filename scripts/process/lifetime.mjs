@@ -18,12 +18,23 @@ export class Lifetime {
   reason;
   #ending = false;
 
-  /** Hears Ctrl-C, a polite kill and a closed terminal. */
+  /**
+   * Hears Ctrl-C, a polite kill and a closed terminal. A kill of npm ends the shell between
+   * npm and this process and never reaches it: then the parent changes.
+   */
   listen() {
     for (const signal of /** @type {const} */ (["SIGINT", "SIGTERM", "SIGHUP"])) {
       process.on(signal, () => this.ask(signal, 0));
     }
+    const parent = process.ppid;
+    const look = () => process.ppid === parent || this.ask("npm was ended", 0);
+    if (process.env.npm_lifecycle_event) setInterval(look, 500).unref();
     return this;
+  }
+
+  /** Whether anything would have to be stopped. */
+  get hasStarted() {
+    return this.#started.length > 0;
   }
 
   /**

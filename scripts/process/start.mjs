@@ -32,6 +32,7 @@ export async function start() {
     code = life.reason === undefined ? 1 : await life.asked;
     if (life.reason === undefined) printTrouble(error, "starting");
   }
+  if (!life.hasStarted) return code;
   print(`\nStopping (${life.reason ?? "after the failure"}) …`);
   await life.end((name, error) => {
     printTrouble(error, `stopping the ${name}`);
@@ -185,7 +186,6 @@ function farewell(env, { mailAddress, logs, demonstration }) {
   if (mailAddress) lines.push(`  Mail page    ${mailAddress}`);
   lines.push(`  Logs         ${logs}`, "");
   if (demonstration) return [...lines, ...signInLines(ROOT)].join("\n");
-  lines.push("  Where nobody can sign in yet: `npm run first-administrator` makes an account;");
-  lines.push(`  it needs DATABASE_URL=${env.DATABASE_URL}`);
+  lines.push("  Where nobody can sign in yet: `npm run first-administrator` makes an account.");
   return lines.join("\n");
 }

@@ -4,7 +4,7 @@ import type { ScenarioAsset } from "./assets";
 import { CELL_CATALOGUE } from "./cell-catalogue";
 import { DEVICE_MODELS } from "./device-models";
 import type { Field } from "./field";
-import { type HistoryPlan, lastHeard, liveThrough } from "./history";
+import { type HistoryPlan, liveThrough, measureDraws, takeStock } from "./history";
 import { localDay, TIME_ZONE, worldTime } from "./local-time";
 import { openField } from "./open-field";
 import type { Scenario } from "./scenario";
@@ -63,6 +63,7 @@ function live(staff: Staff, plan: HistoryPlan, rng: Rng): Lived {
 
 function fromField({ field, assets }: Lived, plan: HistoryPlan): Omit<Scenario, "people"> {
   const { log, stores } = field;
+  const lastHeard = takeStock(field, plan.now);
   const updated = log.events.filter((e) => e.kind === "firmware_changed");
   return {
     organisation: {
@@ -90,7 +91,8 @@ function fromField({ field, assets }: Lived, plan: HistoryPlan): Omit<Scenario, 
     readings: log.readings,
     events: log.events,
     rounds: log.rounds,
-    lastHeard: lastHeard(field, plan.now),
+    draws: measureDraws(field, plan.now),
+    lastHeard,
     firmwareVersion: new Map(updated.map((e) => [e.assetTag, plan.firmware.version])),
     world: field.world,
   };

@@ -15,7 +15,7 @@ export interface ScenarioPack {
   removedBy: string | null;
   reasonOut: ReasonOut | null;
   voltageOutMv: number | null;
-  /** When the device was last heard before it fell silent, if it did. */
+  /** When the device's first message was missed, if it fell silent. */
   stoppedAt: Date | null;
   lookOut: string;
 }
@@ -31,7 +31,6 @@ export interface ScenarioReading {
   readonly accuracyMv: number | null;
   readonly instrument: string;
   readonly technicianKey: string;
-  readonly doubt: string | null;
   readonly note: string;
 }
 
@@ -42,6 +41,13 @@ export interface ScenarioDeviceEvent {
   readonly lastHeardAt: Date | null;
   readonly note: string;
   readonly technicianKey: string | null;
+}
+
+/** A measured average current. */
+export interface ScenarioDraw {
+  readonly assetTag: string;
+  readonly at: Date;
+  readonly averageUa: number;
 }
 
 export interface ScenarioTask {

@@ -2,7 +2,8 @@ import type { ScenarioAsset } from "./assets";
 import { runDay } from "./day-round";
 import type { Field } from "./field";
 import { fromWorldTime, localInstant, weekdayOf, worldTime } from "./local-time";
-import { installPack, takeReading } from "./site-visit";
+import type { ScenarioDraw } from "./field-log";
+import { installPack, silence, takeReading } from "./site-visit";
 import { callingSites, isKnownSilent } from "./site-due";
 import { isAway, type ScenarioTechnician } from "./staff";
 import { steer } from "./steer";
@@ -130,13 +131,33 @@ export function liveThrough(field: Field, plan: HistoryPlan): void {
   bookAhead(field, plan.today);
 }
 
-/** The last time each asset in service was heard, as the office sees it at `now`. */
-export function lastHeard(field: Field, now: Date): Map<string, Date> {
+/** Silences the office knows of at `now`, written down as events; when each asset was last heard. */
+export function takeStock(field: Field, now: Date): Map<string, Date> {
   const heard = new Map<string, Date>();
   for (const tag of field.log.installed.keys()) {
     const stopped = field.world.stoppedAt(tag);
-    const last = Math.min(worldTime(now), stopped ?? Infinity) - field.rng.uniform(0.001, 0.04);
-    heard.set(tag, fromWorldTime(last));
+    if (stopped === null) {
+      heard.set(tag, fromWorldTime(worldTime(now) - field.rng.uniform(0.001, 0.04)));
+      continue;
+    }
+    const event = silence(tag, stopped, field.rng);
+    heard.set(tag, event.lastHeardAt);
+    if (event.at < now) field.log.events.push(event);
   }
   return heard;
+}
+
+/** A twelfth of the fleet had its current measured in the last month, within some per cent. */
+export function measureDraws(field: Field, now: Date): ScenarioDraw[] {
+  const draws: ScenarioDraw[] = [];
+  for (const tag of field.log.installed.keys()) {
+    const truth = field.world.truth(tag);
+    if (!truth || field.world.stoppedAt(tag) !== null || !field.rng.chance(0.08)) continue;
+    draws.push({
+      assetTag: tag,
+      at: fromWorldTime(worldTime(now) - field.rng.uniform(1, 30)),
+      averageUa: Math.max(1, Math.round(truth.averageUa * field.rng.normal(1, 0.05))),
+    });
+  }
+  return draws;
 }

@@ -5,6 +5,7 @@ import type { ScenarioModel } from "./device-model";
 import type { District } from "./district";
 import type {
   ScenarioDeviceEvent,
+  ScenarioDraw,
   ScenarioPack,
   ScenarioReading,
   ScenarioRound,
@@ -46,6 +47,7 @@ export interface Scenario {
   readonly readings: readonly ScenarioReading[];
   readonly events: readonly ScenarioDeviceEvent[];
   readonly rounds: readonly ScenarioRound[];
+  readonly draws: readonly ScenarioDraw[];
   readonly lastHeard: ReadonlyMap<string, Date>;
   readonly firmwareVersion: ReadonlyMap<string, string>;
   /** The hidden truth behind it all: for judging forecasts, never for making them. */

@@ -1,23 +1,14 @@
+import type { Rng } from "../prng";
 import type { ScenarioAsset } from "./assets";
-import { catalogueCell } from "./cell-catalogue";
 import { modelByCode } from "./device-models";
 import type { Field } from "./field";
-import type { ReasonOut, ScenarioReading, ScenarioTask } from "./field-log";
+import type { ReasonOut, ScenarioDeviceEvent, ScenarioReading, ScenarioTask } from "./field-log";
 import { fromWorldTime, worldTime } from "./local-time";
 import { isHabitDue } from "./site-due";
 import type { ScenarioTechnician } from "./staff";
 
 const TEST_LOADS_MA = [50, 100, 100, 200];
 const FAULT_CHANCE = 0.004;
-
-/** Words a person logging the value would have seen, when it cannot well be right. */
-function doubtOf(asset: ScenarioAsset, designation: string, millivolts: number): string | null {
-  const model = modelByCode(asset.modelCode);
-  const fresh = catalogueCell(designation).nominalMv * model.series * 1.13;
-  if (millivolts > fresh) return "Higher than a fresh pack of these cells gives.";
-  if (millivolts < model.cutoffMv * 0.5) return "Far below the device's cut-off.";
-  return null;
-}
 
 /** Reads the voltage of an asset's pack and writes it down. */
 export function takeReading(
@@ -54,11 +45,26 @@ export function takeReading(
     accuracyMv: rng.chance(0.6) ? 10 : null,
     instrument: `Meter ${technician.key.slice(-1)}`,
     technicianKey: technician.key,
-    doubt: doubtOf(asset, pack.designation, seen.millivolts),
     note,
   };
   log.readings.push(reading);
   return reading;
+}
+
+/** How a stop shows at the office: the last message that came, and the first that did not. */
+export function silence(
+  tag: string,
+  stopped: number,
+  rng: Rng,
+): ScenarioDeviceEvent & { lastHeardAt: Date } {
+  return {
+    assetTag: tag,
+    at: fromWorldTime(stopped + rng.uniform(0.002, 0.04)),
+    kind: "stopped",
+    lastHeardAt: fromWorldTime(stopped - rng.uniform(0.002, 0.04)),
+    note: "",
+    technicianKey: null,
+  };
 }
 
 /** Takes the pack out of the books, with why and at what voltage. */
@@ -79,16 +85,11 @@ export function removePack(
   pack.voltageOutMv = voltageOutMv;
   const stopped = world.stoppedAt(asset.tag);
   if (stopped !== null) {
-    const heard = Math.max(stopped - rng.uniform(0, 0.04), worldTime(pack.installedAt) + 0.01);
-    pack.stoppedAt = fromWorldTime(heard);
-    log.events.push({
-      assetTag: asset.tag,
-      at,
-      kind: "stopped",
-      lastHeardAt: pack.stoppedAt,
-      note: "",
-      technicianKey: technician.key,
-    });
+    const event = silence(asset.tag, stopped, rng);
+    const first = new Date(pack.installedAt.getTime() + 60_000);
+    const lastHeardAt = event.lastHeardAt < first ? first : event.lastHeardAt;
+    pack.stoppedAt = event.at < at ? event.at : at;
+    log.events.push({ ...event, lastHeardAt, at: pack.stoppedAt, technicianKey: technician.key });
     if (rng.chance(0.06))
       pack.lookOut = pack.designation.startsWith("VRLA") ? "swollen" : "leaking";
   }

@@ -51,8 +51,8 @@ async function bringUp(steps, life, databaseUrl) {
   const mail = await freePort(3025, [web]);
   const { authSecret } = secretsOf(home);
   const mailAddress = `http://127.0.0.1:${mail}`;
-  const filled = childEnvironment(process.env, { databaseUrl, authSecret, port: web, mailAddress });
-  const env = { ...filled, NODE_ENV: /** @type {const} */ ("development") };
+  const env = childEnvironment(process.env, { databaseUrl, authSecret, port: web, mailAddress });
+  Object.assign(env, { NODE_ENV: "development" });
   const { empty } = await steps.step(
     "Schema",
     () => migrate(ROOT, env),

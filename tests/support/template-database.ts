@@ -23,7 +23,7 @@ const TEMPLATE_PREFIX = "wanewright_template_";
  * which every test file copies its own database in some hundredths of a second. Its name
  * holds a hash of the migrations, so that it is made again only when they change.
  */
-export default async function prepare(project: TestProject): Promise<void> {
+export async function setup(project: TestProject): Promise<void> {
   const server = process.env.TEST_DATABASE_URL ?? DEVELOPMENT_SERVER;
   const template = TEMPLATE_PREFIX + hashOfMigrations();
   const admin = new pg.Client({ connectionString: server });

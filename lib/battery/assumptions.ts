@@ -3,6 +3,8 @@
  * deviation unless they say otherwise. They are priors: readings and the fleet move them.
  */
 export const ASSUMED = {
+  /** Makers rate at currents above those of the field, where a cell gives a little more. */
+  capacityMean: 1.03,
   /** Cell-to-cell and lot-to-lot capacity (5-10 % across brands of LR6 under one load). */
   capacitySd: 0.08,
   /** Device draw against its duty cycle. */
@@ -13,8 +15,14 @@ export const ASSUMED = {
   changedDrawSd: 0.35,
   /** Depth at which a new pack starts, beside shelf ageing. */
   startDepthSd: 0.01,
+  /** Depth over which a curve's error stays the same, roughly. */
+  curveErrorDepth: 0.3,
   /** Where on the depth axis the curve of this very pack lies. */
   curveDepthSd: 0.015,
+  /** Cells of one lot differ; a string ends a little before its mean cell does. */
+  weakestCellShare: 0.02,
+  /** A stop comes in the coldest hour: this much below the month's mean, K. */
+  coldHourK: 6,
   /** Depth at which this very device stops. */
   endDepthSd: 0.015,
   /** Internal resistance against the table. */

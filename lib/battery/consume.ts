@@ -18,13 +18,21 @@ interface Window {
 }
 
 /**
- * Move every depth by draw x rate + leak and bring the mass to a sum of 1. Each rate row
- * shifts as one; its mass is split between the two nearest nodes of the new window, which
- * keeps total and mean exactly.
+ * Let a stretch of time consume: `draw` is the share drawn at rate 1, `leak` the exponent of
+ * self-discharge, which takes its share of what is left: x -> 1 - (1 - x) e^-leak + draw x
+ * rate (1 - e^-leak)/leak. Brings the mass to a sum of 1. Each rate row shifts as one; its
+ * mass is split between the two nearest nodes of the new window, which keeps total and mean.
  */
 export function consume(grid: Grid, draw: number, leak: number): void {
+  const kept = Math.exp(-leak);
+  grid.depthFrom = 1 - (1 - grid.depthFrom) * kept;
+  grid.depthStep *= kept;
+  shiftRows(grid, leak > 1e-9 ? (draw * (1 - kept)) / leak : draw);
+}
+
+function shiftRows(grid: Grid, draw: number): void {
   const { nr, nx, rowMass } = grid;
-  const window = movedWindow(grid, draw, leak);
+  const window = movedWindow(grid, draw);
   const refine = grid.depthStep / window.step > REFINED;
   const least = NEGLIGIBLE / window.scale;
   grid.spare.fill(0);
@@ -33,7 +41,7 @@ export function consume(grid: Grid, draw: number, leak: number): void {
       rowMass[row] = 0;
       continue;
     }
-    const by = draw * grid.rate[row % nr]! + leak;
+    const by = draw * grid.rate[row % nr]!;
     if (!(refine && gatherRow(grid, row, by, window))) scatterRow(grid, row * nx, by, window);
   }
   const old = grid.p;
@@ -44,7 +52,7 @@ export function consume(grid: Grid, draw: number, leak: number): void {
 }
 
 /** Mean +/- WINDOW spreads of the moved mass; leaves each row's mass in `rowMass`. */
-function movedWindow(grid: Grid, draw: number, leak: number): Window {
+function movedWindow(grid: Grid, draw: number): Window {
   const { p, nx, nr, rowMass } = grid;
   let total = 0;
   let first = 0;
@@ -60,7 +68,7 @@ function movedWindow(grid: Grid, draw: number, leak: number): Window {
       squares += m * i * i;
     }
     rowMass[row] = mass;
-    const from = draw * grid.rate[row % nr]! + leak;
+    const from = draw * grid.rate[row % nr]!;
     const moved = sum * grid.depthStep;
     total += mass;
     first += mass * from + moved;

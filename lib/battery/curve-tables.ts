@@ -20,7 +20,9 @@ export interface ChemistryCurves {
   readonly coldCapacity: readonly number[];
   /** Change of the resting voltage with temperature, mV per kelvin and element. */
   readonly restMvPerKelvin: number;
-  /** Spread between cells of one kind of the resting voltage, one standard deviation, mV. */
+  /** Growth of the resistance with age, share a year; from memory, rough. */
+  readonly resistanceGrowthPerYear: number;
+  /** How far the table may be off a cell at any depth, one standard deviation, mV. */
   readonly spreadMv: number;
 }
 
@@ -40,6 +42,7 @@ export const CURVES: Readonly<Record<Chemistry, ChemistryCurves>> = {
     coldResistance: [14, 5, 3, 2, 1, 0.75, 0.65],
     coldCapacity: [0.05, 0.4, 0.6, 0.8, 1, 1, 1],
     restMvPerKelvin: 0.3,
+    resistanceGrowthPerYear: 0.05,
     spreadMv: 12,
   },
   // From memory: sloping discharge of Leclanché and zinc chloride cells.
@@ -51,7 +54,8 @@ export const CURVES: Readonly<Record<Chemistry, ChemistryCurves>> = {
     coldResistance: [25, 9, 4.5, 2.3, 1, 0.8, 0.7],
     coldCapacity: [0.01, 0.15, 0.4, 0.7, 1, 1, 1],
     restMvPerKelvin: 0.3,
-    spreadMv: 15,
+    resistanceGrowthPerYear: 0.1,
+    spreadMv: 25,
   },
   // Rest: 15 ohm log of an FR6 plus current times (V15 - V3)/(I3 - I15), Newton1026/
   // BatteryProject, on 3050 mAh. A hardly used cell rests near 1.75 V (Linden 4e p. 14.76).
@@ -65,7 +69,8 @@ export const CURVES: Readonly<Record<Chemistry, ChemistryCurves>> = {
     coldResistance: [4, 2.2, 1.7, 1.4, 1, 0.85, 0.75],
     coldCapacity: [0.7, 0.85, 0.9, 0.95, 1, 1, 1],
     restMvPerKelvin: 0.1,
-    spreadMv: 8,
+    resistanceGrowthPerYear: 0.03,
+    spreadMv: 12,
   },
   // From memory (plateau 3.6 V to about 95 %, fresh 3.67 V); plateau against temperature from
   // the span of Linden 4e Fig. 14.17b.
@@ -77,7 +82,8 @@ export const CURVES: Readonly<Record<Chemistry, ChemistryCurves>> = {
     coldResistance: [6, 3, 2.1, 1.5, 1, 0.75, 0.6],
     coldCapacity: [0.5, 0.7, 0.8, 0.9, 1, 1, 0.95],
     restMvPerKelvin: 0.25,
-    spreadMv: 10,
+    resistanceGrowthPerYear: 0.1,
+    spreadMv: 12,
   },
   // Rest: CR14250SE as read off its data sheet in Zephyr's battery.h, made monotone (the two
   // readings at 80 and 90 % charge are pooled). Resistance: CR2032 10 to 40 ohm over life.
@@ -89,7 +95,8 @@ export const CURVES: Readonly<Record<Chemistry, ChemistryCurves>> = {
     coldResistance: [9, 3, 2, 1.4, 1, 0.8, 0.7],
     coldCapacity: [0.2, 0.5, 0.7, 0.85, 1, 1, 1],
     restMvPerKelvin: 0.3,
-    spreadMv: 12,
+    resistanceGrowthPerYear: 0.03,
+    spreadMv: 20,
   },
   // From memory: 1.55 V plateau of a zinc-silver oxide button.
   "silver-oxide": {
@@ -100,7 +107,8 @@ export const CURVES: Readonly<Record<Chemistry, ChemistryCurves>> = {
     coldResistance: [15, 5, 3, 1.8, 1, 0.8, 0.7],
     coldCapacity: [0.1, 0.4, 0.65, 0.85, 1, 1, 1],
     restMvPerKelvin: 0.2,
-    spreadMv: 6,
+    resistanceGrowthPerYear: 0.05,
+    spreadMv: 10,
   },
   // From memory: 12.8/12.5/12.2/12.0/11.8 V at 100/75/50/25/0 % of a 12 V block, six elements.
   vrla: {
@@ -111,7 +119,8 @@ export const CURVES: Readonly<Record<Chemistry, ChemistryCurves>> = {
     coldResistance: [4, 2.2, 1.7, 1.4, 1, 0.9, 0.85],
     coldCapacity: [0.35, 0.6, 0.72, 0.84, 1, 1.05, 1.05],
     restMvPerKelvin: 0.2,
-    spreadMv: 10,
+    resistanceGrowthPerYear: 0.1,
+    spreadMv: 15,
   },
   // Rest: IFR18650 E1600 as read off its data sheet in Zephyr's battery.h.
   lifepo4: {
@@ -122,6 +131,7 @@ export const CURVES: Readonly<Record<Chemistry, ChemistryCurves>> = {
     coldResistance: [9, 4, 2.7, 1.8, 1, 0.8, 0.7],
     coldCapacity: [0.3, 0.6, 0.75, 0.88, 1, 1, 1],
     restMvPerKelvin: 0.1,
-    spreadMv: 5,
+    resistanceGrowthPerYear: 0.05,
+    spreadMv: 8,
   },
 };

@@ -47,3 +47,22 @@ export function openRate(grid: Grid, mean: number, sd: number): void {
     }
   }
 }
+
+/**
+ * A curve errs here in one way and there in another: as depth passes, the offset is drawn
+ * anew with this chance from its prior. Readings far apart on the curve thus never average
+ * its error away.
+ */
+export function redrawOffset(grid: Grid, chance: number): void {
+  const { p, nx, nr, no, offsetPrior } = grid;
+  const plane = nr * nx;
+  grid.rowMass.fill(1);
+  for (let k = 0; k < plane; k++) {
+    let mass = 0;
+    for (let j = k; j < p.length; j += plane) mass += p[j]!;
+    if (mass === 0) continue;
+    mass *= chance;
+    for (let o = 0, j = k; o < no; o++, j += plane)
+      p[j] = (1 - chance) * p[j]! + mass * offsetPrior[o]!;
+  }
+}

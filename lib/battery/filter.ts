@@ -8,7 +8,7 @@ import type { EpochDays } from "../units";
 import { ASSUMED } from "./assumptions";
 import { DAYS_PER_YEAR, monthOf } from "./climate";
 import { consume } from "./consume";
-import { openRate, wander } from "./draw-walk";
+import { openRate, redrawOffset, wander } from "./draw-walk";
 import { type Grid, newGrid, normalise, weighDepth } from "./grid";
 import type { ForecastInput, PackEvent, PackReading, ReadingWeight } from "./pack";
 import { type PackModel, leakBetween, packModel } from "./pack-model";
@@ -158,6 +158,9 @@ export function elapse(model: PackModel, grid: Grid, from: EpochDays, to: EpochD
     const start = from + (days * s) / steps;
     const end = from + (days * (s + 1)) / steps;
     wander(grid, variance);
-    consume(grid, model.drawPerDay * (end - start), leakBetween(model, start, end));
+    const share = model.drawPerDay * (end - start);
+    const leak = leakBetween(model, start, end);
+    redrawOffset(grid, 1 - Math.exp(-(share + leak) / ASSUMED.curveErrorDepth));
+    consume(grid, share, leak);
   }
 }

@@ -14,6 +14,17 @@ export const WINDOW = 4.5;
 /** Added to every weight of evidence: nothing becomes certain. */
 const DOUBT = 1e-9;
 
+const OFFSET_PRIOR = bells(OFFSET_NODES);
+
+/** Normal weights at whole spreads around 0, summing to 1. */
+function bells(count: number): Float64Array {
+  const weights = Float64Array.from({ length: count }, (_, o) =>
+    Math.exp(-0.5 * (o - (count - 1) / 2) ** 2),
+  );
+  const total = weights.reduce((a, b) => a + b, 0);
+  return weights.map((w) => w / total);
+}
+
 export interface Grid {
   readonly nx: number;
   readonly nr: number;
@@ -37,6 +48,8 @@ export interface Grid {
   /** Offsets in mV and their spacing. */
   readonly offsetMv: Float64Array;
   readonly offsetStepMv: number;
+  /** Prior probability of each offset. */
+  readonly offsetPrior: Float64Array;
 }
 
 /** Grid of a new pack. `years`: how long the draw will have wandered; `sd`: widest prior. */
@@ -69,6 +82,7 @@ export function newGrid(model: PackModel, years: number, sd: number): Grid {
       (_, o) => (o - middle) * model.offsetSdMv,
     ),
     offsetStepMv: model.offsetSdMv,
+    offsetPrior: OFFSET_PRIOR,
   };
   fillPrior(grid, model);
   return grid;
@@ -79,7 +93,7 @@ function fillPrior(grid: Grid, model: PackModel): void {
   const bell = (x: number, mean: number, sd: number): number =>
     Math.exp(-0.5 * ((x - mean) / sd) ** 2);
   for (let o = 0; o < no; o++) {
-    const wo = bell(grid.offsetMv[o]!, 0, model.offsetSdMv);
+    const wo = grid.offsetPrior[o]!;
     for (let r = 0; r < nr; r++) {
       const wr = wo * bell(grid.lnRate[r]!, model.prior.mean, model.prior.sd);
       for (let i = 0; i < nx; i++) {

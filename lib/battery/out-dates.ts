@@ -27,8 +27,9 @@ interface TimeLeft {
   readonly mass: Float64Array;
   readonly from: number;
   readonly step: number;
-  /** Mean total share consumed per day. */
+  /** Mean share consumed per day until the end, in all and by the draw alone. */
   readonly ratePerDay: number;
+  readonly drawPerDay: number;
 }
 
 export interface OutDates {
@@ -42,7 +43,7 @@ export interface OutDates {
 export function outDates(filtered: Filtered, now: EpochDays): OutDates {
   const { model, at, aliveAt, stoppedAt } = filtered;
   const left = widen(collect(filtered), model.endSd);
-  const clock = seasonalClock(model, at, left.ratePerDay);
+  const clock = seasonalClock(model, at, left);
   const earliest = model.pack.installedAt;
   const latest = Math.max(now, earliest) + ASSUMED.horizonDays;
   const below = aliveAt === null ? 0 : massBelow(left, aliveAt - at);
@@ -88,18 +89,21 @@ function massBelow(left: TimeLeft, days: number): number {
 /** Days left of every grid cell, (end - depth) / rate, as a histogram. */
 function collect({ model, grid }: Filtered): TimeLeft {
   const leak = model.leakPerDay * model.ageing.meanFactor;
-  const perDay = grid.rate.map((rate) => Math.max(SLOWEST_PER_DAY, model.drawPerDay * rate + leak));
+  const draws = grid.rate.map((rate) => Math.max(SLOWEST_PER_DAY, model.drawPerDay * rate));
   const joint = new Float64Array(grid.nr * grid.nx);
   for (let k = 0; k < grid.p.length; k++) joint[k % joint.length]! += grid.p[k]!;
   const days = new Float64Array(joint.length);
   let from = Infinity;
   let to = -Infinity;
-  let meanRate = 0;
+  let meanDraw = 0;
+  let meanLeak = 0;
   for (let k = 0; k < joint.length; k++) {
-    const rate = perDay[Math.floor(k / grid.nx)]!;
-    const room = model.endWarm - (grid.depthFrom + (k % grid.nx) * grid.depthStep);
-    days[k] = Math.max(-LONGEST_DAYS, Math.min(LONGEST_DAYS, room / rate));
-    meanRate += joint[k]! * rate;
+    const draw = draws[Math.floor(k / grid.nx)]!;
+    const depth = grid.depthFrom + (k % grid.nx) * grid.depthStep;
+    const t = timeLeft(depth, model.endWarm, draw, leak);
+    days[k] = Math.max(-LONGEST_DAYS, Math.min(LONGEST_DAYS, t));
+    meanDraw += joint[k]! * draw;
+    meanLeak += joint[k]! * leak * Math.max(0, 1 - (depth + model.endWarm) / 2);
     if (joint[k]! < IGNORED) continue;
     from = Math.min(from, days[k]!);
     to = Math.max(to, days[k]!);
@@ -107,7 +111,18 @@ function collect({ model, grid }: Filtered): TimeLeft {
   const step = Math.max((to - from) / (BINS - 1), 1e-3);
   const mass = new Float64Array(BINS);
   for (let k = 0; k < joint.length; k++) deposit(mass, (days[k]! - from) / step, joint[k]!);
-  return { mass, from, step, ratePerDay: meanRate };
+  return { mass, from, step, ratePerDay: meanDraw + meanLeak, drawPerDay: meanDraw };
+}
+
+/**
+ * Days from a depth to the end depth: the solution of dx/dt = draw + leak (1 - x). Past the
+ * end it counts back at the rate held there.
+ */
+function timeLeft(depth: number, end: number, draw: number, leak: number): number {
+  const room = end - depth;
+  const rate = draw + leak * Math.max(0, 1 - end);
+  if (room <= 0 || leak * room < 1e-6 * rate) return room / rate;
+  return Math.log1p((leak * room) / rate) / leak;
 }
 
 /** Split a mass between the two nearest bins; beyond the ends it goes to the last. */
@@ -141,5 +156,5 @@ function widen(left: TimeLeft, endSd: number): TimeLeft {
       deposit(mass, (t + SPREAD_Z[z]! * sd - from) / step, left.mass[i]! * SPREAD_W[z]!);
     }
   }
-  return { mass, from, step, ratePerDay: left.ratePerDay };
+  return { ...left, mass, from, step };
 }

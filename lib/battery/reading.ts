@@ -15,7 +15,7 @@ import { CURVE_STEPS } from "./curves";
 import { freshDropMv } from "./cutoff";
 import { type Grid, depthMarginal, normalise } from "./grid";
 import type { PackReading, ReadingWeight } from "./pack";
-import type { PackModel } from "./pack-model";
+import { type PackModel, resistanceAge } from "./pack-model";
 
 /** Half the span over which the curve's slope is taken, in table steps: 1 % of depth. */
 const SLOPE_STEPS = 5;
@@ -36,7 +36,7 @@ function expectAt(model: PackModel, grid: Grid, reading: Circumstances): void {
   const { nodeA: mean, nodeB: variance } = grid;
   const dc = reading.temperatureDc ?? temperatureAt(pack.monthlyMeanDc, reading.at);
   const ua = reading.kind === "loaded" ? (reading.loadUa ?? model.peakUa) : 0;
-  const drop = freshDropMv(pack, curve, ua, dc);
+  const drop = freshDropMv(pack, curve, ua, dc) * resistanceAge(model, reading.at);
   const drift = curve.driftMvPerKelvin * (dc / 10 - 20);
   const fixed = fixedVariance(model, grid, reading);
   const { restMv, resistance, restScale } = curve;
@@ -60,7 +60,7 @@ function expectAt(model: PackModel, grid: Grid, reading: Circumstances): void {
 /** The part of a reading's variance that does not depend on depth, mV². */
 function fixedVariance(model: PackModel, grid: Grid, reading: Circumstances): number {
   const warmth = reading.temperatureDc === null ? ASSUMED.temperatureSdK : 1;
-  const cell = 0.5 * model.curve.restScale * CURVES[model.pack.cell.chemistry].spreadMv;
+  const cell = 0.25 * model.curve.restScale * CURVES[model.pack.cell.chemistry].spreadMv;
   const accuracy = reading.accuracyMv ?? ASSUMED.accuracyMv;
   return (
     accuracy ** 2 +

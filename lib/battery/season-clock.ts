@@ -7,7 +7,7 @@
 import type { EpochDays } from "../units";
 import { ASSUMED } from "./assumptions";
 import { DAYS_PER_YEAR, MONTH_STARTS, dayOfYear, monthOf } from "./climate";
-import { type PackModel, leakBetween } from "./pack-model";
+import type { PackModel } from "./pack-model";
 
 export interface SeasonalClock {
   /** Date on which a pack with this many even days left stops. */
@@ -16,10 +16,17 @@ export interface SeasonalClock {
   reachedAt(date: EpochDays): number;
 }
 
-export function seasonalClock(model: PackModel, at: EpochDays, ratePerDay: number): SeasonalClock {
-  const draw = ratePerDay - model.leakPerDay * model.ageing.meanFactor;
+/** Mean share consumed per day until the end, in all and by the draw alone. */
+export interface MeanRate {
+  readonly ratePerDay: number;
+  readonly drawPerDay: number;
+}
+
+export function seasonalClock(model: PackModel, at: EpochDays, mean: MeanRate): SeasonalClock {
+  const { ratePerDay, drawPerDay } = mean;
+  const leak = (ratePerDay - drawPerDay) / model.ageing.meanFactor;
   const progress = (date: EpochDays): number =>
-    (Math.max(0, draw) * (date - at) + leakBetween(model, at, date)) / ratePerDay;
+    (drawPerDay * (date - at) + leak * model.ageing.between(at, date)) / ratePerDay;
   const cold = (month: number): number => (model.endWarm - model.endByMonth[month]!) / ratePerDay;
   const months: Month[] = [];
   const limit = at + ASSUMED.horizonDays * 1.05;

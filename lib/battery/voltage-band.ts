@@ -99,5 +99,6 @@ function depthAt(filtered: Filtered, now: Standing, at: EpochDays): [number, num
   const drawn = model.drawPerDay * Math.exp(now.lnRate) * (at - filtered.at);
   const walk = Z90 * ASSUMED.drawWalkPerYear * Math.sqrt(years / 3);
   const half = now.halfDepth + drawn * Math.hypot(now.halfLnRate, walk);
-  return [now.depth + drawn + leakBetween(model, filtered.at, at), half];
+  const kept = Math.exp(-leakBetween(model, filtered.at, at));
+  return [1 - (1 - now.depth) * kept + drawn, half];
 }

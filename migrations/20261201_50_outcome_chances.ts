@@ -8,7 +8,9 @@ export async function up(db: Kysely<unknown>): Promise<void> {
         check (chance_stopped_permille between 0 and 1000),
       add column in_hindsight boolean not null default false`.execute(db);
   await sql`comment on column forecast_outcome.chance_stopped_permille is
-    'Chance, by that forecast, that the device had stopped when the pack came out.'`.execute(db);
+    'Chance, by that forecast, of stopping by ended_at: uniform from 0 to 1000 over many packs if the forecasts are sound, censored ones counted as such.'`.execute(
+    db,
+  );
   await sql`comment on column forecast_outcome.in_hindsight is
     'Worked out afterwards from nothing but what was known before the visit (imported history).'`.execute(
     db,

@@ -140,8 +140,8 @@ export async function settleForecast(
     select pack_id, ${outcome.recordedAt}::timestamptz, computed_at, p05, p20, p50, p80, p95,
       share_left_permille, ${outcome.censored}::boolean, ${outcome.endedAt}::timestamptz,
       (select count(*) * 20 from unnest(cdf_days) as day
-        where day <= extract(epoch from pack.removed_at) / 86400)
-    from forecast join pack on pack.id = pack_id where pack_id = ${packId}
+        where day <= extract(epoch from ${outcome.endedAt}::timestamptz) / 86400)
+    from forecast where pack_id = ${packId}
     on conflict (pack_id) do nothing`.execute(trx);
   await trx.deleteFrom("forecast").where("packId", "=", packId).execute();
 }

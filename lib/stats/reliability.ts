@@ -1,59 +1,59 @@
 /**
- * Reliability of stated chances: events are put in bins by the chance that was stated, and
- * the share that came true is laid beside the mean chance, with Wilson's interval.
- * Source: Murphy & Winkler, "Reliability of subjective probability forecasts", Applied
- * Statistics 26 (1977) 41-47 (from memory); interval: Wilson, JASA 22 (1927) 209-212.
+ * Are stated distributions of an end date sound? Each pack gives u = F(end), the chance its
+ * forecast gave to ending no later than it did (probability integral transform). Sound
+ * forecasts make u uniform, so a share p of packs ends by u = p. A pack taken out alive has
+ * only shown that its u is larger: it is right-censored, and Kaplan-Meier on the scale of u
+ * gives the share all the same.
+ * Sources: Dawid, JRSS A 147 (1984) 278-292 (the transform); Cox & Snell, JRSS B 30 (1968)
+ * 248-275 (residuals -ln(1-u), whose sum estimates the number of ends); both from memory.
  */
-import { wilson } from "./coverage";
+import { logLogInterval, stepAt, survivalSteps } from "./survival";
 
-export interface StatedChance {
-  /** 0..1 */
+export interface StatedEnd {
+  /** u, 0..1 */
   readonly chance: number;
-  readonly cameTrue: boolean;
+  /** false: taken out alive. */
+  readonly ended: boolean;
 }
 
-export interface ReliabilityBin {
+export interface ReliabilityPoint {
   readonly forecast: number;
   readonly observed: number;
-  /** 90 % interval of the observed share. */
+  /** 90 % interval. */
   readonly low: number;
   readonly high: number;
+  /** Packs still at risk there. */
   readonly count: number;
 }
 
-/**
- * @param edges ascending, from 0 to 1; a chance on an edge falls in the bin that starts there
- * @returns the bins that hold anything, by rising chance
- */
-export function reliabilityBins(
-  stated: readonly StatedChance[],
-  edges: readonly number[] = [0, 0.02, 0.05, 0.1, 0.2, 0.35, 0.5, 0.65, 0.8, 0.9, 1],
-): ReliabilityBin[] {
-  const bins: ReliabilityBin[] = [];
-  for (let i = 0; i + 1 < edges.length; i++) {
-    const from = edges[i] ?? 0;
-    const until = edges[i + 1] ?? 1;
-    const last = i + 2 === edges.length;
-    const held = stated.filter((s) => s.chance >= from && (s.chance < until || last));
-    if (held.length === 0) continue;
-    const hits = held.filter((s) => s.cameTrue).length;
-    const [low, high] = wilson(hits, held.length, 0.9);
-    bins.push({
-      forecast: held.reduce((sum, s) => sum + s.chance, 0) / held.length,
-      observed: hits / held.length,
-      low,
-      high,
-      count: held.length,
-    });
-  }
-  return bins;
-}
+const TENTHS = [0.1, 0.2, 0.3, 0.4, 0.5, 0.6, 0.7, 0.8, 0.9];
 
 /**
- * Brier score: mean squared difference between stated chance and outcome (0 best, 1 worst).
- * Source: Brier, Monthly Weather Review 78 (1950) 1-3.
+ * Share that had ended by each stated chance. Points at which no pack is left to judge by are
+ * left out.
  */
-export function brierScore(stated: readonly StatedChance[]): number {
-  const total = stated.reduce((sum, s) => sum + (s.chance - (s.cameTrue ? 1 : 0)) ** 2, 0);
-  return total / stated.length;
+export function reliabilityCurve(
+  stated: readonly StatedEnd[],
+  at: readonly number[] = TENTHS,
+): ReliabilityPoint[] {
+  const steps = survivalSteps(stated.map(({ chance, ended }) => ({ time: chance, ended })));
+  return at.flatMap((forecast) => {
+    const count = stated.filter((s) => s.chance >= forecast).length;
+    const step = stepAt(steps, forecast);
+    if (!step || count === 0) return [];
+    const [low, high] = logLogInterval(step, 0.9);
+    return [{ forecast, observed: 1 - step.survival, low: 1 - high, high: 1 - low, count }];
+  });
+}
+
+/** No forecast says more than 99 %: a residual beyond that would only show the tail's grain. */
+const MOST = 0.99;
+
+/**
+ * How many ends the forecasts expected of these packs up to the moment each was taken out,
+ * with the half-width of the 90 % range (the sum of residuals has the variance of its mean).
+ */
+export function expectedEnds(stated: readonly StatedEnd[]): { mean: number; spread: number } {
+  const mean = stated.reduce((sum, { chance }) => sum - Math.log(1 - Math.min(MOST, chance)), 0);
+  return { mean, spread: 1.645 * Math.sqrt(mean) };
 }

@@ -21,13 +21,15 @@ import { type Deps, defineUseCase } from "./use-case";
 
 const BATCH = 500;
 
-/** The forecast that is judged is the one of the evening before the visit. */
-const BEFORE_VISIT_MS = MS_PER_DAY / 2;
+/** Voltages taken this shortly before the removal belong to the same visit. */
+const SAME_VISIT_MS = MS_PER_DAY / 2;
 
 /**
  * For packs that came out before forecasts were kept (imported history): works out what the
- * forecast would have said on the day before the visit, from nothing but what was known then,
- * and keeps it beside what happened.
+ * forecast would have said at the last visit before the removal, from nothing but what was
+ * known then, and keeps it beside what happened. A later moment would not do: many a removal
+ * comes because the device fell silent, and a forecast made on the eve of such a visit would be
+ * one chosen by its outcome.
  */
 export const judgeHistory = defineUseCase({
   name: "judge-history",
@@ -73,10 +75,12 @@ function judgePack(
   recordedAt: Date,
 ): OutcomeRow {
   const removedAt = pack.removedAt ?? recordedAt;
-  const at = new Date(Math.max(pack.installedAt.getTime(), removedAt.getTime() - BEFORE_VISIT_MS));
-  const known = { ...pack, lastHeardAt: null };
+  const end = pack.stoppedAt ?? removedAt;
+  const until = Math.min(end.getTime(), removedAt.getTime() - SAME_VISIT_MS);
   const before = <Row extends { at: Date }>(rows: readonly Row[]) =>
-    rows.filter((row) => row.at < at && (pack.stoppedAt === null || row.at < pack.stoppedAt));
+    rows.filter((row) => row.at.getTime() < until);
+  const at = before(readings).at(-1)?.at ?? pack.installedAt;
+  const known = { ...pack, lastHeardAt: null };
   const forecast = forecastPack(
     forecastInputOf(catalogue, known, before(readings), before(events), null, at),
   );
@@ -92,8 +96,8 @@ function judgePack(
     p95: fromEpochDays(q.p95),
     shareLeftPermille: Math.round(forecast.shareLeft.p50 * 1000),
     censored: pack.stoppedAt === null,
-    endedAt: pack.stoppedAt ?? removedAt,
-    chanceStoppedPermille: Math.round(chanceOutBy(forecast, toEpochDays(removedAt)) * 1000),
+    endedAt: end,
+    chanceStoppedPermille: Math.round(chanceOutBy(forecast, toEpochDays(end)) * 1000),
     inHindsight: true,
   };
 }

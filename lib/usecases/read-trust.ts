@@ -3,7 +3,7 @@ import { listCrewNames } from "@/db/queries/crew-names";
 import { listOutcomes, type OutcomeLine } from "@/db/queries/outcomes";
 import { getOrganisation } from "@/db/queries/organisation";
 import { dayOfInstant } from "@/lib/present/calendar-days";
-import { brierScore, reliabilityBins, type StatedChance } from "@/lib/stats/reliability";
+import { expectedEnds, reliabilityCurve, type StatedEnd } from "@/lib/stats/reliability";
 import { MS_PER_DAY } from "@/lib/units";
 import { groupBy } from "./forecast-input";
 import { defineUseCase } from "./use-case";
@@ -11,7 +11,7 @@ import { defineUseCase } from "./use-case";
 export const TRUST_GROUPS = ["chemistry", "model", "crew", "quarter"] as const;
 export type TrustGroup = (typeof TRUST_GROUPS)[number];
 
-/** A removal surprises when what happened had been given less than one chance in twenty. */
+/** An end surprises outside the middle nine tenths of what had been said. */
 const SURPRISE = 0.05;
 const SURPRISES_SHOWN = 20;
 
@@ -40,7 +40,7 @@ export const readTrust = defineUseCase({
       crews,
       today: dayOfInstant(deps.now(), organisation.timeZone),
       whole: tally(lines),
-      bins: reliabilityBins(lines.map(statedOf)),
+      curve: reliabilityCurve(lines.map(statedOf)),
       groups: [...groupBy(lines, named)]
         .map(([name, members]) => ({ name, ...tally(members) }))
         .sort((a, b) => (input.group === "quarter" ? 0 : b.removals - a.removals)),
@@ -51,33 +51,42 @@ export const readTrust = defineUseCase({
 });
 export type TrustView = Awaited<ReturnType<typeof readTrust>>;
 
-function statedOf(line: OutcomeLine): StatedChance {
-  return { chance: line.chanceStoppedPermille / 1000, cameTrue: !line.censored };
+function statedOf(line: OutcomeLine): StatedEnd {
+  return { chance: line.chanceStoppedPermille / 1000, ended: !line.censored };
 }
 
+/** Alive beyond the window surprises too; alive within it says nothing yet. */
 function isSurprise(line: OutcomeLine): boolean {
-  const { chance, cameTrue } = statedOf(line);
-  return cameTrue ? chance < SURPRISE : chance > 1 - SURPRISE;
+  const { chance, ended } = statedOf(line);
+  return chance > 1 - SURPRISE || (ended && chance < SURPRISE);
 }
 
-/** Removals, how many had stopped, how many were expected to have, and the score. */
+/** Removals, how many had stopped, how many should have by what was said, and surprises. */
 function tally(lines: readonly OutcomeLine[]) {
   const stated = lines.map(statedOf);
-  const expected = stated.reduce((sum, s) => sum + s.chance, 0);
-  const variance = stated.reduce((sum, s) => sum + s.chance * (1 - s.chance), 0);
+  const expected = expectedEnds(stated);
+  const left = lines.filter((line) => line.censored);
   return {
     removals: lines.length,
-    stopped: stated.filter((s) => s.cameTrue).length,
-    expected,
-    /** Half the width of the range in which the count should lie nine times out of ten. */
-    spread: 1.645 * Math.sqrt(variance),
-    brier: lines.length > 0 ? brierScore(stated) : null,
+    stopped: stated.filter((s) => s.ended).length,
+    expected: expected.mean,
+    spread: expected.spread,
     surprises: lines.filter(isSurprise).length,
+    daysOff: medianDaysOff(lines),
     shareLeft:
-      lines.length > 0
-        ? lines.reduce((sum, line) => sum + line.shareLeftPermille, 0) / (1000 * lines.length)
+      left.length > 0
+        ? left.reduce((sum, line) => sum + line.shareLeftPermille, 0) / (1000 * left.length)
         : null,
   };
+}
+
+/** Of those that stopped: likely date less true date, in days; late is positive. */
+function medianDaysOff(lines: readonly OutcomeLine[]): number | null {
+  const off = lines
+    .flatMap((line) => (line.stoppedAt ? [line.p50.getTime() - line.stoppedAt.getTime()] : []))
+    .sort((a, b) => a - b);
+  const middle = off[Math.floor(off.length / 2)];
+  return middle === undefined ? null : middle / MS_PER_DAY;
 }
 
 function groupName(line: OutcomeLine, group: TrustGroup, timeZone: string): string {

@@ -25,7 +25,7 @@ export default async function RecordPage(props: {
     <main id="main" className="page">
       <PageHead
         title="Can the dates be trusted?"
-        lede="Each pack that came out is held against the forecast of the day before: how likely was it, then, that the device had stopped?"
+        lede="Each pack that came out is held against the forecast of the visit before: what chance had that given to stopping by then?"
       />
       <RecordTabs current="trust" />
       <TrustFigures view={view} />

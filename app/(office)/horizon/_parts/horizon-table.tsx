@@ -12,7 +12,7 @@ import type { StripHeadModel } from "@/lib/present/strip-head";
 import type { HorizonView } from "@/lib/usecases/read-horizon";
 import type { HorizonParams } from "./horizon-params";
 
-const STRIP_PX = 500;
+const STRIP_PX = 450;
 
 /** Every pack by when it will reach cut-off, on one time axis. */
 export function HorizonTable({ view, params }: { view: HorizonView; params: HorizonParams }) {

@@ -20,20 +20,27 @@ export function TrustFigures({ view }: { view: TrustView }) {
         tone={sound ? "order" : "soon"}
       />
       <Figure
-        label="Score (Brier)"
-        value={whole.brier === null ? NOTHING : formatNumber(whole.brier, locale, 3)}
-        range="0 is perfect, 0.25 a coin"
+        label="Likely date was off by"
+        value={whole.daysOff === null ? NOTHING : daysOff(whole.daysOff, locale)}
+        range="median of those that stopped"
       />
       <Figure
         label="Surprises"
         value={formatNumber(whole.surprises, locale)}
-        range="given less than 1 in 20"
+        range="outside the 5–95 % window"
       />
       <Figure
-        label="Charge left at removal"
+        label="Charge left when taken out alive"
         value={whole.shareLeft === null ? NOTHING : formatPercent(whole.shareLeft, locale)}
         range="mean, by forecast"
       />
     </FigureRow>
   );
+}
+
+/** "12 d late": the likely date lay twelve days after the true one. */
+export function daysOff(days: number, locale: string): string {
+  const whole = Math.round(Math.abs(days));
+  if (whole === 0) return "0 d";
+  return `${formatNumber(whole, locale)} d ${days > 0 ? "late" : "early"}`;
 }

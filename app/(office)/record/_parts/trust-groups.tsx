@@ -5,6 +5,7 @@ import { CHEMISTRY_WORDS } from "@/lib/present/chemistry-words";
 import { formatPercent } from "@/lib/present/format-share";
 import { formatNumber, NOTHING } from "@/lib/present/locale";
 import type { TrustView } from "@/lib/usecases/read-trust";
+import { daysOff } from "./trust-figures";
 
 type GroupRow = TrustView["groups"][number];
 
@@ -51,15 +52,15 @@ function columns(locale: string): Column<GroupRow>[] {
       cell: (row) => <span className={verdict(row).tone}>{verdict(row).words}</span>,
     },
     {
-      key: "brier",
-      head: "Score",
+      key: "off",
+      head: "Likely date off by",
       align: "right",
-      cell: (row) => (row.brier === null ? NOTHING : number(row.brier, 3)),
+      cell: (row) => (row.daysOff === null ? NOTHING : daysOff(row.daysOff, locale)),
     },
     { key: "surprises", head: "Surprises", align: "right", cell: (row) => number(row.surprises) },
     {
       key: "left",
-      head: "Left at removal",
+      head: "Left when alive",
       align: "right",
       cell: (row) => (row.shareLeft === null ? NOTHING : formatPercent(row.shareLeft, locale)),
     },

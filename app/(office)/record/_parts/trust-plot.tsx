@@ -4,13 +4,14 @@ import { reliabilityPlot } from "@/lib/present/reliability-plot";
 import type { TrustView } from "@/lib/usecases/read-trust";
 
 export function TrustPlot({ view }: { view: TrustView }) {
-  const model = reliabilityPlot({ bins: view.bins, locale: view.organisation.locale });
+  const model = reliabilityPlot({ bins: view.curve, locale: view.organisation.locale });
   return (
-    <Section title="Chance stated, share that came true">
+    <Section title="Chance stated, share that had stopped">
       <ReliabilityPlot model={model} />
       <p className="mt-2 max-w-80 text-soft">
-        On the diagonal the words can be taken at their value: of the packs given 30 %, 30 % had
-        stopped. Bars are 90 % intervals; a dot’s area is its count.
+        On the diagonal the windows can be taken at their word: by the date with a chance of 30 %,
+        30 % had stopped. Above it, packs end earlier than said. Packs taken out alive count up to
+        that day (Kaplan–Meier); bars are 90 % intervals.
       </p>
     </Section>
   );

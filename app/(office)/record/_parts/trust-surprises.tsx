@@ -10,7 +10,7 @@ import type { TrustView } from "@/lib/usecases/read-trust";
 
 type Surprise = TrustView["surprises"][number];
 
-/** Packs whose end had been given less than one chance in twenty. */
+/** Packs that ended outside the window, or outlived it. */
 export function TrustSurprises({ view }: { view: TrustView }) {
   return (
     <Section
@@ -22,7 +22,7 @@ export function TrustSurprises({ view }: { view: TrustView }) {
         columns={columns(view)}
         rows={view.surprises}
         rowKey={(row) => row.packId}
-        empty={<EmptyState title="None: every removal was within what had been said." />}
+        empty={<EmptyState title="None: every end was within what had been said." />}
       />
     </Section>
   );
@@ -64,7 +64,7 @@ function columns({ organisation, today }: TrustView): Column<Surprise>[] {
     },
     {
       key: "chance",
-      head: "Chance of having stopped",
+      head: "Chance by then",
       align: "right",
       cell: (row) => formatPercent(row.chanceStoppedPermille / 1000, locale),
     },

@@ -15,6 +15,11 @@ export async function tileOrigin(): Promise<string | null> {
   return origin;
 }
 
+/** Reads it anew next time, in this process; others follow within half a minute. */
+export function forgetTileOrigin(): void {
+  delete holder.wanewrightTiles;
+}
+
 async function readOrigin(): Promise<string | null> {
   try {
     return originOfTemplate((await findOrganisation(deps().db))?.mapTileUrl ?? null);

@@ -9,3 +9,5 @@ export const readOrganisation = defineUseCase({
   input: z.object({}),
   run: (deps) => getOrganisation(deps.db),
 });
+
+export type OrganisationView = Awaited<ReturnType<typeof readOrganisation>>;

@@ -2,6 +2,7 @@ import type { z } from "zod";
 import type { Kysely } from "kysely";
 import type { Database } from "@/db/client";
 import { AppError, forbidden, invalid } from "@/lib/errors";
+import type { PointOnEarth, TravelTable } from "@/lib/planning/fleet";
 
 export const ROLES = ["administrator", "dispatcher", "supervisor", "technician"] as const;
 export type Role = (typeof ROLES)[number];
@@ -68,6 +69,17 @@ export interface Mailer {
   >;
 }
 
+/** Driving times from a service; it says why when it cannot give them. */
+export interface TravelService {
+  table(
+    url: string,
+    places: readonly PointOnEarth[],
+  ): Promise<
+    | { readonly ok: true; readonly table: TravelTable }
+    | { readonly ok: false; readonly reason: string }
+  >;
+}
+
 export type JobName =
   "forecast" | "forecast-all" | "plan" | "mail" | "digests" | "import-check" | "import-apply";
 
@@ -79,6 +91,8 @@ export interface Deps {
   readonly mailer: Mailer;
   /** The address people type, without a slash at its end; links in mails start with it. */
   readonly appUrl: string;
+  /** Without it driving times are reckoned by the great circle. */
+  readonly travel?: TravelService;
 }
 
 export interface Allowed {

@@ -1,0 +1,55 @@
+import type { Kysely, Transaction } from "kysely";
+import type { Database } from "../client";
+
+export interface LeftOutRow {
+  readonly assetId: string;
+  readonly reason: string;
+  readonly detail: string;
+  readonly earliestDay: string | null;
+  readonly waitingCostMinorPerWeek: number;
+}
+
+/** Writes what a plan leaves out; hand-made exclusions stay unless `rows` says otherwise. */
+export async function replaceLeftOut(
+  trx: Transaction<Database>,
+  planId: string,
+  rows: readonly LeftOutRow[],
+): Promise<void> {
+  await trx.deleteFrom("planLeftOut").where("planId", "=", planId).execute();
+  for (let from = 0; from < rows.length; from += 1000) {
+    await trx
+      .insertInto("planLeftOut")
+      .values(rows.slice(from, from + 1000).map((row) => ({ ...row, planId })))
+      .execute();
+  }
+}
+
+/** Notes that an asset is not in the plan any more, or takes the note back (null). */
+export async function noteLeftOut(
+  trx: Transaction<Database>,
+  planId: string,
+  assetIds: readonly string[],
+  row: Omit<LeftOutRow, "assetId"> | null,
+): Promise<void> {
+  if (assetIds.length === 0) return;
+  await trx
+    .deleteFrom("planLeftOut")
+    .where("planId", "=", planId)
+    .where("assetId", "in", assetIds)
+    .execute();
+  if (!row) return;
+  await trx
+    .insertInto("planLeftOut")
+    .values(assetIds.map((assetId) => ({ ...row, assetId, planId })))
+    .execute();
+}
+
+export async function loadLeftOut(db: Kysely<Database>, planId: string): Promise<LeftOutRow[]> {
+  return db
+    .selectFrom("planLeftOut")
+    .select(["assetId", "reason", "detail", "earliestDay", "waitingCostMinorPerWeek"])
+    .where("planId", "=", planId)
+    .orderBy("waitingCostMinorPerWeek", "desc")
+    .orderBy("assetId")
+    .execute();
+}

@@ -1,0 +1,142 @@
+import { z } from "zod";
+import { appendAudit } from "@/db/queries/audit";
+import { loadBindingRounds, loadPlanRounds } from "@/db/queries/plan-rounds";
+import { changePlan, findPlan, lockPlan, noteProgress, type PlanRow } from "@/db/queries/plans";
+import { loadTechniciansToPlan } from "@/db/queries/planning-fleet";
+import { habitCost } from "@/lib/planning/habit";
+import {
+  finishPlan,
+  prepareKnown,
+  preparePlan,
+  problemOf,
+  type FinishedPlan,
+} from "@/lib/planning/plan";
+import type { KnownVisit } from "@/lib/planning/fleet";
+import { knownRoutes, placesOf } from "@/lib/planning/problem";
+import { toMinor } from "@/lib/planning/rounds";
+import { solve } from "@/lib/routing/solve";
+import { seededRng } from "@/lib/routing/rng";
+import type { Problem, Routes } from "@/lib/routing/problem";
+import { excludedAssets } from "./open-plan";
+import type { StoredPlanCost } from "./plan-cost";
+import type { BuildProgress } from "./plan-progress";
+import { storeBuiltPlan } from "./store-built-plan";
+import { isCovered, knownVisits, loadWorld } from "./planning-world";
+import { travelTimes } from "./travel-times";
+import { type Deps, defineUseCase } from "./use-case";
+
+/** Turns of the search in one go, and how often its progress is shown meanwhile. */
+const ITERATIONS = 60_000;
+const CHUNKS = 12;
+const SEED = 20_261_201;
+
+const MODES = ["build", "improve", "repair"] as const;
+type Mode = (typeof MODES)[number];
+
+/**
+ * Builds or improves a plan. Safe to run twice: a plan that is not waiting for it is left alone,
+ * and the same plan comes out again (the search is driven by turns and a fixed seed).
+ *
+ * build: from the rounds that people know, if any. improve: from the draft itself.
+ * repair: as build, with every visit kept that can be kept; only the others find a new place.
+ */
+export const runPlanJob = defineUseCase({
+  name: "run-plan-job",
+  allow: { system: true },
+  input: z.object({ planId: z.uuid(), mode: z.enum(MODES) }),
+  async run(deps, _actor, { planId, mode }) {
+    const plan = await findPlan(deps.db, planId);
+    if (plan?.state !== "building") return { built: false };
+    try {
+      const known = await knownFor(deps, plan, mode);
+      const built = await build(deps, plan, known, mode);
+      if (!built) return { built: false };
+      return { built: await storeBuiltPlan(deps, planId, built.plan, built.cost) };
+    } catch (error) {
+      await giveUp(deps, planId);
+      throw error;
+    }
+  },
+});
+
+async function knownFor(deps: Deps, plan: PlanRow, mode: Mode): Promise<KnownVisit[]> {
+  const own = await loadPlanRounds(deps.db, plan.id);
+  if (mode === "improve") return knownVisits(own);
+  if (own.length > 0) return knownVisits(own).map((visit) => ({ ...visit, locked: true }));
+  const technicians = await loadTechniciansToPlan(deps.db, plan.crewIds);
+  const ids = new Set(technicians.map((technician) => technician.id));
+  const binding = await loadBindingRounds(deps.db, [...ids], plan.firstDay, plan.lastDay);
+  const open = knownVisits(binding.filter((round) => isCovered(round, plan, ids)));
+  return mode === "repair" ? open.map((visit) => ({ ...visit, locked: true })) : open;
+}
+
+async function build(
+  deps: Deps,
+  plan: PlanRow,
+  known: readonly KnownVisit[],
+  mode: Mode,
+): Promise<{ plan: FinishedPlan; cost: StoredPlanCost } | null> {
+  const world = await loadWorld(deps.db, deps.now(), plan, {
+    siteIds: mode === "repair" ? known.map((visit) => visit.siteId) : null,
+    known,
+    excludedAssets: await excludedAssets(deps.db, plan.id),
+  });
+  const prepared = mode === "repair" ? prepareKnown(world.input, []) : preparePlan(world.input);
+  const places = placesOf(world.input.technicians, prepared.visits);
+  const travel = await travelTimes(deps, world.organisation, places);
+  const problem = problemOf(prepared, travel.table);
+  const routes = await search(deps, plan.id, problem.problem, knownRoutes(problem, known));
+  if (!routes) return null;
+  const finished = finishPlan(prepared, problem, routes);
+  const habit = habitCost(prepared.outlooks, prepared.context);
+  const minor = habit.minorPerWeek * (prepared.context.days.length / 7);
+  const cost: StoredPlanCost = {
+    figures: finished.figures,
+    // A repair looks at its own visits only; the whole fleet's habit is not theirs.
+    habit: mode !== "repair" && habit.packs > 0 ? { minor, packs: habit.packs } : null,
+    travel: travel.source,
+  };
+  return { plan: finished, cost };
+}
+
+/** Searches in chunks, noting the falling cost between them. Null: the plan was discarded. */
+async function search(
+  deps: Deps,
+  planId: string,
+  problem: Problem,
+  known: Routes,
+): Promise<Routes | null> {
+  const rng = seededRng(SEED);
+  const chunk = ITERATIONS / CHUNKS;
+  let start = known;
+  const costs: number[] = [];
+  for (let k = 0; k < CHUNKS; k++) {
+    const share = (turns: number) => (turns >= chunk ? 1 : (k + turns / chunk) / CHUNKS);
+    const { routes, cost } = solve(problem, share, rng, { start });
+    start = routes;
+    costs.push(Math.round(toMinor(cost.total)));
+    const progress: BuildProgress = { share: (k + 1) / CHUNKS, costs };
+    await noteProgress(deps.db, planId, progress);
+    if ((await findPlan(deps.db, planId))?.state !== "building") return null;
+  }
+  return start;
+}
+
+async function giveUp(deps: Deps, planId: string): Promise<void> {
+  await deps.db.transaction().execute(async (trx) => {
+    const plan = await lockPlan(trx, planId);
+    if (plan?.state !== "building") return;
+    await changePlan(trx, planId, {
+      state: "failed",
+      problem: "The build broke off. Nothing was changed or sent; start it again.",
+    });
+    await appendAudit(trx, {
+      at: deps.now(),
+      personId: null,
+      act: "run-plan-job",
+      subjectKind: "plan",
+      subjectId: planId,
+      detail: { outcome: "failed" },
+    });
+  });
+}

@@ -3,10 +3,11 @@
  * tests/architecture that proves it fires.
  */
 const BASE = "^lib/(units|errors)\\.ts$|^lib/stats/";
-const PURE = "^lib/(battery|routing|planning|present)/";
+const PURE = "^lib/(battery|routing|planning|present|csv)/";
 /** Published libraries without a clock, chance, a page or a network in them. */
 const CALENDAR = "^node_modules/(date-fns|@date-fns/tz)/";
 const DRAWING = "^node_modules/(d3-scale|d3-shape|@types/d3-scale|@types/d3-shape)/";
+const CSV = "^node_modules/(csv-parse|csv-stringify)/";
 const ZOD = "^node_modules/zod/";
 const NPM = "^node_modules/";
 const FRAMEWORK = "^node_modules/(next|react|react-dom|next-auth|@auth/core)/";
@@ -46,6 +47,7 @@ const cores = [
     "planning joins battery and routing; of packages only the calendar",
   ),
   only("present", "^lib/present/", [BASE, PURE, CALENDAR, DRAWING], "present: the pure ones"),
+  only("csv", "^lib/csv/", [BASE, "^lib/csv/", CALENDAR, CSV], "csv: text to typed rows and back"),
   only("sync", "^lib/sync/", [BASE, "^lib/sync/", ZOD], "sync: the base and zod"),
 ];
 

@@ -3,7 +3,7 @@ import typescript from "eslint-config-next/typescript";
 import { house } from "./scripts/lint/house-rules.mjs";
 
 const PURE_CORES = ["lib/units.ts", "lib/errors.ts"].concat(
-  ["stats", "battery", "routing", "planning", "present", "sync"].map(
+  ["stats", "battery", "routing", "planning", "present", "csv", "sync"].map(
     (core) => `lib/${core}/**/*.ts`,
   ),
 );
@@ -106,6 +106,7 @@ const config = [
     },
   },
   rule("house/next-default-exports", NEXT_FILES, syntax(environment)),
+  rule("house/configuration", ["*.config.{ts,mjs}"], { "no-restricted-syntax": "off" }),
   rule(
     "house/environment",
     ["lib/**", "db/**", "components/**", "emails/**"],

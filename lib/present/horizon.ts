@@ -1,6 +1,6 @@
 import type { IsoDay } from "@/lib/units";
 import { dayFromNumber, dayNumber, dayOfInstant } from "./calendar-days";
-import { formatDay, formatWindow, type WindowLabel } from "./format-day";
+import { type CutoffDays, formatDay, formatWindow, type WindowLabel } from "./format-day";
 import { formatMoney } from "./format-quantity";
 import { shareLabel } from "./format-share";
 import { NOTHING, type Presentation } from "./locale";
@@ -104,42 +104,38 @@ export function horizonRow(
   const day = (at: Date) => dayOfInstant(at, timeZone);
   const isOut = (row.outNowPermille ?? 0) >= OUT_PERMILLE;
   const share = row.shareLeftPermille === null ? null : row.shareLeftPermille / 1000;
-  const cutoff =
-    row.p05 && row.p50 && row.p95
-      ? { p5: day(row.p05), p50: day(row.p50), p95: day(row.p95) }
-      : null;
-  const tone = packTone({
-    isOut,
-    daysToLikely: cutoff && dayNumber(cutoff.p50) - dayNumber(today),
-    soonWithinDays: SOON_DAYS,
-  });
+  const cutoff = cutoffDays(row, day);
+  const daysToLikely = cutoff && dayNumber(cutoff.p50) - dayNumber(today);
+  const tone = packTone({ isOut, daysToLikely, soonWithinDays: SOON_DAYS });
   const published = row.roundState !== null && row.roundState !== "proposed";
   return {
     key: row.packId,
     tag: row.tag,
     asset: row.assetName,
-    site: row.siteName,
+    // Many assets are named after their site: it is not said twice.
+    site: row.assetName.includes(row.siteName) ? "" : row.siteName,
     pack: packLabel(row.series, row.parallel, row.designation),
     disc: waneDisc({ share, isOut, tone, locale }),
     left: shareLabel({ share, isOut }, locale),
     tone,
     strip: spanStrip({
-      axis,
-      today,
+      ...{ axis, today, cutoff, tone, locale },
       subject: row.tag,
       installed: day(row.installedAt),
       ended: null,
       readings: (row.readAt ?? []).map(day),
-      cutoff,
       visits: row.visitDay ? [{ day: row.visitDay, published }] : [],
-      tone,
-      locale,
     }),
     window: cutoff && formatWindow(cutoff, locale, today),
     stale: row.staleSince !== null,
     waiting: waitingWords(row.waitingCostMinorPerWeek, presentation),
     visit: visitWords(row, published, today, locale),
   };
+}
+
+function cutoffDays(row: HorizonRowInput, day: (at: Date) => IsoDay): CutoffDays | null {
+  if (!row.p05 || !row.p50 || !row.p95) return null;
+  return { p5: day(row.p05), p50: day(row.p50), p95: day(row.p95) };
 }
 
 function waitingWords(minor: number | null, presentation: Presentation): string {

@@ -12,7 +12,7 @@ import type { StripHeadModel } from "@/lib/present/strip-head";
 import type { HorizonView } from "@/lib/usecases/read-horizon";
 import type { HorizonParams } from "./horizon-params";
 
-const STRIP_PX = 450;
+const STRIP_PX = 430;
 
 /** Every pack by when it will reach cut-off, on one time axis. */
 export function HorizonTable({ view, params }: { view: HorizonView; params: HorizonParams }) {
@@ -89,7 +89,7 @@ function columns(head: StripHeadModel): Column<HorizonRowModel>[] {
       head: "Name and site",
       sortKey: "site",
       cell: (row) => (
-        <span className="block max-w-64 truncate" title={`${row.asset}, ${row.site}`}>
+        <span className="block max-w-60 truncate" title={`${row.asset}, ${row.site}`}>
           {row.asset} <span className="text-soft">{row.site}</span>
         </span>
       ),

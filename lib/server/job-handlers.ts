@@ -1,5 +1,6 @@
 import { deliverMail } from "@/lib/usecases/deliver-mail";
 import { judgeHistory } from "@/lib/usecases/judge-history";
+import { runPlanJob } from "@/lib/usecases/run-plan-job";
 import { refreshForecasts } from "@/lib/usecases/refresh-forecasts";
 import { sendDigests } from "@/lib/usecases/send-digests";
 import type { Actor, Deps, JobName } from "@/lib/usecases/use-case";
@@ -13,6 +14,7 @@ export const HANDLERS: Record<JobName, (deps: Deps, data: never) => Promise<unkn
     ...(await refreshForecasts(deps, system, { packIds: null })),
     ...(await judgeHistory(deps, system, {})),
   }),
+  plan: (deps, data) => runPlanJob(deps, system, data),
   mail: (deps, data) => deliverMail(deps, system, data),
   digests: (deps) => sendDigests(deps, system, {}),
 };

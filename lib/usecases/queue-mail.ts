@@ -11,6 +11,7 @@ export const MAIL_TEMPLATES = [
   "round-changed",
   "round-cancelled",
   "due-digest",
+  "visit-notice",
 ] as const;
 export type MailTemplate = (typeof MAIL_TEMPLATES)[number];
 

@@ -1,0 +1,103 @@
+import type { Kysely } from "kysely";
+import { z } from "zod";
+import type { Database } from "@/db/client";
+import { getOrganisation, type Organisation } from "@/db/queries/organisation";
+import { loadBindingRounds, loadPlanRounds } from "@/db/queries/plan-rounds";
+import type { PlanRow } from "@/db/queries/plans";
+import { loadTechniciansToPlan } from "@/db/queries/planning-fleet";
+import { type SheetStop, loadRoundSheets } from "@/db/queries/round-sheets";
+import { formatDay } from "@/lib/present/format-day";
+import { getPlan } from "./open-plan";
+import { isCovered, type TechnicianRow } from "./planning-world";
+import { type DayChange, dayChanges } from "./publication";
+import { defineUseCase } from "./use-case";
+
+/** What publishing a draft would do. */
+export interface Publication {
+  readonly plan: PlanRow;
+  readonly organisation: Organisation;
+  readonly technicians: readonly TechnicianRow[];
+  readonly technicianIds: ReadonlySet<string>;
+  readonly changes: readonly DayChange[];
+  /** Stops of the draft and of what it replaces. */
+  readonly stops: readonly SheetStop[];
+  readonly siteNames: ReadonlyMap<string, string>;
+  /** Days that nobody can drive any more, in words. */
+  readonly stranded: readonly string[];
+}
+
+/** Compares a draft with the rounds that bind now. */
+export async function readPublication(
+  db: Kysely<Database>,
+  now: Date,
+  plan: PlanRow,
+): Promise<Publication> {
+  const organisation = await getOrganisation(db);
+  const technicians = await loadTechniciansToPlan(db, plan.crewIds);
+  const technicianIds = new Set(technicians.map((technician) => technician.id));
+  const draft = await loadPlanRounds(db, plan.id);
+  const all = await loadBindingRounds(db, [...technicianIds], plan.firstDay, plan.lastDay);
+  const binding = all.filter((round) => isCovered(round, plan, technicianIds));
+  const stops = await loadRoundSheets(
+    db,
+    [...draft, ...binding].map((round) => round.id),
+  );
+  const names = new Map(technicians.map((t) => [t.id, t.name]));
+  const day = (at: string) => formatDay(at, organisation.locale, { weekday: true, today: at });
+  const stranded = draft.flatMap((round) => {
+    const technician = technicians.find((t) => t.id === round.technicianId);
+    const name = names.get(round.technicianId) ?? "somebody";
+    if (!technician) return [`${name} is no longer in the crews of this plan`];
+    if (round.endsAt <= now) return [`${name}'s ${day(round.day)} is over`];
+    const begun = all.some(
+      (r) => r.technicianId === technician.id && r.day === round.day && r.state !== "published",
+    );
+    if (begun) return [`${name} has begun a round on ${day(round.day)}`];
+    const away = technician.absences.some((a) => a.firstDay <= round.day && round.day <= a.lastDay);
+    return away ? [`${name} is away on ${day(round.day)}`] : [];
+  });
+  return {
+    plan,
+    organisation,
+    technicians,
+    technicianIds,
+    changes: dayChanges(draft, binding),
+    stops,
+    siteNames: new Map(stops.map((stop) => [stop.siteId, stop.siteName])),
+    stranded,
+  };
+}
+
+/** Who would get which mail if the draft were published now. */
+export const previewPublication = defineUseCase({
+  name: "preview-publication",
+  allow: { roles: ["administrator", "dispatcher", "supervisor"] },
+  input: z.object({ planId: z.uuid() }),
+  async run(deps, _actor, { planId }) {
+    const plan = await getPlan(deps.db, planId);
+    const { changes, technicians, stops, stranded, organisation } = await readPublication(
+      deps.db,
+      deps.now(),
+      plan,
+    );
+    const names = new Map(technicians.map((t) => [t.id, t]));
+    const news = changes.filter((change) => change.news !== "unchanged");
+    const roundIds = new Set(news.flatMap(({ draft }) => draft?.id ?? []));
+    const contacts = stops.filter((s) => roundIds.has(s.roundId) && s.contactEmail);
+    return {
+      stranded,
+      unchanged: changes.length - news.length,
+      mails: news.map(({ news: kind, technicianId, day, draft }) => ({
+        kind,
+        name: names.get(technicianId)?.name ?? "",
+        email: names.get(technicianId)?.email ?? "",
+        day: formatDay(day, organisation.locale, { weekday: true, today: plan.firstDay }),
+        stops: draft?.stops.length ?? 0,
+      })),
+      contacts: contacts.map((stop) => ({
+        name: stop.contactName ?? stop.contactEmail ?? "",
+        siteName: stop.siteName,
+      })),
+    };
+  },
+});

@@ -18,7 +18,7 @@ export default defineConfig({
         extends: true,
         test: {
           name: "db",
-          include: ["tests/db/**/*.test.ts"],
+          include: ["tests/db/**/*.test.{ts,mjs}"],
           globalSetup: ["tests/support/template-database.ts"],
           testTimeout: 30_000,
           hookTimeout: 60_000,

@@ -15,6 +15,7 @@ const UNFINISHED = "first start not finished";
  * @property {string} told for the step's line
  * @property {boolean} ours started by us; otherwise given by DATABASE_URL
  * @property {boolean} fresh made by this start
+ * @property {(sql: string) => Promise<string>} [query] where the server is ours
  * @property {() => Promise<void>} finished to be called when its first start is through
  * @property {() => Promise<void>} stop
  */
@@ -43,6 +44,7 @@ export async function openDatabase(home, password, { env, say }) {
       finished: async () => {
         await server.query(`comment on database "${NAME}" is null`);
       },
+      query: (sql) => server.query(sql, NAME),
       stop: () => server.stop(),
     };
   } catch (error) {

@@ -2,14 +2,16 @@ import { mkdirSync } from "node:fs";
 import { join } from "node:path";
 import { findOrInstallChromium } from "./chromium.mjs";
 import { childEnvironment } from "./environment.mjs";
+import { forecastsMade } from "./forecasts.mjs";
 import { ROOT } from "./place.mjs";
 import { freePort } from "./ports.mjs";
 import { ensureDatabase, newPassword } from "./postgres.mjs";
 import { migrate, seed } from "./schema.mjs";
 import { startMailFake, startWeb, startWorker } from "./services.mjs";
-import { printTrouble } from "./trouble.mjs";
+import { printTrouble, Trouble } from "./trouble.mjs";
 
 const DATABASE = "wanewright_e2e";
+const FORECAST_PATIENCE_S = 300;
 
 /**
  * Starts the whole product on a seeded scenario for the browser to drive.
@@ -33,6 +35,11 @@ export async function startEndToEnd(server, life, tally, logs) {
       () => startProduct(life, tally, { env, ports, logs }),
       String,
     );
+    await tally.preparation(
+      "forecasts",
+      () => awaitForecasts(server, life),
+      () => "made",
+    );
     return {
       DATABASE_URL: env.DATABASE_URL,
       E2E_URL: env.APP_URL,
@@ -45,6 +52,20 @@ export async function startEndToEnd(server, life, tally, logs) {
     tally.fail("e2e: not run, because the product did not start");
     return undefined;
   }
+}
+
+/**
+ * @param {import("./postgres.mjs").Server} server
+ * @param {import("./lifetime.mjs").Lifetime} life
+ */
+async function awaitForecasts(server, life) {
+  const options = { check: () => life.check(), seconds: FORECAST_PATIENCE_S };
+  const made = await forecastsMade((sql) => server.query(sql, DATABASE), options);
+  if (made) return;
+  throw new Trouble(
+    `The forecasts of the scenario were not made within ${FORECAST_PATIENCE_S} seconds.`,
+    "Look into the log of the worker, .wanewright/test-logs/logs/worker.log.",
+  );
 }
 
 /** @param {import("./postgres.mjs").Server} server */

@@ -25,8 +25,8 @@ const KNOWN = [
     mend: "Restore it from a backup. If nothing in it matters, remove it; a new one is made.",
   },
   {
-    said: /could not open (control )?file|is not a database cluster directory|could not access dir/,
-    what: "The database folder HOME is broken: files are missing from it.",
+    said: /could not (open|read|access) |required WAL directory|is not a database cluster/,
+    what: "The database folder HOME is broken: files in it are missing or cut short.",
     mend: "Restore it from a backup. If nothing in it matters, remove it; a new one is made.",
   },
   {

@@ -5,6 +5,7 @@ import { ensurePackages } from "./dependencies.mjs";
 import { childEnvironment } from "./environment.mjs";
 import { Lifetime } from "./lifetime.mjs";
 import { homeOf, makeHome, ROOT, secretsOf } from "./place.mjs";
+import { forecastsMade } from "./forecasts.mjs";
 import { freePort, isFree, portFrom } from "./ports.mjs";
 import { pause } from "./processes.mjs";
 import { claim } from "./run-record.mjs";
@@ -16,6 +17,8 @@ import { printTrouble, Trouble } from "./trouble.mjs";
 
 const FIRST_WEB_PORT = 3000;
 const FIRST_MAIL_PORT = 3025;
+/** A first start may not take much longer than this for them. */
+const FORECAST_PATIENCE_S = 90;
 
 /**
  * Brings everything up, stays until somebody asks for the end, takes everything down.
@@ -70,6 +73,7 @@ async function bringUp(life, print) {
   await steps.step("Pages", () => ensureBuild(ROOT, { dist: ".next", log, env }), String);
   await startServices(steps, life, { home, env, ports, record });
   record.note({ address: env.APP_URL });
+  if (database.fresh && demonstration) await awaitForecasts(steps, life, database);
   print(
     `Ready after ${Math.round((performance.now() - began) / 1000)} s. Ctrl-C stops everything.`,
   );
@@ -175,6 +179,19 @@ async function startServices(steps, life, { home, env, ports, record }) {
     () => startWorker(setting),
     () => "running",
   );
+}
+
+/**
+ * The worker forecasts every pack of the demonstration once: without that Horizon is empty.
+ * @param {Steps} steps
+ * @param {Lifetime} life
+ * @param {import("./application-database.mjs").ApplicationDatabase} database
+ */
+async function awaitForecasts(steps, life, { query }) {
+  if (!query) return;
+  const options = { check: () => life.check(), seconds: FORECAST_PATIENCE_S };
+  const tell = (/** @type {boolean} */ done) => (done ? "made" : "being made, Horizon fills up");
+  await steps.step("Forecasts", () => forecastsMade(query, options), tell);
 }
 
 /**

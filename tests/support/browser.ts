@@ -81,7 +81,7 @@ export async function signIn(page: Page, role: DemoRole): Promise<void> {
   const account = accounts.find((entry) => entry.role === role);
   if (!account) throw new Error(`no demonstration account for ${role}`);
   await page.goto(productUrl("/sign-in"));
-  await page.getByLabel("E-mail").fill(account.email);
+  await page.getByLabel("Mail address").fill(account.email);
   await page.getByLabel("Password", { exact: true }).fill(account.password);
   await page.getByRole("button", { name: "Sign in", exact: true }).click();
   await page.waitForURL((url) => !url.pathname.startsWith("/sign-in"));

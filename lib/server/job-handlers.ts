@@ -2,6 +2,7 @@ import { deliverMail } from "@/lib/usecases/deliver-mail";
 import { judgeHistory } from "@/lib/usecases/judge-history";
 import { runPlanJob } from "@/lib/usecases/run-plan-job";
 import { refreshForecasts } from "@/lib/usecases/refresh-forecasts";
+import { runImportApply, runImportCheck } from "@/lib/usecases/run-import";
 import { sendDigests } from "@/lib/usecases/send-digests";
 import type { Actor, Deps, JobName } from "@/lib/usecases/use-case";
 
@@ -16,5 +17,7 @@ export const HANDLERS: Record<JobName, (deps: Deps, data: never) => Promise<unkn
   }),
   plan: (deps, data) => runPlanJob(deps, system, data),
   mail: (deps, data) => deliverMail(deps, system, data),
+  "import-check": (deps, data) => runImportCheck(deps, system, data),
+  "import-apply": (deps, data) => runImportApply(deps, system, data),
   digests: (deps) => sendDigests(deps, system, {}),
 };

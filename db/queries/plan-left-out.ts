@@ -53,3 +53,24 @@ export async function loadLeftOut(db: Kysely<Database>, planId: string): Promise
     .orderBy("assetId")
     .execute();
 }
+
+/** What a plan leaves out, with the asset's words, place and forecast; swaps it holds left out. */
+export async function loadLeftOutAssets(db: Kysely<Database>, planId: string) {
+  return db
+    .selectFrom("planLeftOut")
+    .innerJoin("asset", "asset.id", "planLeftOut.assetId")
+    .innerJoin("site", "site.id", "asset.siteId")
+    .leftJoin("pack", (join) =>
+      join.onRef("pack.assetId", "=", "asset.id").on("pack.removedAt", "is", null),
+    )
+    .leftJoin("forecast", "forecast.packId", "pack.id")
+    .select(["planLeftOut.assetId", "planLeftOut.reason", "planLeftOut.detail"])
+    .select(["planLeftOut.earliestDay", "planLeftOut.waitingCostMinorPerWeek"])
+    .select(["asset.tag", "asset.name as assetName", "site.id as siteId"])
+    .select(["site.latitude", "site.longitude"])
+    .select(["forecast.shareLeftPermille", "forecast.outNowPermille", "forecast.p50"])
+    .where("planLeftOut.planId", "=", planId)
+    .orderBy("planLeftOut.waitingCostMinorPerWeek", "desc")
+    .orderBy("asset.tag")
+    .execute();
+}

@@ -1,4 +1,4 @@
-import { type Kysely, sql, type Transaction } from "kysely";
+import { sql, type Transaction } from "kysely";
 import type { Database } from "../client";
 
 const BINDING = ["published", "started", "done"] as const;
@@ -55,6 +55,7 @@ export async function markStopCannot(
     .execute();
 }
 
+/** Its open tasks count as not done; a reason it had for not being done no longer holds. */
 export async function markStopDone(
   trx: Transaction<Database>,
   stopId: string,
@@ -62,8 +63,15 @@ export async function markStopDone(
 ): Promise<void> {
   await trx
     .updateTable("stop")
-    .set({ state: "done", doneAt: at, cannotReason: null })
+    .set({ state: "done", doneAt: at, cannotReason: null, cannotNote: "", returnOn: null })
     .where("id", "=", stopId)
+    .where("state", "!=", "done")
+    .execute();
+  await trx
+    .updateTable("task")
+    .set({ state: "not_done" })
+    .where("stopId", "=", stopId)
+    .where("state", "=", "planned")
     .execute();
 }
 
@@ -86,48 +94,49 @@ export async function markRound(
     .execute();
 }
 
+export interface Tick {
+  readonly technicianId: string;
+  readonly assetId: string;
+  /** The stop it was done at; null: whichever of that day's holds the asset. */
+  readonly stopId: string | null;
+  readonly day: string;
+  readonly kinds: readonly string[];
+  readonly at: Date;
+}
+
 /**
- * Ticks off this technician's planned task at an asset on a day, and the stop when that was
- * its last. Work that was not planned ticks off nothing.
+ * Ticks off this technician's open task at an asset, and the stop when that was its last. Work
+ * that was not planned, or is somebody else's now, ticks off nothing. The stop is locked first:
+ * of two tasks ticked at once, the later sees the earlier.
  */
-export async function tickTask(
-  trx: Transaction<Database>,
-  given: { technicianId: string; assetId: string; day: string; kinds: readonly string[]; at: Date },
-): Promise<void> {
+export async function tickTask(trx: Transaction<Database>, tick: Tick): Promise<void> {
+  const { stopId } = tick;
   const task = await trx
     .selectFrom("task")
     .innerJoin("stop", "stop.id", "task.stopId")
     .innerJoin("round", "round.id", "stop.roundId")
     .select(["task.id", "task.stopId", "round.id as roundId"])
-    .where("round.technicianId", "=", given.technicianId)
-    .where("round.day", "=", given.day)
+    .where("round.technicianId", "=", tick.technicianId)
     .where("round.state", "in", BINDING)
-    .where("task.assetId", "=", given.assetId)
-    .where("task.kind", "in", given.kinds)
+    .where("task.assetId", "=", tick.assetId)
+    .where("task.kind", "in", tick.kinds)
     .where("task.state", "!=", "done")
+    .$if(stopId !== null, (query) => query.where("stop.id", "=", stopId ?? ""))
+    .$if(stopId === null, (query) => query.where("round.day", "=", tick.day))
+    .forUpdate(["stop"])
     .executeTakeFirst();
   if (!task) return;
   await trx
     .updateTable("task")
-    .set({ state: "done", doneAt: given.at })
+    .set({ state: "done", doneAt: tick.at })
     .where("id", "=", task.id)
     .execute();
-  await markRound(trx, task.roundId, "started", given.at);
   const open = await trx
     .selectFrom("task")
     .select("id")
     .where("stopId", "=", task.stopId)
     .where("state", "=", "planned")
     .executeTakeFirst();
-  if (!open) await markStopDone(trx, task.stopId, given.at);
-}
-
-/** The crew's van as a stock place, for a technician's phone. */
-export async function vanPlaceOf(db: Kysely<Database>, technicianId: string) {
-  return db
-    .selectFrom("technician")
-    .innerJoin("stockPlace", "stockPlace.vanId", "technician.vanId")
-    .select("stockPlace.id")
-    .where("technician.id", "=", technicianId)
-    .executeTakeFirst();
+  if (!open) await markStopDone(trx, task.stopId, tick.at);
+  await markRound(trx, task.roundId, "started", tick.at);
 }

@@ -3,9 +3,18 @@
  * happened there; it is applied once however often it is sent.
  */
 import { z } from "zod";
+import { cleanText } from "./clean-text";
 
 const millivolts = z.number().int().min(0).max(60_000);
-const note = z.string().trim().max(1000).default("");
+const text = (max: number) =>
+  z
+    .string()
+    .transform((typed) => cleanText(typed).trim())
+    .pipe(z.string().max(max))
+    .default("");
+const note = text(1000);
+/** The stop at which it was done; null for work on the way. It only says what to tick off. */
+const atStop = z.uuid().nullable().default(null);
 
 export const CANNOT_REASONS = [
   "no_access",
@@ -24,9 +33,15 @@ const readingBody = z.object({
   assetId: z.uuid(),
   millivolts,
   mode: z.enum(["resting", "loaded"]),
-  loadUa: z.number().int().positive().nullable().default(null),
+  loadUa: z.number().int().positive().max(100_000_000).nullable().default(null),
   temperatureDc: z.number().int().min(-600).max(1000).nullable().default(null),
-  instrument: z.string().trim().max(80).default(""),
+  /**
+   * The pack the technician had before them. A reading is never put down to another one:
+   * where the packs differ it waits for the swap that is still under way, or is refused.
+   */
+  packId: z.uuid().nullable().default(null),
+  stopId: atStop,
+  instrument: text(80),
   note,
 });
 
@@ -46,6 +61,7 @@ const swapBody = z.object({
   look: z.enum(LOOKS).default("sound"),
   /** When the device had last been heard, for one found stopped. */
   stoppedAt: z.iso.datetime().nullable().default(null),
+  stopId: atStop,
   note,
 });
 
@@ -99,13 +115,22 @@ export interface Refusal {
   readonly faults: readonly { readonly field: string; readonly message: string }[];
 }
 
+/** The code of an entry that another person made: it is neither applied nor recorded. */
+export const NOT_YOURS = "not_yours";
+
+/**
+ * `later`: nothing was applied or recorded, and sending it again may succeed (it waits for an
+ * earlier entry, or the server had trouble). `refusal` says why.
+ */
 export interface EntryOutcome {
   readonly id: string;
-  readonly outcome: "applied" | "refused";
+  readonly outcome: "applied" | "refused" | "later";
   readonly refusal: Refusal | null;
 }
 
 export interface SyncResponse {
   readonly receivedAt: string;
+  /** Who is signed in, so that a phone that changed hands notices. */
+  readonly personId: string;
   readonly outcomes: readonly EntryOutcome[];
 }

@@ -96,7 +96,7 @@ export function forecastInputOf(
       measuredDraw: pack.measuredAverageUa
         ? { averageUa: pack.measuredAverageUa, relativeSd: MEASURED_DRAW_SD }
         : null,
-      monthlyMeanDc: catalogue.climates.get(pack.climateId ?? "") ?? TEMPERATE_YEAR_DC,
+      monthlyMeanDc: climateOf(catalogue, pack.climateId),
       madeAt: pack.madeOn ? toEpochDays(new Date(pack.madeOn)) : null,
       installedAt: toEpochDays(pack.installedAt),
     },
@@ -107,6 +107,14 @@ export function forecastInputOf(
     prior,
     now: toEpochDays(now),
   };
+}
+
+/** Mean temperature of each month where this climate holds, January first, in tenths of a degree. */
+export function climateOf(
+  catalogue: ForecastCatalogue,
+  climateId: string | null,
+): readonly number[] {
+  return catalogue.climates.get(climateId ?? "") ?? TEMPERATE_YEAR_DC;
 }
 
 function readingOf(row: ReadingToForecast): PackReading {

@@ -1,134 +1,152 @@
 import { findSyncEntry, insertSyncEntry, type NewSyncEntry } from "@/db/queries/sync-entries";
-import { AppError, forbidden, isAppError } from "@/lib/errors";
+import { forbidden, isAppError } from "@/lib/errors";
+import { clockSkewMs, correctedInstant, recordedSkewMs } from "@/lib/sync/clock-skew";
 import {
-  entryBody,
   type EntryBody,
+  entryBody,
   type EntryOutcome,
+  NOT_YOURS,
   type Refusal,
-  syncRequest,
   type SyncRequest,
+  syncRequest,
   type SyncResponse,
 } from "@/lib/sync/entries";
+import { subjectOf } from "@/lib/sync/entry-order";
 import { applyEntry } from "./apply-entry";
+import { brokenRule } from "./broken-rule";
+import { storableJson } from "./storable-json";
 import { type Deps, defineUseCase, type PersonActor } from "./use-case";
 
 type Envelope = SyncRequest["entries"][number];
 
+interface Call {
+  readonly deps: Deps;
+  readonly actor: PersonActor;
+  readonly deviceId: string;
+  readonly receivedAt: Date;
+  readonly skewMs: number;
+  /** Failures that nobody expected, for the log. */
+  readonly troubles: unknown[];
+}
+
+export interface SyncResult {
+  readonly response: SyncResponse;
+  readonly troubles: readonly unknown[];
+}
+
 /** A refusal that waiting cannot mend is recorded; these may go through when sent again. */
 const TRY_AGAIN = new Set(["unavailable", "too_many", "not_signed_in"]);
+const WAITS = "It waits for an earlier entry about the same thing.";
 
 /**
  * Takes what a phone kept. Each entry is applied once, in its own transaction, in the order
- * given; one that is refused does not block the others and comes back with its reason.
+ * given; one that is refused does not block the others and comes back with its reason. One
+ * that must wait holds up only the later entries about the same asset, stop or round.
  */
 export const syncEntries = defineUseCase({
   name: "sync-entries",
   allow: { roles: ["administrator", "dispatcher", "technician"] },
   input: syncRequest,
-  async run(deps, actor, request): Promise<SyncResponse> {
+  async run(deps, actor, request): Promise<SyncResult> {
     if (actor.kind !== "person") throw forbidden();
     const receivedAt = deps.now();
+    const skewMs = clockSkewMs(new Date(request.sentAt), receivedAt);
+    const { deviceId } = request;
+    const call: Call = { deps, actor, deviceId, receivedAt, skewMs, troubles: [] };
     const outcomes: EntryOutcome[] = [];
+    const waiting = new Set<string>();
     for (const envelope of request.entries) {
-      outcomes.push(await takeEntry(deps, actor, request, envelope, receivedAt));
+      const subject = subjectOf(envelope.body);
+      const outcome =
+        subject && waiting.has(subject)
+          ? later(envelope.id, WAITS)
+          : await takeEntry(call, envelope);
+      if (subject && outcome.outcome === "later") waiting.add(subject);
+      outcomes.push(outcome);
     }
-    return { receivedAt: receivedAt.toISOString(), outcomes };
+    const { personId } = actor;
+    const response = { receivedAt: receivedAt.toISOString(), personId, outcomes };
+    return { response, troubles: call.troubles };
   },
 });
 
-async function takeEntry(
-  deps: Deps,
-  actor: PersonActor,
-  request: SyncRequest,
-  envelope: Envelope,
-  receivedAt: Date,
-): Promise<EntryOutcome> {
-  if (envelope.personId !== actor.personId) {
-    return refused(envelope.id, {
-      code: "forbidden",
-      message: "This entry was made by somebody else on this phone: they must sign in to send it.",
-      faults: [],
-    });
-  }
+async function takeEntry(call: Call, envelope: Envelope): Promise<EntryOutcome> {
+  if (envelope.personId !== call.actor.personId) return notYours(envelope.id);
   const parsed = entryBody.safeParse(envelope.body);
   const record: NewSyncEntry = {
     id: envelope.id,
-    personId: actor.personId,
-    deviceId: request.deviceId,
+    personId: call.actor.personId,
+    deviceId: call.deviceId,
     kind: parsed.success ? parsed.data.kind : "unknown",
     happenedAt: new Date(envelope.happenedAt),
-    receivedAt,
-    clockSkewMs: skewOf(request, receivedAt),
-    body: envelope.body,
+    receivedAt: call.receivedAt,
+    clockSkewMs: recordedSkewMs(call.skewMs),
+    body: parsed.success ? parsed.data : storableJson(envelope.body),
     outcome: "applied",
     refusal: null,
   };
-  if (!parsed.success) {
-    const faults = parsed.error.issues.map((i) => ({
-      field: i.path.join("."),
-      message: i.message,
-    }));
-    const message = "This entry could not be read. Enter it again.";
-    return recordRefusal(deps, record, { code: "invalid", message, faults });
-  }
-  return applyOnce(deps, actor, record, parsed.data);
+  if (parsed.success) return applyOnce(call, record, parsed.data);
+  const faults = parsed.error.issues.map((i) => ({ field: i.path.join("."), message: i.message }));
+  const message = "This entry could not be read. Enter it again.";
+  return recordRefusal(call, record, { code: "invalid", message, faults });
 }
 
-/** A clock that is off by more than three weeks is said to be off by three weeks. */
-function skewOf(request: SyncRequest, receivedAt: Date): number {
-  const skew = new Date(request.sentAt).getTime() - receivedAt.getTime();
-  const most = 21 * 86_400_000;
-  return Math.max(-most, Math.min(most, skew));
-}
-
-async function applyOnce(
-  deps: Deps,
-  actor: PersonActor,
-  record: NewSyncEntry,
-  body: EntryBody,
-): Promise<EntryOutcome> {
+async function applyOnce(call: Call, record: NewSyncEntry, body: EntryBody): Promise<EntryOutcome> {
+  const { deps, actor, receivedAt, skewMs } = call;
   try {
     const fresh = await deps.db.transaction().execute(async (trx) => {
       if (!(await insertSyncEntry(trx, record))) return false;
       await applyEntry(trx, deps, actor, {
         id: record.id,
-        happenedAt: record.happenedAt,
+        happenedAt: correctedInstant(record.happenedAt, skewMs, receivedAt),
         body,
       });
       return true;
     });
     return fresh
       ? { id: record.id, outcome: "applied", refusal: null }
-      : await recordedOutcome(deps, actor, record.id);
+      : await recordedOutcome(call, record.id);
   } catch (error) {
-    if (!isAppError(error) || TRY_AGAIN.has(error.code)) throw error;
-    return recordRefusal(deps, record, refusalOf(error));
+    const broken = isAppError(error) ? error : brokenRule(error);
+    if (broken && !TRY_AGAIN.has(broken.code)) {
+      const { code, message, faults } = broken;
+      return recordRefusal(call, record, { code, message, faults });
+    }
+    if (!broken) call.troubles.push(error);
+    // A defect or a lost connection: nothing of the entry remains, and it does not block others.
+    return later(record.id, broken?.message ?? "The server had trouble with this entry.");
   }
 }
 
+/** Between the failed attempt and this, another request may have applied the entry: it counts. */
 async function recordRefusal(
-  deps: Deps,
+  call: Call,
   record: NewSyncEntry,
   refusal: Refusal,
 ): Promise<EntryOutcome> {
-  await deps.db
+  const recorded = await call.deps.db
     .transaction()
     .execute((trx) => insertSyncEntry(trx, { ...record, outcome: "refused", refusal }));
-  return refused(record.id, refusal);
+  return recorded ? refused(record.id, refusal) : recordedOutcome(call, record.id);
 }
 
 /** What became of an entry when it was first sent. */
-async function recordedOutcome(deps: Deps, actor: PersonActor, id: string): Promise<EntryOutcome> {
-  const row = await findSyncEntry(deps.db, id);
-  if (!row || row.personId !== actor.personId) {
-    throw new AppError("conflict", "An entry with this id was sent by somebody else.");
-  }
+async function recordedOutcome(call: Call, id: string): Promise<EntryOutcome> {
+  const row = await findSyncEntry(call.deps.db, id);
+  if (!row) return later(id, "The server had trouble with this entry.");
+  if (row.personId !== call.actor.personId) return notYours(id);
   if (row.outcome === "applied") return { id, outcome: "applied", refusal: null };
   return refused(id, row.refusal as unknown as Refusal);
 }
 
-function refusalOf(error: AppError): Refusal {
-  return { code: error.code, message: error.message, faults: error.faults };
+function notYours(id: string): EntryOutcome {
+  const message =
+    "This entry was made by somebody else on this phone: they must sign in to send it.";
+  return refused(id, { code: NOT_YOURS, message, faults: [] });
+}
+
+function later(id: string, message: string): EntryOutcome {
+  return { id, outcome: "later", refusal: { code: "unavailable", message, faults: [] } };
 }
 
 function refused(id: string, refusal: Refusal): EntryOutcome {

@@ -1,5 +1,12 @@
 import { defineRoute, jsonBody } from "@/lib/server/define-route";
+import { log } from "@/lib/server/log";
 import { syncEntries } from "@/lib/usecases/sync-entries";
 
 /** The phones' one entrance for writes. */
-export const POST = defineRoute(syncEntries, { input: (request) => jsonBody(request) });
+export const POST = defineRoute(syncEntries, {
+  input: (request) => jsonBody(request),
+  respond: ({ response, troubles }) => {
+    for (const error of troubles) log.error({ act: "sync-entries", error }, "entry failed");
+    return Response.json(response, { headers: { "cache-control": "no-store" } });
+  },
+});

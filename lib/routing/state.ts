@@ -31,6 +31,9 @@ export class RouteState {
   /** Working time of the return. */
   readonly end: Int32Array;
   readonly load: Int32Array;
+  /** A number of its own for each content a route has had; a roll-back brings the old one back. */
+  readonly version: Int32Array;
+  private versions = 0;
   readonly routeOf: Int32Array;
   readonly positionOf: Int32Array;
   /** Sites in no route, and where each stands in that list (-1: in a route). */
@@ -45,6 +48,7 @@ export class RouteState {
   private readonly oldLength: Int32Array;
   private readonly oldPrice: Float64Array;
   private readonly oldEnd: Int32Array;
+  private readonly oldVersion: Int32Array;
   private readonly oldLoad: Int32Array;
   private oldTotal = 0;
 
@@ -56,6 +60,7 @@ export class RouteState {
     this.price = new Float64Array(slots);
     this.end = new Int32Array(slots);
     this.load = new Int32Array(slots * loads);
+    this.version = new Int32Array(slots);
     this.routeOf = new Int32Array(sites).fill(-1);
     this.positionOf = new Int32Array(sites);
     this.absent = Int32Array.from({ length: sites }, (_, s) => s);
@@ -66,6 +71,7 @@ export class RouteState {
     this.oldLength = new Int32Array(slots);
     this.oldPrice = new Float64Array(slots);
     this.oldEnd = new Int32Array(slots);
+    this.oldVersion = new Int32Array(slots);
     this.oldLoad = new Int32Array(slots * loads);
     for (let s = 0; s < sites; s++) this.total += model.skip[s]!;
     for (let r = 0; r < slots; r++) this.begin(r);
@@ -156,6 +162,7 @@ export class RouteState {
     this.oldLength[r] = this.length[r]!;
     this.oldPrice[r] = this.price[r]!;
     this.oldEnd[r] = this.end[r]!;
+    this.oldVersion[r] = this.version[r]!;
     const { loads } = this.model;
     for (let i = r * loads; i < (r + 1) * loads; i++) this.oldLoad[i] = this.load[i]!;
   }
@@ -163,6 +170,7 @@ export class RouteState {
   /** Puts a site behind position k of a route. The caller has tested that it fits. */
   insert(site: number, r: number, k: number): void {
     this.touch(r);
+    this.version[r] = ++this.versions;
     if ((this.length[r]! + 3) * FIELDS > this.row) this.grow();
     const before = this.routePrice(r);
     const { model } = this;
@@ -192,6 +200,7 @@ export class RouteState {
   /** Takes `count` stops out of a route, from position k on. */
   remove(r: number, k: number, count: number): void {
     this.touch(r);
+    this.version[r] = ++this.versions;
     const before = this.routePrice(r);
     const { model, data } = this;
     const at = r * this.row + k * FIELDS;
@@ -257,6 +266,7 @@ export class RouteState {
     this.length[r] = length;
     this.price[r] = this.oldPrice[r]!;
     this.end[r] = this.oldEnd[r]!;
+    this.version[r] = this.oldVersion[r]!;
     const { loads } = this.model;
     for (let i = r * loads; i < (r + 1) * loads; i++) this.load[i] = this.oldLoad[i]!;
     for (let k = 1; k <= length; k++) {

@@ -54,35 +54,37 @@ function judged(
   return { refused: refusal !== null, doubt };
 }
 
-/** Voltages as the product would have taken them in; what it would have refused is left out. */
-export function readingRows(s: Scenario): Rows<"reading"> {
+/** The voltages the product would have taken in, with its doubts; what it would refuse is left out. */
+export function takenIn(s: Scenario): { reading: ScenarioReading; doubt: string | null }[] {
   const packs = new Map(s.packs.map((p) => [p.key, p]));
   const lastResting = new Map<string, number>();
-  const rows: Rows<"reading"> = [];
-  for (const r of s.readings) {
-    const pack = packs.get(r.packKey);
-    if (!pack) throw new Error(`seed: ${r.key} names no pack`);
-    const { refused, doubt } = judged(r, pack, lastResting.get(pack.key) ?? null);
-    if (refused) continue;
-    if (r.kind === "resting") lastResting.set(pack.key, r.millivolts);
-    rows.push({
-      id: rowId("reading", r.key),
-      packId: rowId("pack", r.packKey),
-      at: r.at,
-      millivolts: r.millivolts,
-      kind: r.kind,
-      loadUa: r.loadUa,
-      temperatureDc: r.temperatureDc,
-      accuracyMv: r.accuracyMv,
-      instrument: r.instrument,
-      source: "phone",
-      personId: person(r.technicianKey),
-      doubt,
-      note: r.note,
-      receivedAt: new Date(Math.min(r.at.getTime() + 7 * 60_000, s.now.getTime())),
-    });
-  }
-  return rows;
+  return s.readings.flatMap((reading) => {
+    const pack = packs.get(reading.packKey);
+    if (!pack) throw new Error(`seed: ${reading.key} names no pack`);
+    const { refused, doubt } = judged(reading, pack, lastResting.get(pack.key) ?? null);
+    if (refused) return [];
+    if (reading.kind === "resting") lastResting.set(pack.key, reading.millivolts);
+    return [{ reading, doubt }];
+  });
+}
+
+export function readingRows(s: Scenario): Rows<"reading"> {
+  return takenIn(s).map(({ reading: r, doubt }) => ({
+    id: rowId("reading", r.key),
+    packId: rowId("pack", r.packKey),
+    at: r.at,
+    millivolts: r.millivolts,
+    kind: r.kind,
+    loadUa: r.loadUa,
+    temperatureDc: r.temperatureDc,
+    accuracyMv: r.accuracyMv,
+    instrument: r.instrument,
+    source: "phone",
+    personId: person(r.technicianKey),
+    doubt,
+    note: r.note,
+    receivedAt: new Date(Math.min(r.at.getTime() + 7 * 60_000, s.now.getTime())),
+  }));
 }
 
 export function eventRows(s: Scenario): Rows<"deviceEvent"> {

@@ -167,7 +167,8 @@ export function workOnAsset(
   at: Date,
 ): ScenarioTask | null {
   const pack = field.log.installed.get(asset.tag);
-  if (!pack) return null;
+  // A pack put in later on the same day is not there yet when the round comes by.
+  if (!pack || at <= pack.installedAt) return null;
   const read = field.rng.chance(0.88) ? takeReading(field, asset, technician, at) : null;
   const later = new Date(at.getTime() + 4 * 60_000);
   if ((field.retireDay.get(asset.tag) ?? Infinity) <= day) {

@@ -42,10 +42,10 @@ export async function openAndPrice(
 }
 
 /** The visit that adding an asset brings: its swap, with what the plan does there already. */
-async function visitToAdd(
+export async function visitToAdd(
   db: Kysely<Database>,
   plan: PlanRow,
-  act: Extract<PlanAct, { kind: "add" }>,
+  act: { readonly assetId: string },
 ): Promise<ExtraVisit> {
   const asset = await findAssetSite(db, act.assetId);
   if (!asset) throw notFound("This asset");

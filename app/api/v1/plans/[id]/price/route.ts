@@ -1,0 +1,9 @@
+import { defineRoute, jsonBody } from "@/lib/server/define-route";
+import { pricePlanAct } from "@/lib/usecases/price-plan-act";
+
+export const POST = defineRoute(pricePlanAct, {
+  input: async (request, params) => {
+    const body: Record<string, unknown> = await jsonBody(request);
+    return { ...body, planId: params.id ?? "" } as never;
+  },
+});

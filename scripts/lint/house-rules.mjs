@@ -26,7 +26,7 @@ const fileName = {
       return KEBAB.test(name) || MIGRATION.test(name) ? undefined : "kebab";
     };
     return {
-      Program(/** @type {import("estree").Program} */ node) {
+      Program(/** @type {import("eslint").AST.Program} */ node) {
         const messageId = judge();
         if (messageId) context.report({ node, messageId, data: { name } });
       },

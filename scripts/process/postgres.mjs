@@ -234,8 +234,3 @@ export async function ensureDatabase(server, name) {
   await server.query(`create database "${name}"`);
   return true;
 }
-
-/** @param {string} home folder of a server that is stopped and may be lost */
-export function removeServer(home) {
-  if (!runningServer(join(home, "cluster"))) rmSync(home, { recursive: true, force: true });
-}

@@ -4,17 +4,18 @@ import { ActionForm, type FormAction } from "@/components/forms/action-form";
 import { Button } from "@/components/ui/button";
 import { EditDialog } from "./edit-dialog";
 
-export interface ConfirmRemovalProps {
+export interface ConfirmRemovalProps<Result> {
   id: string;
   /** What will be gone: "North bank". */
   called: string;
   /** What is lost with it. */
   loses: string;
-  action: FormAction<unknown>;
+  action: FormAction<Result>;
 }
 
 /** Asks once, naming what will be lost. */
-export function ConfirmRemoval({ id, called, loses, action }: ConfirmRemovalProps) {
+export function ConfirmRemoval<Result>(props: ConfirmRemovalProps<Result>) {
+  const { id, called, loses, action } = props;
   return (
     <EditDialog label="Remove" name={`Remove ${called}`} title={`Remove ${called}?`}>
       {(close) => (

@@ -50,17 +50,18 @@ export function PersonActs({ id, name, state, isSelf }: PersonActsProps) {
   );
 }
 
-interface ActProps {
+interface ActProps<Result> {
   id: string;
   submit: string;
   done: string;
   danger?: boolean;
   active?: boolean;
-  action: FormAction<never>;
+  action: FormAction<Result>;
   children: ReactNode;
 }
 
-function Act({ id, submit, done, danger, active, action, children }: ActProps) {
+function Act<Result>(props: ActProps<Result>) {
+  const { id, submit, done, danger, active, action, children } = props;
   return (
     <div className="px-3 py-3">
       <ActionForm

@@ -1,0 +1,32 @@
+import { PageHead } from "@/components/ui/page-head";
+import type { CrewsView } from "@/lib/usecases/list-crews";
+import { CrewsTable, DepotsTable, VansTable } from "./structure-tables";
+import { TechniciansTable } from "./technicians-table";
+
+export interface CrewsPageProps {
+  view: CrewsView;
+  mayChange: boolean;
+  /** The id a new thing will get: sending its form twice makes one. */
+  newId: string;
+}
+
+/** Technicians first, then what they belong to and start from. */
+export function CrewsPage(props: CrewsPageProps) {
+  return (
+    <>
+      <PageHead
+        title="Crews"
+        lede="Who drives from where, in which van, and when they work."
+        actions={
+          !props.mayChange && <span className="text-soft">Administrators change these.</span>
+        }
+      />
+      <TechniciansTable {...props} />
+      <div className="grid gap-x-6 lg:grid-cols-2">
+        <CrewsTable {...props} />
+        <VansTable {...props} />
+        <DepotsTable {...props} />
+      </div>
+    </>
+  );
+}

@@ -1,0 +1,73 @@
+import type { Entries } from "@/components/forms/action-form";
+import { controlClass } from "@/components/ui/field";
+import { Checkbox } from "@/components/ui/inputs";
+import { WEEKDAYS, weekdayName } from "@/lib/present/weekday-names";
+
+export interface Shift {
+  weekday: number;
+  /** "HH:MM" or "HH:MM:SS", local time. */
+  starts: string;
+  ends: string;
+}
+
+export interface ShiftRowsProps {
+  entries: Entries;
+  shifts: readonly Shift[];
+  locale: string;
+}
+
+/** Seven lines: works that day, from, to. */
+export function ShiftRows({ entries, shifts, locale }: ShiftRowsProps) {
+  return (
+    <div className="divide-y divide-hair">
+      {WEEKDAYS.map((day) => {
+        const shift = shifts.find((one) => one.weekday === day);
+        const { key, ...tick } = entries.tick(`day-${day}`, shift !== undefined);
+        const name = weekdayName(day, locale);
+        return (
+          <div key={day} className="flex flex-wrap items-center gap-x-6 gap-y-1 px-3 py-1.5">
+            <div className="w-36">
+              <Checkbox key={key} {...tick} label={name} />
+            </div>
+            <Hour
+              {...{ entries, day, edge: "starts", label: `${name} from` }}
+              time={shift?.starts}
+            />
+            <span className="text-soft">to</span>
+            <Hour {...{ entries, day, edge: "ends", label: `${name} to` }} time={shift?.ends} />
+          </div>
+        );
+      })}
+      <ShiftFault entries={entries} />
+    </div>
+  );
+}
+
+interface HourProps {
+  entries: Entries;
+  day: number;
+  edge: "starts" | "ends";
+  label: string;
+  time: string | undefined;
+}
+
+function Hour({ entries, day, edge, label, time }: HourProps) {
+  const fallback = edge === "starts" ? "08:00" : "16:00";
+  const { name, defaultValue } = entries.text(`${edge}-${day}`, time?.slice(0, 5) ?? fallback);
+  return (
+    <input
+      type="time"
+      aria-label={label}
+      name={name}
+      defaultValue={defaultValue}
+      className={`${controlClass} max-w-32`}
+    />
+  );
+}
+
+/** Faults come by place among the ticked days, "shifts.0.ends". */
+function ShiftFault({ entries }: { entries: Entries }) {
+  const places = [0, 1, 2, 3, 4, 5, 6].flatMap((i) => [`shifts.${i}.starts`, `shifts.${i}.ends`]);
+  const fault = ["shifts", ...places].map((field) => entries.fault(field)).find(Boolean);
+  return fault ? <p className="px-3 py-2 font-medium text-brick-ink">{fault}</p> : null;
+}

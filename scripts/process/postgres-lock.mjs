@@ -1,5 +1,6 @@
 import { existsSync, readFileSync, readlinkSync, realpathSync, rmSync } from "node:fs";
 import { join } from "node:path";
+import { beganAt } from "./processes.mjs";
 
 /**
  * The server running from a database folder, if there is one. PostgreSQL notes its process
@@ -45,12 +46,7 @@ function readLock(data) {
  * @param {string} data
  */
 function worksIn(pid, data) {
-  try {
-    process.kill(pid, 0);
-  } catch (error) {
-    // EPERM: alive, and somebody else's.
-    if (/** @type {NodeJS.ErrnoException} */ (error).code !== "EPERM") return false;
-  }
+  if (beganAt(pid) === undefined) return false; // gone, or ended and not yet reaped
   try {
     return readlinkSync(`/proc/${pid}/cwd`) === realpathSync(data);
   } catch {

@@ -55,6 +55,7 @@ async function bringUp(life, print) {
   const home = homeOf();
   print(`Wanewright starts from ${ROOT}`);
   const record = await claimHome(home, life, print);
+  const ports = await choosePorts();
   await steps.step("Packages", () => ensurePackages(ROOT), String);
   const secrets = secretsOf(home);
   const database = await steps.step(
@@ -63,7 +64,6 @@ async function bringUp(life, print) {
     ({ told }) => told,
   );
   life.onEnd("database", database.stop);
-  const ports = await choosePorts();
   const mailAddress = ports.mail === undefined ? undefined : `http://127.0.0.1:${ports.mail}`;
   const { authSecret } = secrets;
   const found = { databaseUrl: database.url, authSecret, port: ports.web, mailAddress };

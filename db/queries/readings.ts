@@ -1,62 +1,6 @@
 import { type Kysely, sql, type Transaction } from "kysely";
 import type { Database } from "../client";
 
-/** Where and when a voltage was read: by tag or by asset id. */
-export interface ReadingPlace {
-  readonly id: string;
-  readonly tag: string | null;
-  readonly assetId: string | null;
-  readonly at: Date;
-}
-
-/** What the register knows about one place and moment, in the order asked. */
-export interface ReadingTarget {
-  readonly assetId: string | null;
-  readonly packId: string | null;
-  readonly chemistry: string | null;
-  readonly nominalMv: number | null;
-  readonly series: number | null;
-  readonly cutoffMv: number | null;
-  readonly previousRestingMv: number | null;
-  readonly previousAt: Date | null;
-  /** The voltage already kept under this id, if there is one. */
-  readonly keptMv: number | null;
-}
-
-/**
- * The pack that was in each asset at each moment, with what a voltage is judged against.
- * One statement for any number of places.
- */
-export async function findReadingTargets(
-  trx: Transaction<Database>,
-  places: readonly ReadingPlace[],
-): Promise<ReadingTarget[]> {
-  const asked = JSON.stringify(
-    places.map((p, n) => ({ n, id: p.id, tag: p.tag, asset_id: p.assetId, at: p.at })),
-  );
-  const result = await sql<ReadingTarget>`
-    select coalesce(by_tag.id, by_id.id) as asset_id, p.id as pack_id, c.chemistry, c.nominal_mv,
-      p.series, m.cutoff_mv, before.millivolts as previous_resting_mv, before.at as previous_at,
-      kept.millivolts as kept_mv
-    from json_to_recordset(${asked}::json) as i(n int, id uuid, tag text, asset_id uuid, at timestamptz)
-    left join asset by_tag on by_tag.tag = i.tag
-    left join asset by_id on by_id.id = i.asset_id
-    left join device_model m on m.id = coalesce(by_tag.device_model_id, by_id.device_model_id)
-    left join lateral (
-      select id, series, cell_type_id from pack
-      where asset_id = coalesce(by_tag.id, by_id.id)
-        and installed_at <= i.at and (removed_at is null or removed_at > i.at)
-      limit 1) p on true
-    left join cell_type c on c.id = p.cell_type_id
-    left join lateral (
-      select millivolts, at from reading
-      where pack_id = p.id and kind = 'resting' and at < i.at
-      order by at desc limit 1) before on true
-    left join reading kept on kept.id = i.id
-    order by i.n`.execute(trx);
-  return result.rows;
-}
-
 export interface NewReading {
   readonly id: string;
   readonly packId: string;

@@ -44,10 +44,14 @@ export function readDay(text: string, order: DayOrder): string | null {
 }
 
 function calendarDay(year = "", month = "", day = ""): string | null {
-  const iso = `${year}-${month.padStart(2, "0")}-${day.padStart(2, "0")}`;
-  const at = Date.parse(`${iso}T00:00:00Z`);
-  const exists = !Number.isNaN(at) && new Date(at).toISOString().startsWith(iso);
-  return exists ? iso : null;
+  const inMonth = Number(day) >= 1 && Number(day) <= daysIn(Number(year), Number(month));
+  return inMonth ? `${year}-${month.padStart(2, "0")}-${day.padStart(2, "0")}` : null;
+}
+
+/** Days in a month of the Gregorian calendar; none in a month that is none. */
+function daysIn(year: number, month: number): number {
+  const leap = year % 4 === 0 && (year % 100 !== 0 || year % 400 === 0);
+  return [31, leap ? 29 : 28, 31, 30, 31, 30, 31, 31, 30, 31, 30, 31][month - 1] ?? 0;
 }
 
 /** The instant at which local clocks show this; the first where they show it twice. */

@@ -3,6 +3,8 @@ export type DecimalSign = "." | "," | "either";
 
 const SPACES = /[\s\u00a0\u2009\u202f']/g;
 const NUMBER = /^([+-]?)(\d*)(?:\.(\d*))?(?:[eE]([+-]?\d{1,3}))?$/;
+/** Short whole numbers, by far the commonest, need none of the care below. */
+const PLAIN = /^\d{1,6}$/;
 const GROUPED = { ".": /^[+-]?\d{1,3}(,\d{3})+(\.|$)/, ",": /^[+-]?\d{1,3}(\.\d{3})+(,|$)/ };
 
 /**
@@ -11,6 +13,7 @@ const GROUPED = { ".": /^[+-]?\d{1,3}(,\d{3})+(\.|$)/, ",": /^[+-]?\d{1,3}(\.\d{
  * @returns null when the text is no number, or one beyond 2^53
  */
 export function readScaled(text: string, sign: DecimalSign, digits: number): number | null {
+  if (PLAIN.test(text)) return Number(text) * 10 ** digits;
   const plain = plainNumber(text, sign);
   const match = plain === null ? null : NUMBER.exec(plain);
   if (!match) return null;

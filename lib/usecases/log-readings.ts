@@ -1,12 +1,7 @@
 import type { Transaction } from "kysely";
 import type { Database } from "@/db/client";
-import {
-  findReadingTargets,
-  insertReadings,
-  type NewReading,
-  type ReadingOrigin,
-  type ReadingTarget,
-} from "@/db/queries/readings";
+import { findReadingTargets, type ReadingTarget } from "@/db/queries/reading-targets";
+import { insertReadings, type NewReading, type ReadingOrigin } from "@/db/queries/readings";
 import type { Chemistry } from "@/lib/battery/pack";
 import { judgeReading } from "./judge-reading";
 import { touchForecasts } from "./touch-forecasts";
@@ -99,10 +94,10 @@ function judgeInTime(
   for (const { n, at } of byTime) {
     const [order, target] = [orders[n], targets[n]];
     if (!order || !target) continue;
-    const inBatch = target.packId ? last.get(target.packId) : undefined;
-    const useBatch = inBatch && inBatch.at < at && inBatch.at > (target.previousAt?.getTime() ?? 0);
-    const previousRestingMv = useBatch ? inBatch.mv : target.previousRestingMv;
-    const result = judge(order, { ...target, previousRestingMv }, now);
+    const inBatch = target.pack ? last.get(target.pack.id) : undefined;
+    const useBatch = inBatch && inBatch.at < at && inBatch.at > (target.previous?.at ?? 0);
+    const before = useBatch ? inBatch : target.previous;
+    const result = judge(order, target, before?.mv ?? null, now);
     results[n] = result;
     if (result.packId && result.status !== "refused" && order.kind === "resting") {
       last.set(result.packId, { at, mv: order.millivolts });
@@ -111,33 +106,33 @@ function judgeInTime(
   return results;
 }
 
-function judge(order: ReadingOrder, target: ReadingTarget, now: Date): ReadingResult {
+function judge(
+  order: ReadingOrder,
+  target: ReadingTarget,
+  previousRestingMv: number | null,
+  now: Date,
+): ReadingResult {
+  const { pack, cutoffMv } = target;
   if (!target.assetId) return refused(order, null, "tag", "There is no asset with this tag.");
   if (order.at.getTime() > now.getTime() + CLOCK_LEEWAY_MS) {
     return refused(order, null, "at", "This moment is still to come: check the date and the zone.");
   }
-  if (!target.packId || !target.chemistry) {
+  if (!pack) {
     return refused(order, null, "at", "No pack was in this asset then: log its install first.");
   }
-  if (target.keptMv !== null) return repeated(order, target);
+  if (target.keptMv !== null) return repeated(order, pack.id, target.keptMv);
   const { refusal, doubt } = judgeReading(
-    {
-      chemistry: target.chemistry as Chemistry,
-      nominalMv: target.nominalMv ?? 0,
-      series: target.series ?? 1,
-      cutoffMv: target.cutoffMv ?? 0,
-      previousRestingMv: target.previousRestingMv,
-    },
+    { ...pack, chemistry: pack.chemistry as Chemistry, cutoffMv, previousRestingMv },
     { ...order, temperatureDc: order.temperatureDc ?? null },
   );
-  if (refusal) return refused(order, target.packId, "millivolts", refusal);
-  return { id: order.id, status: "logged", packId: target.packId, doubt, refusal: null };
+  if (refusal) return refused(order, pack.id, "millivolts", refusal);
+  return { id: order.id, status: "logged", packId: pack.id, doubt, refusal: null };
 }
 
-function repeated(order: ReadingOrder, target: ReadingTarget): ReadingResult {
-  return target.keptMv === order.millivolts
-    ? { id: order.id, status: "repeated", packId: target.packId, doubt: null, refusal: null }
-    : refused(order, target.packId, "id", "This id was used before, for another voltage.");
+function repeated(order: ReadingOrder, packId: string, keptMv: number): ReadingResult {
+  return keptMv === order.millivolts
+    ? { id: order.id, status: "repeated", packId, doubt: null, refusal: null }
+    : refused(order, packId, "id", "This id was used before, for another voltage.");
 }
 
 function refused(

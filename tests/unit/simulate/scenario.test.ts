@@ -35,12 +35,13 @@ describe("the board at a moment", () => {
     expect(left.filter((days) => days > 60 && days <= 365).length).toBeGreaterThan(500);
   });
 
+  // As text: comparing thousands of objects one by one takes longer than making them.
   it("is the same again for the same seed and moment", () => {
     const again = buildScenario(1, NOW);
-    expect(again.packs).toEqual(s.packs);
-    expect(again.readings).toEqual(s.readings);
-    expect(again.rounds).toEqual(s.rounds);
-  }, 60_000);
+    for (const part of ["packs", "readings", "rounds", "stockMoves"] as const) {
+      expect(JSON.stringify(again[part]) === JSON.stringify(s[part]), part).toBe(true);
+    }
+  }, 240_000);
 });
 
 describe("the history", () => {

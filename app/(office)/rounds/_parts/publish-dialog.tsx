@@ -1,0 +1,130 @@
+"use client";
+
+import { useMutation, useQuery } from "@tanstack/react-query";
+import { useRouter } from "next/navigation";
+import { useState } from "react";
+import { Button } from "@/components/ui/button";
+import { Dialog } from "@/components/ui/dialog";
+import { Checkbox } from "@/components/ui/inputs";
+import { Notice } from "@/components/ui/notice";
+import { Skeleton } from "@/components/ui/states";
+import { toast } from "@/components/ui/toast";
+import { fetchJson } from "../../_parts/fetch-json";
+import type { BoardActs } from "./use-board";
+
+interface Preview {
+  readonly stranded: readonly string[];
+  readonly unchanged: number;
+  readonly mails: readonly {
+    readonly kind: "published" | "changed" | "cancelled";
+    readonly name: string;
+    readonly email: string;
+    readonly day: string;
+    readonly stops: number;
+  }[];
+  readonly contacts: readonly { readonly name: string; readonly siteName: string }[];
+}
+
+const NEWS = { published: "new", changed: "changed", cancelled: "cancelled" } as const;
+
+/** Names everybody who will get a mail, before any is sent. */
+export function PublishDialog({ acts, onClose }: { acts: BoardActs; onClose: () => void }) {
+  const { plan } = acts.board;
+  const router = useRouter();
+  const [tell, setTell] = useState(true);
+  const address = `/api/v1/plans/${plan?.id}/publication`;
+  const preview = useQuery({
+    queryKey: ["publication", plan?.id, plan?.version],
+    queryFn: () => fetchJson<Preview>(address),
+    staleTime: 0,
+  });
+  const publish = useMutation({
+    mutationFn: () =>
+      fetchJson<{ mails: number }>(address, {
+        method: "POST",
+        body: { version: plan?.version, tellContacts: tell },
+      }),
+    onSuccess: ({ mails }) => {
+      toast({ text: `Published. ${mails === 1 ? "1 mail is" : `${mails} mails are`} on the way.` });
+      onClose();
+      void acts.again();
+      router.refresh();
+    },
+  });
+  const { data } = preview;
+  const nothing = data !== undefined && data.mails.length === 0;
+  return (
+    <Dialog
+      open
+      title={`Publish ${plan?.name ?? "this plan"}`}
+      onClose={onClose}
+      actions={
+        <>
+          <Button onClick={onClose}>Not yet</Button>
+          <Button
+            kind="go"
+            busy={publish.isPending && "Publishing…"}
+            disabled={!data || nothing || data.stranded.length > 0}
+            onClick={() => publish.mutate()}
+          >
+            Publish and send
+          </Button>
+        </>
+      }
+    >
+      {publish.error && <Notice kind="trouble">{publish.error.message}</Notice>}
+      {preview.error && <Notice kind="trouble">{preview.error.message}</Notice>}
+      {!data && !preview.error && (
+        <Skeleton label="Looking who gets a mail" rows={4} shape="lines" />
+      )}
+      {data && data.stranded.length > 0 && (
+        <Notice kind="trouble">
+          {data.stranded.join("; ")}. Move these stops or take them out first.
+        </Notice>
+      )}
+      {data && <Mails preview={data} />}
+      {data && data.contacts.length > 0 && (
+        <div className="mt-3">
+          <Checkbox
+            name="tell"
+            label={`Also tell ${data.contacts.length === 1 ? "the site contact" : `the ${data.contacts.length} site contacts`} when to expect somebody`}
+            hint={[...new Set(data.contacts.map((c) => `${c.name} (${c.siteName})`))].join(", ")}
+            checked={tell}
+            onChange={(event) => setTell(event.target.checked)}
+          />
+        </div>
+      )}
+    </Dialog>
+  );
+}
+
+function Mails({ preview }: { preview: Preview }) {
+  const { mails, unchanged } = preview;
+  if (mails.length === 0) return <p>Nothing in this plan is new to anybody.</p>;
+  return (
+    <>
+      <p className="mb-2">
+        {mails.length === 1 ? "One mail goes" : `${mails.length} mails go`} out, each with its
+        calendar entry.{" "}
+        {unchanged > 0 && `${unchanged} published rounds stay as they are; nobody is written to.`}
+      </p>
+      <ul className="max-h-72 overflow-y-auto border-y border-rule">
+        {mails.map((mail) => (
+          <li
+            key={`${mail.email} ${mail.day}`}
+            className="grid grid-cols-[minmax(0,1fr)_7rem_6rem] gap-2 border-t border-hair py-1 first:border-t-0"
+          >
+            <span className="min-w-0 truncate">
+              {mail.name} <span className="text-soft">{mail.email}</span>
+            </span>
+            <span>{mail.day}</span>
+            <span className={mail.kind === "cancelled" ? "text-brick-ink" : "text-soft"}>
+              {NEWS[mail.kind]}
+              {mail.stops > 0 && `, ${mail.stops} stops`}
+            </span>
+          </li>
+        ))}
+      </ul>
+    </>
+  );
+}

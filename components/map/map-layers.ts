@@ -1,0 +1,114 @@
+import L from "leaflet";
+import type { WaneDiscModel } from "@/lib/present/wane-disc";
+import { clusterMarkup, depotMarkup, discMarkup, stopMarkup } from "./disc-icon";
+
+export interface MapPoint {
+  readonly latitude: number;
+  readonly longitude: number;
+}
+
+export interface MapDisc extends MapPoint {
+  readonly id: string;
+  /** Read out and shown on hover. */
+  readonly label: string;
+  readonly disc: WaneDiscModel;
+}
+
+export interface MapRound {
+  readonly id: string;
+  readonly label: string;
+  readonly depot: MapPoint;
+  readonly stops: readonly (MapPoint & { readonly id: string; readonly label: string })[];
+}
+
+function icon(html: string, size: number): L.DivIcon {
+  return L.divIcon({ html, className: "", iconSize: [size, size] });
+}
+
+/** Colours come from the tokens, so that the map changes with day and night. */
+function token(name: string): string {
+  return getComputedStyle(document.documentElement).getPropertyValue(`--${name}`).trim();
+}
+
+/** The invented or real district beneath everything: water, roads, land. */
+export function districtLayer(data: GeoJSON.FeatureCollection): L.GeoJSON {
+  const styles: Record<string, L.PathOptions> = {
+    water: { color: token("water"), weight: 3, fillColor: token("water"), fillOpacity: 1 },
+    road: { color: token("rule"), weight: 1.5 },
+    land: { color: token("hair"), weight: 1, fillColor: token("land"), fillOpacity: 1 },
+  };
+  const kindOf = (properties: GeoJSON.GeoJsonProperties): string => {
+    const kind = String(properties?.kind ?? "");
+    if (/road|lane|track/.test(kind)) return "road";
+    return /river|drain|water|mere|dyke|channel/.test(kind) ? "water" : "land";
+  };
+  return L.geoJSON(data, {
+    interactive: false,
+    filter: (feature) => feature.geometry.type !== "Point",
+    style: (feature) => ({ ...styles[kindOf(feature?.properties ?? null)], interactive: false }),
+  });
+}
+
+/** One pack's mark. */
+export function discMarker(
+  mark: MapDisc,
+  chosen: boolean,
+  onSelect: (id: string) => void,
+): L.Marker {
+  const size = chosen ? 26 : 16;
+  const marker = L.marker([mark.latitude, mark.longitude], {
+    icon: icon(discMarkup(mark.disc, size), size),
+    title: mark.label,
+    alt: mark.label,
+    keyboard: chosen,
+    zIndexOffset: chosen ? 1000 : 0,
+  });
+  return marker.on("click", () => onSelect(mark.id));
+}
+
+export function clusterMarker(at: MapPoint, count: number, onOpen: () => void): L.Marker {
+  const label = `${count} packs; press to look closer`;
+  const marker = L.marker([at.latitude, at.longitude], {
+    icon: icon(clusterMarkup(count), 28),
+    title: label,
+    alt: label,
+    keyboard: false,
+  });
+  return marker.on("click", onOpen);
+}
+
+/** A round: its line from depot to depot, its depot and its numbered stops. */
+export function roundLayer(
+  round: MapRound,
+  numbered: boolean,
+  onSelect: (id: string) => void,
+): L.LayerGroup {
+  const path = [round.depot, ...round.stops, round.depot].map((p): L.LatLngTuple => [
+    p.latitude,
+    p.longitude,
+  ]);
+  const line = L.polyline(path, {
+    color: token("dusk"),
+    weight: numbered ? 2.5 : 1.5,
+    opacity: numbered ? 1 : 0.55,
+  });
+  line.on("click", () => onSelect(round.id));
+  const depot = L.marker([round.depot.latitude, round.depot.longitude], {
+    icon: icon(depotMarkup, 16),
+    title: "Depot",
+    alt: "Depot",
+    keyboard: false,
+  });
+  const stops = numbered
+    ? round.stops.map((stop, i) =>
+        L.marker([stop.latitude, stop.longitude], {
+          icon: icon(stopMarkup(i + 1), 22),
+          title: `${i + 1}. ${stop.label}`,
+          alt: `${i + 1}. ${stop.label}`,
+          keyboard: false,
+          zIndexOffset: 500,
+        }).on("click", () => onSelect(stop.id)),
+      )
+    : [];
+  return L.layerGroup([line, depot, ...stops]);
+}

@@ -130,6 +130,8 @@ export interface EntryOutcome {
 
 export interface SyncResponse {
   readonly receivedAt: string;
+  /** When the last entry was through: a day made later holds what was applied. */
+  readonly answeredAt: string;
   /** Who is signed in, so that a phone that changed hands notices. */
   readonly personId: string;
   readonly outcomes: readonly EntryOutcome[];

@@ -65,7 +65,8 @@ export const syncEntries = defineUseCase({
       outcomes.push(outcome);
     }
     const { personId } = actor;
-    const response = { receivedAt: receivedAt.toISOString(), personId, outcomes };
+    const times = { receivedAt: receivedAt.toISOString(), answeredAt: deps.now().toISOString() };
+    const response = { ...times, personId, outcomes };
     return { response, troubles: call.troubles };
   },
 });

@@ -1,0 +1,49 @@
+import { openFieldDatabase } from "./database";
+import { FieldStore } from "./field-store";
+import { browserTransport } from "./transport";
+
+const CHANNEL = "wanewright-field";
+
+let store: FieldStore | null = null;
+
+/** The store of this tab, made on first use. */
+export function fieldStore(): FieldStore {
+  store ??= connect();
+  return store;
+}
+
+function connect(): FieldStore {
+  const channel = typeof BroadcastChannel === "undefined" ? null : new BroadcastChannel(CHANNEL);
+  const made = new FieldStore({
+    open: () => openFieldDatabase(),
+    transport: browserTransport(),
+    now: () => new Date(),
+    newId: () => crypto.randomUUID(),
+    chance: () => Math.random(),
+    later: (work, ms) => void setTimeout(work, ms),
+    announce: () => channel?.postMessage("changed"),
+  });
+  channel?.addEventListener("message", () => void made.reload());
+  return made;
+}
+
+/**
+ * Starts the store and keeps it going: signal that returns, a page that comes back into view.
+ * @returns what stops it
+ */
+export function runFieldStore(): () => void {
+  const running = fieldStore();
+  const again = () => void running.exchange();
+  const seen = () => {
+    if (document.visibilityState === "visible") again();
+  };
+  window.addEventListener("online", again);
+  document.addEventListener("visibilitychange", seen);
+  void running.start();
+  // Asked once: without it a full phone may throw away what is kept.
+  void navigator.storage?.persist?.();
+  return () => {
+    window.removeEventListener("online", again);
+    document.removeEventListener("visibilitychange", seen);
+  };
+}

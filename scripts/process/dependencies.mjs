@@ -1,23 +1,42 @@
-import { createHash } from "node:crypto";
-import { accessSync, constants, existsSync, readFileSync, statSync, writeFileSync } from "node:fs";
+import { accessSync, constants, existsSync, readFileSync } from "node:fs";
 import { join } from "node:path";
 import { run, tail } from "./command.mjs";
 import { Trouble } from "./trouble.mjs";
 
 /**
  * What stands between this machine and the packages of the lockfile; undefined when nothing.
+ * Compared by content: npm notes what it installed, and a checkout changes file times.
  * @param {string} root
  * @returns {"missing" | "outdated" | undefined}
  */
 export function packagesLack(root) {
-  const installed = join(root, "node_modules/.package-lock.json");
-  if (!existsSync(installed)) return "missing";
-  const lockfile = join(root, "package-lock.json");
-  const marker = markerOf(root);
-  if (existsSync(marker)) {
-    return readFileSync(marker, "utf8") === hashOf(lockfile) ? undefined : "outdated";
+  const installed = packagesOf(join(root, "node_modules/.package-lock.json"));
+  if (installed === undefined) return "missing";
+  const wanted = packagesOf(join(root, "package-lock.json")) ?? {};
+  for (const [path, { version, optional, devOptional, link }] of Object.entries(wanted)) {
+    if (path === "" || link) continue;
+    const there = installed[path];
+    // Optional packages are for other systems as often as not.
+    if (there === undefined && (optional || devOptional)) continue;
+    if (there?.version !== version) return "outdated";
   }
-  return statSync(installed).mtimeMs < statSync(lockfile).mtimeMs ? "outdated" : undefined;
+  return undefined;
+}
+
+/**
+ * @typedef {object} Locked
+ * @property {string} [version]
+ * @property {boolean} [optional]
+ * @property {boolean} [devOptional]
+ * @property {boolean} [link]
+ */
+/**
+ * @param {string} lockfile
+ * @returns {Record<string, Locked> | undefined}
+ */
+function packagesOf(lockfile) {
+  if (!existsSync(lockfile)) return undefined;
+  return JSON.parse(readFileSync(lockfile, "utf8")).packages ?? {};
 }
 
 /**
@@ -37,7 +56,6 @@ export async function ensurePackages(root) {
       mend(done.output),
     );
   }
-  writeFileSync(markerOf(root), hashOf(join(root, "package-lock.json")));
   return "installed";
 }
 
@@ -74,9 +92,3 @@ function mend(output) {
   }
   return "Run `npm ci` by hand to see the whole message.";
 }
-
-/** @param {string} root */
-const markerOf = (root) => join(root, "node_modules/.wanewright-lockfile");
-
-/** @param {string} file */
-const hashOf = (file) => createHash("sha256").update(readFileSync(file)).digest("hex");

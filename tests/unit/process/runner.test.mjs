@@ -1,4 +1,4 @@
-import { mkdirSync, mkdtempSync, rmSync, utimesSync, writeFileSync } from "node:fs";
+import { mkdirSync, mkdtempSync, rmSync, writeFileSync } from "node:fs";
 import { createServer } from "node:net";
 import { once } from "node:events";
 import { tmpdir } from "node:os";
@@ -105,13 +105,24 @@ describe("ports", () => {
 describe("what is installed", () => {
   it("knows missing, older and current packages", () => {
     const root = fresh("packages");
-    writeFileSync(join(root, "package-lock.json"), "{}");
+    const packages = {
+      "": { version: "1.0.0" },
+      "node_modules/one": { version: "1.2.0" },
+      "node_modules/for-another-system": { version: "3.0.0", optional: true },
+    };
+    writeFileSync(join(root, "package-lock.json"), JSON.stringify({ packages }));
     expect(packagesLack(root)).toBe("missing");
     mkdirSync(join(root, "node_modules"));
-    const installed = join(root, "node_modules/.package-lock.json");
-    writeFileSync(installed, "{}");
+    const installed = (/** @type {object} */ there) =>
+      writeFileSync(
+        join(root, "node_modules/.package-lock.json"),
+        JSON.stringify({ packages: there }),
+      );
+    installed({ "node_modules/one": { version: "1.2.0" } });
     expect(packagesLack(root)).toBeUndefined();
-    utimesSync(installed, 1, 1);
+    installed({ "node_modules/one": { version: "1.1.0" } });
+    expect(packagesLack(root)).toBe("outdated");
+    installed({});
     expect(packagesLack(root)).toBe("outdated");
   });
 

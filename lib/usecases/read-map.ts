@@ -30,8 +30,8 @@ export const readMap = defineUseCase({
       loadTechniciansToPlan(deps.db, []),
       plansWithin(deps.db, days.firstDay, days.lastDay),
     ]);
-    const draft = plans.find((plan) => plan.state === "draft") ?? null;
-    const rounds = await roundsShown(deps.db, technicians, days, draft);
+    const drafts = plans.filter((plan) => plan.state === "draft");
+    const rounds = await roundsShown(deps.db, technicians, days, drafts);
     const inputs = await boardInputs(deps.db, technicians, rounds);
     return {
       within,

@@ -35,8 +35,8 @@ export const readRoundsBoard = defineUseCase({
     const all = await loadTechniciansToPlan(deps.db, []);
     const technicians = all.filter((t) => input.crewId === null || t.crewId === input.crewId);
     const week = { firstDay: monday, lastDay: addDays(monday, 6) };
-    const draft = plan && plan.state !== "published" ? plan : null;
-    const stored = await roundsShown(deps.db, technicians, week, draft);
+    const drafts = plan && plan.state !== "published" ? [plan] : [];
+    const stored = await roundsShown(deps.db, technicians, week, drafts);
     const rounds = (await boardInputs(deps.db, technicians, stored)).map((round) =>
       boardRound(round, today, organisation),
     );

@@ -9,28 +9,47 @@ import type { BoardRoundInput } from "@/lib/present/rounds-board";
 
 type Technicians = Awaited<ReturnType<typeof loadTechniciansToPlan>>;
 
+interface Days {
+  readonly firstDay: string;
+  readonly lastDay: string;
+}
+
 /**
  * The rounds that stand on some days: those that bind, and in their place, where a draft covers
- * them, the draft's. Rounds that have begun always show.
+ * them, the draft's. Of drafts that overlap the first counts. Rounds that have begun always show.
  */
 export async function roundsShown(
   db: Kysely<Database>,
   technicians: Technicians,
-  days: { readonly firstDay: string; readonly lastDay: string },
-  draft: PlanRow | null,
+  days: Days,
+  drafts: readonly PlanRow[],
 ): Promise<StoredRound[]> {
-  const ids = technicians.map((technician) => technician.id);
-  const binding = await loadBindingRounds(db, ids, days.firstDay, days.lastDay);
-  if (!draft) return binding;
-  const crews = new Set(draft.crewIds);
-  const covered = (round: StoredRound) => {
-    const crewId = technicians.find((t) => t.id === round.technicianId)?.crewId ?? "";
-    const inCrews = crews.size === 0 || crews.has(crewId);
-    return inCrews && draft.firstDay <= round.day && round.day <= draft.lastDay;
-  };
-  const kept = binding.filter((round) => round.state !== "published" || !covered(round));
-  const proposed = await loadPlanRounds(db, draft.id);
-  return [...kept, ...proposed].filter((r) => r.day >= days.firstDay && r.day <= days.lastDay);
+  const crewOf = new Map(technicians.map((t) => [t.id, t.crewId]));
+  const binding = await loadBindingRounds(db, [...crewOf.keys()], days.firstDay, days.lastDay);
+  const shown = withoutOverlaps(drafts);
+  const isCovered = (round: StoredRound) =>
+    shown.some(
+      (draft) =>
+        overlap(draft, { firstDay: round.day, lastDay: round.day }) &&
+        (draft.crewIds.length === 0 ||
+          draft.crewIds.includes(crewOf.get(round.technicianId) ?? "")),
+    );
+  const kept = binding.filter((round) => round.state !== "published" || !isCovered(round));
+  const proposed = await Promise.all(shown.map((draft) => loadPlanRounds(db, draft.id)));
+  return [...kept, ...proposed.flat()].filter(
+    (r) => r.day >= days.firstDay && r.day <= days.lastDay && crewOf.has(r.technicianId),
+  );
+}
+
+function overlap(a: Days, b: Days): boolean {
+  return a.firstDay <= b.lastDay && b.firstDay <= a.lastDay;
+}
+
+function withoutOverlaps(drafts: readonly PlanRow[]): PlanRow[] {
+  return drafts.reduce<PlanRow[]>(
+    (kept, draft) => (kept.some((k) => overlap(k, draft)) ? kept : [...kept, draft]),
+    [],
+  );
 }
 
 /** Length of a technician's shift on a day; 0 when there is none. */

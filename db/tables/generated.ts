@@ -203,7 +203,7 @@ export interface Forecast {
 export interface ForecastOutcome {
   censored: boolean;
   /**
-   * Chance, by that forecast, that the device had stopped when the pack came out.
+   * Chance, by that forecast, of stopping by ended_at: uniform from 0 to 1000 over many packs if the forecasts are sound, censored ones counted as such.
    */
   chanceStoppedPermille: Generated<number>;
   endedAt: Timestamp;

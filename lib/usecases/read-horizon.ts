@@ -1,15 +1,17 @@
 import { z } from "zod";
 import {
-  bookedHours,
-  cellsToLoad,
-  chancesWithin,
-  chargeThrownAway,
   cutoffsByWeek,
   HORIZON_ORDERS,
   horizonPage,
   type HorizonFilter,
-  outNow,
 } from "@/db/queries/horizon";
+import {
+  bookedHours,
+  cellsToLoad,
+  chancesWithin,
+  chargeThrownAway,
+  outNow,
+} from "@/db/queries/horizon-figures";
 import { listCrewNames } from "@/db/queries/crew-names";
 import { getOrganisation } from "@/db/queries/organisation";
 import { dayFromNumber, dayNumber, dayOfInstant } from "@/lib/present/calendar-days";

@@ -1,6 +1,6 @@
 import { z } from "zod";
 import { claimDigest, duePacks, listDigestSettings } from "@/db/queries/digests";
-import { chancesWithin } from "@/db/queries/horizon";
+import { chancesWithin } from "@/db/queries/horizon-figures";
 import { findOrganisation, type Organisation } from "@/db/queries/organisation";
 import type { DigestLine, DigestProps } from "@/emails/mail-props";
 import { dayOfInstant } from "@/lib/present/calendar-days";
@@ -67,20 +67,7 @@ async function digestProps(
     duePacks(deps.db, now, day, reader.horizonDays),
     chancesWithin(deps.db, null, reader.horizonDays, { now, today: day }),
   ]);
-  const lines = packs.map((pack): DigestLine & { isOut: boolean } => {
-    const isOut = pack.outNowPermille >= OUT_PERMILLE;
-    return {
-      isOut,
-      tag: pack.tag,
-      assetName: pack.assetName,
-      siteName: pack.siteName,
-      left: shareLabel({ share: pack.shareLeftPermille / 1000, isOut }, locale),
-      p05: dayOfInstant(pack.p05, timeZone),
-      p50: dayOfInstant(pack.p50, timeZone),
-      p95: dayOfInstant(pack.p95, timeZone),
-      visitOn: pack.visitOn,
-    };
-  });
+  const lines = packs.map((pack) => lineOf(pack, organisation));
   const listed = lines.slice(0, LISTED);
   const mass = poissonBinomial(chances);
   return {
@@ -101,5 +88,22 @@ async function digestProps(
       p95: countQuantile(mass, 0.95),
     },
     notBooked: listed.filter((line) => line.visitOn === null).length,
+  };
+}
+
+type DuePack = Awaited<ReturnType<typeof duePacks>>[number];
+
+function lineOf(
+  pack: DuePack,
+  { locale, timeZone }: Organisation,
+): DigestLine & { isOut: boolean } {
+  const isOut = pack.outNowPermille >= OUT_PERMILLE;
+  const { tag, assetName, siteName, visitOn } = pack;
+  return {
+    ...{ isOut, tag, assetName, siteName, visitOn },
+    left: shareLabel({ share: pack.shareLeftPermille / 1000, isOut }, locale),
+    p05: dayOfInstant(pack.p05, timeZone),
+    p50: dayOfInstant(pack.p50, timeZone),
+    p95: dayOfInstant(pack.p95, timeZone),
   };
 }

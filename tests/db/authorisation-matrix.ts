@@ -59,4 +59,12 @@ export const MATRIX: Readonly<Record<string, string>> = {
   "remove-technician": "A",
   "record-absence": "AD",
   "remove-absence": "AD",
+
+  // Horizon and Record
+  "read-horizon": "ADS",
+  "export-horizon": "ADS",
+  "read-trust": "ADS",
+  "read-costs": "ADS",
+  "refresh-forecasts": "W",
+  "judge-history": "W",
 };

@@ -158,3 +158,13 @@ export async function lockAdministrators(trx: Transaction<Database>): Promise<st
     .execute();
   return rows.map((row) => row.id);
 }
+
+export async function hasAdministrator(trx: Transaction<Database>): Promise<boolean> {
+  const row = await trx
+    .selectFrom("person")
+    .select("id")
+    .where(sql<SqlBool>`'administrator' = any(roles)`)
+    .limit(1)
+    .executeTakeFirst();
+  return row !== undefined;
+}

@@ -2,15 +2,15 @@ import { createHash } from "node:crypto";
 import { headers } from "next/headers";
 import { redirect } from "next/navigation";
 import { cache } from "react";
-import { findActivePerson } from "@/db/queries/actors";
 import { findUsableApiKey } from "@/db/queries/api-keys";
 import { AppError } from "@/lib/errors";
-import type { Actor, PersonActor, Role, VisitorActor } from "@/lib/usecases/use-case";
+import type { Actor, PersonActor, VisitorActor } from "@/lib/usecases/use-case";
 import { auth } from "./auth";
 import { deps } from "./deps";
 import { originOf } from "./origin";
 import { PATH_HEADER } from "./path-header";
 import { safeReturnPath } from "./return-path";
+import { actorOfSession } from "./session-actor";
 
 /**
  * Who is signed in, checked against the database on every request: a token alone
@@ -18,17 +18,7 @@ import { safeReturnPath } from "./return-path";
  */
 export const currentActor = cache(async (): Promise<PersonActor | null> => {
   const session = await auth();
-  if (!session?.personId) return null;
-  const person = await findActivePerson(deps().db, session.personId);
-  if (!person || person.sessionVersion !== session.sessionVersion) return null;
-  return {
-    kind: "person",
-    personId: person.id,
-    name: person.name,
-    email: person.email,
-    roles: person.roles as Role[],
-    technicianId: person.technicianId,
-  };
+  return session?.personId ? actorOfSession(deps().db, session) : null;
 });
 
 /** For pages: sends a visitor to the sign-in page, and back here afterwards. */

@@ -16,6 +16,7 @@ export default async function Page({ searchParams }: { searchParams: SearchParam
   const view = await listMails(deps(), actor, {
     search: one(params, "search") ?? "",
     state: one(params, "state") as never,
+    descending: true,
     page: Number(one(params, "page") ?? 1),
   });
   return <MailLog view={view} />;

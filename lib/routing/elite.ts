@@ -1,20 +1,7 @@
 /** Plans in and out of the search: what two searches hand each other. */
-import { FORBIDDEN } from "./model";
+import { fits } from "./fit";
 import type { Routes } from "./problem";
-import { FIELDS, LATEST, LEAVE, NODE, type RouteState } from "./state";
-
-/** Whether a site may be put behind position k of a route: the O(1) test. */
-export function fits(state: RouteState, site: number, r: number, k: number): boolean {
-  const { model, data } = state;
-  if (model.visit[site * model.slots + r] === FORBIDDEN || !state.fitsVan(site, r)) return false;
-  const at = r * state.row + k * FIELDS;
-  const row = site * model.nodes;
-  const window = model.windowRow[r]! + site;
-  const arrive = data[at + LEAVE]! + model.timeInto[row + data[at + NODE]!]!;
-  const start = Math.max(arrive, model.open[window]!);
-  const next = start + model.service[site]! + model.timeOut[row + data[at + FIELDS + NODE]!]!;
-  return start <= model.close[window]! && next <= data[at + FIELDS + LATEST]!;
-}
+import type { RouteState } from "./state";
 
 /** The plan in the problem's words. */
 export function exportRoutes(state: RouteState): number[][] {

@@ -6,21 +6,27 @@
  * The best place of a site in a route stays true until the route changes. It is kept with the
  * route's version; a rejected change brings the old version back, and with it all that is kept.
  */
-import { FORBIDDEN, type Model } from "./model";
+import { fitsVan } from "./fit";
+import { FORBIDDEN, MUST_PENALTY, type Model } from "./model";
 import type { Rng } from "./rng";
 import { FIELDS, LATEST, LEAVE, NODE, PRICE, TAIL, type RouteState } from "./state";
 
 /** Routes longer than this are searched for the first position in time by halving. */
 const LONG_ROUTE = 12;
+/** In large plans an insertion looks at the routes of so many nearest sites. */
+const NEARBY_SITES = 40;
 
 export class Inserter {
   /** The best place found by the last search. */
   route = -1;
   position = 0;
-  price = 0;
+  private best = 0;
+  /** Off: every place is looked at. */
+  blinks = true;
   private toBlink = 0;
   private readonly logStay: number;
   private readonly kindSeen: Int32Array;
+  private readonly routeSeen: Int32Array;
   private turn = 0;
   /** Kept results by [site * slots + slot]; price Infinity: no place. */
   private readonly keptVersion: Int32Array;
@@ -32,9 +38,12 @@ export class Inserter {
     private readonly state: RouteState,
     private readonly rng: Rng,
     blinkShare: number,
+    /** Stops in the plan above which an insertion looks nearby alone. */
+    private readonly nearby: number,
   ) {
     this.logStay = Math.log1p(-blinkShare);
     this.kindSeen = new Int32Array(model.kinds);
+    this.routeSeen = new Int32Array(model.slots);
     this.keptVersion = new Int32Array(model.sites * model.slots).fill(-1);
     this.keptPrice = new Float64Array(model.sites * model.slots);
     this.keptPosition = new Int32Array(model.sites * model.slots);
@@ -47,29 +56,48 @@ export class Inserter {
     this.toBlink = gap < 1e9 ? Math.floor(gap) : 1e9;
   }
 
-  /** Finds the cheapest place that costs less than leaving the site out. */
-  search(site: number): boolean {
-    const { model, keptPrice } = this;
-    const { length, version } = this.state;
-    const row = site * model.slots;
-    let best = model.skip[site]!;
-    let route = -1;
+  /** Finds the cheapest place that costs less than `worth` times leaving the site out. */
+  search(site: number, worth = 1): boolean {
+    const { model, state } = this;
+    this.best = model.skip[site]! * worth;
+    this.route = -1;
     this.turn += 1;
-    for (let r = 0; r < model.slots; r++) {
-      if (length[r] === 0 && !this.isFirstOfKind(r)) continue;
-      if (this.keptVersion[row + r] !== version[r]) this.keep(site, r);
-      if (keptPrice[row + r]! >= best) continue;
-      if (this.toBlink-- === 0) {
-        this.rearm();
-        continue;
+    const present = model.sites - state.absentCount;
+    if (present > this.nearby) this.searchNearby(site);
+    // The long look: where it is cheap, and for a must site that found no place nearby.
+    if (present <= this.nearby || (this.route < 0 && this.best >= MUST_PENALTY)) {
+      for (let r = 0; r < model.slots; r++) {
+        if (state.length[r]! > 0 || this.isFirstOfKind(r)) this.consider(site, r);
       }
-      best = keptPrice[row + r]!;
-      route = r;
     }
-    this.price = best;
-    this.route = route;
-    if (route >= 0) this.position = this.keptPosition[row + route]!;
-    return route >= 0;
+    return this.route >= 0;
+  }
+
+  /** Looks at the routes of the nearest sites, and at empty slots. */
+  private searchNearby(site: number): void {
+    const { model, state, turn } = this;
+    const row = site * model.near;
+    const most = Math.min(model.near, NEARBY_SITES);
+    for (let i = 1; i < most; i++) {
+      const r = state.routeOf[model.neighbours[row + i]!]!;
+      if (r < 0 || this.routeSeen[r] === turn) continue;
+      this.routeSeen[r] = turn;
+      this.consider(site, r);
+    }
+    for (let r = 0; r < model.slots; r++) {
+      if (state.length[r] === 0 && this.isFirstOfKind(r)) this.consider(site, r);
+    }
+  }
+
+  /** Takes the site's best place in a route if it beats those before it. */
+  private consider(site: number, r: number): void {
+    const at = site * this.model.slots + r;
+    if (this.keptVersion[at] !== this.state.version[r]) this.keep(site, r);
+    if (this.keptPrice[at]! >= this.best) return;
+    if (this.blinks && this.toBlink-- === 0) return this.rearm();
+    this.best = this.keptPrice[at]!;
+    this.route = r;
+    this.position = this.keptPosition[at]!;
   }
 
   /** Empty slots of one kind are the same: only the first is tried. */
@@ -85,11 +113,8 @@ export class Inserter {
     const at = site * this.model.slots + r;
     this.keptVersion[at] = this.state.version[r]!;
     this.keptPrice[at] = Infinity;
-    if (this.model.visit[at] === FORBIDDEN || !this.state.fitsVan(site, r)) return;
-    this.price = Infinity;
+    if (this.model.visit[at] === FORBIDDEN || !fitsVan(this.state, site, r)) return;
     this.scan(site, r, this.firstInTime(site, r));
-    this.keptPrice[at] = this.price;
-    this.keptPosition[at] = this.position;
   }
 
   /** First position of a long route whose next stop is not over before the site opens. */
@@ -107,11 +132,13 @@ export class Inserter {
     return low;
   }
 
-  /** Tries the positions of one route from `first` on; the best goes to `position` and `price`. */
+  /** Tries the positions of one route from `first` on and keeps the best. */
   private scan(site: number, r: number, first: number): void {
     const { model } = this;
     const { data } = this.state;
     const { timeInto, timeOut, priceInto, priceOut, endPriced } = model;
+    const kept = site * model.slots + r;
+    let cheapest = Infinity;
     const matrixRow = site * model.nodes;
     const open = model.open[model.windowRow[r]! + site]!;
     const close = model.close[model.windowRow[r]! + site]!;
@@ -122,7 +149,7 @@ export class Inserter {
     let from = data[at + NODE]!;
     for (let k = first; k <= length; k++, at += FIELDS) {
       const arrive = data[at + LEAVE]! + timeInto[matrixRow + from]!;
-      if (arrive > close) return;
+      if (arrive > close) break;
       const to = data[at + FIELDS + NODE]!;
       const leave = (arrive > open ? arrive : open) + service;
       const next = leave + timeOut[matrixRow + to]!;
@@ -130,12 +157,13 @@ export class Inserter {
       from = to;
       if (next > data[at + FIELDS + LATEST]!) continue;
       let price = base + legs - data[at + PRICE]!;
-      if (price >= this.price) continue;
+      if (price >= cheapest) continue;
       if (endPriced) price += this.endChange(r, next + data[at + FIELDS + TAIL]!);
-      if (price >= this.price) continue;
-      this.price = price;
-      this.position = k;
+      if (price >= cheapest) continue;
+      cheapest = price;
+      this.keptPosition[kept] = k;
     }
+    this.keptPrice[kept] = cheapest;
   }
 
   /** What the visit costs before its legs; for an empty slot also the opening and its own leg. */

@@ -14,15 +14,15 @@ export function neighbourLists(
 ): Neighbours {
   const near = Math.min(sites, most);
   const neighbours = new Int32Array(sites * near);
-  const distance = new Float64Array(sites);
-  const order = Array.from({ length: sites }, (_, s) => s);
+  // Price and index in one exact number: a plain numeric sort is several times quicker.
+  const keys = new Float64Array(sites);
   for (let s = 0; s < sites; s++) {
     for (let t = 0; t < sites; t++) {
-      distance[t] = priceOut[s * nodes + t]! + priceOut[t * nodes + s]!;
+      const price = priceOut[s * nodes + t]! + priceOut[t * nodes + s]!;
+      keys[t] = (t === s ? -1 : price) * sites + t;
     }
-    distance[s] = -1;
-    const sorted = order.slice().sort((a, b) => distance[a]! - distance[b]! || a - b);
-    for (let i = 0; i < near; i++) neighbours[s * near + i] = sorted[i]!;
+    keys.sort();
+    for (let i = 0; i < near; i++) neighbours[s * near + i] = (keys[i]! + sites) % sites;
   }
   return { near, neighbours };
 }

@@ -8,12 +8,20 @@ export interface Params {
   readonly splitGrowth: number;
   /** Share of insertion positions passed over. */
   readonly blinkShare: number;
+  /** Stops in the plan above which an insertion looks at the routes of near sites alone. */
+  readonly nearby: number;
   /** Share of turns that empty a whole route, and that open an empty slot. */
   readonly closeShare: number;
   readonly openShare: number;
   /** Sites left out that each turn tries to bring in. */
   readonly absentTried: number;
-  /** First and last temperature, as multiples of the start plan's mean price of a leg. */
+  /** How many times its price an absence counts in the start plan: opens routes that single
+   * insertions would not pay for. */
+  readonly startWorth: number;
+  /**
+   * Temperatures as multiples of the start plan's mean price of a leg: the first per ten stops of
+   * its mean route, the last as it is.
+   */
   readonly startHeat: number;
   readonly endHeat: number;
   /** Turns between two looks at the stop function. */
@@ -26,10 +34,12 @@ export const DEFAULT_PARAMS: Params = {
   splitShare: 0.5,
   splitGrowth: 0.5,
   blinkShare: 0.01,
+  nearby: 250,
   closeShare: 0.02,
   openShare: 0.03,
   absentTried: 12,
+  startWorth: 4,
   startHeat: 1,
-  endHeat: 0.02,
+  endHeat: 0.03,
   stride: 64,
 };

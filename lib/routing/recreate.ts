@@ -63,12 +63,12 @@ export class Recreate {
     for (let i = most >> 1; i < most; i++) this.list(state.absent[rng.below(state.absentCount)]!);
   }
 
-  /** Orders the list and inserts what pays. */
-  run(): void {
+  /** Orders the list and inserts what pays if absence counts `worth` times its price. */
+  run(worth = 1): void {
     this.sort();
     for (let i = 0; i < this.count; i++) {
       const site = this.sites[i]!;
-      if (this.state.routeOf[site]! < 0 && this.inserter.search(site)) {
+      if (this.state.routeOf[site]! < 0 && this.inserter.search(site, worth)) {
         this.state.insert(site, this.inserter.route, this.inserter.position);
       }
     }

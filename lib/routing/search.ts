@@ -1,5 +1,6 @@
 /** One annealing search: ruin, recreate, accept or take back. */
-import { exportRoutes, fits, importRoutes } from "./elite";
+import { exportRoutes, importRoutes } from "./elite";
+import { fits } from "./fit";
 import { Inserter } from "./insertion";
 import { FORBIDDEN, type Model } from "./model";
 import type { Params } from "./params";
@@ -11,13 +12,17 @@ import { RouteState } from "./state";
 
 /** Neighbours that a newly opened slot is offered. */
 const OPEN_OFFER = 40;
+/** Long routes need more heat to be reshaped: so far the start temperature grows with length. */
+const LEAST_TENS = 0.7;
+const MOST_TENS = 4;
 
 export class Search {
   private readonly state: RouteState;
   private readonly inserter: Inserter;
   private readonly ruin: Ruin;
   private readonly recreate: Recreate;
-  private readonly typicalLeg: number;
+  private typicalLeg = 1;
+  private startHeat = 1;
   private bestRoutes: Routes;
   bestTotal: number;
 
@@ -28,35 +33,73 @@ export class Search {
     start?: Routes,
   ) {
     this.state = new RouteState(model);
-    this.inserter = new Inserter(model, this.state, rng, params.blinkShare);
+    this.inserter = new Inserter(model, this.state, rng, params.blinkShare, params.nearby);
     this.ruin = new Ruin(model, this.state, rng, params);
     this.recreate = new Recreate(model, this.state, this.inserter, rng);
     if (start) importRoutes(this.state, start);
     this.construct();
     this.bestRoutes = exportRoutes(this.state);
     this.bestTotal = this.state.total;
-    this.typicalLeg = this.meanLeg();
+    this.setHeat();
   }
 
   /** Cheapest insertion of everything that is out. */
-  private construct(): void {
+  private construct(worth = this.params.startWorth): void {
     this.state.mark();
     this.recreate.clear();
     for (let i = this.state.absentCount - 1; i >= 0; i--) this.recreate.list(this.state.absent[i]!);
-    this.recreate.run();
+    this.recreate.run(worth);
     this.state.mark();
+    this.trim();
   }
 
-  private meanLeg(): number {
-    let price = 0;
-    let legs = 0;
-    for (let r = 0; r < this.model.slots; r++) {
-      const length = this.state.length[r]!;
-      if (length === 0) continue;
-      price += this.state.price[r]!;
-      legs += length + 1;
+  /** Takes out every stop that costs more than its absence. */
+  private trim(): void {
+    const { state, model } = this;
+    for (let r = 0; r < model.slots; r++) {
+      for (let k = state.length[r]!; k > model.frozen[r]!; k--) {
+        const before = state.total;
+        state.mark();
+        state.remove(r, k, 1);
+        if (state.total >= before) state.rollBack();
+      }
     }
-    return legs > 0 ? Math.max(1, price / legs) : 1;
+    state.mark();
+  }
+
+  /** Last touch: nothing is left in or out of the best plan that would pay to change alone. */
+  finish(): void {
+    importRoutes(this.state, this.bestRoutes);
+    this.inserter.blinks = false;
+    let before = Infinity;
+    while (this.state.total < before) {
+      before = this.state.total;
+      this.construct(1);
+    }
+    this.inserter.blinks = true;
+    this.keepIfBest();
+  }
+
+  private keepIfBest(): void {
+    if (this.state.total >= this.bestTotal) return;
+    this.bestTotal = this.state.total;
+    this.bestRoutes = exportRoutes(this.state);
+  }
+
+  /** Sets the scale of the temperature by the start plan: mean price of a leg, mean length. */
+  private setHeat(): void {
+    let price = 0;
+    let stops = 0;
+    let open = 0;
+    for (let r = 0; r < this.model.slots; r++) {
+      if (this.state.length[r] === 0) continue;
+      price += this.state.price[r]!;
+      stops += this.state.length[r]!;
+      open += 1;
+    }
+    this.typicalLeg = Math.max(1, price / Math.max(1, stops + open));
+    const tens = Math.min(MOST_TENS, Math.max(LEAST_TENS, stops / Math.max(1, open) / 10));
+    this.startHeat = Math.max(this.params.endHeat, this.params.startHeat * tens);
   }
 
   total(): number {
@@ -73,8 +116,8 @@ export class Search {
 
   /** Runs some iterations at the temperature of this share of the run. */
   run(iterations: number, share: number): void {
-    const { startHeat, endHeat } = this.params;
-    const heat = this.typicalLeg * startHeat * Math.pow(endHeat / startHeat, share);
+    const { endHeat } = this.params;
+    const heat = this.typicalLeg * this.startHeat * Math.pow(endHeat / this.startHeat, share);
     for (let i = 0; i < iterations; i++) this.step(heat);
   }
 
@@ -87,10 +130,7 @@ export class Search {
       state.rollBack();
       return;
     }
-    if (state.total < this.bestTotal) {
-      this.bestTotal = state.total;
-      this.bestRoutes = exportRoutes(state);
-    }
+    this.keepIfBest();
   }
 
   /** One ruin and recreate of the state. */
@@ -142,11 +182,7 @@ export class Search {
   take(routes: Routes): void {
     importRoutes(this.state, routes);
     this.construct();
-    if (this.state.total < this.bestTotal) {
-      this.bestTotal = this.state.total;
-      this.bestRoutes = exportRoutes(this.state);
-    } else {
-      importRoutes(this.state, this.bestRoutes);
-    }
+    this.keepIfBest();
+    if (this.state.total > this.bestTotal) importRoutes(this.state, this.bestRoutes);
   }
 }

@@ -77,6 +77,7 @@ export function solve(
     });
     if (given) search.take(given);
   }
+  search.finish();
   const routes = search.best();
   const visited = new Set(routes.flat());
   return {

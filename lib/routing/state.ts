@@ -290,15 +290,4 @@ export class RouteState {
     this.data = wide;
     this.row *= 2;
   }
-
-  /** Whether the van still holds the site's cells beside the route's. */
-  fitsVan(site: number, r: number): boolean {
-    const { loads, demand, capacity } = this.model;
-    for (let i = 0; i < loads; i++) {
-      if (this.load[r * loads + i]! + demand[site * loads + i]! > capacity[r * loads + i]!) {
-        return false;
-      }
-    }
-    return true;
-  }
 }

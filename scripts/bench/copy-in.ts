@@ -1,4 +1,4 @@
-import pg from "pg";
+import type pg from "pg";
 
 /** The part of the driver's connection that COPY speaks through (pg's own, undocumented). */
 interface CopyConnection {

@@ -1,0 +1,79 @@
+import { SpanStrip } from "@/components/charts/span-strip";
+import { VoltageChart } from "@/components/charts/voltage-chart";
+import { WaneDisc } from "@/components/charts/wane-disc";
+import { Figure, FigureRow } from "@/components/ui/figure";
+import { Section } from "@/components/ui/page-head";
+import { EmptyState } from "@/components/ui/states";
+import { formatDay } from "@/lib/present/format-day";
+import type { AssetView } from "@/lib/usecases/read-asset";
+import { basisSentences } from "./asset-basis";
+import { assetMarks } from "./asset-marks";
+
+/** The pack now: what is left, when it will stop, on what that rests. */
+export function AssetPack({ view }: { view: AssetView }) {
+  const marks = assetMarks(view);
+  if (!marks) {
+    return (
+      <Section title="Pack">
+        <EmptyState title="No pack is in this asset.">
+          Record the install when cells go in; the first forecast follows within a minute.
+        </EmptyState>
+      </Section>
+    );
+  }
+  return (
+    <>
+      <FigureRow>
+        <Figure
+          label="Charge left"
+          value={marks.disc.label}
+          range={marks.shareRange && `likely ${marks.shareRange}`}
+          tone={marks.tone}
+        />
+        <Figure
+          label="Likely cut-off"
+          value={marks.window?.likely ?? "not known"}
+          range={marks.window ? `${marks.window.from} – ${marks.window.to}` : "no forecast yet"}
+          tone={marks.tone}
+        />
+        <Figure
+          label="From today"
+          value={marks.away ?? "—"}
+          range={marks.stale && "being renewed"}
+        />
+        <Figure label="Pack" value={marks.label} range={`since ${marks.since}`} />
+        <Figure label="Stops at" value={marks.cutoffVolts} range="under its peak current" />
+      </FigureRow>
+      <Section title="Voltages over time" aside={<NextVisit view={view} />}>
+        <div className="overflow-x-auto px-3 py-3">
+          <div className="flex items-center gap-3 pl-11">
+            <SpanStrip model={marks.strip} />
+            <WaneDisc model={marks.disc} decorative />
+          </div>
+          <VoltageChart model={marks.chart} />
+        </div>
+      </Section>
+      <Section title="What the forecast rests on">
+        <ul className="flex max-w-prose flex-col gap-1 px-3 py-3">
+          {basisSentences(view).map((sentence) => (
+            <li key={sentence}>{sentence}</li>
+          ))}
+        </ul>
+      </Section>
+    </>
+  );
+}
+
+function NextVisit({ view }: { view: AssetView }) {
+  const { visits, organisation, now } = view;
+  const today = now.toISOString().slice(0, 10);
+  const next = visits.findLast((v) => v.day >= today && v.taskState === "planned");
+  if (!next) return <>no visit booked</>;
+  const day = formatDay(next.day, organisation.locale, { weekday: true, today });
+  const how = next.roundState === "proposed" ? "proposed for" : "booked for";
+  return (
+    <>
+      visit {how} {day}, {next.technicianName}
+    </>
+  );
+}

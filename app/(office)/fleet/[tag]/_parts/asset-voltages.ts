@@ -1,0 +1,76 @@
+import {
+  formatCurrent,
+  formatTemperature,
+  formatVoltBand,
+  formatVolts,
+} from "@/lib/present/format-quantity";
+import { formatPercent } from "@/lib/present/format-share";
+import { formatInstant } from "@/lib/present/format-time";
+import { NOTHING } from "@/lib/present/locale";
+import type { AssetView } from "@/lib/usecases/read-asset";
+
+export interface VoltageRow {
+  readonly id: string;
+  readonly when: string;
+  readonly volts: string;
+  readonly condition: string;
+  readonly expected: string;
+  readonly counts: string;
+  readonly remark: string;
+  readonly by: string;
+}
+
+const REASONS: Readonly<Record<string, string>> = {
+  fits: "fits the curve",
+  doubtful: "does not fit the curve",
+  passivation: "a lithium cell still waking up under load",
+  "before-install": "read before this pack went in",
+  impossible: "cannot be this pack's voltage",
+};
+
+const SOURCES: Readonly<Record<string, string>> = {
+  form: "office",
+  csv: "file",
+  api: "gateway",
+  phone: "phone",
+};
+
+/** The pack's voltages, newest first, with how much each counted in the forecast and why. */
+export function voltageRows({ readings, forecast, organisation }: AssetView): VoltageRow[] {
+  const { locale } = organisation;
+  const weights = new Map((forecast?.weights ?? []).map((w) => [w.readingId, w]));
+  return readings
+    .map((r) => {
+      const weight = weights.get(r.id);
+      const load = r.loadUa ? ` at ${formatCurrent(r.loadUa, locale)}` : "";
+      const air = r.temperatureDc === null ? "" : `, ${formatTemperature(r.temperatureDc, locale)}`;
+      return {
+        id: r.id,
+        when: formatInstant(r.at, organisation),
+        volts: formatVolts(r.millivolts, locale),
+        condition: `${r.kind === "loaded" ? `under load${load}` : "resting"}${air}`,
+        expected: weight
+          ? formatVoltBand(weight.expectedLowMv, weight.expectedHighMv, locale)
+          : NOTHING,
+        counts: weight
+          ? `${formatPercent(weight.weight, locale)} · ${REASONS[weight.reason] ?? weight.reason}`
+          : NOTHING,
+        remark: remarkOf(r, locale),
+        by: r.personName ?? r.apiKeyName ?? SOURCES[r.source] ?? r.source,
+      };
+    })
+    .reverse();
+}
+
+function remarkOf(r: AssetView["readings"][number], locale: string): string {
+  const verdict =
+    r.verdict === "corrected" && r.correctedMv !== null
+      ? `corrected to ${formatVolts(r.correctedMv, locale)}`
+      : r.verdict === "set_aside"
+        ? "set aside"
+        : r.verdict === "confirmed"
+          ? "confirmed"
+          : "";
+  const doubt = r.doubt && !r.verdict ? `unlikely: ${r.doubt}` : "";
+  return [verdict, doubt, r.verdictNote ?? "", r.note].filter(Boolean).join(" · ");
+}

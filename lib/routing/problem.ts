@@ -128,6 +128,22 @@ function checkLength(report: Report, field: string, actual: number, expected: nu
   if (actual !== expected) report(field, `has ${actual} entries; give ${expected}`);
 }
 
+/** Reports the first entry that is wrong: a matrix has millions, and one mend is a start. */
+function checkMatrix(
+  report: Report,
+  field: string,
+  matrix: ArrayLike<number>,
+  cells: number,
+): void {
+  checkLength(report, field, matrix.length, cells);
+  for (let i = 0; i < matrix.length; i++) {
+    const value = matrix[i]!;
+    if (Number.isInteger(value) && value >= 0 && value <= LARGEST_INTEGER) continue;
+    wholeNumber(report, `${field}[${i}]`, value);
+    return;
+  }
+}
+
 function checkIndex(report: Report, field: string, value: number, size: number): void {
   if (!Number.isInteger(value) || value < 0 || value >= size) {
     report(field, `is ${value}; give an index from 0 to ${size - 1}`);
@@ -212,12 +228,8 @@ export function assertProblem(problem: Problem): void {
   wholeNumber(report, "prices.dutyPerS", problem.prices.dutyPerS);
   wholeNumber(report, "prices.perM", problem.prices.perM);
   const cells = problem.places * problem.places;
-  checkLength(report, "travelS", problem.travelS.length, cells);
-  checkLength(report, "travelM", problem.travelM.length, cells);
-  for (let i = 0; i < cells && faults.length === 0; i++) {
-    wholeNumber(report, `travelS[${i}]`, problem.travelS[i]);
-    wholeNumber(report, `travelM[${i}]`, problem.travelM[i]);
-  }
+  checkMatrix(report, "travelS", problem.travelS, cells);
+  checkMatrix(report, "travelM", problem.travelM, cells);
   problem.sites.forEach((site, i) => checkSite(report, problem, site, `sites[${i}]`));
   problem.slots.forEach((slot, r) => checkSlot(report, problem, slot, `slots[${r}]`));
   checkFrozenOnce(report, problem);

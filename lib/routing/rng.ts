@@ -11,6 +11,15 @@ export interface Rng {
   unit(): number;
 }
 
+/** One step of the generator on 32 bits of state. */
+export function xorshift32(state: number): number {
+  let x = state;
+  x ^= x << 13;
+  x ^= x >>> 17;
+  x ^= x << 5;
+  return x >>> 0;
+}
+
 class Xorshift32 implements Rng {
   private state: number;
 
@@ -21,12 +30,8 @@ class Xorshift32 implements Rng {
   }
 
   next(): number {
-    let x = this.state;
-    x ^= x << 13;
-    x ^= x >>> 17;
-    x ^= x << 5;
-    this.state = x;
-    return x >>> 0;
+    this.state = xorshift32(this.state);
+    return this.state;
   }
 
   below(size: number): number {

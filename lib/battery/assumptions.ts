@@ -21,12 +21,16 @@ export const ASSUMED = {
   curveDepthSd: 0.015,
   /** Cells of one lot differ; a string ends a little before its mean cell does. */
   weakestCellShare: 0.02,
-  /** A stop comes in the coldest hour: this much below the month's mean, K. */
-  coldHourK: 6,
-  /** Depth at which this very device stops. */
-  endDepthSd: 0.015,
+  /**
+   * A stop comes in a month's coldest hour: this much below the month's mean, K, give or take
+   * `coldHourSdK` (a temperate month of mean 4 °C has a night of about -7 °C; from memory).
+   */
+  coldHourK: 11,
+  coldHourSdK: 4,
   /** Internal resistance against the table. */
   resistanceSd: 0.3,
+  /** How unevenly it grows in a year, as a share. */
+  resistanceWalkPerYear: 0.1,
   /** Chance that a reading is not of this pack, mistyped, or of another state. */
   outlierShare: 0.04,
   /** Instrument accuracy when none is given, mV. */

@@ -20,6 +20,8 @@ export interface ChemistryCurves {
   readonly coldCapacity: readonly number[];
   /** Change of the resting voltage with temperature, mV per kelvin and element. */
   readonly restMvPerKelvin: number;
+  /** How far the end may lie from the depth the curves give, one standard deviation. */
+  readonly endDepthSd: number;
   /** Growth of the resistance with age, share a year; from memory, rough. */
   readonly resistanceGrowthPerYear: number;
   /** How far the table may be off a cell at any depth, one standard deviation, mV. */
@@ -42,6 +44,7 @@ export const CURVES: Readonly<Record<Chemistry, ChemistryCurves>> = {
     coldResistance: [14, 5, 3, 2, 1, 0.75, 0.65],
     coldCapacity: [0.05, 0.4, 0.6, 0.8, 1, 1, 1],
     restMvPerKelvin: 0.3,
+    endDepthSd: 0.015,
     resistanceGrowthPerYear: 0.05,
     spreadMv: 12,
   },
@@ -54,8 +57,9 @@ export const CURVES: Readonly<Record<Chemistry, ChemistryCurves>> = {
     coldResistance: [25, 9, 4.5, 2.3, 1, 0.8, 0.7],
     coldCapacity: [0.01, 0.15, 0.4, 0.7, 1, 1, 1],
     restMvPerKelvin: 0.3,
+    endDepthSd: 0.05,
     resistanceGrowthPerYear: 0.1,
-    spreadMv: 25,
+    spreadMv: 40,
   },
   // Rest: 15 ohm log of an FR6 plus current times (V15 - V3)/(I3 - I15), Newton1026/
   // BatteryProject, on 3050 mAh. A hardly used cell rests near 1.75 V (Linden 4e p. 14.76).
@@ -69,8 +73,9 @@ export const CURVES: Readonly<Record<Chemistry, ChemistryCurves>> = {
     coldResistance: [4, 2.2, 1.7, 1.4, 1, 0.85, 0.75],
     coldCapacity: [0.7, 0.85, 0.9, 0.95, 1, 1, 1],
     restMvPerKelvin: 0.1,
+    endDepthSd: 0.015,
     resistanceGrowthPerYear: 0.03,
-    spreadMv: 12,
+    spreadMv: 18,
   },
   // From memory (plateau 3.6 V to about 95 %, fresh 3.67 V); plateau against temperature from
   // the span of Linden 4e Fig. 14.17b.
@@ -82,6 +87,7 @@ export const CURVES: Readonly<Record<Chemistry, ChemistryCurves>> = {
     coldResistance: [6, 3, 2.1, 1.5, 1, 0.75, 0.6],
     coldCapacity: [0.5, 0.7, 0.8, 0.9, 1, 1, 0.95],
     restMvPerKelvin: 0.25,
+    endDepthSd: 0.03,
     resistanceGrowthPerYear: 0.1,
     spreadMv: 12,
   },
@@ -95,8 +101,9 @@ export const CURVES: Readonly<Record<Chemistry, ChemistryCurves>> = {
     coldResistance: [9, 3, 2, 1.4, 1, 0.8, 0.7],
     coldCapacity: [0.2, 0.5, 0.7, 0.85, 1, 1, 1],
     restMvPerKelvin: 0.3,
+    endDepthSd: 0.015,
     resistanceGrowthPerYear: 0.03,
-    spreadMv: 20,
+    spreadMv: 16,
   },
   // From memory: 1.55 V plateau of a zinc-silver oxide button.
   "silver-oxide": {
@@ -107,6 +114,7 @@ export const CURVES: Readonly<Record<Chemistry, ChemistryCurves>> = {
     coldResistance: [15, 5, 3, 1.8, 1, 0.8, 0.7],
     coldCapacity: [0.1, 0.4, 0.65, 0.85, 1, 1, 1],
     restMvPerKelvin: 0.2,
+    endDepthSd: 0.02,
     resistanceGrowthPerYear: 0.05,
     spreadMv: 10,
   },
@@ -119,6 +127,7 @@ export const CURVES: Readonly<Record<Chemistry, ChemistryCurves>> = {
     coldResistance: [4, 2.2, 1.7, 1.4, 1, 0.9, 0.85],
     coldCapacity: [0.35, 0.6, 0.72, 0.84, 1, 1.05, 1.05],
     restMvPerKelvin: 0.2,
+    endDepthSd: 0.03,
     resistanceGrowthPerYear: 0.1,
     spreadMv: 15,
   },
@@ -131,7 +140,8 @@ export const CURVES: Readonly<Record<Chemistry, ChemistryCurves>> = {
     coldResistance: [9, 4, 2.7, 1.8, 1, 0.8, 0.7],
     coldCapacity: [0.3, 0.6, 0.75, 0.88, 1, 1, 1],
     restMvPerKelvin: 0.1,
+    endDepthSd: 0.02,
     resistanceGrowthPerYear: 0.05,
-    spreadMv: 8,
+    spreadMv: 12,
   },
 };

@@ -9,31 +9,31 @@ import { ASSUMED } from "./assumptions";
 import { DAYS_PER_YEAR, monthOf } from "./climate";
 import { consume } from "./consume";
 import { openRate, redrawOffset, wander } from "./draw-walk";
+import { type EndOfLife, type ResistanceBelief, endOfLife } from "./end-of-life";
 import { type Grid, newGrid, normalise, weighDepth } from "./grid";
 import type { ForecastInput, PackEvent, PackReading, ReadingWeight } from "./pack";
 import { type PackModel, leakBetween, packModel } from "./pack-model";
 import { impossibleAboveMv, observe } from "./reading";
+import { SHEET_RESISTANCE, guessRest, learnResistance, loosen } from "./resistance";
+import { type Bounds, aliveBounds, passedOver, timeline } from "./timeline";
 
 const LONGEST_STEP_DAYS = 120;
 const MOST_STEPS = 24;
-/** A reading stamped a little after `now` (clocks differ) still counts. */
-const CLOCK_SLACK_DAYS = 1;
+/** Place in the depth window, 0..1, that must lie past depth 1: 2.5 spreads below the mean. */
+const SURELY_OUT = 2 / 9;
 
-export interface Filtered {
+export interface Filtered extends Bounds {
   readonly model: PackModel;
   readonly grid: Grid;
-  /** The moment the grid stands at: `now` (no earlier than the installation), or the stop. */
+  /**
+   * The moment the grid stands at: `now` (no earlier than the installation), the stop, or
+   * before them the day by which the pack was surely out.
+   */
   readonly at: EpochDays;
   readonly weights: readonly ReadingWeight[];
-  /** Known bounds of the date out: alive at the first, stopped at the second. */
-  readonly aliveAt: EpochDays | null;
-  readonly stoppedAt: EpochDays | null;
+  /** Where this pack stops, its resistance learned. */
+  readonly end: EndOfLife;
 }
-
-type Item =
-  | { readonly at: EpochDays; readonly reading: PackReading }
-  | { readonly at: EpochDays; readonly event: PackEvent }
-  | { readonly at: EpochDays; readonly alive: true };
 
 /** Run the filter over everything known up to `now`. */
 export function filterPack(input: ForecastInput): Filtered {
@@ -41,115 +41,99 @@ export function filterPack(input: ForecastInput): Filtered {
   const from = input.pack.installedAt;
   const until = Math.max(input.now, from);
   const bounds = aliveBounds(input, from, until);
-  const highest = impossibleAboveMv(model);
-  const known: Span = { from, until, aliveAt: bounds.aliveAt, highestMv: highest };
-  const items = timeline(input, known);
+  const highestMv = impossibleAboveMv(model);
+  const items = timeline(input, { from, until, aliveAt: bounds.aliveAt, highestMv });
   const changed = items.some((i) => "event" in i && i.event.kind === "draw-changed");
   const sd = changed ? Math.max(model.prior.sd, ASSUMED.changedDrawSd) : model.prior.sd;
   const grid = newGrid(model, (until - from) / DAYS_PER_YEAR, sd);
   if (changed && input.pack.measuredDraw) openRate(grid, model.prior.mean, sd);
-  const weights = new Map<string, ReadingWeight>();
-  let at = from;
-  let lastLoaded = -Infinity;
-  for (const item of items) {
-    elapse(model, grid, at, Math.min(item.at, bounds.stoppedAt ?? item.at));
-    at = item.at;
-    if ("reading" in item) {
-      const rested = at - lastLoaded > ASSUMED.passivationRestDays;
-      const film = rested && model.pack.cell.chemistry === "li-socl2";
-      weights.set(item.reading.id, observe(model, grid, item.reading, film));
-      if (item.reading.kind === "loaded") lastLoaded = at;
-    } else if ("event" in item) applyEvent(model, grid, item.event);
-    else weighDepth(grid, (depth) => aliveChance(model, depth, at));
-  }
+  const run = new Run(model, grid, from);
   // a stopped device draws no more: the grid stays at the day it was found
-  const end = bounds.stoppedAt ?? until;
-  elapse(model, grid, at, end);
+  const last = bounds.stoppedAt ?? until;
+  for (const item of items) {
+    run.to(Math.min(item.at, last));
+    if ("reading" in item) run.read(item.reading);
+    else if ("event" in item) run.hear(item.event);
+    else weighDepth(grid, (depth) => aliveChance(model, depth, item.at));
+  }
+  const stands = run.follow(last);
   normalise(grid);
-  const ordered = input.readings.map((r) => weights.get(r.id) ?? passedOver(r, input));
-  return { model, grid, at: end, weights: ordered, ...bounds };
+  const weights = input.readings.map((r) => run.weights.get(r.id) ?? passedOver(r, input));
+  return { model, grid, at: stands, weights, end: run.end(), ...bounds };
 }
 
-function blank(reading: PackReading): Omit<ReadingWeight, "reason"> {
-  const mv = reading.millivolts;
-  return {
-    readingId: reading.id,
-    weight: 0,
-    expectedMv: mv,
-    expectedLowMv: mv,
-    expectedHighMv: mv,
-  };
-}
+/** One pass over one pack's history. */
+class Run {
+  readonly weights = new Map<string, ReadingWeight>();
+  private resistance: ResistanceBelief = SHEET_RESISTANCE;
+  private lastLoaded = -Infinity;
+  private learned = false;
 
-function passedOver(reading: PackReading, input: ForecastInput): ReadingWeight {
-  const early = reading.at < input.pack.installedAt;
-  return { ...blank(reading), reason: early ? "before-install" : "impossible" };
+  constructor(
+    private readonly model: PackModel,
+    private readonly grid: Grid,
+    private at: EpochDays,
+  ) {}
+
+  to(day: EpochDays): void {
+    elapse(this.model, this.grid, this.at, day);
+    if (this.learned) this.resistance = loosen(this.resistance, day - this.at);
+    this.at = Math.max(this.at, day);
+  }
+
+  /**
+   * The last stretch, up to a day or until the pack is surely out: what is spent is not
+   * followed further. Returns the day reached.
+   */
+  follow(day: EpochDays): EpochDays {
+    while (this.at < day && !this.surelyOut()) this.to(Math.min(day, this.at + LONGEST_STEP_DAYS));
+    return Math.min(day, this.at);
+  }
+
+  private surelyOut(): boolean {
+    const { depthFrom, depthStep, nx } = this.grid;
+    return depthFrom + SURELY_OUT * depthStep * (nx - 1) > 1;
+  }
+
+  read(reading: PackReading): void {
+    const loaded = reading.kind === "loaded";
+    const rested = this.at - this.lastLoaded > ASSUMED.passivationRestDays;
+    const film = loaded && rested && this.model.pack.cell.chemistry === "li-socl2";
+    const guess = loaded ? guessRest(this.model, this.grid, reading) : null;
+    const said = observe(this.model, this.grid, reading, this.resistance, film);
+    this.weights.set(reading.id, said);
+    if (!guess) return;
+    this.lastLoaded = this.at;
+    if (film) return;
+    this.resistance = learnResistance(this.resistance, guess, reading.millivolts, said.weight);
+    this.learned = true;
+  }
+
+  hear(event: PackEvent): void {
+    const { model, grid } = this;
+    if (event.kind === "stopped") {
+      weighDepth(grid, (depth) => 1 - aliveChance(model, depth, event.at));
+    } else if (event.kind === "draw-changed") {
+      openRate(
+        grid,
+        model.prior.mean,
+        model.pack.measuredDraw ? model.prior.sd : ASSUMED.changedDrawSd,
+      );
+    }
+  }
+
+  end(): EndOfLife {
+    return this.learned ? endOfLife(this.model.endTerms, this.resistance) : this.model.end;
+  }
 }
 
 /** Chance that the device runs at a depth in the month of a day. */
-export function aliveChance(model: PackModel, depth: number, at: EpochDays): number {
-  return normalCdf((model.endByMonth[monthOf(at)]! - depth) / model.endSd);
-}
-
-function applyEvent(model: PackModel, grid: Grid, event: PackEvent): void {
-  if (event.kind === "stopped") {
-    weighDepth(grid, (depth) => 1 - aliveChance(model, depth, event.at));
-  } else if (event.kind === "draw-changed") {
-    const sd = model.pack.measuredDraw ? model.prior.sd : ASSUMED.changedDrawSd;
-    openRate(grid, model.prior.mean, sd);
-  }
-}
-
-/**
- * Only the latest sign of life counts: each would weigh the same unknown end depth again,
- * and having run later implies having run before.
- */
-function aliveBounds(input: ForecastInput, from: EpochDays, until: EpochDays) {
-  let aliveAt: EpochDays | null = null;
-  let stoppedAt: EpochDays | null = null;
-  for (const event of input.events) {
-    if (event.at < from || event.at > until + CLOCK_SLACK_DAYS) continue;
-    if (event.kind === "stopped" && (stoppedAt === null || event.at < stoppedAt)) {
-      stoppedAt = Math.min(event.at, until);
-    }
-  }
-  for (const event of input.events) {
-    const alive = event.kind === "reporting" ? event.at : event.lastAliveAt;
-    if (event.kind === "draw-changed" || alive === undefined || alive < from) continue;
-    const known = Math.min(alive, until);
-    if (alive > until + CLOCK_SLACK_DAYS || (stoppedAt !== null && known > stoppedAt)) continue;
-    if (aliveAt === null || known > aliveAt) aliveAt = known;
-  }
-  return { aliveAt, stoppedAt };
-}
-
-interface Span {
-  readonly from: EpochDays;
-  readonly until: EpochDays;
-  readonly aliveAt: EpochDays | null;
-  /** Readings above this, or below 0, are impossible. */
-  readonly highestMv: number;
-}
-
-function timeline(input: ForecastInput, span: Span): Item[] {
-  const { from, until, aliveAt, highestMv } = span;
-  const known = (at: EpochDays): boolean => at >= from && at <= until + CLOCK_SLACK_DAYS;
-  const items: Item[] = [];
-  for (const reading of input.readings) {
-    const possible = reading.millivolts >= 0 && reading.millivolts <= highestMv;
-    if (possible && known(reading.at)) items.push({ at: Math.min(reading.at, until), reading });
-  }
-  for (const event of input.events) {
-    if (known(event.at) && event.kind !== "reporting") {
-      items.push({ at: Math.min(event.at, until), event });
-    }
-  }
-  if (aliveAt !== null) items.push({ at: aliveAt, alive: true });
-  return items.sort((a, b) => a.at - b.at);
+function aliveChance(model: PackModel, depth: number, at: EpochDays): number {
+  return normalCdf((model.end.byMonth[monthOf(at)]! - depth) / model.end.sd);
 }
 
 /** Let time pass: draw and leak consumed, the draw wandering, in steps of at most 120 days. */
-export function elapse(model: PackModel, grid: Grid, from: EpochDays, to: EpochDays): void {
+function elapse(model: PackModel, grid: Grid, from: EpochDays, to: EpochDays): void {
   const days = to - from;
   if (!(days > 1e-6)) return;
   const steps = Math.min(MOST_STEPS, Math.ceil(days / LONGEST_STEP_DAYS));

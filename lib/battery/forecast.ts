@@ -55,11 +55,11 @@ function summarise(input: ForecastInput, filtered: Filtered): Forecast {
   };
 }
 
-function shareLeft({ model, grid }: Filtered): Forecast["shareLeft"] {
+function shareLeft({ end, grid }: Filtered): Forecast["shareLeft"] {
   const marginal = depthMarginal(grid);
   const at = (probability: number): number => {
     const depth = gridQuantile(marginal, grid.depthFrom, grid.depthStep, 1 - probability);
-    return Math.min(1, Math.max(0, 1 - depth / model.endWarm));
+    return Math.min(1, Math.max(0, 1 - depth / end.warm));
   };
   return { p05: at(0.05), p50: at(0.5), p95: at(0.95) };
 }

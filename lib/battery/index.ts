@@ -21,3 +21,18 @@ export { ageing, equivalentCelsius, selfDischargeUa, tenDegreeFactor } from "./s
 export { CDF_PROBABILITIES, chanceOutBy, forecastPack } from "./forecast";
 export { type ExpectedVoltage, type VoltageQuery, expectedVoltage } from "./voltage-band";
 export { forecastFaults } from "./validate";
+export { type ColdSnap, coldSnap } from "./cold-snap";
+export {
+  type CohortLife,
+  type FinishedPack,
+  cohortPrior,
+  devicePrior,
+  learnCohorts,
+} from "./fleet-prior";
+export {
+  type BadLot,
+  type DrawObservation,
+  type DrawShift,
+  badLots,
+  drawShifts,
+} from "./fleet-findings";

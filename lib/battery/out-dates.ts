@@ -9,7 +9,7 @@ import type { EpochDays } from "../units";
 import { ASSUMED } from "./assumptions";
 import { DAYS_PER_YEAR } from "./climate";
 import type { Filtered } from "./filter";
-import { seasonalClock } from "./season-clock";
+import { type SeasonalClock, seasonalClock } from "./season-clock";
 
 const BINS = 400;
 const IGNORED = 1e-8;
@@ -35,6 +35,9 @@ interface TimeLeft {
 export interface OutDates {
   /** Day by which the device has stopped with this probability. */
   quantile(probability: number): EpochDays;
+  /** Days left on the even clock at a probability, and that clock. */
+  daysLeft(probability: number): number;
+  readonly clock: SeasonalClock;
   /** Probability of having stopped by `now`. */
   readonly outNow: number;
 }
@@ -42,27 +45,23 @@ export interface OutDates {
 /** Distribution of the day the device stops. */
 export function outDates(filtered: Filtered, now: EpochDays): OutDates {
   const { model, at, aliveAt, stoppedAt } = filtered;
-  const left = widen(collect(filtered), model.endSd);
-  const clock = seasonalClock(model, at, left);
+  const left = widen(collect(filtered), filtered.end.sd);
+  const clock = seasonalClock(filtered, left);
   const earliest = model.pack.installedAt;
   const latest = Math.max(now, earliest) + ASSUMED.horizonDays;
   const below = aliveAt === null ? 0 : massBelow(left, aliveAt - at);
   const above = stoppedAt === null ? 1 : massBelow(left, stoppedAt - at);
+  const known = above - below > 1e-9;
+  const daysLeft = (probability: number): number =>
+    gridQuantile(left.mass, left.from, left.step, below + probability * (above - below));
   const quantile = (probability: number): EpochDays => {
-    if (!(above - below > 1e-9)) return fallback(probability, aliveAt, stoppedAt, at);
-    const days = gridQuantile(
-      left.mass,
-      left.from,
-      left.step,
-      below + probability * (above - below),
-    );
-    const day = clock.dateOf(days);
+    if (!known) return fallback(probability, aliveAt, stoppedAt, at);
+    const day = clock.dateOf(daysLeft(probability));
     return Math.min(stoppedAt ?? latest, Math.max(aliveAt ?? earliest, day));
   };
-  if (stoppedAt !== null) return { quantile, outNow: 1 };
   const gone = massBelow(left, clock.reachedAt(now));
-  const outNow = above - below > 1e-9 ? Math.max(0, gone - below) / (above - below) : 0;
-  return { quantile, outNow: Math.min(1, outNow) };
+  const share = known ? Math.min(1, Math.max(0, gone - below) / (above - below)) : 0;
+  return { quantile, daysLeft, clock, outNow: stoppedAt === null ? share : 1 };
 }
 
 function fallback(
@@ -87,7 +86,7 @@ function massBelow(left: TimeLeft, days: number): number {
 }
 
 /** Days left of every grid cell, (end - depth) / rate, as a histogram. */
-function collect({ model, grid }: Filtered): TimeLeft {
+function collect({ model, grid, end }: Filtered): TimeLeft {
   const leak = model.leakPerDay * model.ageing.meanFactor;
   const draws = grid.rate.map((rate) => Math.max(SLOWEST_PER_DAY, model.drawPerDay * rate));
   const joint = new Float64Array(grid.nr * grid.nx);
@@ -100,10 +99,10 @@ function collect({ model, grid }: Filtered): TimeLeft {
   for (let k = 0; k < joint.length; k++) {
     const draw = draws[Math.floor(k / grid.nx)]!;
     const depth = grid.depthFrom + (k % grid.nx) * grid.depthStep;
-    const t = timeLeft(depth, model.endWarm, draw, leak);
+    const t = timeLeft(depth, end.warm, draw, leak);
     days[k] = Math.max(-LONGEST_DAYS, Math.min(LONGEST_DAYS, t));
     meanDraw += joint[k]! * draw;
-    meanLeak += joint[k]! * leak * Math.max(0, 1 - (depth + model.endWarm) / 2);
+    meanLeak += joint[k]! * leak * Math.max(0, 1 - (depth + end.warm) / 2);
     if (joint[k]! < IGNORED) continue;
     from = Math.min(from, days[k]!);
     to = Math.max(to, days[k]!);

@@ -2,15 +2,15 @@
  * A pack's physics, prepared once for the filter: shares of charge per day, curves scaled
  * to the pack, the end depth of each month.
  */
-import { normalQuantile } from "../stats/normal";
 import type { EpochDays, Microamps, Millivolts } from "../units";
 import { ASSUMED } from "./assumptions";
-import { baseCutoffMv, grossCapacity, usableCapacity } from "./capacity";
+import { baseCutoffMv, grossCapacity } from "./capacity";
 import { DAYS_PER_YEAR } from "./climate";
 import { elementsOf } from "./curves";
 import { CURVES } from "./curve-tables";
-import { type PackCurve, endDepth, freshDropMv, packCurve, packEndDepth } from "./cutoff";
+import { type PackCurve, packCurve, packEndDepth } from "./cutoff";
 import { packAverageUa, packPeakUa } from "./duty";
+import { type EndOfLife, type EndTerms, endOfLife, tableEndDepth } from "./end-of-life";
 import type { Chemistry, FleetPrior, PackSpec } from "./pack";
 import { type Ageing, ageing } from "./self-discharge";
 
@@ -38,11 +38,9 @@ export interface PackModel {
   /** Share of the charge left that is lost per day at 20 °C by self-discharge. */
   readonly leakPerDay: number;
   readonly ageing: Ageing;
-  /** Depth at which the device stops, each month; January first. */
-  readonly endByMonth: Float64Array;
-  /** The deepest of them: in the warmest month. */
-  readonly endWarm: number;
-  readonly endSd: number;
+  readonly endTerms: EndTerms;
+  /** Where it stops, before any loaded reading has told of the resistance. */
+  readonly end: EndOfLife;
   readonly startDepth: number;
   readonly startSd: number;
   /** Spread of the pack's voltage offset against the curve, mV. */
@@ -58,49 +56,6 @@ export function fullCapacity(pack: PackSpec, averageUa: Microamps): number {
   const reached = packEndDepth(single, cell.rated.currentUa, cell.rated.temperatureDc);
   const gross = grossCapacity(cell, averageUa / pack.parallel, base, 200);
   return gross / Math.max(reached, MIN_FULL_SHARE);
-}
-
-/** Depth the table itself allows at the device's cut-off, where it knows several. */
-function tableEndDepth(pack: PackSpec, averageUa: Microamps, fullMah: number): number {
-  const base = baseCutoffMv(pack.cell);
-  const cutoff = pack.cutoffMv / pack.series;
-  const ua = averageUa / pack.parallel;
-  const atBase = usableCapacity(pack.cell, ua, base, 200);
-  const atCutoff = usableCapacity(pack.cell, ua, cutoff, 200);
-  if (atCutoff >= atBase) return 1;
-  return (atCutoff / atBase) * (grossCapacity(pack.cell, ua, base, 200) / fullMah);
-}
-
-/** How many spreads the weakest of n cells lies below their mean (Blom's approximation). */
-function weakestOf(n: number): number {
-  return n > 1 ? normalQuantile((n - 0.375) / (n + 0.25)) : 0;
-}
-
-interface EndOfLife {
-  readonly peakUa: Microamps;
-  /** Depth beyond which the capacity table does not reach at this cut-off. */
-  readonly cap: number;
-  /** Resistance at the end of life relative to new. */
-  readonly aged: number;
-}
-
-function monthlyEnds(pack: PackSpec, curve: PackCurve, end: EndOfLife): Float64Array {
-  const weakest =
-    1 - (ASSUMED.weakestCellShare * weakestOf(pack.series)) / Math.sqrt(pack.parallel);
-  return Float64Array.from({ length: 12 }, (_, m) => {
-    const dc = (pack.monthlyMeanDc[m] ?? 200) - 10 * ASSUMED.coldHourK;
-    const drift = curve.driftMvPerKelvin * (dc / 10 - 20);
-    const drop = freshDropMv(pack, curve, end.peakUa, dc) * end.aged;
-    return weakest * Math.min(end.cap, endDepth(curve, pack.cutoffMv, drift, drop));
-  });
-}
-
-/** How far the end depth moves when the resistance is one spread higher or lower. */
-function endSpread(pack: PackSpec, curve: PackCurve, end: EndOfLife): number {
-  const drop = freshDropMv(pack, curve, end.peakUa, Math.max(...pack.monthlyMeanDc)) * end.aged;
-  const high = endDepth(curve, pack.cutoffMv, 0, drop * (1 + ASSUMED.resistanceSd));
-  const low = endDepth(curve, pack.cutoffMv, 0, drop * (1 - ASSUMED.resistanceSd));
-  return Math.hypot(ASSUMED.endDepthSd, (low - high) / 2);
 }
 
 function ratePrior(pack: PackSpec, fleet: FleetPrior | null): RatePrior {
@@ -139,12 +94,13 @@ export function packModel(pack: PackSpec, fleet: FleetPrior | null): PackModel {
   const yearlyLeak = (pack.cell.selfDischargePpmPerYear / 1e6) * pack.cell.rated.capacityMah;
   const leakPerDay = yearlyLeak / fullMah / DAYS_PER_YEAR;
   const drawPerDay = (averageUa * 0.024) / (fullMah * pack.parallel);
-  const end: EndOfLife = {
+  const terms: EndTerms = {
+    pack,
+    curve,
     peakUa,
     cap: tableEndDepth(pack, averageUa, fullMah),
     aged: grown(pack, 1 / Math.max(drawPerDay + leakPerDay, TINY)),
   };
-  const endByMonth = monthlyEnds(pack, curve, end);
   const startDepth = shelfLoss(pack, leakPerDay);
   return {
     pack,
@@ -154,9 +110,8 @@ export function packModel(pack: PackSpec, fleet: FleetPrior | null): PackModel {
     drawPerDay,
     leakPerDay,
     ageing: ageing(pack.monthlyMeanDc),
-    endByMonth,
-    endWarm: Math.max(TINY, ...endByMonth),
-    endSd: endSpread(pack, curve, end),
+    endTerms: terms,
+    end: endOfLife(terms, { mean: 1, sd: ASSUMED.resistanceSd }),
     startDepth,
     startSd: Math.hypot(ASSUMED.startDepthSd, startDepth * 0.5),
     offsetSdMv: pack.series * elementsOf(pack.cell) * CURVES[pack.cell.chemistry].spreadMv,

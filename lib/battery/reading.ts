@@ -14,6 +14,7 @@ import { CURVES } from "./curve-tables";
 import { CURVE_STEPS } from "./curves";
 import { freshDropMv } from "./cutoff";
 import { type Grid, depthMarginal, normalise } from "./grid";
+import type { ResistanceBelief } from "./end-of-life";
 import type { PackReading, ReadingWeight } from "./pack";
 import { type PackModel, resistanceAge } from "./pack-model";
 
@@ -31,12 +32,19 @@ export function impossibleAboveMv(model: PackModel): number {
 type Circumstances = Pick<PackReading, "at" | "kind" | "loadUa" | "temperatureDc" | "accuracyMv">;
 
 /** Mean (nodeA) and variance (nodeB) of a reading at every depth node, offset aside; mV. */
-function expectAt(model: PackModel, grid: Grid, reading: Circumstances): void {
+function expectAt(
+  model: PackModel,
+  grid: Grid,
+  reading: Circumstances,
+  belief: ResistanceBelief,
+): void {
   const { curve, pack } = model;
   const { nodeA: mean, nodeB: variance } = grid;
   const dc = reading.temperatureDc ?? temperatureAt(pack.monthlyMeanDc, reading.at);
   const ua = reading.kind === "loaded" ? (reading.loadUa ?? model.peakUa) : 0;
-  const drop = freshDropMv(pack, curve, ua, dc) * resistanceAge(model, reading.at);
+  const aged = resistanceAge(model, reading.at) * belief.mean;
+  const drop = freshDropMv(pack, curve, ua, dc) * aged;
+  const unsure = belief.sd / belief.mean;
   const drift = curve.driftMvPerKelvin * (dc / 10 - 20);
   const fixed = fixedVariance(model, grid, reading);
   const { restMv, resistance, restScale } = curve;
@@ -53,7 +61,7 @@ function expectAt(model: PackModel, grid: Grid, reading: Circumstances): void {
     const b = Math.min(last + 1, k + reach);
     const fall = restScale * (restMv[a]! - restMv[b]!) + drop * (resistance[b]! - resistance[a]!);
     mean[i] = restScale * rest + drift - drops;
-    variance[i] = fixed + (fall * depthSd) ** 2 + (ASSUMED.resistanceSd * drops) ** 2;
+    variance[i] = fixed + (fall * depthSd) ** 2 + (unsure * drops) ** 2;
   }
 }
 
@@ -101,9 +109,10 @@ export function observe(
   model: PackModel,
   grid: Grid,
   reading: PackReading,
+  resistance: ResistanceBelief,
   passivated: boolean,
 ): ReadingWeight {
-  expectAt(model, grid, reading);
+  expectAt(model, grid, reading, resistance);
   const [low, middle, high] = expectedBand(grid);
   // the film's transient minimum says nothing about charge; a higher voltage would
   const dip = passivated && reading.millivolts < middle;

@@ -7,7 +7,7 @@
 import type { EpochDays } from "../units";
 import { ASSUMED } from "./assumptions";
 import { DAYS_PER_YEAR, MONTH_STARTS, dayOfYear, monthOf } from "./climate";
-import type { PackModel } from "./pack-model";
+import type { Filtered } from "./filter";
 
 export interface SeasonalClock {
   /** Date on which a pack with this many even days left stops. */
@@ -22,12 +22,13 @@ export interface MeanRate {
   readonly drawPerDay: number;
 }
 
-export function seasonalClock(model: PackModel, at: EpochDays, mean: MeanRate): SeasonalClock {
+export function seasonalClock(filtered: Filtered, mean: MeanRate): SeasonalClock {
+  const { model, end, at } = filtered;
   const { ratePerDay, drawPerDay } = mean;
   const leak = (ratePerDay - drawPerDay) / model.ageing.meanFactor;
   const progress = (date: EpochDays): number =>
     (drawPerDay * (date - at) + leak * model.ageing.between(at, date)) / ratePerDay;
-  const cold = (month: number): number => (model.endWarm - model.endByMonth[month]!) / ratePerDay;
+  const cold = (month: number): number => (end.warm - end.byMonth[month]!) / ratePerDay;
   const months: Month[] = [];
   const limit = at + ASSUMED.horizonDays * 1.05;
   const grow = (): Month => addMonth(months, at, progress, cold);

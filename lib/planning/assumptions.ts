@@ -10,10 +10,17 @@ export const OVERTIME_S = 1800;
 export const STOPS_OF_A_ROUND = 8;
 /** Hours until an urgent trip reaches a site, silence running meanwhile. */
 export const URGENT_RESPONSE_H = 24;
+/** Hours until the next weekly plan brings somebody to a device that has stopped. */
+export const NEXT_ROUND_H = 7 * 24;
 /** What an urgent trip costs beside its own drive and work: a planned round is torn up. */
 export const URGENT_DISRUPTION_H = 1;
-/** How far ahead a later visit is looked for. */
-export const LATER_DAYS = 900;
+/**
+ * A pack whose best later visit lies further ahead than this after the plan is left for later:
+ * new voltages will say more by then. Common practice, no source.
+ */
+export const NEAR_DAYS = 56;
+/** How far ahead a later visit is looked for: beyond the life of the longest-lived packs. */
+export const LATER_DAYS = 15 * 365;
 /** Visit, drive and overtime are priced in thousandths of a minor unit: rounding stays unseen. */
 export const COST_UNITS_A_MINOR = 1000;
 /** A changed day or technician of a published visit: a message, a phone call. */

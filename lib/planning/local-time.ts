@@ -58,25 +58,45 @@ export function instantOfWall(day: IsoDay, wallS: Seconds, timeZone: string): Da
   return new Date(new TZDate(year, month - 1, date, 0, 0, wallS, timeZone).getTime());
 }
 
+/**
+ * Local midnights by zone and day. They never change, and asking the time zone's rules for one
+ * costs more than all the rest of a stop's pricing.
+ */
+const midnights = new Map<string, number>();
+const MOST_MIDNIGHTS = 20_000;
+
+function midnightMs(day: IsoDay, timeZone: string): number {
+  const key = `${timeZone} ${day}`;
+  const known = midnights.get(key);
+  if (known !== undefined) return known;
+  if (midnights.size >= MOST_MIDNIGHTS) midnights.clear();
+  const at = instantOfWall(day, 0, timeZone).getTime();
+  midnights.set(key, at);
+  return at;
+}
+
 /** Seconds that really pass from local midnight until a wall clock shows this time. */
 export function elapsedOfWall(day: IsoDay, wallS: Seconds, timeZone: string): Seconds {
-  const midnight = instantOfWall(day, 0, timeZone).getTime();
+  const midnight = midnightMs(day, timeZone);
+  if (midnightMs(addDays(day, 1), timeZone) - midnight === MS_PER_DAY) return wallS;
   return Math.round((instantOfWall(day, wallS, timeZone).getTime() - midnight) / 1000);
 }
 
 /** The instant so many seconds after local midnight. */
 export function instantOfElapsed(day: IsoDay, elapsedS: Seconds, timeZone: string): Date {
-  return new Date(instantOfWall(day, 0, timeZone).getTime() + elapsedS * 1000);
+  return new Date(midnightMs(day, timeZone) + elapsedS * 1000);
 }
 
 /** Seconds from the local midnight of `day` to an instant. */
 export function elapsedOfInstant(day: IsoDay, at: Date, timeZone: string): Seconds {
-  return Math.round((at.getTime() - instantOfWall(day, 0, timeZone).getTime()) / 1000);
+  return Math.round((at.getTime() - midnightMs(day, timeZone)) / 1000);
 }
 
 /** Midday on the forecasts' axis: where a visit on that day is counted. */
 export function midday(day: IsoDay, timeZone: string): EpochDays {
-  return toEpochDays(instantOfWall(day, 43_200, timeZone));
+  return (
+    toEpochDays(new Date(midnightMs(day, timeZone))) + elapsedOfWall(day, 43_200, timeZone) / 86_400
+  );
 }
 
 /** Seconds from midnight of a clock time HH:MM or HH:MM:SS. @throws RangeError on anything else */

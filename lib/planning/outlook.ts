@@ -7,6 +7,8 @@ import type { EpochDays, IsoDay, Minor } from "@/lib/units";
 import {
   ARRIVAL_S,
   LATER_DAYS,
+  NEAR_DAYS,
+  NEXT_ROUND_H,
   STOPS_OF_A_ROUND,
   URGENT_DISRUPTION_H,
   URGENT_RESPONSE_H,
@@ -18,7 +20,7 @@ import type {
   PlanningSite,
   PointOnEarth,
 } from "./fleet";
-import { addDays, daysFrom, midday, weekdayOf } from "./local-time";
+import { addDays, daysBetween, daysFrom, midday, weekdayOf } from "./local-time";
 import { closureOn } from "./site-days";
 import { greatCircleM, type RoadAssumption } from "./travel";
 import {
@@ -32,7 +34,8 @@ import {
 
 /**
  * due: waiting until after this plan costs more than the life thrown away.
- * near: it does not, but by less than the share of a drive that a later visit would pay.
+ * near: it does not, but by less than the share of a drive that a visit of its own would pay
+ * within the next weeks.
  */
 export type Standing = "due" | "near" | "later";
 
@@ -60,15 +63,17 @@ export interface OutlookContext {
   readonly road: RoadAssumption;
 }
 
-/** A day in each later week for a year, in every fourth thereafter: mid-week where they work. */
+/**
+ * Days on which a later visit is priced, nearest first: one in each week for a year, in every
+ * fourth until the third year, then two a year. Mid-week, where they work then.
+ */
 function laterDaysOf(frame: PlanningFrame): IsoDay[] {
   const inWeek = [3, 2, 4, 1, 5, 6, 7].find((weekday) => frame.workingDays.includes(weekday)) ?? 3;
   let day = addDays(frame.lastDay, 1);
   while (weekdayOf(day) !== inWeek) day = addDays(day, 1);
+  const step = (ahead: number) => (ahead < 364 ? 7 : ahead < 1092 ? 28 : 182);
   const days: IsoDay[] = [];
-  for (let ahead = 0; ahead <= LATER_DAYS; ahead += ahead < 364 ? 7 : 28) {
-    days.push(addDays(day, ahead));
-  }
+  for (let ahead = 0; ahead <= LATER_DAYS; ahead += step(ahead)) days.push(addDays(day, ahead));
   return days;
 }
 
@@ -131,12 +136,47 @@ export function waitingPack(
     silenceMinorPerHour: pack.silenceMinorPerHour,
     urgentTripMinor: trip.urgentMinor + workMinor,
     urgentResponseH: URGENT_RESPONSE_H,
+    nextRoundH: NEXT_ROUND_H,
     keepMinorPerDay: keepCostPerDay(
       pack.life,
       pack.installedAt,
       pack.cellsMinor + workMinor + trip.shareMinor,
     ),
   };
+}
+
+interface LaterVisit {
+  readonly waiting: WaitingPack;
+  readonly index: number;
+  readonly price: VisitPrice;
+}
+
+/**
+ * The best later visit. What is lost even at the best moment is lost once a cycle, so it belongs
+ * to the cost of a cycle too (the long-run rate of age replacement holds both): g is raised by it
+ * and the best moment looked up again.
+ */
+function bestLater(
+  waiting: WaitingPack,
+  pack: PlanningPack,
+  context: OutlookContext,
+  moments: readonly EpochDays[],
+): LaterVisit {
+  const first = cheapestVisit(waiting, context.now, moments);
+  const lost = keepCostPerDay(pack.life, pack.installedAt, first.price.totalMinor);
+  const whole = { ...waiting, keepMinorPerDay: waiting.keepMinorPerDay + lost };
+  return { waiting: whole, ...cheapestVisit(whole, context.now, moments) };
+}
+
+function standingOf(
+  gainMinor: Minor,
+  tripShareMinor: Minor,
+  laterDay: IsoDay,
+  context: OutlookContext,
+): Standing {
+  if (gainMinor >= 0) return "due";
+  const ahead = daysBetween(context.days.at(-1)!, laterDay);
+  return gainMinor >= -tripShareMinor && ahead <= NEAR_DAYS ? "near" : "later";
 }
 
 /** The outlook of one pack. */
@@ -146,21 +186,24 @@ export function outlookOf(
   context: OutlookContext,
 ): PackOutlook {
   const trip = tripOf(site, context);
-  const waiting = waitingPack(pack, trip, context.prices);
-  const visits = context.moments.map((moment) => priceVisit(waiting, context.now, moment));
   const open = context.laterDays.flatMap((day, i) => (closureOn(site.closures, day) ? [] : [i]));
   const choices = open.length > 0 ? open : context.laterDays.map((_, i) => i);
-  const moments = choices.map((i) => context.laterMoments[i]!);
-  const best = cheapestVisit(waiting, context.now, moments);
+  const { waiting, index, price } = bestLater(
+    waitingPack(pack, trip, context.prices),
+    pack,
+    context,
+    choices.map((i) => context.laterMoments[i]!),
+  );
+  const visits = context.moments.map((moment) => priceVisit(waiting, context.now, moment));
   const cheapestNow = Math.min(...visits.map((visit) => visit.totalMinor));
-  const gainMinor = best.price.totalMinor - cheapestNow;
-  const last = context.moments.at(-1)!;
+  const gainMinor = price.totalMinor - cheapestNow;
+  const day = context.laterDays[choices[index]!]!;
   return {
     pack,
     visits,
-    later: { day: context.laterDays[choices[best.index]!]!, price: best.price },
+    later: { day, price },
     gainMinor,
-    standing: gainMinor >= 0 ? "due" : gainMinor >= -trip.shareMinor ? "near" : "later",
-    waitingMinorPerWeek: waitingCostPerWeek(waiting, context.now, last),
+    standing: standingOf(gainMinor, trip.shareMinor, day, context),
+    waitingMinorPerWeek: waitingCostPerWeek(waiting, context.now, context.moments.at(-1)!),
   };
 }

@@ -60,7 +60,8 @@ export function visitOf(
   const perDay = (of: (outlook: PackOutlook, d: number) => number) =>
     context.days.map((_: IsoDay, d) => swaps.reduce((sum, o) => sum + of(o, d), 0));
   const trips = swaps.length > 0 ? tripsSaved(swaps) * tripOf(site, context).shareMinor : 0;
-  const workMinor = (serviceS / 3600) * context.prices.crewMinorPerHour;
+  // The walk to the gate is part of a trip's share; reads alone wait for no trip of their own.
+  const workMinor = ((serviceS - ARRIVAL_S) / 3600) * context.prices.crewMinorPerHour;
   return {
     site,
     tasks,

@@ -4,14 +4,15 @@
  *
  *   V(d) = E[ silence before d ] + g · E[ (T − d)⁺ ],   g = cost of a cycle / expected cycle
  *
- * T is the day the device stops. Renewal reasoning: each day of life left in the pack on the day
+ * T is the day the device stops. A device that stops before its visit does not stay silent until
+ * then: it is due in the next weekly round, or worth an urgent trip; the cheapest way out counts. Renewal reasoning: each day of life left in the pack on the day
  * of its swap brings every later swap one day forward, and a day of service costs g in the long
  * run (Barlow & Proschan 1965, see age-replacement.ts). V(d) − V(d*) is then the penalty of
  * shifting a job (Wildeman, Dekker & Smit 1997, see grouping.ts) with the failure cost taken
  * from this pack's own posterior instead of a population's.
  */
 import type { EpochDays, Minor } from "@/lib/units";
-import { chanceOutBy, expectation, meanLife, type LifeQuantiles } from "./life";
+import { chanceOutBy, countUpTo, meanLife, sumBetween, type LifeQuantiles } from "./life";
 
 export interface SilencePrices {
   readonly silenceMinorPerHour: Minor;
@@ -19,6 +20,8 @@ export interface SilencePrices {
   readonly urgentTripMinor: Minor;
   /** Hours until such a trip arrives, silence running. */
   readonly urgentResponseH: number;
+  /** Hours until an ordinary round comes by, once the device is known to have stopped. */
+  readonly nextRoundH: number;
 }
 
 export interface WaitingPack extends SilencePrices {
@@ -38,9 +41,9 @@ export interface VisitPrice {
 }
 
 /**
- * Cost of a device that stops at `stopsAt` when its visit is due at `visitAt`: silence until then,
- * or an urgent trip where that is cheaper. For a device that is out already the visit itself is
- * the answer, so its silence counts in full.
+ * Cost of a device that stops at `stopsAt` when its visit is due at `visitAt`: silence until then
+ * or until the next round, or an urgent trip where that is cheaper. For a device that is out
+ * already the visit itself is the answer, so its silence counts in full.
  */
 export function costOfStopping(
   prices: SilencePrices,
@@ -53,16 +56,35 @@ export function costOfStopping(
   const waiting = Math.max(0, silentH) * prices.silenceMinorPerHour;
   if (stopsAt <= now) return waiting;
   const urgent = prices.urgentTripMinor + prices.urgentResponseH * prices.silenceMinorPerHour;
-  return Math.min(waiting, urgent);
+  return Math.min(waiting, prices.nextRoundH * prices.silenceMinorPerHour, urgent);
 }
 
-/** Prices a visit at one moment. */
+/** Expected silence before a visit: quantiles by whether they are out, capped or running. */
+function expectedSilence(pack: WaitingPack, now: EpochDays, visitAt: EpochDays): Minor {
+  const { life, silenceMinorPerHour: hourly } = pack;
+  if (hourly === 0) return 0;
+  const perDay = hourly * 24;
+  const urgent = pack.urgentTripMinor + pack.urgentResponseH * hourly;
+  const most = Math.min(pack.nextRoundH * hourly, urgent);
+  const before = countUpTo(life, Math.min(now, visitAt));
+  // Between now and the visit silence runs; what stops long before it costs the cap.
+  const capped = Math.max(before, countUpTo(life, visitAt - most / perDay));
+  const stopped = Math.max(capped, countUpTo(life, visitAt));
+  const out = before * Math.max(0, visitAt - now) * perDay;
+  const running = (stopped - capped) * visitAt - sumBetween(life, capped, stopped);
+  return (out + (capped - before) * most + running * perDay) / life.length;
+}
+
+/** Prices a visit at one moment. Costs a few bisections, however many quantiles there are. */
 export function priceVisit(pack: WaitingPack, now: EpochDays, visitAt: EpochDays): VisitPrice {
-  const silenceMinor = expectation(pack.life, (t) => costOfStopping(pack, now, t, visitAt));
-  const unusedDays = expectation(pack.life, (t) => Math.max(0, t - visitAt));
+  const { life } = pack;
+  const silenceMinor = expectedSilence(pack, now, visitAt);
+  const from = countUpTo(life, visitAt);
+  const left = life.length - from;
+  const unusedDays = (sumBetween(life, from, life.length) - left * visitAt) / life.length;
   const thrownMinor = unusedDays * pack.keepMinorPerDay;
   return {
-    chanceOut: chanceOutBy(pack.life, visitAt),
+    chanceOut: chanceOutBy(life, visitAt),
     silenceMinor,
     thrownMinor,
     totalMinor: silenceMinor + thrownMinor,

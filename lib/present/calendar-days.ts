@@ -1,4 +1,5 @@
 import { MS_PER_DAY, type IsoDay } from "@/lib/units";
+import { dateFormatter } from "./formatters";
 
 /** A calendar day as whole days since 1970-01-01: free of time zones and of daylight saving. */
 export function dayNumber(day: IsoDay): number {
@@ -16,7 +17,7 @@ export function dayFromNumber(days: number): IsoDay {
 
 /** The calendar day that an instant falls on in a time zone. */
 export function dayOfInstant(at: Date, timeZone: string): IsoDay {
-  const parts = new Intl.DateTimeFormat("en-US", {
+  const parts = dateFormatter("en-US", {
     timeZone,
     calendar: "iso8601",
     year: "numeric",
@@ -32,7 +33,7 @@ export function dayOfInstant(at: Date, timeZone: string): IsoDay {
  * them: the whole part is the local day, the fraction the share of a 24-hour dial gone by.
  */
 export function axisDay(at: Date, timeZone: string): number {
-  const parts = new Intl.DateTimeFormat("en-US", {
+  const parts = dateFormatter("en-US", {
     timeZone,
     hourCycle: "h23",
     hour: "2-digit",

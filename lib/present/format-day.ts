@@ -3,6 +3,7 @@ import { getISOWeek, getISOWeekYear } from "date-fns";
 import { MS_PER_DAY, type IsoDay } from "@/lib/units";
 import { dayNumber, dayOfInstant } from "./calendar-days";
 import { EN_DASH, NBSP, type Presentation } from "./locale";
+import { dateFormatter } from "./formatters";
 
 export interface DayStyle {
   weekday?: boolean;
@@ -21,7 +22,7 @@ export function formatDay(day: IsoDay, locale: string, style: DayStyle = {}): st
   const near =
     today !== undefined && Math.abs(dayNumber(day) - dayNumber(today)) <= MISTAKEN_BEYOND_DAYS;
   const withYear = year === "auto" ? !near : year;
-  const text = new Intl.DateTimeFormat(locale, {
+  const text = dateFormatter(locale, {
     timeZone: "UTC",
     day: "numeric",
     month: "short",

@@ -1,5 +1,6 @@
 import type { Decicelsius, Metres, Microamps, MilliampHours, Millivolts, Minor } from "@/lib/units";
 import { EN_DASH, formatNumber, NBSP } from "./locale";
+import { numberFormatter } from "./formatters";
 
 /** Volts from millivolts: "3.48 V"; three decimals for cells compared by the millivolt. */
 export function formatVolts(millivolts: Millivolts, locale: string, decimals = 2): string {
@@ -16,13 +17,13 @@ export function formatAh(milliampHours: MilliampHours, locale: string): string {
   if (Math.abs(milliampHours) < 1000) {
     return `${formatNumber(milliampHours, locale, 0)}${NBSP}mAh`;
   }
-  const text = new Intl.NumberFormat(locale, { maximumSignificantDigits: 3 });
+  const text = numberFormatter(locale, { maximumSignificantDigits: 3 });
   return `${text.format(milliampHours / 1000)}${NBSP}Ah`;
 }
 
 /** Current: "42 µA", "1.2 mA", "0.25 A" stays "250 mA". At most three significant digits. */
 export function formatCurrent(microamps: Microamps, locale: string): string {
-  const text = new Intl.NumberFormat(locale, { maximumSignificantDigits: 3 });
+  const text = numberFormatter(locale, { maximumSignificantDigits: 3 });
   if (Math.abs(microamps) < 1000) return `${text.format(microamps)}${NBSP}µA`;
   if (Math.abs(microamps) < 1_000_000) return `${text.format(microamps / 1000)}${NBSP}mA`;
   return `${text.format(microamps / 1_000_000)}${NBSP}A`;
@@ -58,10 +59,10 @@ export function formatMoney(
   { whole = false, per }: MoneyStyle = {},
 ): string {
   const digits =
-    new Intl.NumberFormat(locale, { style: "currency", currency }).resolvedOptions()
+    numberFormatter(locale, { style: "currency", currency }).resolvedOptions()
       .maximumFractionDigits ?? 2;
   const amount = minor / 10 ** digits;
-  const format = new Intl.NumberFormat(locale, {
+  const format = numberFormatter(locale, {
     style: "currency",
     currency,
     ...(whole && { maximumFractionDigits: 0 }),

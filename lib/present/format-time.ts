@@ -1,11 +1,12 @@
 import { formatNumber, NBSP, type Presentation } from "./locale";
 import { dayOfInstant } from "./calendar-days";
 import { formatDay, type DayStyle } from "./format-day";
+import { dateFormatter } from "./formatters";
 
 const MINUTE_MS = 60_000;
 
 function clock(at: Date, locale: string, timeZone: string, zone: boolean): string {
-  return new Intl.DateTimeFormat(locale, {
+  return dateFormatter(locale, {
     timeZone,
     hour: "2-digit",
     minute: "2-digit",

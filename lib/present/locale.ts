@@ -1,3 +1,6 @@
+import { numberFormatter } from "./formatters";
+
+import { numberFormatter } from "./formatters";
 /** How one organisation writes: passed in everywhere, never read from the machine. */
 export interface Presentation {
   /** BCP 47, such as "en-GB" or "de-DE". */
@@ -17,7 +20,7 @@ export const NOTHING = "—";
 
 /** A number in the locale's hand, with exactly or at most so many decimals. */
 export function formatNumber(value: number, locale: string, decimals = 0, exact = true): string {
-  return new Intl.NumberFormat(locale, {
+  return numberFormatter(locale, {
     minimumFractionDigits: exact ? decimals : 0,
     maximumFractionDigits: decimals,
   }).format(value);

@@ -26,7 +26,7 @@ import { travelTimes } from "./travel-times";
 import { type Deps, defineUseCase } from "./use-case";
 
 /** Turns of the search in one go, and how often its progress is shown meanwhile. */
-const ITERATIONS = 60_000;
+const ITERATIONS = 48_000;
 const CHUNKS = 12;
 const SEED = 20_261_201;
 

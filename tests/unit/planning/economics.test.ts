@@ -1,3 +1,4 @@
+import fc from "fast-check";
 import { describe, expect, it } from "vitest";
 import { bestAge } from "@/lib/planning/age-replacement";
 import { bestInterval, shiftPenalty, worthGrouping } from "@/lib/planning/grouping";
@@ -65,7 +66,12 @@ describe("the life of a pack", () => {
 });
 
 describe("what waiting costs", () => {
-  const prices = { silenceMinorPerHour: 10, urgentTripMinor: 5000, urgentResponseH: 24 };
+  const prices = {
+    silenceMinorPerHour: 10,
+    urgentTripMinor: 5000,
+    urgentResponseH: 24,
+    nextRoundH: 600,
+  };
   const uniform = Array.from({ length: 50 }, (_, i) => 100 + (i + 0.5) * 2);
   const pack = { ...prices, life: uniform, keepMinorPerDay: 4 };
 
@@ -74,6 +80,8 @@ describe("what waiting costs", () => {
     expect(costOfStopping(prices, 0, 100, 103)).toBe(720);
     expect(costOfStopping(prices, 0, 100, 130)).toBe(5240);
     expect(costOfStopping(prices, 0, 104, 103)).toBe(0);
+    // A round that comes by after a week ends the silence: 168 h at 10.
+    expect(costOfStopping({ ...prices, nextRoundH: 168 }, 0, 100, 130)).toBe(1680);
   });
 
   it("counts a device that is out already from now on, without a cheaper way out", () => {
@@ -88,6 +96,32 @@ describe("what waiting costs", () => {
     expect(price.silenceMinor).toBeCloseTo(480, 0);
     expect(price.thrownMinor).toBeCloseTo(128, 6);
     expect(price.chanceOut).toBeCloseTo(0.2, 10);
+  });
+
+  it("is the plain mean over the quantiles of each one's cost", () => {
+    const hours = fc.integer({ min: 0, max: 500 });
+    fc.assert(
+      fc.property(
+        fc.array(fc.integer({ min: 50, max: 400 }), { minLength: 50, maxLength: 50 }),
+        fc.integer({ min: 60, max: 300 }),
+        fc.integer({ min: 0, max: 300 }),
+        fc.record({ silence: hours, urgent: fc.integer({ min: 0, max: 20_000 }), next: hours }),
+        (days, now, ahead, drawn) => {
+          const one = {
+            silenceMinorPerHour: drawn.silence,
+            urgentTripMinor: drawn.urgent,
+            urgentResponseH: 24,
+            nextRoundH: drawn.next,
+          };
+          const life = [...days].sort((a, b) => a - b);
+          const visit = now + ahead;
+          const mean = life.reduce((sum, t) => sum + costOfStopping(one, now, t, visit), 0) / 50;
+          const price = priceVisit({ ...one, life, keepMinorPerDay: 4 }, now, visit);
+          expect(price.silenceMinor).toBeCloseTo(mean, 6);
+        },
+      ),
+      { seed: 20261204 },
+    );
   });
 
   it("is nothing a week while the pack is young", () => {

@@ -32,7 +32,7 @@ export function BigButton({ kind = "plain", href, aside, children, ...rest }: Bi
   );
   if (href !== undefined) {
     return (
-      <Link href={href} className={className}>
+      <Link href={href} prefetch={false} className={className}>
         {inside}
       </Link>
     );

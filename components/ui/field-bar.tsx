@@ -19,6 +19,7 @@ export function FieldBar({ title, heading, back, status, aside }: FieldBarProps)
       {back && (
         <Link
           href={back.href}
+          prefetch={false}
           aria-label={back.label}
           className="-ml-3 flex size-12 items-center justify-center text-2xl"
         >

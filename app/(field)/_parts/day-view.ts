@@ -1,0 +1,60 @@
+import { findAsset } from "@/lib/offline/day";
+import { dayNumber, dayOfInstant } from "@/lib/present/calendar-days";
+import { packTone } from "@/lib/present/tone";
+import { waneDisc, type WaneDiscModel } from "@/lib/present/wane-disc";
+import type { DayAsset, DayPack, DayRound, DayStop } from "@/lib/sync/day-pack";
+import { TASK_WORDS } from "./field-words";
+
+/** The stop whose turn it is: the first that is still open. */
+export function nextStop(round: DayRound): DayStop | null {
+  return round.stops.find((stop) => stop.state === "planned") ?? null;
+}
+
+/** A stop's name: its asset where there is one, else its site. */
+export function stopTitle(day: DayPack, stop: DayStop): string {
+  const [task, more] = stop.tasks;
+  const asset = task && !more ? findAsset(day, task.assetId) : null;
+  const site = day.sites.find((candidate) => candidate.id === stop.siteId);
+  return asset?.name ?? site?.name ?? "Stop";
+}
+
+/** "1 × ER34615", "2 swaps · 4 × LR20, 2 × LR6", "1 to read". */
+export function stopWork(day: DayPack, stop: DayStop): string {
+  const swaps = stop.tasks.filter((task) => task.kind === "swap");
+  const others = stop.tasks.length - swaps.length;
+  const byType = new Map<string, number>();
+  for (const task of swaps) {
+    const cell = day.cellTypes.find((candidate) => candidate.id === task.cellTypeId);
+    const name = cell?.designation ?? "cells";
+    byType.set(name, (byType.get(name) ?? 0) + task.cells);
+  }
+  const cells = [...byType].map(([name, count]) => `${count} × ${name}`).join(", ");
+  const parts = [
+    swaps.length > 1 ? `${swaps.length} swaps` : "",
+    cells,
+    others > 0 ? `${others} to ${others === 1 ? TASK_WORDS.read : "look at"}` : "",
+  ];
+  return parts.filter(Boolean).join(" · ") || "nothing planned";
+}
+
+/** The disc of the pack in an asset; null where nothing is known of it. */
+export function assetDisc(day: DayPack, assetId: string | undefined): WaneDiscModel | null {
+  const asset = assetId ? findAsset(day, assetId) : null;
+  return asset?.pack ? discOf(day, asset) : null;
+}
+
+export function discOf(day: DayPack, asset: DayAsset): WaneDiscModel {
+  const { locale, timeZone } = day.organisation;
+  const forecast = asset.pack?.forecast ?? null;
+  const isOut = (asset.pack?.events ?? []).some((event) => event.kind === "stopped");
+  const today = dayNumber(dayOfInstant(new Date(day.madeAt), timeZone));
+  const daysToLikely = forecast
+    ? dayNumber(dayOfInstant(new Date(forecast.p50), timeZone)) - today
+    : null;
+  return waneDisc({
+    share: forecast ? forecast.sharePermille / 1000 : null,
+    isOut,
+    tone: packTone({ isOut, daysToLikely }),
+    locale,
+  });
+}

@@ -1,0 +1,84 @@
+"use client";
+
+import { usePathname, useSearchParams } from "next/navigation";
+import { lazy, type MouseEvent, Suspense, useEffect } from "react";
+import { FieldBar } from "@/components/ui/field-bar";
+import { FieldPage } from "@/components/ui/field-page";
+import { Skeleton } from "@/components/ui/states";
+import { runFieldStore } from "@/lib/offline/browser-store";
+import { keepShell } from "@/lib/offline/shell";
+import { CannotScreen } from "./cannot-screen";
+import { FindScreen } from "./find-screen";
+import { go, staysHere } from "./go";
+import { showNight } from "./night";
+import { NoDay } from "./no-day";
+import { OutboxScreen } from "./outbox-screen";
+import { StopScreen } from "./stop-screen";
+import { TodayScreen } from "./today-screen";
+import { useField } from "./use-field";
+
+const loadLog = () => import("./log-screen");
+const loadSwap = () => import("./swap-screen");
+const LogScreen = lazy(async () => ({ default: (await loadLog()).LogScreen }));
+const SwapScreen = lazy(async () => ({ default: (await loadSwap()).SwapScreen }));
+
+/** All phone pages: which one is shown follows the address. */
+export function FieldApp() {
+  useEffect(runFieldStore, []);
+  useEffect(showNight, []);
+  useEffect(() => {
+    // Every part must be on the phone before the signal goes, not only the one looked at.
+    void Promise.all([loadLog(), loadSwap()]).then(keepShell, () => undefined);
+  }, []);
+  return (
+    <div onClickCapture={answerHere}>
+      <Suspense fallback={<Opening />}>
+        <Screen />
+      </Suspense>
+    </div>
+  );
+}
+
+function Screen() {
+  const path = usePathname();
+  const query = useSearchParams();
+  const field = useField();
+  if (field.phase === "opening") return <Opening />;
+  if (path === "/outbox") return <OutboxScreen field={field} />;
+  const { day } = field;
+  if (!day) return <NoDay field={field} />;
+  const given = { field, day, query };
+  switch (path) {
+    case "/stop":
+      return <StopScreen {...given} />;
+    case "/log":
+      return <LogScreen key={query.toString()} {...given} />;
+    case "/swap":
+      return <SwapScreen key={query.toString()} {...given} />;
+    case "/cannot":
+      return <CannotScreen {...given} />;
+    case "/find":
+      return <FindScreen {...given} />;
+    default:
+      return <TodayScreen {...given} />;
+  }
+}
+
+function Opening() {
+  return (
+    <>
+      <FieldBar title="Wanewright" heading />
+      <FieldPage>
+        <Skeleton label="Opening what this phone keeps" shape="lines" rows={8} />
+      </FieldPage>
+    </>
+  );
+}
+
+/** Links between phone pages never ask the server: they work the same without signal. */
+function answerHere(event: MouseEvent): void {
+  const link = event.target instanceof Element ? event.target.closest("a") : null;
+  if (!link || !staysHere(event.nativeEvent, link)) return;
+  event.preventDefault();
+  go(link.href);
+}

@@ -1,0 +1,108 @@
+"use client";
+
+import { BigButton } from "@/components/ui/big-button";
+import { FieldBar } from "@/components/ui/field-bar";
+import { FieldPage } from "@/components/ui/field-page";
+import { Caution, Notice } from "@/components/ui/notice";
+import { TextArea } from "@/components/ui/inputs";
+import type { OutboxEntry } from "@/lib/sync/outbox";
+import type { DayAsset, DayPack, DayTask } from "@/lib/sync/day-pack";
+import { FieldChoice } from "./field-chip";
+import { chemistryCaution, LOOK_WORDS, REASON_OUT_WORDS } from "./field-words";
+import { SwapCells } from "./swap-cells";
+import { SwapChecks } from "./swap-checks";
+import { useSwap } from "./use-swap";
+import { VoltsField } from "./volts-field";
+
+export interface SwapFormProps {
+  day: DayPack;
+  asset: DayAsset;
+  stopId: string | null;
+  task: DayTask | undefined;
+  back: { href: string; label: string };
+  /** The refused swap that this one mends. */
+  mended: OutboxEntry | null;
+}
+
+const REASONS = Object.entries(REASON_OUT_WORDS) as [keyof typeof REASON_OUT_WORDS, string][];
+const LOOKS = Object.entries(LOOK_WORDS) as [keyof typeof LOOK_WORDS, string][];
+
+/** Voltage out, cells out, cells in, checks, voltage in: in the order of the hands. */
+export function SwapForm(props: SwapFormProps) {
+  const { day, asset, back } = props;
+  const swap = useSwap(props);
+  const { draft, set } = swap;
+  const old = day.cellTypes.find((cell) => cell.id === asset.pack?.cellTypeId);
+  const fresh = day.cellTypes.find((cell) => cell.id === draft.cellTypeId);
+  const cautions = [chemistryCaution(old?.spec.chemistry), chemistryCaution(fresh?.spec.chemistry)];
+  const shown = [...new Set(cautions)].flatMap((caution) => caution ?? []);
+  return (
+    <>
+      <FieldBar
+        title={asset.pack ? "Swap the pack" : "Put a pack in"}
+        heading
+        back={back}
+        aside={asset.tag}
+      />
+      <FieldPage
+        foot={
+          <>
+            {swap.trouble && <Notice kind="trouble">{swap.trouble}</Notice>}
+            <BigButton kind="go" onClick={() => void swap.keep()}>
+              {asset.pack ? "Keep this swap" : "Keep this pack"}
+            </BigButton>
+          </>
+        }
+      >
+        <p className="font-semibold">{asset.name}</p>
+        {shown.map((caution) => (
+          <Caution key={caution.title} title={caution.title}>
+            {caution.text}
+          </Caution>
+        ))}
+        {asset.pack && (
+          <>
+            <h2 className="text-xl">Out</h2>
+            <VoltsField
+              {...{ day, asset, kind: "resting" }}
+              label="Voltage of the old pack, resting"
+              value={draft.voltsOut}
+              onChange={(voltsOut) => set({ voltsOut })}
+            />
+            <FieldChoice
+              label="Why"
+              options={REASONS}
+              value={draft.reason}
+              onChange={(reason) => set({ reason })}
+            />
+            <FieldChoice
+              label={`The ${asset.pack.series * asset.pack.parallel} cells look`}
+              options={LOOKS}
+              value={draft.look}
+              onChange={(look) => set({ look })}
+            />
+            {draft.look !== "sound" && (
+              <Caution title="Damaged cells">
+                Gloves and eye protection on. Bag each cell alone, terminals taped.
+              </Caution>
+            )}
+          </>
+        )}
+        <h2 className="text-xl">In</h2>
+        <SwapCells {...{ day, asset, draft, set }} />
+        <SwapChecks {...{ draft, set }} />
+        <VoltsField
+          {...{ day, asset, kind: "loaded" }}
+          label="Voltage of the new pack, device running"
+          value={draft.voltsIn}
+          onChange={(voltsIn) => set({ voltsIn })}
+        />
+        <TextArea
+          {...{ name: "note", label: "Note", optional: true, rows: 2, maxLength: 800 }}
+          value={draft.note}
+          onChange={(event) => set({ note: event.target.value })}
+        />
+      </FieldPage>
+    </>
+  );
+}

@@ -1,0 +1,9 @@
+import type { Metadata } from "next";
+import { FieldApp } from "../_parts/field-app";
+
+export const metadata: Metadata = { title: "Stop" };
+
+/** One shell for all phone pages; the screen follows the address, with or without signal. */
+export default function Page() {
+  return <FieldApp />;
+}

@@ -1,0 +1,1 @@
+export { heldBy, withDependents } from "@/lib/sync/outbox";

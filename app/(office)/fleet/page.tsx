@@ -28,9 +28,7 @@ export default async function FleetPage(props: { searchParams: Promise<ListParam
               Export CSV
             </LinkButton>
             {mayUse(saveAsset, actor) && (
-              <LinkButton kind="go" href="/fleet/new">
-                Add an asset
-              </LinkButton>
+              <LinkButton {...{ kind: "go", href: "/fleet/new" }}>Add an asset</LinkButton>
             )}
           </>
         }

@@ -10,7 +10,7 @@ import { voltageChart } from "@/lib/present/voltage-chart";
 import { waneDisc } from "@/lib/present/wane-disc";
 import type { AssetView } from "@/lib/usecases/read-asset";
 
-const AXIS_PX = 860;
+const AXIS_PX = 1180;
 
 /** The pack in an asset as marks and words; null when there is none. */
 export function assetMarks(view: AssetView) {
@@ -44,7 +44,7 @@ export function assetMarks(view: AssetView) {
     away: cutoff && formatDaysAway(cutoff.p50, today),
     since: formatDay(day(pack.installedAt), locale, { today }),
     tone,
-    stale: forecast?.staleSince != null,
+    stale: Boolean(forecast?.staleSince),
     ...timeMarks(view, tone, cutoff, today),
     cutoffVolts: formatVolts(asset.cutoffMv, locale),
   };
@@ -59,8 +59,9 @@ function timeMarks(view: AssetView, tone: Tone, cutoff: Cutoff, today: string) {
   const installed = dayOfInstant(pack?.installedAt ?? view.now, timeZone);
   const from = dayNumber(installed) - 14;
   const ahead = Math.max(dayNumber(today) + 60, cutoff ? dayNumber(cutoff.p95) + 21 : 0);
-  // A window years ahead would press all that is known into a corner.
-  const to = Math.min(ahead, dayNumber(today) + 3 * (dayNumber(today) - from) + 120);
+  // A window years ahead would press all that is known into a corner; its middle must show.
+  const enough = 3 * (dayNumber(today) - from) + dayNumber(today) + 120;
+  const to = Math.max(Math.min(ahead, enough), cutoff ? dayNumber(cutoff.p50) + 45 : 0);
   const axis = timeAxis({
     from: dayFromNumber(from),
     to: dayFromNumber(to),

@@ -27,7 +27,12 @@ export function AssetPack({ view }: { view: AssetView }) {
         <Figure
           label="Charge left"
           value={marks.disc.label}
-          range={marks.shareRange && `likely ${marks.shareRange}`}
+          range={
+            <>
+              <WaneDisc model={marks.disc} decorative />{" "}
+              {marks.shareRange && `likely ${marks.shareRange}`}
+            </>
+          }
           tone={marks.tone}
         />
         <Figure
@@ -45,12 +50,14 @@ export function AssetPack({ view }: { view: AssetView }) {
         <Figure label="Stops at" value={marks.cutoffVolts} range="under its peak current" />
       </FigureRow>
       <Section title="Voltages over time" aside={<NextVisit view={view} />}>
-        <div className="overflow-x-auto px-3 py-3">
-          <div className="flex items-center gap-3 pl-11">
-            <SpanStrip model={marks.strip} />
-            <WaneDisc model={marks.disc} decorative />
+        <div role="region" aria-label="Charts" tabIndex={0} className="overflow-x-auto px-3 py-3">
+          {/* As wide as it is drawn: the strip and the voltages share one axis. */}
+          <div style={{ width: marks.chart.width }}>
+            <div style={{ paddingLeft: marks.chart.plot.left }}>
+              <SpanStrip model={marks.strip} />
+            </div>
+            <VoltageChart model={marks.chart} />
           </div>
-          <VoltageChart model={marks.chart} />
         </div>
       </Section>
       <Section title="What the forecast rests on">

@@ -13,7 +13,7 @@ export const changeOwnPasswordAction = defineAction(
     present: String(form.get("present") ?? ""),
     password: String(form.get("password") ?? ""),
   }),
-  ({ email }, form) => signInAfterwards(email, String(form.get("password")), "/account"),
+  ({ email }, form) => signInAfterwards(email, String(form.get("password")), "/account?changed=1"),
 );
 
 export const signOutEverywhereAction = defineAction(

@@ -1,5 +1,6 @@
 import type { Metadata } from "next";
 import Link from "next/link";
+import { Notice } from "@/components/ui/notice";
 import { roleNames } from "@/lib/present/role-names";
 import { requireActor } from "@/lib/server/session";
 import { EntryHead } from "../_parts/entry-head";
@@ -8,13 +9,19 @@ import { PasswordForm } from "./_parts/password-form";
 
 export const metadata: Metadata = { title: "Your account" };
 
-export default async function AccountPage() {
+type Search = Promise<{ changed?: string }>;
+
+export default async function AccountPage({ searchParams }: { searchParams: Search }) {
   const actor = await requireActor();
+  const { changed } = await searchParams;
   return (
     <>
       <EntryHead title="Your account">
         {actor.name}, {actor.email}. {roleNames(actor.roles)}.
       </EntryHead>
+      {changed && (
+        <Notice kind="done">Your password is changed; other devices are signed out.</Notice>
+      )}
       <h2 className="mt-2 mb-3 text-lg">Change your password</h2>
       <PasswordForm email={actor.email} />
       <h2 className="mt-8 mb-1 border-t border-rule pt-4 text-lg">Lost a phone?</h2>

@@ -8,12 +8,7 @@ import { changeOwnPasswordAction } from "../actions";
 /** Present and new password. */
 export function PasswordForm({ email }: { email: string }) {
   return (
-    <ActionForm
-      action={changeOwnPasswordAction}
-      submit="Change the password"
-      done="Your password is changed."
-      tall
-    >
+    <ActionForm action={changeOwnPasswordAction} submit="Change the password" tall>
       {(entries) => (
         <>
           <input type="hidden" autoComplete="username" value={email} readOnly />

@@ -12,7 +12,7 @@ export function AuditFilter({ view }: { view: AuditView }) {
       <Select
         name="person"
         label="Who"
-        optional
+        required={false}
         placeholder="Everybody"
         defaultValue={given.personId ?? ""}
         options={people.map(({ id, name }) => ({ value: id, label: name }))}
@@ -20,7 +20,7 @@ export function AuditFilter({ view }: { view: AuditView }) {
       <Select
         name="act"
         label="What"
-        optional
+        required={false}
         placeholder="Everything"
         defaultValue={given.act ?? ""}
         options={acts.map((act) => ({ value: act, label: actLabel(act) }))}
@@ -28,7 +28,7 @@ export function AuditFilter({ view }: { view: AuditView }) {
       <TextInput
         name="from"
         label="From"
-        optional
+        required={false}
         type="date"
         key={`from-${given.fromDay}`}
         defaultValue={given.fromDay ?? ""}
@@ -36,7 +36,7 @@ export function AuditFilter({ view }: { view: AuditView }) {
       <TextInput
         name="to"
         label="To"
-        optional
+        required={false}
         type="date"
         key={`to-${given.toDay}`}
         defaultValue={given.toDay ?? ""}

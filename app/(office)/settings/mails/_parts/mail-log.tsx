@@ -104,7 +104,7 @@ function State({ row, view }: { row: Row; view: MailsView["organisation"] }) {
   const failed = row.state === "failed";
   if (!failed && row.attempts === 0) return "waiting";
   return (
-    <span className="inline-block max-w-md whitespace-normal">
+    <span className="inline-block max-w-md py-1 whitespace-normal">
       <span className={failed ? "font-medium text-brick-ink" : "text-honey-ink"}>
         {failed ? "failed" : "will be tried again"}
       </span>

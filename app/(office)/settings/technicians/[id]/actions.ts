@@ -26,9 +26,9 @@ export const saveTechnicianAction = defineAction(
       ends: text(form, `ends-${weekday}`),
     })),
   }),
-  ({ technicianId }) => {
+  ({ technicianId }, form) => {
     renew();
-    redirect(`/settings/technicians/${technicianId}?saved=1`);
+    if (form.has("isNew")) redirect(`/settings/technicians/${technicianId}`);
   },
 );
 

@@ -40,10 +40,15 @@ export function TechnicianForm(props: TechnicianFormProps) {
   const { id, stored, readOnly = false } = props;
   return (
     <fieldset disabled={readOnly}>
-      <ActionForm action={saveTechnicianAction} submit="Save crew, tickets and shifts">
+      <ActionForm
+        action={saveTechnicianAction}
+        submit="Save crew, tickets and shifts"
+        done="Crew, tickets and shifts are saved."
+      >
         {(entries) => (
           <>
             <input type="hidden" name="id" value={id} />
+            {!stored && <input type="hidden" name="isNew" value="on" />}
             <CrewEntries {...props} entries={entries} />
             <Section title="Tickets" aside="Sites that ask for one are planned only with it">
               <div className="grid gap-x-4 px-3 py-3 sm:grid-cols-2">

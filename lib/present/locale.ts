@@ -1,6 +1,5 @@
 import { numberFormatter } from "./formatters";
 
-import { numberFormatter } from "./formatters";
 /** How one organisation writes: passed in everywhere, never read from the machine. */
 export interface Presentation {
   /** BCP 47, such as "en-GB" or "de-DE". */

@@ -1,6 +1,6 @@
 "use client";
 
-import { useEffect, useState } from "react";
+import { useState } from "react";
 import { BigButton } from "@/components/ui/big-button";
 import { fieldStore } from "@/lib/offline/browser-store";
 import type { FieldSnapshot } from "@/lib/offline/field-store";
@@ -42,8 +42,7 @@ export function FieldMenu({ field, day }: { field: FieldSnapshot; day: DayPack }
 }
 
 function NightButton() {
-  const [night, setNight] = useState<Night>("phone");
-  useEffect(() => setNight(keptNight()), []);
+  const [night, setNight] = useState<Night>(keptNight);
   const press = () => {
     keepNight(afterNight[night]);
     setNight(afterNight[night]);

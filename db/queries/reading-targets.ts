@@ -141,3 +141,28 @@ async function findStored(
 function lastBefore(stored: readonly StoredVoltage[], at: number): StoredVoltage | null {
   return stored.findLast((voltage) => voltage.at < at) ?? null;
 }
+
+/** One voltage as a file tells it, of a pack that is known. */
+export interface ToldVoltage {
+  readonly packId: string;
+  readonly at: Date;
+  readonly millivolts: number;
+  readonly kind: string;
+}
+
+/** Which of these are kept already, under whatever id: their places in the list. */
+export async function findSameVoltages(
+  trx: Transaction<Database>,
+  told: readonly ToldVoltage[],
+): Promise<Set<number>> {
+  const rows = told.map((t, n) => ({
+    ...{ n, pack_id: t.packId, at: t.at, mv: t.millivolts, kind: t.kind },
+  }));
+  const result = await sql<{ n: number }>`
+    select distinct i.n
+    from json_to_recordset(${JSON.stringify(rows)}::json)
+      as i(n int, pack_id uuid, at timestamptz, mv int, kind text)
+    join reading r on r.pack_id = i.pack_id and r.at = i.at and r.millivolts = i.mv
+      and r.kind = i.kind`.execute(trx);
+  return new Set(result.rows.map((row) => row.n));
+}

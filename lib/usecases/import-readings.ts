@@ -28,7 +28,7 @@ export async function importReadings(context: ImportContext): Promise<ImportOutc
     const orders = fresh.map((f) => f.order);
     const results = context.write
       ? await logReadings(trx, deps, orders, { source: "csv", personId, apiKeyId: null })
-      : (await checkReadings(trx, orders, deps.now())).results;
+      : (await checkReadings(trx, orders, deps.now(), true)).results;
     results.forEach((result, n) => settle(outcome, fresh[n]?.row ?? 0, result));
     await context.progress(start + chunk.length);
   }

@@ -1,6 +1,10 @@
 import type { Transaction } from "kysely";
 import type { Database } from "@/db/client";
-import { findReadingTargets, type ReadingTarget } from "@/db/queries/reading-targets";
+import {
+  findReadingTargets,
+  findSameVoltages,
+  type ReadingTarget,
+} from "@/db/queries/reading-targets";
 import { insertReadings, type NewReading, type ReadingOrigin } from "@/db/queries/readings";
 import type { Chemistry } from "@/lib/battery/pack";
 import { judgeReading } from "./judge-reading";
@@ -50,7 +54,7 @@ export async function logReadings(
 ): Promise<ReadingResult[]> {
   if (orders.length === 0) return [];
   const now = deps.now();
-  const { results, fresh } = await checkReadings(trx, orders, now);
+  const { results, fresh } = await checkReadings(trx, orders, now, origin.source === "csv");
   const inserted = await insertReadings(trx, fresh, { ...origin, receivedAt: now });
   const touched = new Set(fresh.filter((r) => inserted.has(r.id)).map((r) => r.packId));
   await touchForecasts(trx, deps, [...touched]);
@@ -64,6 +68,7 @@ export async function checkReadings(
   trx: Transaction<Database>,
   orders: readonly ReadingOrder[],
   now: Date,
+  fromFile: boolean,
 ): Promise<{ results: ReadingResult[]; fresh: NewReading[] }> {
   const places = orders.map((o) => ({
     id: o.id,
@@ -72,7 +77,8 @@ export async function checkReadings(
     at: o.at,
   }));
   const targets = await findReadingTargets(trx, places);
-  const results = judgeInTime(orders, targets, now);
+  const judged = judgeInTime(orders, targets, now);
+  const results = fromFile ? await passOverKnown(trx, orders, judged) : judged;
   const fresh = results.flatMap((result, n) => {
     const order = orders[n];
     return order && result.status === "logged" && result.packId
@@ -80,6 +86,21 @@ export async function checkReadings(
       : [];
   });
   return { results, fresh };
+}
+
+/** A file's row may tell what phone or gateway logged before, under an id of their own. */
+async function passOverKnown(
+  trx: Transaction<Database>,
+  orders: readonly ReadingOrder[],
+  results: readonly ReadingResult[],
+): Promise<ReadingResult[]> {
+  const logged = results.flatMap(({ packId, status }, n) => {
+    const order = orders[n];
+    return order && packId && status === "logged" ? [{ ...order, packId, place: n }] : [];
+  });
+  const same = await findSameVoltages(trx, logged);
+  const known = new Set(logged.filter((_, n) => same.has(n)).map((l) => l.place));
+  return results.map((r, n) => (known.has(n) ? { ...r, status: "repeated", doubt: null } : r));
 }
 
 /** Judges oldest first, so that one of the batch can be the voltage before another. */

@@ -6,6 +6,7 @@ import { randomUUID } from "node:crypto";
 import { beforeAll, describe, expect, it } from "vitest";
 import type { ImportReport } from "@/db/queries/import-runs";
 import { applyImport, checkImport } from "@/lib/usecases/change-import";
+import { postReadings } from "@/lib/usecases/post-readings";
 import { readImport } from "@/lib/usecases/read-import";
 import { runImportApply, runImportCheck } from "@/lib/usecases/run-import";
 import { uploadImport } from "@/lib/usecases/upload-import";
@@ -203,6 +204,14 @@ describe("readings", () => {
     expect(await count("reading")).toBe(2);
   });
 
+  it("knows a voltage that a gateway logged before, under an id of its own", async () => {
+    const at = "2026-09-01T09:00:00Z";
+    const reading = { id: randomUUID(), tag: "F-1", at, millivolts: 2990, kind: "resting" };
+    await postReadings(deps, dispatcher, { readings: [reading] });
+    const id = await upload("readings", "tag;at;v\nF-1;2026-09-01 10:00;2,99\n");
+    expect((await reportOf(id)).counts).toMatchObject({ new: 0, same: 1 });
+  });
+
   it("is applied once when two workers take the same job", async () => {
     const id = await upload("readings", "tag;at;v\nF-1;2026-08-01 10:00;3,0\n");
     await applyImport(deps, dispatcher, { importId: id });
@@ -216,7 +225,7 @@ describe("readings", () => {
       .where("subjectId", "=", id)
       .execute();
     expect(acts).toHaveLength(1);
-    expect(await count("reading")).toBe(3);
+    expect(await count("reading")).toBe(4);
   });
 
   it("refuses a file that cannot be read, naming the row", async () => {

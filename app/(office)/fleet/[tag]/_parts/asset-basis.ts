@@ -28,7 +28,7 @@ export function basisSentences({
     `The voltages say it draws ${formatCurrent(forecast.drawUa, locale)} now.`,
     basis.fleetPacks
       ? `${formatNumber(basis.fleetPacks, locale)} finished packs like this one say how far cells and devices stray from their data sheets.`
-      : "No pack like this one has ended yet: the data sheet's figures stand, with a wide range.",
+      : "Nothing has been learned from finished packs like this one yet: the data sheet's figures stand, with a wide range.",
   ].filter(Boolean);
 }
 

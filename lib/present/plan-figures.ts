@@ -50,7 +50,7 @@ export function planFigureWords(cost: PlanCostInput, presentation: Presentation)
     {
       label: "On duty",
       value: formatHours(f.dutyS, locale),
-      range: `${formatHours(f.driveS, locale)} driving${f.overtimeS > 0 ? ` · ${formatHours(f.overtimeS, locale)} overtime` : ""}`,
+      range: `${formatHours(f.driveS, locale)} driving${f.overtimeS >= 180 ? ` · ${formatHours(f.overtimeS, locale)} overtime` : ""}`,
     },
     {
       label: "Out before its visit",

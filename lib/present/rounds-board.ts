@@ -87,22 +87,49 @@ export interface BoardRound {
   readonly stopsLabel: string;
   readonly hours: string;
   readonly over: boolean;
+  /** Everything to load, and the same in short. */
   readonly load: string;
+  readonly loadShort: string;
   readonly bar: DayBarModel;
   readonly depot: { readonly latitude: number; readonly longitude: number };
   readonly stops: readonly BoardStop[];
 }
 
-/** "12 LR20 · 4 LR6 · key 14". */
-export function loadWords(stops: readonly BoardStopInput[]): string {
+/** Cell types named in a cell of the board; the rest are counted. */
+const TYPES_NAMED = 2;
+
+function cellCounts(stops: readonly BoardStopInput[]): [string, number][] {
   const cells = new Map<string, number>();
   for (const { kind, designation, cells: count } of stops.flatMap((stop) => stop.tasks)) {
-    if (kind === "swap" && designation)
+    if (kind === "swap" && designation) {
       cells.set(designation, (cells.get(designation) ?? 0) + count);
+    }
   }
-  const keys = [...new Set(stops.flatMap((stop) => stop.keyCode ?? []))];
-  const parts = [...cells].map(([designation, count]) => `${count} ${designation}`);
+  return [...cells].sort((a, b) => b[1] - a[1]);
+}
+
+function keysOf(stops: readonly BoardStopInput[]): string[] {
+  return [...new Set(stops.flatMap((stop) => stop.keyCode ?? []))];
+}
+
+/** Everything to load: "12 LR20 · 4 LR6 · keys K3, K14". */
+export function loadWords(stops: readonly BoardStopInput[]): string {
+  const keys = keysOf(stops);
+  const parts = cellCounts(stops).map(([designation, count]) => `${count} ${designation}`);
   if (keys.length > 0) parts.push(`${keys.length === 1 ? "key" : "keys"} ${keys.join(", ")}`);
+  return parts.join(" · ");
+}
+
+/** The same in one or two lines: "12 LR20 · 4 LR6 · 3 more types · 2 keys". */
+export function loadInShort(stops: readonly BoardStopInput[]): string {
+  const cells = cellCounts(stops);
+  const keys = keysOf(stops);
+  // One more type is named as quickly as counted.
+  const named = cells.length <= TYPES_NAMED + 1 ? cells : cells.slice(0, TYPES_NAMED);
+  const parts = named.map(([designation, count]) => `${count} ${designation}`);
+  if (cells.length > named.length) parts.push(`${cells.length - named.length} more types`);
+  if (keys.length === 1) parts.push(`key ${keys[0]}`);
+  if (keys.length > 1) parts.push(`${keys.length} keys`);
   return parts.join(" · ");
 }
 
@@ -128,6 +155,7 @@ export function boardRound(
     hours: formatHours(dutyS, locale),
     over: round.overtimeS > 0,
     load: loadWords(round.stops),
+    loadShort: loadInShort(round.stops),
     bar: dayBar({ shiftS: round.shiftS, legs: legsOf(round), locale }),
     depot: round.depot,
     stops: round.stops.map((stop) => boardStop(stop, today, presentation)),

@@ -73,10 +73,10 @@ function Round({ round, who, chosen, onChoose }: BoardCellProps & { round: Board
         <strong className="font-semibold">{round.stopsLabel}</strong>
         <span className={round.over ? "font-semibold text-brick-ink" : "text-soft"}>
           {round.hours}
-          {round.over && " over"}
+          {round.over && " · over"}
         </span>
       </span>
-      <span className="block font-cond text-sm text-soft">{round.load}</span>
+      <span className="block font-cond text-sm text-soft">{round.loadShort}</span>
       {state && <span className="caps block text-spruce-ink">{state}</span>}
     </button>
   );

@@ -27,9 +27,7 @@ export function BoardHead({ acts, crewId }: { acts: BoardActs; crewId: string | 
   return (
     <div className="mb-3 flex flex-wrap items-center gap-x-3 gap-y-2">
       <h1 className="text-2xl first-letter:uppercase">{board.weekLabel}</h1>
-      <span className="text-soft">
-        {plan ? `${plan.name} · ${STATES[plan.state] ?? plan.state}` : "nothing planned yet"}
-      </span>
+      <span className="text-soft">{plan ? planWords(plan) : "nothing planned yet"}</span>
       <nav aria-label="Week" className="flex gap-1.5">
         <LinkButton href={weekHref(-1)} kind="quiet">
           ← Week before
@@ -72,4 +70,10 @@ export function BoardHead({ acts, crewId }: { acts: BoardActs; crewId: string | 
       )}
     </div>
   );
+}
+
+/** The plan's name only where it says more than the heading. */
+function planWords(plan: { readonly name: string; readonly state: string }): string {
+  const state = STATES[plan.state] ?? plan.state;
+  return /^Week \d+$/.test(plan.name) ? state : `${plan.name} · ${state}`;
 }

@@ -10,7 +10,7 @@ export const ASSUMED = {
   /** Device draw against its duty cycle. */
   drawSd: 0.15,
   /** Wander of ln(draw) in a year, as a random walk. */
-  drawWalkPerYear: 0.1,
+  drawWalkPerYear: 0.08,
   /** Draw after a firmware or device change, against the duty cycle. */
   changedDrawSd: 0.35,
   /** Depth at which a new pack starts, beside shelf ageing. */
@@ -18,7 +18,7 @@ export const ASSUMED = {
   /** Depth over which a curve's error stays the same, roughly. */
   curveErrorDepth: 0.3,
   /** Where on the depth axis the curve of this very pack lies. */
-  curveDepthSd: 0.015,
+  curveDepthSd: 0.012,
   /** Cells of one lot differ; a string ends a little before its mean cell does. */
   weakestCellShare: 0.02,
   /**
@@ -26,9 +26,9 @@ export const ASSUMED = {
    * `coldHourSdK` (a temperate month of mean 4 °C has a night of about -7 °C; from memory).
    */
   coldHourK: 11,
-  coldHourSdK: 4,
+  coldHourSdK: 3,
   /** Internal resistance against the table. */
-  resistanceSd: 0.3,
+  resistanceSd: 0.25,
   /** How unevenly it grows in a year, as a share. */
   resistanceWalkPerYear: 0.1,
   /** Chance that a reading is not of this pack, mistyped, or of another state. */

@@ -44,9 +44,9 @@ export const CURVES: Readonly<Record<Chemistry, ChemistryCurves>> = {
     coldResistance: [14, 5, 3, 2, 1, 0.75, 0.65],
     coldCapacity: [0.05, 0.4, 0.6, 0.8, 1, 1, 1],
     restMvPerKelvin: 0.3,
-    endDepthSd: 0.015,
+    endDepthSd: 0.012,
     resistanceGrowthPerYear: 0.05,
-    spreadMv: 12,
+    spreadMv: 11,
   },
   // From memory: sloping discharge of Leclanché and zinc chloride cells.
   "zinc-carbon": {
@@ -57,9 +57,9 @@ export const CURVES: Readonly<Record<Chemistry, ChemistryCurves>> = {
     coldResistance: [25, 9, 4.5, 2.3, 1, 0.8, 0.7],
     coldCapacity: [0.01, 0.15, 0.4, 0.7, 1, 1, 1],
     restMvPerKelvin: 0.3,
-    endDepthSd: 0.05,
+    endDepthSd: 0.04,
     resistanceGrowthPerYear: 0.1,
-    spreadMv: 40,
+    spreadMv: 32,
   },
   // Rest: 15 ohm log of an FR6 plus current times (V15 - V3)/(I3 - I15), Newton1026/
   // BatteryProject, on 3050 mAh. A hardly used cell rests near 1.75 V (Linden 4e p. 14.76).
@@ -73,9 +73,9 @@ export const CURVES: Readonly<Record<Chemistry, ChemistryCurves>> = {
     coldResistance: [4, 2.2, 1.7, 1.4, 1, 0.85, 0.75],
     coldCapacity: [0.7, 0.85, 0.9, 0.95, 1, 1, 1],
     restMvPerKelvin: 0.1,
-    endDepthSd: 0.015,
+    endDepthSd: 0.012,
     resistanceGrowthPerYear: 0.03,
-    spreadMv: 18,
+    spreadMv: 17,
   },
   // From memory (plateau 3.6 V to about 95 %, fresh 3.67 V); plateau against temperature from
   // the span of Linden 4e Fig. 14.17b.
@@ -87,9 +87,9 @@ export const CURVES: Readonly<Record<Chemistry, ChemistryCurves>> = {
     coldResistance: [6, 3, 2.1, 1.5, 1, 0.75, 0.6],
     coldCapacity: [0.5, 0.7, 0.8, 0.9, 1, 1, 0.95],
     restMvPerKelvin: 0.25,
-    endDepthSd: 0.03,
+    endDepthSd: 0.025,
     resistanceGrowthPerYear: 0.1,
-    spreadMv: 12,
+    spreadMv: 11,
   },
   // Rest: CR14250SE as read off its data sheet in Zephyr's battery.h, made monotone (the two
   // readings at 80 and 90 % charge are pooled). Resistance: CR2032 10 to 40 ohm over life.
@@ -101,9 +101,9 @@ export const CURVES: Readonly<Record<Chemistry, ChemistryCurves>> = {
     coldResistance: [9, 3, 2, 1.4, 1, 0.8, 0.7],
     coldCapacity: [0.2, 0.5, 0.7, 0.85, 1, 1, 1],
     restMvPerKelvin: 0.3,
-    endDepthSd: 0.015,
+    endDepthSd: 0.012,
     resistanceGrowthPerYear: 0.03,
-    spreadMv: 16,
+    spreadMv: 13,
   },
   // From memory: 1.55 V plateau of a zinc-silver oxide button.
   "silver-oxide": {
@@ -114,9 +114,9 @@ export const CURVES: Readonly<Record<Chemistry, ChemistryCurves>> = {
     coldResistance: [15, 5, 3, 1.8, 1, 0.8, 0.7],
     coldCapacity: [0.1, 0.4, 0.65, 0.85, 1, 1, 1],
     restMvPerKelvin: 0.2,
-    endDepthSd: 0.02,
+    endDepthSd: 0.015,
     resistanceGrowthPerYear: 0.05,
-    spreadMv: 10,
+    spreadMv: 8,
   },
   // From memory: 12.8/12.5/12.2/12.0/11.8 V at 100/75/50/25/0 % of a 12 V block, six elements.
   vrla: {
@@ -127,9 +127,9 @@ export const CURVES: Readonly<Record<Chemistry, ChemistryCurves>> = {
     coldResistance: [4, 2.2, 1.7, 1.4, 1, 0.9, 0.85],
     coldCapacity: [0.35, 0.6, 0.72, 0.84, 1, 1.05, 1.05],
     restMvPerKelvin: 0.2,
-    endDepthSd: 0.03,
+    endDepthSd: 0.025,
     resistanceGrowthPerYear: 0.1,
-    spreadMv: 15,
+    spreadMv: 13,
   },
   // Rest: IFR18650 E1600 as read off its data sheet in Zephyr's battery.h.
   lifepo4: {
@@ -140,8 +140,8 @@ export const CURVES: Readonly<Record<Chemistry, ChemistryCurves>> = {
     coldResistance: [9, 4, 2.7, 1.8, 1, 0.8, 0.7],
     coldCapacity: [0.3, 0.6, 0.75, 0.88, 1, 1, 1],
     restMvPerKelvin: 0.1,
-    endDepthSd: 0.02,
+    endDepthSd: 0.015,
     resistanceGrowthPerYear: 0.05,
-    spreadMv: 12,
+    spreadMv: 9,
   },
 };

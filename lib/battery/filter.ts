@@ -86,7 +86,10 @@ class Run {
    * followed further. Returns the day reached.
    */
   follow(day: EpochDays): EpochDays {
-    while (this.at < day && !this.surelyOut()) this.to(Math.min(day, this.at + LONGEST_STEP_DAYS));
+    const from = this.at;
+    const steps = stepsFor(day - from);
+    for (let s = 1; s <= steps && !this.surelyOut(); s++)
+      this.to(from + ((day - from) * s) / steps);
     return Math.min(day, this.at);
   }
 
@@ -132,11 +135,16 @@ function aliveChance(model: PackModel, depth: number, at: EpochDays): number {
   return normalCdf((model.end.byMonth[monthOf(at)]! - depth) / model.end.sd);
 }
 
+/** Steps into which a stretch of days is cut. */
+function stepsFor(days: number): number {
+  return Math.min(MOST_STEPS, Math.max(0, Math.ceil(days / LONGEST_STEP_DAYS)));
+}
+
 /** Let time pass: draw and leak consumed, the draw wandering, in steps of at most 120 days. */
 function elapse(model: PackModel, grid: Grid, from: EpochDays, to: EpochDays): void {
   const days = to - from;
   if (!(days > 1e-6)) return;
-  const steps = Math.min(MOST_STEPS, Math.ceil(days / LONGEST_STEP_DAYS));
+  const steps = stepsFor(days);
   const variance = (ASSUMED.drawWalkPerYear ** 2 * days) / DAYS_PER_YEAR / steps;
   for (let s = 0; s < steps; s++) {
     const start = from + (days * s) / steps;

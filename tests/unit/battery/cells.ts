@@ -36,7 +36,7 @@ export const ER34615: CellSpec = {
     [200, 17_000],
   ].map(([ua, mah]) => point(ua!, mah!, 2000, 250)),
   selfDischargePpmPerYear: 10_860,
-  resistanceMohm: 20_000,
+  resistanceMohm: 2000,
   maxPulseUa: 200_000,
 };
 

@@ -2,7 +2,7 @@
  * Keeps the phone pages on the phone. Three caches:
  *   pages  the HTML of each phone page, with its own headers (its policy's nonce among them)
  *   parts  scripts, styles and fonts; their names hold a hash of their content
- *   extras the manifest, icons and the district's map
+ *   extras the manifest and the icon
  * A page is kept only when all its parts are: a new version that arrived half stays unused, and the
  * old one goes on working. Nothing under /api is ever kept, and no page with a person's data: the
  * phone pages are the same for everybody.
@@ -14,7 +14,7 @@ const EXTRAS = `wanewright-extras-${VERSION}`;
 const OURS = [PAGES, PARTS, EXTRAS];
 
 const FIELD_PAGES = ["/today", "/stop", "/log", "/swap", "/cannot", "/find", "/outbox"];
-const EXTRA_FILES = ["/manifest.webmanifest", "/district.geojson", "/icon.svg"];
+const EXTRA_FILES = ["/manifest.webmanifest", "/icon.svg"];
 /** Longer than this a page does not wait for a weak signal when it has a copy. */
 const PATIENCE_MS = 1500;
 

@@ -8,6 +8,8 @@ import type { DayAsset, DayPack, DayTask } from "@/lib/sync/day-pack";
 import { discOf } from "./day-view";
 import { chemistryCaution } from "./field-words";
 
+const MS_PER_DAY = 86_400_000;
+
 export interface AssetCardProps {
   day: DayPack;
   asset: DayAsset;
@@ -59,34 +61,38 @@ export function AssetCard({ day, asset, task, stopId, heading: Heading = "h2" }:
 }
 
 function PackLine({ day, asset }: { day: DayPack; asset: DayAsset }) {
-  const { locale, timeZone } = day.organisation;
-  const today = dayOfInstant(new Date(day.madeAt), timeZone);
-  const forecast = asset.pack?.forecast;
   if (!asset.pack) return <p className="text-soft">No pack is known to be in it.</p>;
   const disc = discOf(day, asset);
-  const dayOf = (at: string) => dayOfInstant(new Date(at), timeZone);
   return (
     <div className="flex items-center gap-3">
       <WaneDisc model={disc} size={40} decorative />
       <p>
         <span className="block font-semibold">
           {disc.label}
-          {forecast && disc.state === "lit" && " left"}
+          {asset.pack.forecast && disc.state === "lit" && " left"}
         </span>
-        <span className="block text-soft">
-          {forecast
-            ? `cut-off ${
-                formatWindow(
-                  { p5: dayOf(forecast.p05), p50: dayOf(forecast.p50), p95: dayOf(forecast.p95) },
-                  locale,
-                  today,
-                ).text
-              }`
-            : "fresh: its forecast comes when it has been sent"}
-        </span>
+        <span className="block text-soft">{cutoffWords(day, asset)}</span>
       </p>
     </div>
   );
+}
+
+/** When it stops, or since when it has stood still. */
+function cutoffWords(day: DayPack, asset: DayAsset): string {
+  const { locale, timeZone } = day.organisation;
+  const today = dayOfInstant(new Date(day.madeAt), timeZone);
+  const dayOf = (at: Date) => dayOfInstant(at, timeZone);
+  const stopped = asset.pack?.events.find((event) => event.kind === "stopped");
+  if (stopped) {
+    const since = dayOf(new Date(stopped.atDay * MS_PER_DAY));
+    return `stopped ${formatDay(since, locale, { weekday: true, today })}`;
+  }
+  const forecast = asset.pack?.forecast;
+  if (!forecast) return "fresh: its forecast comes when it has been sent";
+  const [p5, p50, p95] = [forecast.p05, forecast.p50, forecast.p95].map((at) => new Date(at));
+  if (!p5 || !p50 || !p95) return "";
+  const window = formatWindow({ p5: dayOf(p5), p50: dayOf(p50), p95: dayOf(p95) }, locale, today);
+  return `cut-off ${window.text}`;
 }
 
 function LastReadings({ day, asset }: { day: DayPack; asset: DayAsset }) {
@@ -100,7 +106,7 @@ function LastReadings({ day, asset }: { day: DayPack; asset: DayAsset }) {
         <li key={reading.id}>
           {formatVolts(reading.millivolts, locale)}{" "}
           {reading.kind === "loaded" ? "under load" : "resting"},{" "}
-          {formatDay(dayOfInstant(new Date(reading.atDay * 86_400_000), timeZone), locale, {
+          {formatDay(dayOfInstant(new Date(reading.atDay * MS_PER_DAY), timeZone), locale, {
             today,
           })}
         </li>

@@ -9,13 +9,15 @@ const look = (on: boolean) =>
 /** One of a few choices, for a thumb. */
 export function FieldChoice<Value extends string>(props: {
   label: string;
+  /** The label is only read out. */
+  quiet?: boolean;
   options: readonly (readonly [Value, string])[];
   value: Value | null;
   onChange: (value: Value) => void;
 }) {
   return (
     <fieldset className="flex flex-col gap-1.5">
-      <legend className="caps pb-1.5">{props.label}</legend>
+      <legend className={props.quiet ? "sr-only" : "caps pb-1.5"}>{props.label}</legend>
       <div className="flex flex-wrap gap-2">
         {props.options.map(([value, word]) => (
           <button

@@ -99,15 +99,20 @@ function LogForm({ day, asset, stopId, back }: LogFormProps) {
         foot={
           <>
             {surprising && (
-              <BigButton onClick={() => void again()}>Measure again: keep both</BigButton>
+              <p>
+                <strong>A surprise: measure again?</strong> Both readings are kept.
+              </p>
             )}
-            <BigButton kind="go" disabled={millivolts === null} onClick={() => void keep()}>
-              Keep this reading
-            </BigButton>
+            <div className="flex gap-2.5">
+              {surprising && <BigButton onClick={() => void again()}>Measure again</BigButton>}
+              <BigButton kind="go" disabled={millivolts === null} onClick={() => void keep()}>
+                Keep this reading
+              </BigButton>
+            </div>
           </>
         }
       >
-        <FieldChoice label="Measured" options={MODES} value={mode} onChange={setMode} />
+        <FieldChoice quiet label="Measured" options={MODES} value={mode} onChange={setMode} />
         <p className="font-serif text-6xl font-medium" aria-live="polite">
           {volts || "–"} <span className="text-3xl text-soft">V</span>
         </p>
@@ -117,7 +122,6 @@ function LogForm({ day, asset, stopId, back }: LogFormProps) {
           </Notice>
         )}
         <PlateView plate={plate} />
-        {surprising && <Notice kind="warn">This is a surprise: measure again?</Notice>}
         {trouble && <Notice kind="trouble">{trouble}</Notice>}
         <Keypad label="Voltage in volts" value={volts} onChange={setVolts} decimalSign={sign} />
         {mode === "loaded" && (

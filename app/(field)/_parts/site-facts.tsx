@@ -1,10 +1,9 @@
 import { Caution } from "@/components/ui/notice";
-import type { DayPack, DaySite } from "@/lib/sync/day-pack";
+import type { DaySite } from "@/lib/sync/day-pack";
 import { HAZARD_CAUTIONS, TICKET_WORDS } from "./field-words";
-import { SiteMap } from "./site-map";
 
 /** How to get in, whom to call, and what can hurt on the way. */
-export function SiteFacts({ day, site }: { day: DayPack; site: DaySite }) {
+export function SiteFacts({ site }: { site: DaySite }) {
   const facts: [string, string][] = [];
   if (site.keyCode) facts.push(["Key", site.keyCode]);
   if (site.opens && site.closes) facts.push(["Open", `${site.opens}–${site.closes}`]);
@@ -43,7 +42,6 @@ export function SiteFacts({ day, site }: { day: DayPack; site: DaySite }) {
           </Caution>
         ) : null;
       })}
-      <SiteMap day={day} site={site} />
     </section>
   );
 }

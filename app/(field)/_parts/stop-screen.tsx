@@ -14,6 +14,7 @@ import { CANNOT_WORDS } from "./field-words";
 import { Neighbours } from "./neighbours";
 import type { ScreenProps } from "./screen";
 import { SiteFacts } from "./site-facts";
+import { SiteMap } from "./site-map";
 import { stopTitle } from "./day-view";
 
 const back = { href: "/today", label: "Back to the round" };
@@ -55,7 +56,7 @@ export function StopScreen({ day, query }: ScreenProps) {
           </Notice>
         )}
         {trouble && <Notice kind="trouble">{trouble}</Notice>}
-        <SiteFacts day={day} site={site} />
+        <SiteFacts site={site} />
         {stop.tasks.map((task) => {
           const asset = findAsset(day, task.assetId);
           return asset ? (
@@ -75,6 +76,7 @@ export function StopScreen({ day, query }: ScreenProps) {
           )}
         </div>
         <Neighbours day={day} site={site} stop={stop} />
+        <SiteMap day={day} site={site} />
       </FieldPage>
     </>
   );

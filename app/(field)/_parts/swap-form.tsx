@@ -27,6 +27,11 @@ export interface SwapFormProps {
 const REASONS = Object.entries(REASON_OUT_WORDS) as [keyof typeof REASON_OUT_WORDS, string][];
 const LOOKS = Object.entries(LOOK_WORDS) as [keyof typeof LOOK_WORDS, string][];
 
+function cellCount(pack: { series: number; parallel: number }): string {
+  const cells = pack.series * pack.parallel;
+  return cells === 1 ? "1 cell" : `${cells} cells`;
+}
+
 /** Voltage out, cells out, cells in, checks, voltage in: in the order of the hands. */
 export function SwapForm(props: SwapFormProps) {
   const { day, asset, back } = props;
@@ -76,7 +81,7 @@ export function SwapForm(props: SwapFormProps) {
               onChange={(reason) => set({ reason })}
             />
             <FieldChoice
-              label={`The ${asset.pack.series * asset.pack.parallel} cells look`}
+              label={`The old pack looks (${cellCount(asset.pack)})`}
               options={LOOKS}
               value={draft.look}
               onChange={(look) => set({ look })}

@@ -130,7 +130,7 @@ export function VisitCalendar(props: VisitCalendarProps) {
 function VisitWords({ event: { event, start } }: { event: Shown }) {
   return (
     <span aria-label={event.label}>
-      <span className="font-mono text-2xs">{format(start, "HH:mm")}</span> {event.title}
+      <span className="visit-time font-mono text-2xs">{format(start, "HH:mm")}</span> {event.title}
       <span className="visit-who"> · {event.technician}</span>
     </span>
   );

@@ -82,7 +82,9 @@ export function LeafletMap(props: LeafletMapProps) {
       ref={holder}
       role="group"
       aria-label={label}
-      className={`isolate bg-land font-sans ${height}`}
+      // Leaflet's own grey ground comes from a class; a style is stronger.
+      style={{ background: "var(--paper)" }}
+      className={`isolate font-sans ${height}`}
     />
   );
 }

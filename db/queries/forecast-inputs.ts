@@ -19,6 +19,24 @@ export async function loadForecastCatalogue(db: Kysely<Database>) {
 }
 export type ForecastCatalogueRows = Awaited<ReturnType<typeof loadForecastCatalogue>>;
 
+const BEARS_ON_LIFE = [
+  "pack.id as packId",
+  "pack.assetId",
+  "pack.cellTypeId",
+  "pack.series",
+  "pack.parallel",
+  "pack.installedAt",
+  "pack.removedAt",
+  "pack.stoppedAt",
+  "asset.deviceModelId",
+  "asset.silenceCostMinorPerHour",
+  "asset.lastHeardAt",
+  "site.climateId",
+  "site.latitude",
+  "site.longitude",
+  "measured.averageUa as measuredAverageUa",
+] as const;
+
 /**
  * Those of `packIds` that are in service with what bears on their life, one row a pack; or,
  * for judging forecasts afterwards, those that came out.
@@ -44,24 +62,8 @@ export async function loadPacksToForecast(
           .as("measured"),
       (join) => join.onTrue(),
     )
-    .select([
-      "pack.id as packId",
-      "pack.assetId",
-      "pack.cellTypeId",
-      "pack.series",
-      "pack.parallel",
-      "pack.installedAt",
-      "pack.removedAt",
-      "pack.stoppedAt",
-      "asset.deviceModelId",
-      "asset.silenceCostMinorPerHour",
-      "asset.lastHeardAt",
-      "site.climateId",
-      "site.latitude",
-      "site.longitude",
-      "measured.averageUa as measuredAverageUa",
-      sql<string | null>`coalesce(pack.made_on, lot.made_on)`.as("madeOn"),
-    ])
+    .select(BEARS_ON_LIFE)
+    .select(sql<string | null>`coalesce(pack.made_on, lot.made_on)`.as("madeOn"))
     .where("pack.id", "in", packIds)
     .where("pack.removedAt", which === "installed" ? "is" : "is not", null)
     .execute();

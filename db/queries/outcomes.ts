@@ -40,7 +40,30 @@ export interface OutcomeFilter {
   readonly crewId: string | null;
 }
 
-/** Removals with the forecast that stood the day before, newest first. */
+const JUDGED = [
+  "outcome.packId",
+  "asset.tag",
+  "asset.name as assetName",
+  "deviceModel.name as modelName",
+  "crew.name as crewName",
+  "cellType.designation",
+  "cellType.chemistry",
+  "pack.installedAt",
+  "pack.removedAt",
+  "pack.stoppedAt",
+  "pack.reasonOut",
+  "outcome.p05",
+  "outcome.p20",
+  "outcome.p50",
+  "outcome.p80",
+  "outcome.p95",
+  "outcome.shareLeftPermille",
+  "outcome.chanceStoppedPermille",
+  "outcome.censored",
+  "outcome.inHindsight",
+] as const;
+
+/** Removals with the forecast that stood at the visit before, newest first. */
 export async function listOutcomes(db: Kysely<Database>, filter: OutcomeFilter) {
   return db
     .selectFrom("forecastOutcome as outcome")
@@ -50,28 +73,7 @@ export async function listOutcomes(db: Kysely<Database>, filter: OutcomeFilter) 
     .innerJoin("site", "site.id", "asset.siteId")
     .leftJoin("crew", "crew.id", "site.crewId")
     .innerJoin("cellType", "cellType.id", "pack.cellTypeId")
-    .select([
-      "outcome.packId",
-      "asset.tag",
-      "asset.name as assetName",
-      "deviceModel.name as modelName",
-      "crew.name as crewName",
-      "cellType.designation",
-      "cellType.chemistry",
-      "pack.installedAt",
-      "pack.removedAt",
-      "pack.stoppedAt",
-      "pack.reasonOut",
-      "outcome.p05",
-      "outcome.p20",
-      "outcome.p50",
-      "outcome.p80",
-      "outcome.p95",
-      "outcome.shareLeftPermille",
-      "outcome.chanceStoppedPermille",
-      "outcome.censored",
-      "outcome.inHindsight",
-    ])
+    .select(JUDGED)
     .where(sql<SqlBool>`pack.removed_at >= ${filter.since}`)
     .$if(filter.chemistry !== null, (q) =>
       q.where("cellType.chemistry", "=", filter.chemistry ?? ""),

@@ -16,6 +16,8 @@ export interface ReadingTarget {
   readonly cutoffMv: number;
   /** The resting voltage stored last before the moment. */
   readonly previous: StoredVoltage | null;
+  /** What is stored of the pack at the very moment, under whatever id. */
+  readonly atOnce: readonly StoredVoltage[];
   /** The voltage already kept under this id, if there is one. */
   readonly keptMv: number | null;
 }
@@ -32,7 +34,10 @@ export interface TargetPack {
 export interface StoredVoltage {
   readonly at: number;
   readonly mv: number;
+  readonly kind: string;
 }
+
+const NONE: readonly StoredVoltage[] = [];
 
 /**
  * The pack that was in each asset at each moment, with what a voltage is judged against, in
@@ -42,9 +47,10 @@ export interface StoredVoltage {
 export async function findReadingTargets(
   trx: Transaction<Database>,
   places: readonly ReadingPlace[],
+  askIds: boolean,
 ): Promise<ReadingTarget[]> {
   const assets = await findAssets(trx, places);
-  const kept = await findKept(trx, places);
+  const kept = askIds ? await findKept(trx, places) : new Map<string, number>();
   const found = places.map((place) => {
     const asset = assets.get(place.tag ?? place.assetId ?? "");
     const pack = asset?.packs.find(
@@ -56,13 +62,18 @@ export async function findReadingTargets(
     trx,
     found.flatMap((f) => (f.pack ? [{ packId: f.pack.id, at: f.place.at.getTime() }] : [])),
   );
-  return found.map(({ place, asset, pack }) => ({
-    assetId: asset?.id ?? null,
-    pack,
-    cutoffMv: asset?.cutoffMv ?? 0,
-    previous: lastBefore(stored.get(pack?.id ?? "") ?? [], place.at.getTime()),
-    keptMv: kept.get(place.id) ?? null,
-  }));
+  return found.map(({ place, asset, pack }) => {
+    const list = (pack && stored.get(pack.id)) ?? NONE;
+    const at = place.at.getTime();
+    return {
+      assetId: asset?.id ?? null,
+      pack,
+      cutoffMv: asset?.cutoffMv ?? 0,
+      previous: list.findLast((v) => v.at < at && v.kind === "resting") ?? null,
+      atOnce: list === NONE ? NONE : list.filter((v) => v.at === at),
+      keptMv: kept.get(place.id) ?? null,
+    };
+  });
 }
 
 interface AssetWithPacks {
@@ -102,7 +113,10 @@ async function findKept(trx: Transaction<Database>, places: readonly ReadingPlac
   return new Map(rows.map((row) => [row.id, row.millivolts]));
 }
 
-/** Stored resting voltages of each pack, oldest first: the last before its first moment asked, and those up to its last. */
+/**
+ * Stored voltages of each pack, oldest first: the resting one before its first moment asked,
+ * and all from there to its last.
+ */
 async function findStored(
   trx: Transaction<Database>,
   asked: readonly { readonly packId: string; readonly at: number }[],
@@ -119,50 +133,22 @@ async function findStored(
     first: new Date(s.first),
     last: new Date(s.last),
   }));
-  const result = await sql<{ packId: string; at: Date; mv: number }>`
+  const result = await sql<{ packId: string; at: Date; mv: number; kind: string }>`
     with span as (select * from
       json_to_recordset(${JSON.stringify(rows)}::json) as s(pack_id uuid, first timestamptz, last timestamptz))
-    select span.pack_id, r.at, r.millivolts as mv from span cross join lateral (
-      (select at, millivolts from reading where pack_id = span.pack_id and kind = 'resting'
-        and at < span.first order by at desc limit 1)
+    select span.pack_id, r.at, r.millivolts as mv, r.kind from span cross join lateral (
+      (select at, millivolts, kind from reading where pack_id = span.pack_id
+        and kind = 'resting' and at < span.first order by at desc limit 1)
       union all
-      (select at, millivolts from reading where pack_id = span.pack_id and kind = 'resting'
-        and at >= span.first and at < span.last)) r
+      (select at, millivolts, kind from reading where pack_id = span.pack_id
+        and at between span.first and span.last)) r
     order by r.at`.execute(trx);
   const stored = new Map<string, StoredVoltage[]>();
-  for (const { packId, at, mv } of result.rows) {
+  for (const { packId, at, ...rest } of result.rows) {
+    const voltage = { ...rest, at: at.getTime() };
     const list = stored.get(packId);
-    if (list) list.push({ at: at.getTime(), mv });
-    else stored.set(packId, [{ at: at.getTime(), mv }]);
+    if (list) list.push(voltage);
+    else stored.set(packId, [voltage]);
   }
   return stored;
-}
-
-function lastBefore(stored: readonly StoredVoltage[], at: number): StoredVoltage | null {
-  return stored.findLast((voltage) => voltage.at < at) ?? null;
-}
-
-/** One voltage as a file tells it, of a pack that is known. */
-export interface ToldVoltage {
-  readonly packId: string;
-  readonly at: Date;
-  readonly millivolts: number;
-  readonly kind: string;
-}
-
-/** Which of these are kept already, under whatever id: their places in the list. */
-export async function findSameVoltages(
-  trx: Transaction<Database>,
-  told: readonly ToldVoltage[],
-): Promise<Set<number>> {
-  const rows = told.map((t, n) => ({
-    ...{ n, pack_id: t.packId, at: t.at, mv: t.millivolts, kind: t.kind },
-  }));
-  const result = await sql<{ n: number }>`
-    select distinct i.n
-    from json_to_recordset(${JSON.stringify(rows)}::json)
-      as i(n int, pack_id uuid, at timestamptz, mv int, kind text)
-    join reading r on r.pack_id = i.pack_id and r.at = i.at and r.millivolts = i.mv
-      and r.kind = i.kind`.execute(trx);
-  return new Set(result.rows.map((row) => row.n));
 }

@@ -1,10 +1,6 @@
 import type { Transaction } from "kysely";
 import type { Database } from "@/db/client";
-import {
-  findReadingTargets,
-  findSameVoltages,
-  type ReadingTarget,
-} from "@/db/queries/reading-targets";
+import { findReadingTargets, type ReadingTarget } from "@/db/queries/reading-targets";
 import { insertReadings, type NewReading, type ReadingOrigin } from "@/db/queries/readings";
 import type { Chemistry } from "@/lib/battery/pack";
 import { judgeReading } from "./judge-reading";
@@ -76,9 +72,12 @@ export async function checkReadings(
     assetId: o.assetId ?? null,
     at: o.at,
   }));
-  const targets = await findReadingTargets(trx, places);
+  const targets = await findReadingTargets(trx, places, !fromFile);
   const judged = judgeInTime(orders, targets, now);
-  const results = fromFile ? await passOverKnown(trx, orders, judged) : judged;
+  const results = judged.map((r, n): ReadingResult => {
+    const known = fromFile && r.status === "logged" && isKnown(orders[n], targets[n]);
+    return known ? { ...r, status: "repeated", doubt: null } : r;
+  });
   const fresh = results.flatMap((result, n) => {
     const order = orders[n];
     return order && result.status === "logged" && result.packId
@@ -89,18 +88,8 @@ export async function checkReadings(
 }
 
 /** A file's row may tell what phone or gateway logged before, under an id of their own. */
-async function passOverKnown(
-  trx: Transaction<Database>,
-  orders: readonly ReadingOrder[],
-  results: readonly ReadingResult[],
-): Promise<ReadingResult[]> {
-  const logged = results.flatMap(({ packId, status }, n) => {
-    const order = orders[n];
-    return order && packId && status === "logged" ? [{ ...order, packId, place: n }] : [];
-  });
-  const same = await findSameVoltages(trx, logged);
-  const known = new Set(logged.filter((_, n) => same.has(n)).map((l) => l.place));
-  return results.map((r, n) => (known.has(n) ? { ...r, status: "repeated", doubt: null } : r));
+function isKnown(order: ReadingOrder | undefined, target: ReadingTarget | undefined): boolean {
+  return (target?.atOnce ?? []).some((v) => v.mv === order?.millivolts && v.kind === order.kind);
 }
 
 /** Judges oldest first, so that one of the batch can be the voltage before another. */

@@ -1,8 +1,8 @@
 /**
  * The forecast and three simpler ways of the trade, each as a function from what is known at
  * a visit to a distribution (50 equal-weight days) and a share left. The simple ways state no
- * spread of their own; each gets the one it deserved on the tuning devices: 20 % of the life
- * for the sheet alone, 25 % of the time left for the other two.
+ * spread of their own; each is given a round one that was not tuned: 20 % of the life for the
+ * sheet alone, 25 % of the time left for the other two. Their coverage hangs on it.
  */
 import { CDF_PROBABILITIES, forecastPack, packEndDepth } from "../../../lib/battery";
 import { fullCapacity } from "../../../lib/battery/pack-model";

@@ -28,20 +28,24 @@ export async function applyPhoneReading(
   { id, happenedAt, body }: Entry<"reading">,
 ): Promise<void> {
   const { packId, mode, ...voltage } = body;
-  if (packId) await packAtThatTime(trx, body.assetId, packId, happenedAt);
-  const order = { ...voltage, id, at: happenedAt, kind: mode };
+  const at = packId ? await timeOfPack(trx, body.assetId, packId, happenedAt) : happenedAt;
+  const order = { ...voltage, id, at, kind: mode };
   await logOne(trx, deps, actor, order, "millivolts");
 }
 
-async function packAtThatTime(
+/**
+ * When it was measured, within the pack's time in the asset: a clock that was set back between the
+ * swap and the reading must not put it down to the pack before.
+ */
+async function timeOfPack(
   trx: Transaction<Database>,
   assetId: string,
   packId: string,
   at: Date,
-): Promise<void> {
+): Promise<Date> {
   const pack = await knownPack(trx, packId);
   const out = pack.removedAt !== null && pack.removedAt <= at;
-  if (pack.assetId === assetId && !out) return;
+  if (pack.assetId === assetId && !out) return at < pack.installedAt ? pack.installedAt : at;
   throw conflict(
     "The pack this was measured on had been taken out by then, by somebody else's entry. Open the asset again, look at what is in it, and measure anew.",
   );

@@ -54,6 +54,17 @@ export interface RoundMailProps extends HouseProps {
   readonly calendar: { readonly uid: string; readonly sequence: number; readonly stamp: string };
 }
 
+/** For the contact of a site: when somebody comes. */
+export interface VisitMailProps extends HouseProps {
+  readonly contactName: string;
+  readonly siteName: string;
+  readonly day: string;
+  /** Local time of arrival, "09:20". */
+  readonly around: string;
+  readonly minutes: number;
+  readonly technicianName: string;
+}
+
 export interface DigestProps extends HouseProps {
   readonly name: string;
   readonly url: string;

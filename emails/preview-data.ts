@@ -1,4 +1,4 @@
-import type { DigestProps, LinkMailProps, RoundMailProps } from "./mail-props";
+import type { DigestProps, LinkMailProps, RoundMailProps, VisitMailProps } from "./mail-props";
 
 const house = {
   organisation: "Quillmere Drainage Board",
@@ -80,4 +80,14 @@ export const previewDigest: DigestProps = {
   more: 21,
   expected: { p05: 19, mean: 23, p95: 28 },
   notBooked: 1,
+};
+
+export const previewVisit: VisitMailProps = {
+  ...house,
+  contactName: "Mr Alder",
+  siteName: "Long drove",
+  day: "2026-12-03",
+  around: "09:20",
+  minutes: 35,
+  technicianName: "Ada Fenwick",
 };

@@ -2,8 +2,9 @@ import { render } from "@react-email/render";
 import type { ReactElement } from "react";
 import { DigestMail } from "./digest-mail";
 import { LinkMail } from "./link-mail";
-import type { DigestProps, LinkMailProps, RoundMailProps } from "./mail-props";
+import type { DigestProps, LinkMailProps, RoundMailProps, VisitMailProps } from "./mail-props";
 import { RoundMail } from "./round-mail";
+import { VisitMail } from "./visit-mail";
 
 /** Every template by the name that the job carries. */
 const TEMPLATES: Record<string, (props: never) => ReactElement> = {
@@ -13,6 +14,7 @@ const TEMPLATES: Record<string, (props: never) => ReactElement> = {
   "round-published": (props: RoundMailProps) => <RoundMail news="published" {...props} />,
   "round-changed": (props: RoundMailProps) => <RoundMail news="changed" {...props} />,
   "round-cancelled": (props: RoundMailProps) => <RoundMail news="cancelled" {...props} />,
+  "visit-notice": (props: VisitMailProps) => <VisitMail {...props} />,
   "due-digest": (props: DigestProps) => <DigestMail {...props} />,
 };
 

@@ -1,5 +1,5 @@
 import { z } from "zod";
-import { getOrganisation } from "@/db/queries/organisation";
+import { getOrganisation, type Organisation } from "@/db/queries/organisation";
 import { lastPlanStep } from "@/db/queries/plan-steps";
 import { loadTechniciansToPlan } from "@/db/queries/planning-fleet";
 import { findPlan, type PlanRow, plansWithin } from "@/db/queries/plans";
@@ -44,27 +44,13 @@ export const readRoundsBoard = defineUseCase({
       (day) =>
         organisation.workingDays.includes(weekdayOf(day)) || rounds.some((r) => r.day === day),
     );
-    const step = plan ? await lastPlanStep(deps.db, plan.id) : null;
     const cost = plan ? storedCost(plan.cost) : null;
-    const leftOut = plan ? await loadLeftOutAssets(deps.db, plan.id) : [];
     return {
       today,
       monday,
       weekLabel: weekLabel(monday, today),
       mayEdit: actor.kind === "person" && actor.roles.some((r) => DISPATCHERS.includes(r)),
-      plan: plan && {
-        id: plan.id,
-        name: plan.name,
-        state: plan.state,
-        version: plan.version,
-        firstDay: plan.firstDay,
-        lastDay: plan.lastDay,
-        problem: plan.problem,
-        progress: plan.state === "building" ? storedProgress(plan.progress) : null,
-        undo: step?.words ?? null,
-        roundCount: stored.filter((round) => round.planId === plan.id).length,
-        travelTrouble: cost?.travel.trouble ?? null,
-      },
+      plan: plan && (await planShown(deps, plan, stored)),
       plans: plans.map(({ id, name, state }) => ({ id, name, state })),
       crews: [...new Map(all.map((t) => [t.crewId, { id: t.crewId, name: t.crewName }])).values()],
       figures: cost ? planFigureWords(cost, organisation) : [],
@@ -73,31 +59,9 @@ export const readRoundsBoard = defineUseCase({
         label: formatDay(day, organisation.locale, { weekday: true, today }),
         isToday: day === today,
       })),
-      rows: technicians.map((technician) => ({
-        technicianId: technician.id,
-        name: technician.name,
-        crew: technician.crewName,
-        facts: factsOf(technician, days, organisation.locale),
-        off: Object.fromEntries(
-          days.flatMap((day) => {
-            const why = whyOff(technician, day);
-            return why === null ? [] : [[day, why]];
-          }),
-        ),
-      })),
+      rows: technicians.map((technician) => boardRow(technician, days, organisation.locale)),
       rounds,
-      leftOut: leftOut.map((row) => ({
-        assetId: row.assetId,
-        siteId: row.siteId,
-        tag: row.tag,
-        name: row.assetName,
-        reason: row.reason,
-        why: leftOutWords(row, today, organisation.locale),
-        waiting: formatMoney(row.waitingCostMinorPerWeek, organisation, { whole: true, per: "wk" }),
-        latitude: row.latitude,
-        longitude: row.longitude,
-        disc: packDisc(row, today, organisation),
-      })),
+      leftOut: plan ? await leftOutShown(deps, plan.id, today, organisation) : [],
     };
   },
 });
@@ -107,6 +71,49 @@ export type { BoardRound };
 const DISPATCHERS: readonly string[] = ["administrator", "dispatcher"];
 
 type TechnicianRow = Awaited<ReturnType<typeof loadTechniciansToPlan>>[number];
+
+/** The plan itself: its state, its version, what can be undone. */
+async function planShown(deps: Deps, plan: PlanRow, shown: readonly { planId: string }[]) {
+  const step = await lastPlanStep(deps.db, plan.id);
+  const { id, name, state, version, firstDay, lastDay, problem } = plan;
+  return {
+    ...{ id, name, state, version, firstDay, lastDay, problem },
+    progress: state === "building" ? storedProgress(plan.progress) : null,
+    undo: step?.words ?? null,
+    roundCount: shown.filter((round) => round.planId === id).length,
+    travelTrouble: storedCost(plan.cost)?.travel.trouble ?? null,
+  };
+}
+
+function boardRow(technician: TechnicianRow, days: readonly string[], locale: string) {
+  const off = days.flatMap((day) => {
+    const why = whyOff(technician, day);
+    return why === null ? [] : [[day, why] as const];
+  });
+  return {
+    technicianId: technician.id,
+    name: technician.name,
+    crew: technician.crewName,
+    facts: factsOf(technician, days, locale),
+    off: Object.fromEntries(off) as Record<string, string>,
+  };
+}
+
+async function leftOutShown(deps: Deps, planId: string, today: string, organisation: Organisation) {
+  const rows = await loadLeftOutAssets(deps.db, planId);
+  return rows.map((row) => ({
+    assetId: row.assetId,
+    siteId: row.siteId,
+    tag: row.tag,
+    name: row.assetName,
+    reason: row.reason,
+    why: leftOutWords(row, today, organisation.locale),
+    waiting: formatMoney(row.waitingCostMinorPerWeek, organisation, { whole: true, per: "wk" }),
+    latitude: row.latitude,
+    longitude: row.longitude,
+    disc: packDisc(row, today, organisation),
+  }));
+}
 
 /** The week and the plan to show, from whatever the address names. */
 async function whichWeek(

@@ -1,10 +1,12 @@
 import type { Transaction } from "kysely";
 import type { Database } from "@/db/client";
+import type { Organisation } from "@/db/queries/organisation";
 import { loadPlanRounds } from "@/db/queries/plan-rounds";
-import { loadRoundSheets, noteContactsTold } from "@/db/queries/round-sheets";
+import { loadRoundSheets, noteContactsTold, type SheetStop } from "@/db/queries/round-sheets";
+import type { VisitMailProps } from "@/emails/mail-props";
 import { formatDay } from "@/lib/present/format-day";
 import { formatTime } from "@/lib/present/format-time";
-import { queueMail } from "./queue-mail";
+import { type MailOrder, queueMail } from "./queue-mail";
 import type { Publication } from "./read-publication";
 import type { Deps } from "./use-case";
 
@@ -26,27 +28,8 @@ export async function tellContacts(
   const untold = stops.filter((stop) => stop.contactEmail && !stop.contactToldAt);
   for (const stop of untold) {
     const round = rounds.find((r) => r.id === stop.roundId)!;
-    const technician = technicians.find((t) => t.id === round.technicianId);
-    const day = formatDay(round.day, organisation.locale, { weekday: true, year: true });
-    await queueMail(trx, deps, {
-      template: "visit-notice",
-      toEmail: stop.contactEmail!.toLowerCase(),
-      toPersonId: null,
-      subject: `Visit to ${stop.siteName} on ${day}`,
-      props: {
-        organisation: organisation.name,
-        locale: organisation.locale,
-        timeZone: organisation.timeZone,
-        currency: organisation.currency,
-        contactName: stop.contactName ?? "",
-        siteName: stop.siteName,
-        day: round.day,
-        around: formatTime(stop.arrivesAt, organisation),
-        minutes: Math.round((stop.departsAt.getTime() - stop.arrivesAt.getTime()) / 60_000),
-        technicianName: technician?.name ?? "",
-      },
-      idempotencyKey: `visit-${stop.stopId}-${round.day}`,
-    });
+    const technician = technicians.find((t) => t.id === round.technicianId)?.name ?? "";
+    await queueMail(trx, deps, visitNotice(organisation, stop, round.day, technician));
   }
   await noteContactsTold(
     trx,
@@ -54,4 +37,31 @@ export async function tellContacts(
     deps.now(),
   );
   return untold.length;
+}
+
+function visitNotice(
+  organisation: Organisation,
+  stop: SheetStop,
+  day: string,
+  technicianName: string,
+): MailOrder {
+  const { name, locale, timeZone, currency } = organisation;
+  const props: VisitMailProps = {
+    ...{ organisation: name, locale, timeZone, currency },
+    contactName: stop.contactName ?? "",
+    siteName: stop.siteName,
+    day,
+    around: formatTime(stop.arrivesAt, organisation),
+    minutes: Math.round((stop.departsAt.getTime() - stop.arrivesAt.getTime()) / 60_000),
+    technicianName,
+  };
+  const written = formatDay(day, locale, { weekday: true, year: true });
+  return {
+    template: "visit-notice",
+    toEmail: (stop.contactEmail ?? "").toLowerCase(),
+    toPersonId: null,
+    subject: `Visit to ${stop.siteName} on ${written}`,
+    props: { ...props },
+    idempotencyKey: `visit-${stop.stopId}-${day}`,
+  };
 }

@@ -1,5 +1,5 @@
 import { describe, expect, it } from "vitest";
-import { previewDigest, previewLink, previewRound } from "@/emails/preview-data";
+import { previewDigest, previewLink, previewRound, previewVisit } from "@/emails/preview-data";
 import { renderMail } from "@/emails/render-mail";
 
 describe("mails", () => {
@@ -11,6 +11,7 @@ describe("mails", () => {
     ["round-changed", { ...previewRound, changes: ["Stop 2 is new."] }, "Stop 2 is new."],
     ["round-cancelled", previewRound, "will not take place"],
     ["due-digest", previewDigest, "QF-0981"],
+    ["visit-notice", previewVisit, "at about 09:20"],
   ] as const;
 
   it.each(cases)("%s says the same in HTML and in plain text", async (name, props, said) => {

@@ -26,7 +26,7 @@ export function BoardGrid({ board, chosenId, onChoose, placing, onPlace }: Board
           </button>
         </p>
       )}
-      <div className="overflow-x-auto border border-rule bg-sheet" tabIndex={-1}>
+      <div className="relative overflow-x-auto border border-rule bg-sheet" tabIndex={-1}>
         <table className="w-full min-w-180 table-fixed border-collapse">
           <caption className="sr-only">Rounds by technician and day, {board.weekLabel}</caption>
           <thead>

@@ -2,7 +2,7 @@
 
 import { useMutation, useQuery, useQueryClient } from "@tanstack/react-query";
 import { useRouter } from "next/navigation";
-import { useState } from "react";
+import { useEffect, useRef, useState } from "react";
 import { toast } from "@/components/ui/toast";
 import type { RoundsBoard } from "@/lib/usecases/read-rounds-board";
 import { ApiError, fetchJson } from "../../_parts/fetch-json";
@@ -13,28 +13,44 @@ export type PlanAct =
   | { kind: "remove"; siteId: string }
   | { kind: "reorder"; technicianId: string; day: string; siteIds: string[] };
 
-/** The board as it lives on the client, and what can be done to its plan. */
-export function useBoard(initial: RoundsBoard, crewId: string | null) {
-  const client = useQueryClient();
-  const router = useRouter();
-  const [trouble, setTrouble] = useState<string | null>(null);
+/** Where the board of a week, a plan and a crew is read, and what it is remembered under. */
+function boardQuery(initial: RoundsBoard, crewId: string | null) {
   const planId = initial.plan?.id ?? null;
-  const key = ["rounds", initial.monday, planId, crewId];
   const query = new URLSearchParams({ week: initial.monday });
   if (planId) query.set("plan", planId);
   if (crewId) query.set("crew", crewId);
-  const { data: board = initial } = useQuery({
-    queryKey: key,
+  return {
+    queryKey: ["rounds", initial.monday, planId, crewId],
     queryFn: () => fetchJson<RoundsBoard>(`/api/v1/rounds?${query}`),
     initialData: initial,
+  };
+}
+
+/** The board as it lives on the client, and what can be done to its plan. */
+export function useBoard(initial: RoundsBoard, crewId: string | null) {
+  const client = useQueryClient();
+  const [trouble, setTrouble] = useState<string | null>(null);
+  const read = boardQuery(initial, crewId);
+  const { data: board } = useQuery({
+    ...read,
     refetchInterval: (q) => (q.state.data?.plan?.state === "building" ? 900 : false),
   });
-  const again = () => client.invalidateQueries({ queryKey: key });
+  const again = () => client.invalidateQueries({ queryKey: read.queryKey });
+  const edits = useEdits(board, again, setTrouble);
+  const plans = usePlanChoice(initial, setTrouble);
+  return { board, trouble, again, ...edits, ...plans, busy: edits.busy || plans.choosing };
+}
+
+type SetTrouble = (trouble: string | null) => void;
+
+/** Acts on the plan that is shown. */
+function useEdits(board: RoundsBoard, again: () => Promise<void>, setTrouble: SetTrouble) {
+  const { plan } = board;
   const post = useMutation({
     mutationFn: ({ path, body }: { path: string; body: Record<string, unknown> }) =>
-      fetchJson<{ planId?: string; undone?: string }>(`/api/v1/plans/${planId}/${path}`, {
+      fetchJson(`/api/v1/plans/${plan?.id}/${path}`, {
         method: "POST",
-        body: { ...body, version: board.plan?.version },
+        body: { ...body, version: plan?.version },
       }),
     onMutate: () => setTrouble(null),
     onError: (error) => {
@@ -43,22 +59,35 @@ export function useBoard(initial: RoundsBoard, crewId: string | null) {
     },
     onSuccess: again,
   });
-  const undo = () => post.mutate({ path: "undo", body: {} });
-  const act = (body: PlanAct, done: string) =>
-    post.mutate(
-      { path: "acts", body: { act: body } },
-      { onSuccess: () => toast({ text: done, undo }) },
-    );
-  const lock = (siteId: string, locked: boolean) =>
-    post.mutate({ path: "locks", body: { siteId, locked } });
-  const improve = () => post.mutate({ path: "improve", body: {} });
-  const goTo = (plan: string | null, week = initial.monday) =>
-    router.push(`/rounds?week=${week}${plan ? `&plan=${plan}` : ""}`);
+  // A toast outlives the render that made it: the version to undo is the one that stands then.
+  const { mutate } = post;
+  const latest = useRef(mutate);
+  useEffect(() => {
+    latest.current = mutate;
+  }, [mutate]);
+  const undo = () => latest.current({ path: "undo", body: {} });
+  return {
+    busy: post.isPending,
+    undo,
+    act: (act: PlanAct, done: string) =>
+      mutate({ path: "acts", body: { act } }, { onSuccess: () => toast({ text: done, undo }) }),
+    lock: (siteId: string, locked: boolean) => mutate({ path: "locks", body: { siteId, locked } }),
+    improve: () => mutate({ path: "improve", body: {} }),
+  };
+}
+
+/** Going to another plan of the week: discarding this one, or revising what is published. */
+function usePlanChoice(initial: RoundsBoard, setTrouble: SetTrouble) {
+  const router = useRouter();
+  const { monday, today, plan } = initial;
+  const onError = (error: Error) => setTrouble(error.message);
+  const goTo = (planId: string, week = monday) =>
+    router.push(`/rounds?week=${week}&plan=${planId}`);
   const discard = useMutation({
-    mutationFn: () => fetchJson(`/api/v1/plans/${planId}`, { method: "DELETE" }),
-    onError: (error) => setTrouble(error.message),
+    mutationFn: () => fetchJson(`/api/v1/plans/${plan?.id}`, { method: "DELETE" }),
+    onError,
     onSuccess: () => {
-      router.replace(`/rounds?week=${initial.monday}`);
+      router.replace(`/rounds?week=${monday}`);
       router.refresh();
     },
   });
@@ -66,26 +95,12 @@ export function useBoard(initial: RoundsBoard, crewId: string | null) {
     mutationFn: () =>
       fetchJson<{ planId: string }>("/api/v1/plans/revise", {
         method: "POST",
-        body: { day: initial.monday > initial.today ? initial.monday : initial.today },
+        body: { day: monday > today ? monday : today },
       }),
-    onError: (error) => setTrouble(error.message),
+    onError,
     onSuccess: (made) => goTo(made.planId),
   });
-  const busy = post.isPending || discard.isPending || revise.isPending;
-  return {
-    board,
-    trouble,
-    setTrouble,
-    busy,
-    act,
-    lock,
-    undo,
-    improve,
-    discard,
-    revise,
-    again,
-    goTo,
-  };
+  return { goTo, discard, revise, choosing: discard.isPending || revise.isPending };
 }
 
 export type BoardActs = ReturnType<typeof useBoard>;

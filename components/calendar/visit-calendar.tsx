@@ -106,7 +106,7 @@ export function VisitCalendar(props: VisitCalendarProps) {
       tooltipAccessor={({ event }) => event.label}
       draggableAccessor={({ event }) => editable && event.movable}
       eventPropGetter={({ event }) => ({ className: `visit visit-${event.state}` })}
-      components={{ event: VisitWords }}
+      components={{ event: VisitWords, header: DayWords }}
       onSelectEvent={({ event }) => props.onSelect(event)}
       onEventDrop={({ event: { event }, start, resourceId }) =>
         props.onMove(
@@ -125,6 +125,11 @@ export function VisitCalendar(props: VisitCalendarProps) {
       }}
     />
   );
+}
+
+/** The library's own head claims to be a column header of a table that does not exist. */
+function DayWords({ label }: { label: string }) {
+  return <span>{label}</span>;
 }
 
 function VisitWords({ event: { event, start } }: { event: Shown }) {

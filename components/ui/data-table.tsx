@@ -43,7 +43,7 @@ export function DataTable<Row>(props: DataTableProps<Row>) {
       role="region"
       aria-label={caption}
       tabIndex={0}
-      className="overflow-x-auto border border-rule bg-sheet"
+      className="relative overflow-x-auto border border-rule bg-sheet"
     >
       <table className="w-full border-collapse">
         <caption className={showCaption ? "caps px-2.5 py-2 text-left" : "sr-only"}>

@@ -34,7 +34,7 @@ export function Masthead({ current, today, crew, person, allowed, children }: Ma
   return (
     <header className="border-b-2 border-ink bg-sheet">
       <SkipLink />
-      <div className="grid grid-cols-[auto_1fr] items-stretch px-4 lg:px-7 min-[75rem]:grid-cols-[auto_1fr_auto]">
+      <div className="grid grid-cols-[auto_minmax(0,1fr)] items-stretch px-4 lg:px-7 min-[75rem]:grid-cols-[auto_minmax(0,1fr)_auto]">
         <Link
           href="/horizon"
           className="flex items-center gap-2.5 py-2.5 pr-6 font-serif text-xl font-semibold tracking-tight min-[75rem]:border-r min-[75rem]:border-rule"
@@ -44,7 +44,7 @@ export function Masthead({ current, today, crew, person, allowed, children }: Ma
         </Link>
         <Screens current={current} allowed={allowed} />
         <div className="flex items-center justify-end gap-3.5 text-soft">
-          <span className="whitespace-nowrap">{today}</span>
+          <span className="whitespace-nowrap max-md:hidden">{today}</span>
           {crew && (
             <Link
               href={crew.href}

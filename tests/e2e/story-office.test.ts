@@ -82,7 +82,7 @@ describe("a dispatcher", () => {
     await offers.first().waitFor();
     expect(await offers.first().getAttribute("aria-label")).toMatch(/Whole plan/);
     await offers.first().click();
-    await page.getByRole("button", { name: "Undo" }).waitFor();
+    await page.getByTitle("Undo moving a stop").waitFor();
   });
 
   it("publishes: each technician concerned gets a mail with a calendar file", async () => {

@@ -30,7 +30,7 @@ export default async function RecordPage(props: {
       <RecordTabs current="trust" />
       <TrustFigures view={view} />
       <TrustFilters view={view} params={params} />
-      <div className="grid gap-6 xl:grid-cols-[21rem_1fr]">
+      <div className="grid grid-cols-[minmax(0,1fr)] gap-x-6 xl:grid-cols-[21rem_minmax(0,1fr)]">
         <TrustPlot view={view} />
         <TrustGroups view={view} />
       </div>

@@ -3,7 +3,7 @@ import { modelByCode } from "./device-models";
 import type { Field } from "./field";
 import type { ScenarioRound, ScenarioStop, ScenarioTask } from "./field-log";
 import { distance, type Point } from "./geometry";
-import { localInstant, weekdayOf } from "./local-time";
+import { localDay, localInstant, weekdayOf } from "./local-time";
 import { workOnAsset } from "./site-visit";
 import type { ScenarioSite } from "./sites";
 import type { ScenarioTechnician } from "./staff";
@@ -59,10 +59,22 @@ function chooseStops(calling: readonly ScenarioSite[], depot: Point, most: numbe
   return ordered;
 }
 
-function bookedTask(field: Field, asset: ScenarioAsset): ScenarioTask | null {
+/** Without a habit of its own, a pack of this age is swapped when somebody comes by. */
+const USUAL_HABIT_DAYS = 300;
+
+/** Booked work follows the habit of the years before: old packs are swapped, others read. */
+function bookedTask(field: Field, asset: ScenarioAsset, day: number): ScenarioTask | null {
   const pack = field.log.installed.get(asset.tag);
   if (!pack) return null;
-  return { assetTag: asset.tag, kind: "read", packKey: pack.key, designation: null, cells: 0 };
+  const habit = modelByCode(asset.modelCode).habitIntervalDays ?? USUAL_HABIT_DAYS;
+  const old = day - localDay(pack.installedAt) > 0.8 * habit;
+  return {
+    assetTag: asset.tag,
+    kind: old ? "swap" : "read",
+    packKey: pack.key,
+    designation: old ? asset.designation : null,
+    cells: old ? pack.series * pack.parallel : 0,
+  };
 }
 
 function visit(
@@ -76,7 +88,7 @@ function visit(
   for (const asset of field.assetsAt.get(site.code) ?? []) {
     const at = localInstant(sheet.day, minutes);
     const task = sheet.booked
-      ? bookedTask(field, asset)
+      ? bookedTask(field, asset, sheet.day)
       : workOnAsset(field, asset, sheet.technician, sheet.day, at);
     if (!task) continue;
     const model = modelByCode(asset.modelCode);

@@ -144,7 +144,11 @@ export function planAbsences(
       reason: "training",
     });
   }
-  return absences;
+  // The first technician is the one whom the demonstration shows at work.
+  const shown = technicians[0] as ScenarioTechnician;
+  return absences.filter(
+    (a) => a.technicianKey !== shown.key || a.lastDay < today || a.firstDay > today + 13,
+  );
 }
 
 export function isAway(absences: readonly ScenarioAbsence[], key: string, day: number): boolean {

@@ -12,7 +12,7 @@ export interface ColumnTableProps {
 /** One line a field: which column it is in, in which unit, and what stands there. */
 export function ColumnTable({ view, entries }: ColumnTableProps) {
   return (
-    <div role="region" aria-label="Columns" tabIndex={0} className="overflow-x-auto">
+    <div role="region" aria-label="Columns" tabIndex={0} className="relative overflow-x-auto">
       <table className="w-full max-w-5xl border-collapse">
         <caption className="sr-only">Which column is which</caption>
         <thead>

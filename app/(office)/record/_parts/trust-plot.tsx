@@ -8,7 +8,7 @@ export function TrustPlot({ view }: { view: TrustView }) {
   return (
     <Section title="Chance stated, share that had stopped">
       <ReliabilityPlot model={model} />
-      <p className="mt-2 max-w-80 text-soft">
+      <p className="max-w-80 px-3 pb-3 text-soft">
         On the diagonal the windows can be taken at their word: by the date with a chance of 30 %,
         30 % had stopped. Above it, packs end earlier than said. Packs taken out alive count up to
         that day (Kaplan–Meier); bars are 90 % intervals.

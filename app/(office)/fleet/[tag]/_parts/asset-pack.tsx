@@ -50,7 +50,12 @@ export function AssetPack({ view }: { view: AssetView }) {
         <Figure label="Stops at" value={marks.cutoffVolts} range="under its peak current" />
       </FigureRow>
       <Section title="Voltages over time" aside={<NextVisit view={view} />}>
-        <div role="region" aria-label="Charts" tabIndex={0} className="overflow-x-auto px-3 py-3">
+        <div
+          role="region"
+          aria-label="Charts"
+          tabIndex={0}
+          className="relative overflow-x-auto px-3 py-3"
+        >
           {/* As wide as it is drawn: the strip and the voltages share one axis. */}
           <div style={{ width: marks.chart.width }}>
             <div style={{ paddingLeft: marks.chart.plot.left }}>

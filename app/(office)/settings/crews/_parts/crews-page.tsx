@@ -22,7 +22,7 @@ export function CrewsPage(props: CrewsPageProps) {
         }
       />
       <TechniciansTable {...props} />
-      <div className="grid gap-x-6 lg:grid-cols-2">
+      <div className="grid grid-cols-[minmax(0,1fr)] gap-x-6 lg:grid-cols-2">
         <CrewsTable {...props} />
         <VansTable {...props} />
         <DepotsTable {...props} />

@@ -144,11 +144,12 @@ export function planAbsences(
       reason: "training",
     });
   }
-  // The first technician is the one whom the demonstration shows at work.
-  const shown = technicians[0] as ScenarioTechnician;
-  return absences.filter(
-    (a) => a.technicianKey !== shown.key || a.lastDay < today || a.firstDay > today + 13,
-  );
+  return absences.filter((a) => a.technicianKey !== technicians[0]?.key || !isNear(a, today));
+}
+
+/** The first technician is the one whom the demonstration shows at work: not away these weeks. */
+function isNear(absence: ScenarioAbsence, today: number): boolean {
+  return absence.lastDay >= today && absence.firstDay <= today + 13;
 }
 
 export function isAway(absences: readonly ScenarioAbsence[], key: string, day: number): boolean {

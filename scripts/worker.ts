@@ -9,6 +9,9 @@ import type { JobName } from "@/lib/usecases/use-case";
 /** Each queue's own beat: mail and forecasts should feel immediate, the rest need not. */
 const POLL_SECONDS = 1;
 
+/** Takers of a queue, where one a beat would be slow: a published week sends many mails. */
+const TAKERS: Partial<Record<JobName, number>> = { mail: 4, forecast: 2 };
+
 /** Times are UTC; the digest job itself looks up whose hour it is where. */
 const SCHEDULE: Partial<Record<JobName, string>> = {
   "forecast-all": "15 2 * * *",
@@ -22,9 +25,11 @@ async function main(): Promise<void> {
   await boss.start();
   for (const name of Object.keys(QUEUES) as JobName[]) {
     await boss.createQueue(name);
-    await boss.work(name, { pollingIntervalSeconds: POLL_SECONDS }, (jobs) =>
-      Promise.all(jobs.map((job) => run(name, job.data))).then(() => undefined),
-    );
+    for (let taker = 0; taker < (TAKERS[name] ?? 1); taker += 1) {
+      await boss.work(name, { pollingIntervalSeconds: POLL_SECONDS }, (jobs) =>
+        Promise.all(jobs.map((job) => run(name, job.data))).then(() => undefined),
+      );
+    }
   }
   for (const [name, cron] of Object.entries(SCHEDULE)) await boss.schedule(name, cron);
   log.info({ queues: Object.keys(QUEUES).length }, "worker ready");

@@ -109,7 +109,8 @@ async function part(request) {
 }
 
 async function extra(request) {
-  const copy = await caches.match(request.url, { cacheName: EXTRAS, ignoreVary: true });
+  const path = new URL(request.url).pathname;
+  const copy = await caches.match(path, { cacheName: EXTRAS, ignoreVary: true });
   return copy ?? fetch(request);
 }
 

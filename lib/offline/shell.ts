@@ -4,11 +4,18 @@
  */
 const WORKER = "/service-worker.js";
 
+/** The faces of the field pages, and letters and signs that draw in each subset they use. */
+const FACES = ["Roboto", "Roboto Condensed", "Roboto Mono", "Roboto Serif"].map(
+  (name) => `1rem "${name} Variable"`,
+);
+const LETTERS = "Aa0 µ°−–×·‹✓✕⌫₂";
+
 /** Call when every part of the field pages has been loaded once. */
 export async function keepShell(): Promise<void> {
   if (!("serviceWorker" in navigator)) return;
   await navigator.serviceWorker.register(WORKER, { scope: "/", updateViaCache: "none" });
   const registration = await navigator.serviceWorker.ready;
+  await Promise.all(FACES.map((face) => document.fonts.load(face, LETTERS)));
   registration.active?.postMessage({ act: "keep", parts: partsInUse() });
 }
 

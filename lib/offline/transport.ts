@@ -42,6 +42,7 @@ export function browserTransport(): Transport {
 }
 
 async function ask<T>(url: string, init: RequestInit, timeoutMs: number): Promise<Answer<T>> {
+  if (!navigator.onLine) return { kind: "cut" };
   try {
     const response = await fetch(url, {
       ...init,

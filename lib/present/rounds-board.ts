@@ -233,7 +233,8 @@ export function actPriceWords(price: ActPriceInput, presentation: Presentation):
   const { locale } = presentation;
   const signed = (minor: number) => {
     const text = formatMoney(Math.abs(minor), presentation, { whole: true });
-    return Math.abs(minor) < 50 ? "±0" : `${minor < 0 ? "−" : "+"}${text}`;
+    // The word joiner keeps the sign on the line of its number.
+    return Math.abs(minor) < 50 ? "±0" : `${minor < 0 ? "−" : "+"}\u2060${text}`;
   };
   const hours = Math.round(price.dutyS / 360) / 10;
   const duty =

@@ -88,10 +88,15 @@ export function PublishDialog({ acts, onClose }: { acts: BoardActs; onClose: () 
           <Checkbox
             name="tell"
             label={`Also tell ${data.contacts.length === 1 ? "the site contact" : `the ${data.contacts.length} site contacts`} when to expect somebody`}
-            hint={[...new Set(data.contacts.map((c) => `${c.name} (${c.siteName})`))].join(", ")}
             checked={tell}
             onChange={(event) => setTell(event.target.checked)}
           />
+          <details className="mt-1 text-sm text-soft">
+            <summary>Who they are</summary>
+            <p className="max-h-32 overflow-y-auto">
+              {[...new Set(data.contacts.map((c) => `${c.name} (${c.siteName})`))].join(", ")}
+            </p>
+          </details>
         </div>
       )}
     </Dialog>

@@ -4,14 +4,14 @@ import type { Database } from "../client";
 
 export type OutcomeRow = Insertable<Database["forecastOutcome"]>;
 
-/** Packs that came out and have no outcome kept, oldest first. */
+/** Packs that came out and have no outcome kept, or no promised life beside it, oldest first. */
 export async function unjudgedPackIds(db: Kysely<Database>, limit: number): Promise<string[]> {
   const rows = await db
     .selectFrom("pack")
     .leftJoin("forecastOutcome", "forecastOutcome.packId", "pack.id")
     .select("pack.id")
     .where("pack.removedAt", "is not", null)
-    .where("forecastOutcome.packId", "is", null)
+    .where("forecastOutcome.promisedDays", "is", null)
     .orderBy("pack.removedAt")
     .orderBy("pack.id")
     .limit(limit)
@@ -19,7 +19,7 @@ export async function unjudgedPackIds(db: Kysely<Database>, limit: number): Prom
   return rows.map((row) => row.id);
 }
 
-/** Keeps outcomes; one that is kept already stays as it is. */
+/** Keeps outcomes; one that is kept already stays as it is but for the promised life. */
 export async function insertOutcomes(
   db: Kysely<Database>,
   rows: readonly OutcomeRow[],
@@ -28,9 +28,40 @@ export async function insertOutcomes(
   await db
     .insertInto("forecastOutcome")
     .values([...rows])
-    .onConflict((conflict) => conflict.column("packId").doNothing())
+    .onConflict((conflict) =>
+      conflict.column("packId").doUpdateSet((eb) => ({
+        promisedDays: eb.ref("excluded.promisedDays"),
+      })),
+    )
     .execute();
 }
+
+/** Finished packs of these device models, as the fleet learns from them. */
+export async function listFinishedPacks(db: Kysely<Database>, deviceModelIds: readonly string[]) {
+  if (deviceModelIds.length === 0) return [];
+  return db
+    .selectFrom("forecastOutcome as outcome")
+    .innerJoin("pack", "pack.id", "outcome.packId")
+    .innerJoin("asset", "asset.id", "pack.assetId")
+    .innerJoin("site", "site.id", "asset.siteId")
+    .select([
+      "pack.id as packId",
+      "pack.assetId",
+      "pack.cellTypeId",
+      "pack.lotId",
+      "asset.deviceModelId",
+      "site.climateId",
+      "outcome.censored",
+      "outcome.promisedDays",
+      sql<number>`extract(epoch from outcome.ended_at - pack.installed_at)::float8 / 86400`.as(
+        "days",
+      ),
+    ])
+    .where("asset.deviceModelId", "in", deviceModelIds)
+    .where("outcome.promisedDays", "is not", null)
+    .execute();
+}
+export type FinishedRow = Awaited<ReturnType<typeof listFinishedPacks>>[number];
 
 export interface OutcomeFilter {
   /** Removals since then. */

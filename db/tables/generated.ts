@@ -218,6 +218,10 @@ export interface ForecastOutcome {
   p80: Timestamp;
   p95: Timestamp;
   packId: string;
+  /**
+   * Median life forecast at installation without any reading or fleet knowledge; null: not worked out yet.
+   */
+  promisedDays: number | null;
   recordedAt: Timestamp;
   shareLeftPermille: number;
 }

@@ -99,5 +99,13 @@ function judgePack(
     endedAt: end,
     chanceStoppedPermille: Math.round(chanceOutBy(forecast, toEpochDays(end)) * 1000),
     inHindsight: true,
+    promisedDays: promisedDays(catalogue, pack),
   };
+}
+
+/** Median life by the data sheet and the duty cycle alone, from the day the pack went in. */
+function promisedDays(catalogue: ForecastCatalogue, pack: PackToForecast): number {
+  const unread = { ...pack, lastHeardAt: null, measuredAverageUa: null };
+  const input = forecastInputOf(catalogue, unread, [], [], null, pack.installedAt);
+  return Math.max(1, forecastPack(input).quantiles.p50 - input.pack.installedAt);
 }

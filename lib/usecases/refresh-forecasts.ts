@@ -15,6 +15,7 @@ import {
   forecastInputOf,
   groupBy,
 } from "./forecast-input";
+import { fleetPriors } from "./fleet-priors";
 import { type Deps, defineUseCase } from "./use-case";
 import { type WaitingPrices, waitingMinorPerWeek } from "./waiting-price";
 
@@ -62,6 +63,7 @@ async function refreshBatch(
   ]);
   const readingsOf = groupBy(readings, (row) => row.packId);
   const eventsOf = groupBy(events, (row) => row.assetId);
+  const priorOf = await fleetPriors(deps.db, packs);
   const rows = packs.map((pack) => {
     const forecast = forecastPack(
       forecastInputOf(
@@ -69,7 +71,7 @@ async function refreshBatch(
         pack,
         readingsOf.get(pack.packId) ?? [],
         eventsOf.get(pack.assetId) ?? [],
-        null,
+        priorOf(pack),
         knownAt,
       ),
     );

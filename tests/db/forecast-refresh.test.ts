@@ -7,6 +7,7 @@
 import { randomUUID } from "node:crypto";
 import { beforeAll, describe, expect, it } from "vitest";
 import { MS_PER_DAY } from "@/lib/units";
+import { judgeHistory } from "@/lib/usecases/judge-history";
 import { readHorizon } from "@/lib/usecases/read-horizon";
 import { refreshForecasts } from "@/lib/usecases/refresh-forecasts";
 import { touchForecasts } from "@/lib/usecases/touch-forecasts";
@@ -105,6 +106,55 @@ describe("refreshing forecasts", () => {
     expect(await refreshForecasts(deps, systemActor, { packIds: [randomUUID()] })).toEqual({
       refreshed: 0,
     });
+  });
+});
+
+describe("packs that came out", () => {
+  /** Five packs in a row in one device, each stopped after so many days. */
+  async function livedThrough(days: number) {
+    const lives = Array.from({ length: 5 }, (_, n) => {
+      const installedAt = new Date(deps.now().getTime() - (n + 1) * days * MS_PER_DAY);
+      const end = new Date(installedAt.getTime() + (days - 1) * MS_PER_DAY);
+      return { installedAt, removedAt: end, stoppedAt: end };
+    });
+    await db
+      .insertInto("pack")
+      .values(
+        lives.map((life) => ({
+          ...life,
+          id: randomUUID(),
+          assetId: register.assets[2] ?? "",
+          cellTypeId: register.lr20,
+          series: 2,
+          parallel: 1,
+          reasonOut: "found_stopped",
+        })),
+      )
+      .execute();
+  }
+
+  it("teach those still in: lives shorter than promised bring the dates forward", async () => {
+    const before = await forecastOf(fresh);
+    // 15 Ah at 1 mA is 625 days: these lived well short of it.
+    await livedThrough(400);
+    expect(await judgeHistory(deps, systemActor, {})).toEqual({ judged: 5 });
+    expect(await judgeHistory(deps, systemActor, {})).toEqual({ judged: 0 });
+    await refreshForecasts(deps, systemActor, { packIds: [fresh] });
+    const after = await forecastOf(fresh);
+    expect(after.p50.getTime()).toBeLessThan(before.p50.getTime());
+    expect(after.basis).toMatchObject({ fleetPacks: 5 });
+  });
+
+  it("are held against what was known at the visit before, not on the day they stopped", async () => {
+    const outcomes = await db.selectFrom("forecastOutcome").selectAll().execute();
+    expect(outcomes).toHaveLength(5);
+    for (const outcome of outcomes) {
+      expect(outcome.inHindsight).toBe(true);
+      expect(outcome.forecastAt.getTime()).toBeLessThan(outcome.endedAt.getTime());
+      // Without a voltage the last visit is the installation, 399 days before the end.
+      const ahead = (outcome.endedAt.getTime() - outcome.forecastAt.getTime()) / MS_PER_DAY;
+      expect(ahead).toBeCloseTo(399, 6);
+    }
   });
 });
 

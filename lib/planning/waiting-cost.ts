@@ -75,16 +75,19 @@ function expectedSilence(pack: WaitingPack, now: EpochDays, visitAt: EpochDays):
   return (out + (capped - before) * most + running * perDay) / life.length;
 }
 
+/** Expected cost of the life that a swap throws away. */
+function expectedThrown({ life, keepMinorPerDay }: WaitingPack, visitAt: EpochDays): Minor {
+  const from = countUpTo(life, visitAt);
+  const unusedDays = sumBetween(life, from, life.length) - (life.length - from) * visitAt;
+  return (unusedDays / life.length) * keepMinorPerDay;
+}
+
 /** Prices a visit at one moment. Costs a few bisections, however many quantiles there are. */
 export function priceVisit(pack: WaitingPack, now: EpochDays, visitAt: EpochDays): VisitPrice {
-  const { life } = pack;
   const silenceMinor = expectedSilence(pack, now, visitAt);
-  const from = countUpTo(life, visitAt);
-  const left = life.length - from;
-  const unusedDays = (sumBetween(life, from, life.length) - left * visitAt) / life.length;
-  const thrownMinor = unusedDays * pack.keepMinorPerDay;
+  const thrownMinor = expectedThrown(pack, visitAt);
   return {
-    chanceOut: chanceOutBy(life, visitAt),
+    chanceOut: chanceOutBy(pack.life, visitAt),
     silenceMinor,
     thrownMinor,
     totalMinor: silenceMinor + thrownMinor,
@@ -120,10 +123,10 @@ export function cheapestVisit(
 ): { readonly index: number; readonly price: VisitPrice } {
   if (moments.length === 0) throw new RangeError("no moment to visit was given");
   let index = 0;
-  let price = priceVisit(pack, now, moments[0]!);
-  for (let i = 1; i < moments.length; i++) {
-    const other = priceVisit(pack, now, moments[i]!);
-    if (other.totalMinor < price.totalMinor) [index, price] = [i, other];
+  let least = Infinity;
+  for (let i = 0; i < moments.length; i++) {
+    const total = expectedSilence(pack, now, moments[i]!) + expectedThrown(pack, moments[i]!);
+    if (total < least) [index, least] = [i, total];
   }
-  return { index, price };
+  return { index, price: priceVisit(pack, now, moments[index]!) };
 }

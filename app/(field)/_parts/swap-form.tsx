@@ -5,24 +5,13 @@ import { FieldBar } from "@/components/ui/field-bar";
 import { FieldPage } from "@/components/ui/field-page";
 import { Caution, Notice } from "@/components/ui/notice";
 import { TextArea } from "@/components/ui/inputs";
-import type { OutboxEntry } from "@/lib/sync/outbox";
-import type { DayAsset, DayPack, DayTask } from "@/lib/sync/day-pack";
 import { FieldChoice } from "./field-chip";
 import { chemistryCaution, LOOK_WORDS, REASON_OUT_WORDS } from "./field-words";
 import { SwapCells } from "./swap-cells";
 import { SwapChecks } from "./swap-checks";
+import type { SwapFormProps } from "./swap-form-props";
 import { useSwap } from "./use-swap";
 import { VoltsField } from "./volts-field";
-
-export interface SwapFormProps {
-  day: DayPack;
-  asset: DayAsset;
-  stopId: string | null;
-  task: DayTask | undefined;
-  back: { href: string; label: string };
-  /** The refused swap that this one mends. */
-  mended: OutboxEntry | null;
-}
 
 const REASONS = Object.entries(REASON_OUT_WORDS) as [keyof typeof REASON_OUT_WORDS, string][];
 const LOOKS = Object.entries(LOOK_WORDS) as [keyof typeof LOOK_WORDS, string][];

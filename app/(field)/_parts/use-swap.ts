@@ -5,7 +5,7 @@ import { fieldStore } from "@/lib/offline/browser-store";
 import type { DayAsset, DayPack } from "@/lib/sync/day-pack";
 import type { EntryBody } from "@/lib/sync/entries";
 import { go } from "./go";
-import type { SwapFormProps } from "./swap-form";
+import type { SwapFormProps } from "./swap-form-props";
 import { thousandths } from "./typed-number";
 
 type SwapBody = Extract<EntryBody, { kind: "swap" }>;

@@ -4,7 +4,7 @@ import type { Entries } from "@/components/forms/action-form";
 import { RowList } from "@/components/forms/row-list";
 import { Checkbox, NumberInput, TextInput } from "@/components/ui/inputs";
 import { plain } from "./fleet-words";
-import type { StoredSite } from "./site-form";
+import type { StoredSite } from "./stored-site";
 
 const HAZARDS = [
   ...["water", "height", "confined_space", "roadside"],

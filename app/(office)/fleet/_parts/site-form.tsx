@@ -6,12 +6,7 @@ import { Select } from "@/components/ui/select";
 import type { SiteFormView } from "@/lib/usecases/save-site";
 import { saveSiteAction } from "../actions";
 import { SiteAccess } from "./site-access";
-
-type Site = NonNullable<SiteFormView["site"]>;
-export type StoredSite = Omit<Site, "latitude" | "longitude"> & {
-  readonly latitude: string;
-  readonly longitude: string;
-};
+import type { StoredSite } from "./stored-site";
 
 export interface SiteFormProps {
   id: string;

@@ -2,24 +2,13 @@ import { LinkButton } from "@/components/ui/button";
 import { dayOfInstant } from "@/lib/present/calendar-days";
 import { formatTime } from "@/lib/present/format-time";
 import type { AssetView, SwapChoices } from "@/lib/usecases/read-asset";
+import type { ActContext } from "./act-context";
 import { DrawDialog } from "./draw-dialog";
 import { InstallDialog } from "./install-dialog";
 import { LogDialog } from "./log-dialog";
 import { RemoveDialog } from "./remove-dialog";
 import { StateDialog } from "./state-dialog";
 import { SwapDialog } from "./swap-dialog";
-
-/** What the forms of an asset need to know; plain data, as it goes to the browser. */
-export interface ActContext {
-  readonly assetId: string;
-  readonly tag: string;
-  /** Local time now, as a form writes it: 2026-12-01T09:30. */
-  readonly now: string;
-  readonly packId: string | null;
-  readonly series: number;
-  readonly parallel: number;
-  readonly choices: SwapChoices;
-}
 
 /** Everything that can be done with an asset from the office. */
 export function AssetActs({ view, choices }: { view: AssetView; choices: SwapChoices }) {

@@ -3,7 +3,7 @@
 import { FormDialog } from "@/components/forms/form-dialog";
 import { NumberInput, TextInput } from "@/components/ui/inputs";
 import { measureDrawAction } from "../actions";
-import type { ActContext } from "./asset-acts";
+import type { ActContext } from "./act-context";
 
 /** Records a measured draw. */
 export function DrawDialog({ context }: { context: ActContext }) {

@@ -3,7 +3,7 @@
 import { FormDialog } from "@/components/forms/form-dialog";
 import { TextInput } from "@/components/ui/inputs";
 import { installAction } from "../actions";
-import type { ActContext } from "./asset-acts";
+import type { ActContext } from "./act-context";
 import { PackInFields } from "./pack-fields";
 
 /** Records the first pack, or the first after an empty spell. */

@@ -4,7 +4,7 @@ import { FormDialog } from "@/components/forms/form-dialog";
 import { NumberInput, TextInput } from "@/components/ui/inputs";
 import { Select } from "@/components/ui/select";
 import { logVoltageAction } from "../actions";
-import type { ActContext } from "./asset-acts";
+import type { ActContext } from "./act-context";
 
 const KINDS = [
   { value: "resting", label: "resting: the device drew almost nothing" },

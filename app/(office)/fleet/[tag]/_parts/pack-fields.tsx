@@ -4,7 +4,7 @@ import type { Entries } from "@/components/forms/action-form";
 import { NumberInput, TextArea, TextInput } from "@/components/ui/inputs";
 import { Select } from "@/components/ui/select";
 import { choices, REASON_WORDS } from "../../_parts/fleet-words";
-import type { ActContext } from "./asset-acts";
+import type { ActContext } from "./act-context";
 
 /** What came out, and why. */
 export function PackOutFields({ text }: Pick<Entries, "text">) {

@@ -3,7 +3,7 @@
 import { FormDialog } from "@/components/forms/form-dialog";
 import { TextInput } from "@/components/ui/inputs";
 import { removeAction } from "../actions";
-import type { ActContext } from "./asset-acts";
+import type { ActContext } from "./act-context";
 import { PackOutFields } from "./pack-fields";
 
 /** Takes the pack out and leaves the asset without one. */

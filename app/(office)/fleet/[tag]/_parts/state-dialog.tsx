@@ -4,7 +4,7 @@ import { FormDialog } from "@/components/forms/form-dialog";
 import { Select } from "@/components/ui/select";
 import { choices, STATE_WORDS } from "../../_parts/fleet-words";
 import { changeStateAction } from "../actions";
-import type { ActContext } from "./asset-acts";
+import type { ActContext } from "./act-context";
 
 /** Puts an asset into service, into store or out of use. */
 export function StateDialog({ context, state }: { context: ActContext; state: string }) {

@@ -4,7 +4,7 @@ import { FormDialog } from "@/components/forms/form-dialog";
 import { TextInput } from "@/components/ui/inputs";
 import { Caution } from "@/components/ui/notice";
 import { swapAction } from "../actions";
-import type { ActContext } from "./asset-acts";
+import type { ActContext } from "./act-context";
 import { PackInFields, PackOutFields } from "./pack-fields";
 
 /** Records a swap: one pack out, another in. */

@@ -1,14 +1,7 @@
 import { PageHead } from "@/components/ui/page-head";
-import type { CrewsView } from "@/lib/usecases/list-crews";
+import type { CrewsPageProps } from "./crews-page-props";
 import { CrewsTable, DepotsTable, VansTable } from "./structure-tables";
 import { TechniciansTable } from "./technicians-table";
-
-export interface CrewsPageProps {
-  view: CrewsView;
-  mayChange: boolean;
-  /** The id a new thing will get: sending its form twice makes one. */
-  newId: string;
-}
 
 /** Technicians first, then what they belong to and start from. */
 export function CrewsPage(props: CrewsPageProps) {

@@ -4,7 +4,7 @@ import { EmptyState } from "@/components/ui/states";
 import { formatNumber, NOTHING } from "@/lib/present/locale";
 import { ConfirmRemoval } from "../../_parts/confirm-removal";
 import { removeCrewAction, removeDepotAction, removeVanAction } from "../actions";
-import type { CrewsPageProps } from "./crews-page";
+import type { CrewsPageProps } from "./crews-page-props";
 import { CrewDialog, DepotDialog, VanDialog } from "./structure-forms";
 
 function Part(props: { title: string; add: ReactNode; children: ReactNode }) {

@@ -7,7 +7,7 @@ import { formatHours } from "@/lib/present/format-time";
 import { NOTHING } from "@/lib/present/locale";
 import { ticketNames } from "@/lib/present/ticket-names";
 import type { CrewsView } from "@/lib/usecases/list-crews";
-import type { CrewsPageProps } from "./crews-page";
+import type { CrewsPageProps } from "./crews-page-props";
 
 type Row = CrewsView["technicians"][number];
 

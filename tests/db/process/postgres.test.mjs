@@ -80,11 +80,12 @@ describe("a server of our own", () => {
   });
 
   it("takes the next port when another program has the first", async () => {
+    const firstPort = server.port;
     await server.stop();
-    const other = createServer().listen(options.firstPort, "127.0.0.1");
+    const other = createServer().listen(firstPort, "127.0.0.1");
     await once(other, "listening");
-    server = await startPostgres(place, options);
-    expect(server.port).toBeGreaterThan(options.firstPort);
+    server = await startPostgres(place, { ...options, firstPort });
+    expect(server.port).toBeGreaterThan(firstPort);
     other.close();
   });
 });

@@ -3,7 +3,7 @@ import type { ReactNode } from "react";
 
 const look = (on: boolean) =>
   `inline-flex min-h-12 items-center rounded-full border-[1.5px] px-4 ${
-    on ? "border-ink bg-sheet font-semibold text-ink" : "border-rule bg-sheet text-soft"
+    on ? "border-ink bg-sheet font-semibold text-ink" : "border-soft bg-sheet text-soft"
   }`;
 
 /** One of a few choices, for a thumb. */

@@ -2,8 +2,8 @@ import { Caution } from "@/components/ui/notice";
 import type { DaySite } from "@/lib/sync/day-pack";
 import { HAZARD_CAUTIONS, TICKET_WORDS } from "./field-words";
 
-/** How to get in, whom to call, and what can hurt on the way. */
-export function SiteFacts({ site }: { site: DaySite }) {
+/** How to get in, whom to call, what can hurt on the way; `named`: its name heads the page already. */
+export function SiteFacts({ site, named }: { site: DaySite; named: boolean }) {
   const facts: [string, string][] = [];
   if (site.keyCode) facts.push(["Key", site.keyCode]);
   if (site.opens && site.closes) facts.push(["Open", `${site.opens}–${site.closes}`]);
@@ -15,7 +15,7 @@ export function SiteFacts({ site }: { site: DaySite }) {
   return (
     <section aria-label="Site" className="flex flex-col gap-3">
       <p>
-        <span className="font-semibold">{site.name}</span>{" "}
+        {!named && <span className="font-semibold">{site.name} </span>}
         <span className="font-mono text-sm text-soft">{site.code}</span>
         {site.notes && <span className="block text-soft">{site.notes}</span>}
       </p>

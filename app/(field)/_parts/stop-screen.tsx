@@ -56,7 +56,7 @@ export function StopScreen({ day, query }: ScreenProps) {
           </Notice>
         )}
         {trouble && <Notice kind="trouble">{trouble}</Notice>}
-        <SiteFacts site={site} />
+        <SiteFacts site={site} named={planned.length !== 1} />
         {stop.tasks.map((task) => {
           const asset = findAsset(day, task.assetId);
           return asset ? (

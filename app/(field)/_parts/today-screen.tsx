@@ -30,7 +30,7 @@ export function TodayScreen({ field, day, query }: ScreenProps) {
   const title = formatDay(shown, locale, { weekday: true, today });
   return (
     <>
-      <FieldBar title={title} status={fieldStatus(field)} />
+      <FieldBar title={title} heading={!round} status={fieldStatus(field)} />
       <FieldPage foot={round && <RoundActs round={round} today={today} />}>
         <OutboxNotices field={field} />
         {round ? (

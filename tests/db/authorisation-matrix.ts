@@ -66,6 +66,11 @@ export const MATRIX: Readonly<Record<string, string>> = {
   "export-horizon": "ADS",
   "read-trust": "ADS",
   "read-costs": "ADS",
+  "export-removals": "ADS",
+  "export-costs": "ADS",
+  "export-people": "A",
+  "export-mails": "A",
+  "export-audit": "AS",
   "refresh-forecasts": "W",
   "judge-history": "W",
 

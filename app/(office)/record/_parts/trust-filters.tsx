@@ -1,3 +1,4 @@
+import { LinkButton } from "@/components/ui/button";
 import { ChipLink, FilterBar } from "@/components/ui/chip-link";
 import { hrefWith } from "@/lib/present/paging";
 import { TRUST_GROUPS, type TrustView } from "@/lib/usecases/read-trust";
@@ -22,7 +23,13 @@ export function TrustFilters(props: {
   const to = (changes: Record<string, string | number | null>) =>
     hrefWith("/record", params, changes);
   return (
-    <FilterBar>
+    <FilterBar
+      actions={
+        <LinkButton href={hrefWith("/api/v1/exports/removals", params, {})} download>
+          Export CSV
+        </LinkButton>
+      }
+    >
       {SPANS.map(([days, words]) => (
         <ChipLink key={days} href={to({ days })} active={view.input.days === days}>
           {words}

@@ -1,4 +1,5 @@
 import type { Metadata } from "next";
+import { LinkButton } from "@/components/ui/button";
 import { PageHead } from "@/components/ui/page-head";
 import { deps } from "@/lib/server/deps";
 import { requireActor } from "@/lib/server/session";
@@ -15,6 +16,11 @@ export default async function CostsPage() {
       <PageHead
         title="What swapping cost"
         lede="By month: packs that came out and why, silence, cells, crew and driving of the rounds that were done."
+        actions={
+          <LinkButton href="/api/v1/exports/costs" download>
+            Export CSV
+          </LinkButton>
+        }
       />
       <RecordTabs current="costs" />
       <CostsTable view={view} />

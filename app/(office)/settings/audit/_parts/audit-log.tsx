@@ -1,3 +1,4 @@
+import { LinkButton } from "@/components/ui/button";
 import { type Column, DataTable } from "@/components/ui/data-table";
 import { PageHead } from "@/components/ui/page-head";
 import { Pager } from "@/components/ui/pager";
@@ -23,6 +24,11 @@ export function AuditLog({ view }: { view: AuditView }) {
       <PageHead
         title="Who did what"
         lede="Every change and every sign-in. Entries are only added, never changed or removed."
+        actions={
+          <LinkButton href={hrefWith("/api/v1/exports/audit", current, {})} download>
+            Export CSV
+          </LinkButton>
+        }
       />
       <AuditFilter view={view} />
       <DataTable

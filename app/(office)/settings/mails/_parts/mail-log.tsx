@@ -1,3 +1,4 @@
+import { LinkButton } from "@/components/ui/button";
 import { ChipLink, FilterBar } from "@/components/ui/chip-link";
 import { type Column, DataTable } from "@/components/ui/data-table";
 import { Notice } from "@/components/ui/notice";
@@ -27,7 +28,15 @@ export function MailLog({ view }: { view: MailsView }) {
     hrefWith(PATH, current, changes);
   return (
     <>
-      <PageHead title="Mails" lede="Every mail this application sent or tried to send." />
+      <PageHead
+        title="Mails"
+        lede="Every mail this application sent or tried to send."
+        actions={
+          <LinkButton href={hrefWith("/api/v1/exports/mails", current, {})} download>
+            Export CSV
+          </LinkButton>
+        }
+      />
       {(counts.failed ?? 0) > 0 && given.state !== "failed" && (
         <Notice kind="trouble">
           {counts.failed === 1 ? "One mail has" : `${counts.failed} mails have`} failed; choose

@@ -1,4 +1,5 @@
 import Link from "next/link";
+import { LinkButton } from "@/components/ui/button";
 import { ChipLink, FilterBar } from "@/components/ui/chip-link";
 import { type Column, DataTable } from "@/components/ui/data-table";
 import { PageHead } from "@/components/ui/page-head";
@@ -36,7 +37,14 @@ export function PeopleList({ view }: { view: PeopleView }) {
       <PageHead
         title="People"
         lede="Who signs in here and what they may do."
-        actions={<InvitePerson />}
+        actions={
+          <>
+            <LinkButton href={hrefWith("/api/v1/exports/people", current, {})} download>
+              Export CSV
+            </LinkButton>
+            <InvitePerson />
+          </>
+        }
       />
       <FilterBar
         actions={

@@ -1,0 +1,15 @@
+import { csvResponse } from "@/lib/server/csv-response";
+import { defineRoute } from "@/lib/server/define-route";
+import { exportRemovals } from "@/lib/usecases/export-removals";
+
+/** The list as CSV, under the filters of its own address. */
+export const GET = defineRoute(exportRemovals, {
+  input: (request) => {
+    const query = new URL(request.url).searchParams;
+    return {
+      days: query.get("days") ?? "365",
+      crew: query.get("crew"),
+    };
+  },
+  respond: (text) => csvResponse("removals", text),
+});

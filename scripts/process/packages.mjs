@@ -1,3 +1,4 @@
+import { spawnSync } from "node:child_process";
 import { existsSync } from "node:fs";
 import { run, tail } from "./command.mjs";
 import { Trouble } from "./trouble.mjs";
@@ -49,8 +50,8 @@ async function install(packages, why, before) {
       `Install ${packages.join(" and ")} with the package manager of this system.`,
     );
   }
-  const root = process.getuid?.() === 0;
-  if (!root && (await run("sudo", ["-n", "true"])).code !== 0) {
+  const rights = await rightsToInstall();
+  if (rights === "none") {
     throw new Trouble(
       `${why}, and installing it needs the rights of an administrator.`,
       `Run this once, then try again: ${byHand}`,
@@ -63,14 +64,41 @@ async function install(packages, why, before) {
     "apt-get update -qq -o DPkg::Lock::Timeout=300",
     `${APT_INSTALL} ${names}`,
   ].join("\n");
-  const shell = ["sh", "-c", script];
-  const result = root
-    ? await run("sh", shell.slice(1), { mustFinish: true })
-    : await run("sudo", ["-n", ...shell], { mustFinish: true });
+  const result = await runAsRoot(script, rights);
   if (result.code !== 0) {
     throw new Trouble(
       `${why}, and installing it failed:\n${tail(result.output, 8)}`,
       `Check the network and the package sources, then run: ${byHand}`,
     );
   }
+}
+
+/**
+ * How this person may act as root: at once, through sudo, through sudo with a password that
+ * somebody at the terminal can type, or not at all.
+ * @returns {Promise<"root" | "sudo" | "password" | "none">}
+ */
+async function rightsToInstall() {
+  if (process.getuid?.() === 0) return "root";
+  const { code } = await run("sudo", ["-n", "true"]);
+  if (code === 0) return "sudo";
+  return code !== 127 && process.stdin.isTTY ? "password" : "none";
+}
+
+/**
+ * Runs a shell script as root. Where a password is asked for, sudo keeps the terminal (its
+ * consent is bound to it), and Ctrl-C must not break a half-done installation.
+ * @param {string} script
+ * @param {"root" | "sudo" | "password"} rights
+ * @returns {Promise<{ code: number, output: string }>}
+ */
+async function runAsRoot(script, rights) {
+  if (rights === "root") return run("sh", ["-c", script], { mustFinish: true });
+  if (rights === "sudo") return run("sudo", ["-n", "sh", "-c", script], { mustFinish: true });
+  const { status, stdout, stderr } = spawnSync("sudo", ["sh", "-c", `trap '' INT\n${script}`], {
+    encoding: "utf8",
+    maxBuffer: 64 * 1024 * 1024,
+    stdio: ["inherit", "pipe", "pipe"],
+  });
+  return { code: status ?? 1, output: `${stdout}${stderr}` };
 }

@@ -33,6 +33,12 @@ export function formatDay(day: IsoDay, locale: string, style: DayStyle = {}): st
   return text.replace(/^(\p{L}+), /u, "$1 ");
 }
 
+/** The month in which a calendar day lies: "Dec 2026". */
+export function formatMonth(day: IsoDay, locale: string): string {
+  const style = { timeZone: "UTC", month: "short", year: "numeric" } as const;
+  return dateFormatter(locale, style).format(new Date(dayNumber(day) * MS_PER_DAY));
+}
+
 /** Likely cut-off and its range as calendar days. */
 export interface CutoffDays {
   readonly p5: IsoDay;

@@ -26,6 +26,7 @@ const OFFICE = [
   "/fleet/sites",
   "/fleet/models",
   "/stores",
+  "/stores/demand",
   "/record",
   "/record/costs",
 ];

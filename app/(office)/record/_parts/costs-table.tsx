@@ -1,5 +1,6 @@
 import { type Column, DataTable } from "@/components/ui/data-table";
 import { EmptyState } from "@/components/ui/states";
+import { formatMonth } from "@/lib/present/format-day";
 import { formatMoney } from "@/lib/present/format-quantity";
 import { formatPercent } from "@/lib/present/format-share";
 import { formatNumber, NOTHING } from "@/lib/present/locale";
@@ -27,11 +28,6 @@ function columns({ organisation }: CostsView): Column<Month>[] {
   const { locale } = organisation;
   const number = (value: number) => formatNumber(value, locale);
   const money = (minor: number) => formatMoney(Math.round(minor), organisation, { whole: true });
-  const month = new Intl.DateTimeFormat(locale, {
-    month: "short",
-    year: "numeric",
-    timeZone: "UTC",
-  });
   const column = (key: string, head: string, cell: (row: Month) => string): Column<Month> => ({
     key,
     head,
@@ -43,7 +39,7 @@ function columns({ organisation }: CostsView): Column<Month>[] {
       key: "month",
       head: "Month",
       rowHeader: true,
-      cell: (row) => month.format(new Date(`${row.month}-01T00:00:00Z`)),
+      cell: (row) => formatMonth(`${row.month}-01`, locale),
     },
     column("removals", "Came out", (row) => number(row.removals)),
     column("early", "Early", (row) => number(row.early)),

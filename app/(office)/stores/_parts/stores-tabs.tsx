@@ -3,6 +3,7 @@ import { Tabs } from "@/components/ui/tabs";
 const TABS = [
   ["cells", "Cells", "/stores"],
   ["lots", "Lots", "/stores/lots"],
+  ["demand", "Demand", "/stores/demand"],
   ["moves", "Moves", "/stores/moves"],
 ] as const;
 

@@ -111,7 +111,7 @@ export interface OrderProposal {
   readonly orderSize: number;
 }
 
-/** The first day after `now` for which stock does not suffice, by bisection over whole days. */
+/** The first day at whose end stock does not suffice, by bisection; null: none within the horizon. */
 function firstShortDay(
   packs: readonly PackDemand[],
   inStock: number,
@@ -119,11 +119,12 @@ function firstShortDay(
   horizonDays: number,
 ): EpochDays | null {
   const start = Math.floor(now);
-  if (enoughUntil(packs, start + horizonDays) <= inStock) return null;
+  const lasts = (day: number) => enoughUntil(packs, start + day + 1) <= inStock;
+  if (lasts(horizonDays)) return null;
   let [enough, short] = [-1, horizonDays];
   while (short - enough > 1) {
     const middle = (enough + short) >> 1;
-    if (enoughUntil(packs, start + middle) <= inStock) enough = middle;
+    if (lasts(middle)) enough = middle;
     else short = middle;
   }
   return start + short;

@@ -6,8 +6,10 @@ import { loadBindingRounds, loadPlanRounds } from "@/db/queries/plan-rounds";
 import type { PlanRow } from "@/db/queries/plans";
 import { loadTechniciansToPlan } from "@/db/queries/planning-fleet";
 import { type SheetStop, loadRoundSheets } from "@/db/queries/round-sheets";
+import { localDay } from "@/lib/planning/local-time";
 import { formatDay } from "@/lib/present/format-day";
 import { getPlan } from "./open-plan";
+import { planShortages } from "./plan-shortages";
 import { isCovered, type TechnicianRow } from "./planning-world";
 import { type DayChange, dayChanges } from "./publication";
 import { defineUseCase } from "./use-case";
@@ -75,17 +77,22 @@ export const previewPublication = defineUseCase({
   input: z.object({ planId: z.uuid() }),
   async run(deps, _actor, { planId }) {
     const plan = await getPlan(deps.db, planId);
-    const { changes, technicians, stops, stranded, organisation } = await readPublication(
-      deps.db,
-      deps.now(),
-      plan,
-    );
+    const publication = await readPublication(deps.db, deps.now(), plan);
+    const { changes, technicians, technicianIds, stops, stranded, organisation } = publication;
     const names = new Map(technicians.map((t) => [t.id, t]));
     const news = changes.filter((change) => change.news !== "unchanged");
     const roundIds = new Set(news.flatMap(({ draft }) => draft?.id ?? []));
+    const draftIds = new Set(changes.flatMap(({ draft }) => draft?.id ?? []));
+    const shortages = await planShortages(
+      deps.db,
+      localDay(deps.now(), organisation.timeZone),
+      stops.filter((stop) => draftIds.has(stop.roundId)),
+      (swap) => !isCovered(swap, plan, technicianIds),
+    );
     const contacts = stops.filter((s) => roundIds.has(s.roundId) && s.contactEmail);
     return {
       stranded,
+      shortages,
       unchanged: changes.length - news.length,
       mails: news.map(({ news: kind, technicianId, day, draft }) => ({
         kind,

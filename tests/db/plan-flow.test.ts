@@ -131,6 +131,21 @@ it("lets only one of two dispatchers win, and names the reason of a refusal", as
   await discardPlan(deps, dispatcher, { planId });
 });
 
+it("says before publishing which cells stores and vans lack", async () => {
+  const planId = await builtPlan();
+  expect(await previewPublication(deps, dispatcher, { planId })).toMatchObject({ shortages: [] });
+  const had = await db.selectFrom("lotStock").selectAll().execute();
+  await db.updateTable("lotStock").set({ cells: 3 }).execute();
+  const { shortages } = await previewPublication(deps, dispatcher, { planId });
+  // Three packs of two cells, three cells in one lot: one pack is served, two go without.
+  expect(shortages).toEqual([{ designation: "LR20", cells: 4, tags: ["QF-0002", "QF-0003"] }]);
+  for (const { lotId, placeId, cells } of had) {
+    const row = db.updateTable("lotStock").set({ cells }).where("lotId", "=", lotId);
+    await row.where("placeId", "=", placeId).execute();
+  }
+  await discardPlan(deps, dispatcher, { planId });
+});
+
 it("publishes, then changes, then repairs: one mail to each whose day changed, RFC 5545 rules", async () => {
   const planId = await builtPlan();
   const first = await board(planId);

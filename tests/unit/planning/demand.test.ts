@@ -58,7 +58,7 @@ describe("demand for cells", () => {
 });
 
 describe("orders", () => {
-  const certain = [pack([10, 10], 2), pack([50, 50], 2), pack([100, 100], 2)];
+  const certain = [pack([10.5, 10.5], 2), pack([50.5, 50.5], 2), pack([100.5, 100.5], 2)];
   const supply = { inStock: 2, leadTimeDays: 14, shelfLifeMonths: null };
 
   it("runs short on the day of the first pack that stock does not reach", () => {

@@ -13,6 +13,11 @@ import { fetchJson } from "../../_parts/fetch-json";
 import type { BoardActs } from "./use-board";
 
 interface Preview {
+  readonly shortages: readonly {
+    readonly designation: string;
+    readonly cells: number;
+    readonly tags: readonly string[];
+  }[];
   readonly stranded: readonly string[];
   readonly unchanged: number;
   readonly mails: readonly {
@@ -82,6 +87,11 @@ export function PublishDialog({ acts, onClose }: { acts: BoardActs; onClose: () 
           {data.stranded.join("; ")}. Move these stops or take them out first.
         </Notice>
       )}
+      {data && data.shortages.length > 0 && (
+        <Notice kind="warn">
+          Stores and vans lack cells: {data.shortages.map(shortageWords).join("; ")}.
+        </Notice>
+      )}
       {data && <Mails preview={data} />}
       {data && data.contacts.length > 0 && (
         <div className="mt-3">
@@ -101,6 +111,12 @@ export function PublishDialog({ acts, onClose }: { acts: BoardActs; onClose: () 
       )}
     </Dialog>
   );
+}
+
+function shortageWords({ designation, cells, tags }: Preview["shortages"][number]): string {
+  const shown = tags.slice(0, 6).join(", ");
+  const more = tags.length > 6 ? ` and ${tags.length - 6} more` : "";
+  return `${cells} × ${designation} in one lot, for ${shown}${more}`;
 }
 
 function Mails({ preview }: { preview: Preview }) {

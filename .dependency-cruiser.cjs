@@ -6,6 +6,7 @@ const BASE = "^lib/(units|errors)\\.ts$|^lib/stats/";
 const PURE = "^lib/(battery|routing|planning|present|csv)/";
 /** Published libraries without a clock, chance, a page or a network in them. */
 const CALENDAR = "^node_modules/(date-fns|@date-fns/tz)/";
+const GRAPH = "^node_modules/@dagrejs/graphlib/";
 const DRAWING = "^node_modules/(d3-scale|d3-shape|@types/d3-scale|@types/d3-shape)/";
 const CSV = "^node_modules/(csv-parse|csv-stringify)/";
 const ZOD = "^node_modules/zod/";
@@ -43,8 +44,8 @@ const cores = [
   only(
     "planning",
     "^lib/planning/",
-    [BASE, "^lib/(battery|routing|planning)/", CALENDAR],
-    "planning joins battery and routing; of packages only the calendar",
+    [BASE, "^lib/(battery|routing|planning)/", CALENDAR, GRAPH],
+    "planning joins battery and routing; of packages only the calendar and shortest paths",
   ),
   only("present", "^lib/present/", [BASE, PURE, CALENDAR, DRAWING], "present: the pure ones"),
   only("csv", "^lib/csv/", [BASE, "^lib/csv/", CALENDAR, CSV], "csv: text to typed rows and back"),

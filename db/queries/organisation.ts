@@ -14,6 +14,8 @@ export interface Organisation {
   readonly detourFactor: number;
   readonly roadSpeedKmh: number;
   readonly travelTableUrl: string | null;
+  /** When the organisation's own roads were set; null: it has none. */
+  readonly roadsSetAt: Date | null;
   readonly mapTileUrl: string | null;
   readonly isDemonstration: boolean;
 }
@@ -31,7 +33,7 @@ export async function getOrganisation(db: Kysely<Database>): Promise<Organisatio
   return organisation;
 }
 
-export type OrganisationChange = Omit<Organisation, "isDemonstration">;
+export type OrganisationChange = Omit<Organisation, "isDemonstration" | "roadsSetAt">;
 
 export async function updateOrganisation(
   trx: Transaction<Database>,

@@ -280,6 +280,10 @@ export interface Organisation {
   name: string;
   overtimeCostMinorPerHour: Generated<number>;
   roadSpeedKmh: Generated<number>;
+  /**
+   * When the own roads were last replaced; null: there are none.
+   */
+  roadsSetAt: Timestamp | null;
   timeZone: string;
   travelCostMinorPerKm: Generated<number>;
   travelTableUrl: string | null;
@@ -419,6 +423,12 @@ export interface ReadingVerdict {
   verdict: string;
 }
 
+export interface Road {
+  id: string;
+  line: Json;
+  speedKmh: number;
+}
+
 export interface Round {
   day: string;
   distanceM: Generated<number>;
@@ -543,6 +553,15 @@ export interface Technician {
   vanId: string | null;
 }
 
+export interface TravelLeg {
+  fetchedAt: Timestamp;
+  fromPoint: string;
+  metres: number;
+  seconds: number;
+  sourceUrl: string;
+  toPoint: string;
+}
+
 export interface Van {
   cellCapacity: number | null;
   crewId: string;
@@ -582,6 +601,7 @@ export interface DB {
   rateEvent: RateEvent;
   reading: Reading;
   readingVerdict: ReadingVerdict;
+  road: Road;
   round: Round;
   shift: Shift;
   site: Site;
@@ -592,5 +612,6 @@ export interface DB {
   syncEntry: SyncEntry;
   task: Task;
   technician: Technician;
+  travelLeg: TravelLeg;
   van: Van;
 }

@@ -4,6 +4,7 @@ import { type Env, parseEnv } from "@/lib/env";
 import type { Deps } from "@/lib/usecases/use-case";
 import { transactionalJobs } from "./jobs";
 import { resendMailer } from "./mail";
+import { storedLegs } from "./travel-legs";
 import { tableService } from "./travel-table";
 
 interface Process {
@@ -31,7 +32,7 @@ function create(): Process {
       jobs: transactionalJobs,
       mailer: resendMailer(env),
       appUrl: env.APP_URL.replace(/\/+$/, ""),
-      travel: tableService(),
+      travel: tableService(storedLegs(db, currentTime)),
     },
   };
 }

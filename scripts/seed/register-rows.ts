@@ -1,6 +1,9 @@
 import type { Insertable } from "kysely";
 import type { Database } from "@/db/client";
+import type { RoadRecord } from "@/db/queries/roads";
 import { modelByCode } from "../simulate/scenario/device-models";
+import { toWgs84 } from "../simulate/scenario/geometry";
+import { ROAD_SPEED_KMH } from "../simulate/scenario/roads";
 import type { Scenario } from "../simulate/scenario/scenario";
 import { clock } from "./people-rows";
 import { rowId } from "./row-id";
@@ -126,5 +129,17 @@ export function assetRows(s: Scenario): Rows<"asset"> {
     firmware: s.firmwareVersion.get(a.tag) ?? (a.modelCode === "RG1" ? "2.3" : ""),
     note: a.note,
     lastHeardAt: s.lastHeard.get(a.tag) ?? null,
+  }));
+}
+
+/** The district's road graph: what driving times are worked out on. */
+export function roadRecords(s: Scenario): RoadRecord[] {
+  return s.district.roads.roads.map((road) => ({
+    id: road.id,
+    speedKmh: ROAD_SPEED_KMH[road.class],
+    line: road.line.map((point) => {
+      const { latitude, longitude } = toWgs84(point);
+      return [longitude, latitude] as const;
+    }),
   }));
 }

@@ -1,5 +1,6 @@
 import { type Kysely, sql, type Transaction } from "kysely";
 import type { Database } from "@/db/client";
+import { replaceRoads } from "@/db/queries/roads";
 import { transactionalJobs } from "@/lib/server/jobs";
 import { hashPassword } from "@/lib/usecases/passwords";
 import { buildScenario } from "../simulate/scenario/build-scenario";
@@ -105,6 +106,7 @@ export async function seedScenario(
   return db.transaction().execute(async (trx) => {
     await insertPeople(trx, scenario, hash);
     await insertRegister(trx, scenario);
+    await replaceRoads(trx, register.roadRecords(scenario), options.today);
     await insertStock(trx, scenario);
     const { readings, rounds } = await insertHistory(trx, scenario);
     return {

@@ -23,6 +23,7 @@ export const MATRIX: Readonly<Record<string, string>> = {
   "sign-out-everywhere": "ADST",
   "read-health": "W",
   "found-organisation": "W",
+  "set-own-roads": "W",
 
   // People and settings
   "list-people": "A",

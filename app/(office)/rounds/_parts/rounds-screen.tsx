@@ -52,7 +52,7 @@ export function RoundsScreen({ initial, chosenRound, crewId }: RoundsScreenProps
       {plan?.problem && <Notice kind="trouble">{plan.problem}</Notice>}
       {plan?.travelTrouble && (
         <Notice kind="warn">
-          Driving times are reckoned by the great circle: {plan.travelTrouble}.
+          Driving times are only estimates: {plan.travelTrouble}.
         </Notice>
       )}
       {plan?.state === "building" && <BuildProgress plan={plan} />}

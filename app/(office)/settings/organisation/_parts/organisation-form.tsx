@@ -126,7 +126,11 @@ function Travel({ organisation, entries }: PartProps) {
         />
         <TextInput
           label="Travel table service"
-          hint="An OSRM-compatible address; times come from speed and detour without it."
+          hint={
+            organisation.roadsSetAt
+              ? "An OSRM-compatible address; without it times come from the organisation's own roads."
+              : "An OSRM-compatible address; without it times come from speed and detour."
+          }
           optional
           type="url"
           {...entries.text("travelTableUrl", organisation.travelTableUrl)}

@@ -146,3 +146,13 @@ export async function listSiteNames(db: Kysely<Database>) {
 export async function listClimates(db: Kysely<Database>) {
   return db.selectFrom("climate").select(["id", "name", "monthlyMeanDc"]).orderBy("name").execute();
 }
+
+/** Names of these sites by id. */
+export async function loadSiteNames(
+  db: Kysely<Database>,
+  ids: readonly string[],
+): Promise<Map<string, string>> {
+  if (ids.length === 0) return new Map();
+  const rows = await db.selectFrom("site").select(["id", "name"]).where("id", "in", ids).execute();
+  return new Map(rows.map((row) => [row.id, row.name]));
+}

@@ -1,4 +1,4 @@
-import { formatMoney } from "./format-quantity";
+import { formatDistance, formatMoney } from "./format-quantity";
 import { formatHours } from "./format-time";
 import { formatNumber, type Presentation } from "./locale";
 
@@ -67,4 +67,56 @@ export function planFigureWords(cost: PlanCostInput, presentation: Presentation)
     });
   }
   return words;
+}
+
+export interface ComparedFigure {
+  readonly label: string;
+  readonly values: readonly [string, string];
+  /** The second less the first, with its sign; "same" where the written values agree. */
+  readonly change: string;
+  /** 1: the second plan is better in this; -1: worse; 0: neither. */
+  readonly better: -1 | 0 | 1;
+}
+
+/** The figures of two plans, line by line. Of all of them less is better, of swaps neither. */
+export function comparedFigures(
+  a: PlanCostInput["figures"],
+  b: PlanCostInput["figures"],
+  presentation: Presentation,
+): ComparedFigure[] {
+  const { locale } = presentation;
+  const money = (minor: number) => formatMoney(minor, presentation, { whole: true });
+  const count = (n: number) => formatNumber(n, locale);
+  const distance = (metres: number) => formatDistance(Math.abs(metres), locale);
+  const hours = (seconds: number) => formatHours(seconds, locale);
+  const line = (
+    label: string,
+    of: (figures: PlanCostInput["figures"]) => number,
+    write: (value: number) => string,
+    judged = true,
+  ): ComparedFigure => {
+    const [x, y] = [of(a), of(b)];
+    const values = [write(x), write(y)] as const;
+    if (values[0] === values[1]) return { label, values, change: "same", better: 0 };
+    const change = `${y > x ? "+" : "\u2212"}${write(Math.abs(y - x))}`;
+    return { label, values, change, better: judged ? (y < x ? 1 : -1) : 0 };
+  };
+  return [
+    line("Swaps", (f) => f.swaps, count, false),
+    line("Sites", (f) => f.sites, count, false),
+    line("Rounds", (f) => f.rounds, count),
+    line("Expected cost", (f) => f.totalMinor, money),
+    line("of it crew and vans", (f) => f.crewMinor + f.travelMinor, money),
+    line("of it cells", (f) => f.cellsMinor, money),
+    line("of it risk of silence", (f) => f.riskMinor, money),
+    line("On duty", (f) => f.dutyS, hours),
+    line("Driving", (f) => f.driveS, hours),
+    line("Overtime", (f) => f.overtimeS, hours),
+    line("Distance", (f) => f.distanceM, distance),
+    line(
+      "Packs out before their visit",
+      (f) => f.expectedOut,
+      (n) => formatNumber(n, locale, 1),
+    ),
+  ];
 }

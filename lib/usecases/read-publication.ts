@@ -7,7 +7,10 @@ import type { PlanRow } from "@/db/queries/plans";
 import { loadTechniciansToPlan } from "@/db/queries/planning-fleet";
 import { type SheetStop, loadRoundSheets } from "@/db/queries/round-sheets";
 import { localDay } from "@/lib/planning/local-time";
+import { planDifference } from "@/lib/planning/plan-difference";
 import { formatDay } from "@/lib/present/format-day";
+import { differenceWords } from "@/lib/present/plan-difference-words";
+import { visitsOf } from "./compare-plans";
 import { getPlan } from "./open-plan";
 import { planShortages } from "./plan-shortages";
 import { isCovered, type TechnicianRow } from "./planning-world";
@@ -70,6 +73,14 @@ export async function readPublication(
   };
 }
 
+/** What the draft does to visits that people know of; empty where nothing binds yet. */
+function changesInWords({ changes, organisation }: Publication): string {
+  const before = changes.flatMap((change) => (change.before ? visitsOf([change.before]) : []));
+  const after = changes.flatMap((change) => (change.draft ? visitsOf([change.draft]) : []));
+  if (before.length === 0) return "";
+  return differenceWords(planDifference(before, after), organisation.locale);
+}
+
 /** Who would get which mail if the draft were published now. */
 export const previewPublication = defineUseCase({
   name: "preview-publication",
@@ -93,6 +104,7 @@ export const previewPublication = defineUseCase({
     return {
       stranded,
       shortages,
+      difference: changesInWords(publication),
       unchanged: changes.length - news.length,
       mails: news.map(({ news: kind, technicianId, day, draft }) => ({
         kind,

@@ -131,6 +131,7 @@ export const MATRIX: Readonly<Record<string, string>> = {
   "mark-absent": "AD",
   "price-plan-options": "ADS",
   "preview-publication": "ADS",
+  "compare-plans": "ADS",
   "publish-plan": "AD",
   "read-rounds-board": "ADS",
   "read-round-sheet": "ADST",

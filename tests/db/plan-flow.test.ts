@@ -1,5 +1,6 @@
 import { randomUUID } from "node:crypto";
 import { expect, it } from "vitest";
+import { comparePlans } from "@/lib/usecases/compare-plans";
 import { discardPlan } from "@/lib/usecases/discard-plan";
 import { editPlan } from "@/lib/usecases/edit-plan";
 import { markAbsent } from "@/lib/usecases/mark-absent";
@@ -144,6 +145,23 @@ it("says before publishing which cells stores and vans lack", async () => {
     await row.where("placeId", "=", placeId).execute();
   }
   await discardPlan(deps, dispatcher, { planId });
+});
+
+it("lays two drafts side by side: figures, and the visit that stands elsewhere", async () => {
+  const first = await builtPlan();
+  const second = await builtPlan();
+  const same = await comparePlans(deps, dispatcher, { planId: first, otherId: second });
+  expect(same.words).toBe("No visit changes its day or its technician.");
+  expect(same.figures.map((figure) => figure.change)).toEqual(same.figures.map(() => "same"));
+  const { version } = await board(second);
+  await editPlan(deps, dispatcher, { planId: second, version, act: await otherPlace(second) });
+  const apart = await comparePlans(deps, dispatcher, { planId: first, otherId: second });
+  expect(apart.words).toMatch(/^1 visit moved/);
+  expect(apart.changes).toMatchObject([
+    { site: "Sluice 9", after: expect.stringMatching(/9 Dec, /) },
+  ]);
+  expect(apart.figures.find((f) => f.label === "Swaps")?.values).toEqual(["3", "3"]);
+  for (const planId of [first, second]) await discardPlan(deps, dispatcher, { planId });
 });
 
 it("publishes, then changes, then repairs: one mail to each whose day changed, RFC 5545 rules", async () => {

@@ -37,9 +37,16 @@ export function BoardHead({ acts, crewId }: { acts: BoardActs; crewId: string | 
         </LinkButton>
       </nav>
       {others.map((other) => (
-        <ChipLink key={other.id} href={`/rounds?week=${monday}&plan=${other.id}`}>
-          {other.name}, {STATES[other.state] ?? other.state}
-        </ChipLink>
+        <span key={other.id} className="inline-flex flex-wrap items-center gap-1.5">
+          <ChipLink href={`/rounds?week=${monday}&plan=${other.id}`}>
+            {other.name}, {STATES[other.state] ?? other.state}
+          </ChipLink>
+          {plan && (
+            <LinkButton href={`/rounds/compare?plan=${other.id}&with=${plan.id}`} kind="quiet">
+              Compare<span className="sr-only"> with {other.name}</span>
+            </LinkButton>
+          )}
+        </span>
       ))}
       {mayEdit && (
         <div className="ml-auto flex flex-wrap gap-2">

@@ -19,6 +19,8 @@ interface Preview {
     readonly tags: readonly string[];
   }[];
   readonly stranded: readonly string[];
+  /** "3 visits moved, 1 new"; empty where nothing binds yet. */
+  readonly difference: string;
   readonly unchanged: number;
   readonly mails: readonly {
     readonly kind: "published" | "changed" | "cancelled";
@@ -120,10 +122,11 @@ function shortageWords({ designation, cells, tags }: Preview["shortages"][number
 }
 
 function Mails({ preview }: { preview: Preview }) {
-  const { mails, unchanged } = preview;
+  const { mails, unchanged, difference } = preview;
   if (mails.length === 0) return <p>Nothing in this plan is new to anybody.</p>;
   return (
     <>
+      {difference && <p className="mb-2">{difference}</p>}
       <p className="mb-2">
         {mails.length === 1 ? "One mail goes" : `${mails.length} mails go`} out, each with its
         calendar entry.{" "}

@@ -51,9 +51,7 @@ export function RoundsScreen({ initial, chosenRound, crewId }: RoundsScreenProps
       )}
       {plan?.problem && <Notice kind="trouble">{plan.problem}</Notice>}
       {plan?.travelTrouble && (
-        <Notice kind="warn">
-          Driving times are only estimates: {plan.travelTrouble}.
-        </Notice>
+        <Notice kind="warn">Driving times are only estimates: {plan.travelTrouble}.</Notice>
       )}
       {plan?.state === "building" && <BuildProgress plan={plan} />}
       <div className="grid gap-4 xl:grid-cols-[minmax(0,1fr)_27rem]">

@@ -78,29 +78,37 @@ export interface ComparedFigure {
   readonly better: -1 | 0 | 1;
 }
 
-/** The figures of two plans, line by line. Of all of them less is better, of swaps neither. */
+type Figures = PlanCostInput["figures"];
+
+/** One line of the comparison. @param judged less of it is better; otherwise neither is */
+function comparedFigure(
+  label: string,
+  [x, y]: readonly [number, number],
+  write: (value: number) => string,
+  judged: boolean,
+): ComparedFigure {
+  const values = [write(x), write(y)] as const;
+  if (values[0] === values[1]) return { label, values, change: "same", better: 0 };
+  const change = `${y > x ? "+" : "\u2212"}${write(Math.abs(y - x))}`;
+  return { label, values, change, better: judged ? (y < x ? 1 : -1) : 0 };
+}
+
+/** The figures of two plans, line by line. Less is better, but for swaps and sites. */
 export function comparedFigures(
-  a: PlanCostInput["figures"],
-  b: PlanCostInput["figures"],
+  a: Figures,
+  b: Figures,
   presentation: Presentation,
 ): ComparedFigure[] {
   const { locale } = presentation;
   const money = (minor: number) => formatMoney(minor, presentation, { whole: true });
   const count = (n: number) => formatNumber(n, locale);
-  const distance = (metres: number) => formatDistance(Math.abs(metres), locale);
   const hours = (seconds: number) => formatHours(seconds, locale);
   const line = (
     label: string,
-    of: (figures: PlanCostInput["figures"]) => number,
+    of: (figures: Figures) => number,
     write: (value: number) => string,
     judged = true,
-  ): ComparedFigure => {
-    const [x, y] = [of(a), of(b)];
-    const values = [write(x), write(y)] as const;
-    if (values[0] === values[1]) return { label, values, change: "same", better: 0 };
-    const change = `${y > x ? "+" : "\u2212"}${write(Math.abs(y - x))}`;
-    return { label, values, change, better: judged ? (y < x ? 1 : -1) : 0 };
-  };
+  ) => comparedFigure(label, [of(a), of(b)], write, judged);
   return [
     line("Swaps", (f) => f.swaps, count, false),
     line("Sites", (f) => f.sites, count, false),
@@ -112,7 +120,11 @@ export function comparedFigures(
     line("On duty", (f) => f.dutyS, hours),
     line("Driving", (f) => f.driveS, hours),
     line("Overtime", (f) => f.overtimeS, hours),
-    line("Distance", (f) => f.distanceM, distance),
+    line(
+      "Distance",
+      (f) => f.distanceM,
+      (metres) => formatDistance(metres, locale),
+    ),
     line(
       "Packs out before their visit",
       (f) => f.expectedOut,

@@ -1,6 +1,6 @@
 /** What a plan leaves out, and why, in words. */
 import type { IsoDay, Minor } from "@/lib/units";
-import { whyLeftOut } from "../routing/evaluate";
+import { type LeftOutReasons, whyLeftOut } from "../routing/evaluate";
 import type { Routes } from "../routing/problem";
 import type { RefusalCode } from "../routing/schedule";
 import type { DueSite } from "./due";
@@ -88,36 +88,33 @@ function ofCost(visit: Visit, outlook: PackOutlook, others: readonly Visit[]): W
 }
 
 /** Whether every technician-day refuses for one of these reasons. */
-function everywhere(
-  refusals: readonly (readonly RefusalCode[])[],
-  ...codes: readonly RefusalCode[]
-): boolean {
-  return refusals.every((slot) => slot.some((code) => codes.includes(code)));
+function everywhere({ fixed }: LeftOutReasons, ...codes: readonly RefusalCode[]): boolean {
+  return fixed.every((slot) => slot.some(({ code }) => codes.includes(code)));
 }
 
 function ofRefusals(
   rounds: RoundsProblem,
   visit: Visit,
   outlook: PackOutlook,
-  refusals: readonly (readonly RefusalCode[])[],
+  why: LeftOutReasons,
   others: readonly Visit[],
 ): Why {
   const today = localDay(rounds.frame.now, rounds.frame.timeZone);
   const tickets = visit.site.tickets.map(ticketWords).join(" and a ");
-  if (refusals.length === 0) {
+  if (why.fixed.length === 0) {
     return { reason: "no_time", detail: "nobody works in this plan", earliestDay: null };
   }
-  if (everywhere(refusals, "notice")) return ofNotice(visit, today);
-  if (everywhere(refusals, "site_closed")) return ofClosure(visit, rounds);
-  if (everywhere(refusals, "skill_missing")) {
+  if (everywhere(why, "notice")) return ofNotice(visit, today);
+  if (everywhere(why, "site_closed")) return ofClosure(visit, rounds);
+  if (everywhere(why, "skill_missing")) {
     return {
       reason: "no_ticket",
       detail: `nobody in this plan holds a ${tickets}`,
       earliestDay: null,
     };
   }
-  if (everywhere(refusals, "notice", "site_closed", "skill_missing")) return ofNoDay(visit, today);
-  if (refusals.every((slot) => slot.length > 0)) {
+  if (everywhere(why, "notice", "site_closed", "skill_missing")) return ofNoDay(visit, today);
+  if (!why.fits) {
     return {
       reason: "no_time",
       detail: "every round that may go there is full",
@@ -158,10 +155,10 @@ export function leftOut(
   const rows: LeftOut[] = [];
   rounds.visits.forEach((visit, s) => {
     if (visited.has(s)) return;
-    const refusals = whyLeftOut(rounds.problem, routes, s).map((slot) => slot.map((r) => r.code));
+    const why = whyLeftOut(rounds.problem, routes, s);
     const swaps = new Set(visit.tasks.flatMap((t) => (t.kind === "swap" ? [t.assetId] : [])));
     for (const outlook of visit.outlooks.filter((o) => swaps.has(o.pack.assetId))) {
-      rows.push(row(outlook, ofRefusals(rounds, visit, outlook, refusals, absent)));
+      rows.push(row(outlook, ofRefusals(rounds, visit, outlook, why, absent)));
     }
   });
   for (const outlook of due.flatMap((site) => site.withoutCells)) {

@@ -141,14 +141,23 @@ export function missedMust(problem: Problem, routes: Routes): number[] {
   return all.filter((s) => isMust(problem.sites[s]!) && !visited.has(s));
 }
 
-/**
- * Why a site is in no route: the reason of each slot in turn, as seen beside `routes`. An empty
- * list for a slot means that it would fit there but costs more than it saves.
- */
-export function whyLeftOut(problem: Problem, routes: Routes, site: number): Refusal[][] {
-  return problem.slots.map((_, r) => {
-    const fixed = slotRefusals(problem, site, r);
-    if (fixed.length > 0) return fixed;
-    return [...priceEdit(problem, routes, { kind: "insert", site, slot: r }).refusals];
+export interface LeftOutReasons {
+  /** By slot: what speaks against it whatever its route. */
+  readonly fixed: readonly (readonly Refusal[])[];
+  /** Some route could take the site: then it costs more than it saves. */
+  readonly fits: boolean;
+}
+
+/** Why a site is in no route, as seen beside `routes`. Stops looking at the first route that fits. */
+export function whyLeftOut(problem: Problem, routes: Routes, site: number): LeftOutReasons {
+  const fixed = problem.slots.map((_, r) => slotRefusals(problem, site, r));
+  const fits = fixed.some((refusals, r) => {
+    if (refusals.length > 0) return false;
+    const route = routes[r] ?? [];
+    const before = scheduleRoute(problem, r, route);
+    const position = bestPosition(problem, r, route, site);
+    const { refusals: after } = scheduleRoute(problem, r, withStop(route, site, position));
+    return !after.some((refusal) => isNew(refusal, [before]));
   });
+  return { fixed, fits };
 }

@@ -26,7 +26,7 @@ import { travelTimes } from "./travel-times";
 import { type Deps, defineUseCase } from "./use-case";
 
 /** Turns of the search in one go, and how often its progress is shown meanwhile. */
-const ITERATIONS = 48_000;
+export const PLAN_ITERATIONS = 48_000;
 const CHUNKS = 12;
 const SEED = 20_261_201;
 
@@ -107,7 +107,7 @@ async function search(
   known: Routes,
 ): Promise<Routes | null> {
   const rng = seededRng(SEED);
-  const chunk = ITERATIONS / CHUNKS;
+  const chunk = PLAN_ITERATIONS / CHUNKS;
   let start = known;
   const costs: number[] = [];
   for (let k = 0; k < CHUNKS; k++) {

@@ -88,12 +88,15 @@ describe("the price of an edit", () => {
       fc.property(anyProblem, (problem) => {
         const found = solve(problem, afterIterations(600), seededRng(5));
         for (const site of found.leftOut) {
-          whyLeftOut(problem, found.routes, site).forEach((refusals, slot) => {
+          const { fixed, fits } = whyLeftOut(problem, found.routes, site);
+          const open = fixed.map((refusals, slot) => {
             const priced = priceEdit(problem, found.routes, { kind: "insert", site, slot });
-            const lets = refusals.length === 0;
+            const lets = refusals.length === 0 && priced.refusals.length === 0;
             if (lets) expect(priced.change.total).toBeGreaterThanOrEqual(0);
             if (lets) expect(found.missedMust).not.toContain(site);
+            return lets;
           });
+          expect(fits).toBe(open.includes(true));
         }
       }),
       { numRuns: 30 },
@@ -157,7 +160,10 @@ describe("degenerate problems", () => {
     const sites = full.sites.map((site) => ({ ...site, must: true, firstDay: 1 }));
     const found = solve({ ...full, sites }, afterIterations(200), seededRng(1));
     expect(found.missedMust).toEqual([0, 1, 2, 3]);
-    expect(whyLeftOut({ ...full, sites }, found.routes, 2)[0]?.[0]?.code).toBeTypeOf("string");
+    expect(whyLeftOut({ ...full, sites }, found.routes, 2)).toMatchObject({
+      fixed: [[{ code: "notice" }]],
+      fits: false,
+    });
   });
 
   it("holds more stops than the first row size, all at one place", () => {

@@ -58,17 +58,28 @@ async function withStops(
     .orderBy("task.kind", "desc")
     .orderBy("task.id")
     .execute();
+  const tasksOf = grouped(tasks, (task) => task.stopId);
+  const stopsOf = grouped(stops, (stop) => stop.roundId);
   return rounds.map((round) => ({
     ...round,
-    stops: stops
-      .filter((stop) => stop.roundId === round.id)
-      .map(({ roundId: _, ...stop }) => ({
-        ...stop,
-        tasks: tasks
-          .filter((task) => task.stopId === stop.id)
-          .map(({ stopId: __, ...task }) => ({ ...task, kind: task.kind as StoredTask["kind"] })),
+    stops: (stopsOf.get(round.id) ?? []).map(({ roundId: _, ...stop }) => ({
+      ...stop,
+      tasks: (tasksOf.get(stop.id) ?? []).map(({ stopId: __, ...task }) => ({
+        ...task,
+        kind: task.kind as StoredTask["kind"],
       })),
+    })),
   }));
+}
+
+function grouped<Row>(rows: readonly Row[], key: (row: Row) => string): Map<string, Row[]> {
+  const groups = new Map<string, Row[]>();
+  for (const row of rows) {
+    const group = groups.get(key(row));
+    if (group) group.push(row);
+    else groups.set(key(row), [row]);
+  }
+  return groups;
 }
 
 const COLUMNS = [

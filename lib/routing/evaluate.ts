@@ -61,7 +61,10 @@ function bestPosition(problem: Problem, r: number, route: readonly number[], sit
 export function applyEdit(problem: Problem, routes: Routes, edit: Edit): Routes {
   const full = problem.slots.map((_, r) => routes[r] ?? []);
   if (edit.kind === "reorder") return full.map((x, r) => (r === edit.slot ? edit.order : x));
-  const without = full.map((route) => route.filter((s) => s !== edit.site));
+  // Untouched routes stay the same arrays: touchedSlots need not look into them.
+  const without = full.map((route) =>
+    route.includes(edit.site) ? route.filter((s) => s !== edit.site) : route,
+  );
   if (edit.kind === "remove") return without;
   return without.map((route, r) => {
     if (r !== edit.slot) return route;
@@ -92,7 +95,9 @@ function skipChange(problem: Problem, before: Routes, after: Routes, edit: Edit)
 
 function touchedSlots(problem: Problem, before: Routes, after: Routes): number[] {
   const all = problem.slots.map((_, r) => r);
-  return all.filter((r) => (before[r] ?? []).join() !== (after[r] ?? []).join());
+  const same = (a: readonly number[] = [], b: readonly number[] = []) =>
+    a === b || a.join() === b.join();
+  return all.filter((r) => !same(before[r], after[r]));
 }
 
 function isNew(refusal: Refusal, before: readonly RouteSchedule[]): boolean {

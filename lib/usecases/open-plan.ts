@@ -57,15 +57,26 @@ export async function excludedAssets(db: Kysely<Database>, planId: string): Prom
   return new Set(rows.filter((row) => row.reason === "excluded").map((row) => row.assetId));
 }
 
+export interface OpenOptions {
+  readonly extra?: readonly ExtraVisit[];
+  /**
+   * Rounds that an act can touch. The others are left out of the problem as if they were empty:
+   * prices of acts are differences of the touched rounds, so they stay the same and come at once.
+   */
+  readonly concerns?: (round: StoredRound) => boolean;
+}
+
 /** Opens a plan: its rounds as routes of a problem that holds its visits and the extra ones. */
 export async function openPlan(
   deps: Deps,
   db: Kysely<Database>,
   plan: PlanRow,
-  extra: readonly ExtraVisit[] = [],
+  { extra = [], concerns = () => true }: OpenOptions = {},
 ): Promise<OpenPlan> {
   const rounds = await loadPlanRounds(db, plan.id);
-  const open = rounds.filter((round) => round.state === "proposed" || round.state === "published");
+  const open = rounds.filter(
+    (round) => (round.state === "proposed" || round.state === "published") && concerns(round),
+  );
   const known = knownVisits(open);
   const siteIds = [...new Set([...known, ...extra].map((visit) => visit.siteId))];
   const world = await loadWorld(db, deps.now(), plan, {

@@ -2,7 +2,7 @@ import { z } from "zod";
 import type { Kysely } from "kysely";
 import type { Database } from "@/db/client";
 import { findAssetSite } from "@/db/queries/asset-site";
-import { loadPlanRounds } from "@/db/queries/plan-rounds";
+import { loadPlanRounds, type StoredRound } from "@/db/queries/plan-rounds";
 import type { PlanRow } from "@/db/queries/plans";
 import { conflict, notFound } from "@/lib/errors";
 import { priceAct, type ActPrice } from "@/lib/planning/edits";
@@ -17,11 +17,22 @@ export const pricePlanAct = defineUseCase({
   input: z.object({ planId: z.uuid(), act: planActSchema }),
   async run(deps, _actor, { planId, act }) {
     const plan = await getPlan(deps.db, planId);
-    const { price } = await openAndPrice(deps, deps.db, plan, act);
+    const { price } = await openAndPrice(deps, deps.db, plan, act, touchedBy(act));
     const { routes: _, ...words } = price;
     return words;
   },
 });
+
+/** The rounds that an act takes from or puts into. */
+function touchedBy(act: PlanAct): (round: StoredRound) => boolean {
+  const into = (round: StoredRound) =>
+    act.kind !== "remove" && round.technicianId === act.technicianId && round.day === act.day;
+  const from = (round: StoredRound) =>
+    (act.kind === "move" || act.kind === "remove") &&
+    round.stops.some((stop) => stop.siteId === act.siteId);
+  // An asset comes to its site's visit, wherever that stands; so all rounds may be touched.
+  return act.kind === "add" ? () => true : (round) => into(round) || from(round);
+}
 
 /** Opens the plan with what the act needs and prices the act. */
 export async function openAndPrice(
@@ -29,9 +40,13 @@ export async function openAndPrice(
   db: Kysely<Database>,
   plan: PlanRow,
   act: PlanAct,
+  concerns?: (round: StoredRound) => boolean,
 ): Promise<{ open: OpenPlan; price: ActPrice }> {
   const brought = act.kind === "add" ? await visitToAdd(db, plan, act) : null;
-  const open = await openPlan(deps, db, plan, brought ? [brought] : []);
+  const open = await openPlan(deps, db, plan, {
+    extra: brought ? [brought] : [],
+    ...(concerns && { concerns }),
+  });
   const price = priceAct(
     open.problem,
     open.routes,

@@ -30,7 +30,7 @@ export const pricePlanOptions = defineUseCase({
   async run(deps, _actor, { planId, siteId, assetId }) {
     const plan = await getPlan(deps.db, planId);
     const extra = assetId ? [await visitToAdd(deps.db, plan, { assetId })] : [];
-    const open = await openPlan(deps, deps.db, plan, extra);
+    const open = await openPlan(deps, deps.db, plan, { extra });
     const site = visitIndex(open.problem, siteId ?? extra[0]?.siteId ?? "");
     if (site < 0) throw notFound("This stop");
     const options = [...priced(open, site), ...impossible(open)];

@@ -1,5 +1,5 @@
 /** How the time of a first plan, and of one act on it, grows with the fleet. */
-import { priceAct } from "@/lib/planning/edits";
+import { priceAct, slotIndex, visitIndex } from "@/lib/planning/edits";
 import type { KnownVisit } from "@/lib/planning/fleet";
 import {
   finishPlan,
@@ -63,26 +63,25 @@ export function planFleet(input: PlanInput, iterations = PLAN_ITERATIONS) {
   };
 }
 
-/** Prices the move of each of some stops, from what is stored of the plan, as the screen asks. */
+/** Prices moves from one round into another, from what is stored of the two, as the screen asks. */
 function actTimes(input: PlanInput, rounds: readonly PlannedRound[], times: number): number[] {
-  const known = knownOf(rounds);
-  const siteIds = new Set(known.map((visit) => visit.siteId));
-  const small: PlanInput = {
-    ...input,
-    known,
-    sites: input.sites.filter((site) => siteIds.has(site.siteId)),
-    packs: input.packs.filter((pack) => siteIds.has(pack.siteId)),
-  };
   return Array.from({ length: times }, (_, k) => {
+    const [from, into] = [rounds[k % rounds.length]!, rounds[(k + 1) % rounds.length]!];
     const began = performance.now();
-    const prepared = prepareKnown(small, []);
-    const travel = greatCircleTable(placesOf(small.technicians, prepared.visits), small.road);
+    const known = knownOf([from, into]);
+    const siteIds = new Set(known.map((visit) => visit.siteId));
+    const touched: PlanInput = {
+      ...input,
+      known,
+      sites: input.sites.filter((site) => siteIds.has(site.siteId)),
+      packs: input.packs.filter((pack) => siteIds.has(pack.siteId)),
+    };
+    const prepared = prepareKnown(touched, []);
+    const travel = greatCircleTable(placesOf(touched.technicians, prepared.visits), input.road);
     const problem = problemOf(prepared, travel);
-    const routes = knownRoutes(problem, known);
-    const slot = routes.findIndex((route) => route.length > 0);
-    const site = routes[slot]![k % routes[slot]!.length]!;
-    const to = (slot + 1) % routes.length;
-    priceAct(problem, routes, { kind: "move", site, slot: to }, (day) => day);
+    const site = visitIndex(problem, from.stops[0]!.siteId);
+    const slot = slotIndex(problem, into.technicianId, into.day);
+    priceAct(problem, knownRoutes(problem, known), { kind: "move", site, slot }, (day) => day);
     return performance.now() - began;
   });
 }

@@ -94,8 +94,11 @@ export function VisitCalendar(props: VisitCalendarProps) {
       components={COMPONENTS}
       onSelectEvent={({ event }) => props.onSelect(event)}
       onKeyPressEvent={({ event }, key) => {
-        const { code } = key as unknown as KeyboardEvent;
-        if (code === "Enter" || code === "Space") props.onSelect(event);
+        const pressed = key as unknown as KeyboardEvent;
+        if (pressed.code !== "Enter" && pressed.code !== "Space") return;
+        // Else the same key would press the button of the dialog that it opens.
+        pressed.preventDefault();
+        props.onSelect(event);
       }}
       onEventDrop={({ event: { event }, start, resourceId }) =>
         props.onMove(

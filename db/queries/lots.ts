@@ -56,7 +56,8 @@ export interface LotWindow {
   readonly offset: number;
 }
 
-function where({ cellTypeId = null, withStockOnly }: LotFilter): RawBuilder<unknown> {
+function where({ cellTypeId: given, withStockOnly }: LotFilter): RawBuilder<unknown> {
+  const cellTypeId = given ?? null;
   return sql`(${cellTypeId}::uuid is null or l.cell_type_id = ${cellTypeId}::uuid)
     and (not ${withStockOnly}::boolean
       or exists (select from lot_stock where lot_id = l.id and cells > 0))`;

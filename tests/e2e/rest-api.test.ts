@@ -39,7 +39,7 @@ async function makeKey(scopes: string[], revoked = false): Promise<string> {
   const revokedAt = revoked ? new Date() : null;
   await db
     .insertInto("apiKey")
-    .values({ ...row, scopes, revokedAt })
+    .values({ ...row, scopes, createdAt: new Date(), revokedAt })
     .execute();
   return secret;
 }

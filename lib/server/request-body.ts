@@ -26,7 +26,7 @@ function tooLarge(limit: number): AppError {
   return new AppError("too_large", message, [{ field: "body", message }]);
 }
 
-/** The body as JSON. @throws AppError malformed, saying where it stops being JSON */
+/** The body as JSON. @throws AppError malformed, naming the sign at which it stops being JSON */
 export async function jsonBody(request: Request): Promise<never> {
   try {
     return (await request.json()) as never;

@@ -18,11 +18,7 @@ import {
 } from "../support/browser";
 import { mails, until } from "../support/mailbox";
 
-/** Each size plans a week of its own. */
-const SIZES: readonly [size: Size, weeksAhead: number][] = [
-  ["desktop", 1],
-  ["phone", 2],
-];
+const SIZES: readonly Size[] = ["desktop", "phone"];
 const db = connect(process.env.DATABASE_URL ?? "", { max: 2 });
 let browser: Browser;
 
@@ -34,18 +30,24 @@ afterAll(async () => {
   await db.destroy();
 });
 
-describe.each(SIZES)("a dispatcher at %s size", (size, weeksAhead) => {
+describe.each(SIZES)("a dispatcher at %s size", (size) => {
   let watched: Awaited<ReturnType<typeof openPage>>;
   let page: Page;
   let before: readonly Mail[];
+  let began: Date;
 
   beforeAll(async () => {
+    began = new Date();
     watched = await openPage(browser, size);
     page = watched.page;
     before = await mails();
     await signIn(page, "dispatcher");
   });
-  afterAll(() => watched.context.close());
+  /** The next size finds the week as this one found it: with all its work still to be planned. */
+  afterAll(async () => {
+    await watched.context.close();
+    await db.deleteFrom("plan").where("createdAt", ">", began).execute();
+  });
 
   /** Round mails of this story: with a calendar file, which site contacts' mails do not carry. */
   const newRounds = (all: readonly Mail[]) =>
@@ -77,13 +79,10 @@ describe.each(SIZES)("a dispatcher at %s size", (size, weeksAhead) => {
     expect(lines.length).toBeGreaterThan(5);
   });
 
-  it("builds a week's rounds; nothing is sent by that", async () => {
+  it("builds next week's rounds; nothing is sent by that", async () => {
     await page.goto(productUrl("/rounds"));
-    for (let week = 0; week < weeksAhead; week += 1) {
-      const here = page.url();
-      await page.getByRole("link", { name: /Week after/ }).click();
-      await page.waitForURL((url) => url.href !== here);
-    }
+    await page.getByRole("link", { name: /Week after/ }).click();
+    await page.waitForURL(/week=/);
     const sent = (await mails()).length;
     await page.getByRole("button", { name: "Build rounds" }).click();
     const dialog = page.getByRole("dialog", { name: "Build rounds" });

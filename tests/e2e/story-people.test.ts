@@ -39,7 +39,7 @@ describe.each(SIZES)("a supervisor at %s size", (size) => {
   });
   afterAll(() => watched.context.close());
 
-  it("chooses the days of the own digest, and it goes out", async () => {
+  it("chooses the days of the own digest", async () => {
     await page.goto(productUrl("/settings/digests"));
     await page.getByRole("button", { name: /^Change the digest of/ }).click();
     const dialog = page.getByRole("dialog");
@@ -48,13 +48,17 @@ describe.each(SIZES)("a supervisor at %s size", (size) => {
     await dialog.getByRole("button", { name: "Save" }).click();
     await dialog.waitFor({ state: "hidden" });
     await expectNoSidewaysScroll(page);
-    // As on the next day: today's may have gone out already.
+  });
+
+  // A day's digest goes out once, so only one of the sizes can wait for it.
+  it.runIf(size === SIZES[0])("gets the digest by mail", async () => {
     await db.updateTable("digestSetting").set({ lastSentOn: null }).execute();
     const isDigest = (mail: { to: readonly string[]; subject: string }) =>
       /due in \d+ days/.test(mail.subject) && String(mail.to).includes("supervisor@");
     const before = (await mails()).filter(isDigest).length;
     await transactionalJobs.enqueue(db, "digests", {});
     const sent = await until(mails, (all) => all.filter(isDigest).length > before);
+    expect(sent.filter(isDigest).length).toBe(before + 1);
     expect(sent.find(isDigest)?.text).toContain("Open the Horizon");
   });
 

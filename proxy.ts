@@ -46,7 +46,11 @@ async function turnedAway(
   if (await hasSignedSession(request, secret, appUrl)) return null;
   if (api) {
     const error = { code: "not_signed_in", message: "Please sign in.", faults: [] };
-    return NextResponse.json({ error }, { status: 401, headers: { "cache-control": "no-store" } });
+    const headers = {
+      "cache-control": "no-store",
+      "www-authenticate": 'Bearer realm="wanewright"',
+    };
+    return NextResponse.json({ error }, { status: 401, headers });
   }
   const target = new URL("/sign-in", request.url);
   if (pathname !== "/") target.searchParams.set("from", `${pathname}${search}`);

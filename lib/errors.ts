@@ -3,7 +3,15 @@
  * screens to words; anything else that is thrown is a defect.
  */
 export type ErrorCode =
-  "invalid" | "not_signed_in" | "forbidden" | "not_found" | "conflict" | "too_many" | "unavailable";
+  | "invalid"
+  | "malformed"
+  | "too_large"
+  | "not_signed_in"
+  | "forbidden"
+  | "not_found"
+  | "conflict"
+  | "too_many"
+  | "unavailable";
 
 /** One thing wrong with one entry: which field, which row (1-based), what to do. */
 export interface Fault {

@@ -9,24 +9,13 @@ import { useMemo } from "react";
 import { Calendar, dateFnsLocalizer, type View } from "react-big-calendar";
 import withDragAndDrop from "react-big-calendar/lib/addons/dragAndDrop";
 import type { CalendarEvent } from "@/lib/present/calendar-event";
-import { dayShown, onWallClock } from "./wall-clock";
-
-interface Shown {
-  readonly event: CalendarEvent;
-  readonly start: Date;
-  readonly end: Date;
-  readonly title: string;
-  readonly resourceId: string;
-}
-
-interface Resource {
-  readonly id: string;
-  readonly name: string;
-}
+import { hoursShown, type Shown, shownVisit, type Technician } from "./shown-visit";
+import { dayShown } from "./wall-clock";
+import { weekByTechnician } from "./week-by-technician";
 
 export interface VisitCalendarProps {
   events: readonly CalendarEvent[];
-  technicians: readonly Resource[];
+  technicians: readonly Technician[];
   timeZone: string;
   /** 1 Monday to 7 Sunday. */
   weekStartsOn: number;
@@ -36,12 +25,14 @@ export interface VisitCalendarProps {
   onView: (view: View) => void;
   onNavigate: (date: Date) => void;
   onSelect: (event: CalendarEvent) => void;
-  /** `technicianId` is the event's own where the view has no columns of technicians. */
+  /** `technicianId` is the event's own in the month, which has no places for technicians. */
   onMove: (event: CalendarEvent, day: string, technicianId: string) => void;
 }
 
-const DragCalendar = withDragAndDrop<Shown, Resource>(Calendar);
-const VIEWS: View[] = ["month", "week", "day"];
+const DragCalendar = withDragAndDrop<Shown, Technician>(Calendar);
+const VIEWS = { month: true, week: weekByTechnician, day: true } as const;
+/** At this height of an hour the shortest visit still holds its line of words. */
+const HOUR_REM = 5.25;
 const MESSAGES = {
   today: "Today",
   previous: "Back",
@@ -52,10 +43,8 @@ const MESSAGES = {
   showMore: (count: number) => `${count} more`,
   noEventsInRange: "No visits on these days.",
 };
-const DAY_STARTS = new Date(2000, 0, 1, 6);
-const DAY_ENDS = new Date(2000, 0, 1, 19);
 
-/** Visits by month, by week, or one day with the technicians side by side. */
+/** Visits by month, by week and technician, or one day with the technicians side by side. */
 export function VisitCalendar(props: VisitCalendarProps) {
   const { events, technicians, timeZone, weekStartsOn, view, editable } = props;
   const localizer = useMemo(() => {
@@ -69,19 +58,15 @@ export function VisitCalendar(props: VisitCalendarProps) {
     });
   }, [weekStartsOn]);
   const shown = useMemo(
-    () =>
-      events.map((event): Shown => ({
-        event,
-        start: onWallClock(event.startsAt, timeZone),
-        end: onWallClock(event.endsAt, timeZone),
-        title: event.title,
-        resourceId: event.technicianId,
-      })),
+    () => events.map((event) => shownVisit(event, timeZone)),
     [events, timeZone],
   );
+  const today = dayShown(props.date);
+  const hours = hoursShown(shown.filter((visit) => dayShown(visit.start) === today));
   return (
     <DragCalendar
-      className="visit-calendar"
+      className={`visit-calendar visit-calendar-${view}`}
+      {...(view === "day" && { style: { height: `${(hours.to - hours.from) * HOUR_REM + 6}rem` } })}
       localizer={localizer}
       culture="en-GB"
       messages={MESSAGES}
@@ -91,14 +76,14 @@ export function VisitCalendar(props: VisitCalendarProps) {
       date={props.date}
       onView={props.onView}
       onNavigate={props.onNavigate}
-      min={DAY_STARTS}
-      max={DAY_ENDS}
+      min={new Date(2000, 0, 1, hours.from)}
+      max={new Date(2000, 0, 1, hours.to - 1, 59)}
       step={30}
       timeslots={2}
       dayLayoutAlgorithm="no-overlap"
       popup
       resizable={false}
-      {...(view === "day" && {
+      {...(view !== "month" && {
         resources: [...technicians],
         resourceIdAccessor: "id",
         resourceTitleAccessor: "name",
@@ -106,13 +91,20 @@ export function VisitCalendar(props: VisitCalendarProps) {
       tooltipAccessor={({ event }) => event.label}
       draggableAccessor={({ event }) => editable && event.movable}
       eventPropGetter={({ event }) => ({ className: `visit visit-${event.state}` })}
-      components={{ event: VisitWords, header: DayWords }}
+      components={COMPONENTS}
       onSelectEvent={({ event }) => props.onSelect(event)}
+      onKeyPressEvent={({ event }, key) => {
+        const pressed = key as unknown as KeyboardEvent;
+        if (pressed.code !== "Enter" && pressed.code !== "Space") return;
+        // Else the same key would press the button of the dialog that it opens.
+        pressed.preventDefault();
+        props.onSelect(event);
+      }}
       onEventDrop={({ event: { event }, start, resourceId }) =>
         props.onMove(
           event,
           dayShown(new Date(start)),
-          view === "day" && resourceId ? String(resourceId) : event.technicianId,
+          view !== "month" && resourceId ? String(resourceId) : event.technicianId,
         )
       }
       formats={{
@@ -140,3 +132,19 @@ function VisitWords({ event: { event, start } }: { event: Shown }) {
     </span>
   );
 }
+
+/** In rows of days the library's element takes no focus: a button inside it does. */
+function VisitButton({ event }: { event: Shown }) {
+  return (
+    <button type="button" className="visit-button">
+      <VisitWords event={event} />
+    </button>
+  );
+}
+
+const COMPONENTS = {
+  event: VisitWords,
+  header: DayWords,
+  month: { event: VisitButton },
+  week: { event: VisitButton },
+};

@@ -27,7 +27,7 @@ export function Dialog({ open, title, onClose, children, actions }: DialogProps)
       ref={ref}
       aria-labelledby={titleId}
       onClose={onClose}
-      className="m-auto w-[min(36rem,calc(100vw-2rem))] rounded border border-ink bg-sheet p-0 text-ink"
+      className="m-auto text-left whitespace-normal w-[min(36rem,calc(100vw-2rem))] rounded border border-ink bg-sheet p-0 text-ink"
     >
       <div className="flex items-start justify-between gap-4 border-b border-ink px-4 py-3">
         <h2 id={titleId} className="text-lg">

@@ -76,7 +76,7 @@ function Screens({ current, allowed }: Pick<MastheadProps, "current" | "allowed"
   return (
     <nav
       aria-label="Office"
-      className="flex overflow-x-auto max-[75rem]:order-3 max-[75rem]:col-span-2 max-[75rem]:-mx-3 max-[75rem]:border-t max-[75rem]:border-hair min-[75rem]:pl-3"
+      className="flex overflow-x-auto max-sm:flex-wrap max-[75rem]:order-3 max-[75rem]:col-span-2 max-[75rem]:-mx-3 max-[75rem]:border-t max-[75rem]:border-hair min-[75rem]:pl-3"
     >
       {shown.map((screen) => (
         <Link

@@ -10,7 +10,10 @@ export interface TabItem {
 /** Parts of one screen, each with its own address. */
 export function Tabs({ label, items }: { label: string; items: readonly TabItem[] }) {
   return (
-    <nav aria-label={label} className="mb-4 flex overflow-x-auto border-b border-rule">
+    <nav
+      aria-label={label}
+      className="mb-4 flex overflow-x-auto border-b max-sm:flex-wrap border-rule"
+    >
       {items.map((item) => (
         <Link
           key={item.href}

@@ -47,6 +47,9 @@ export interface AssetRow {
   readonly crewName: string | null;
   readonly modelName: string;
   readonly firmware: string;
+  readonly note: string;
+  /** The asset's own; null: its model's holds. */
+  readonly silenceCostMinorPerHour: number | null;
   readonly packId: string | null;
   readonly series: number | null;
   readonly parallel: number | null;
@@ -102,7 +105,7 @@ function where(filter: AssetFilter): RawBuilder<unknown> {
 export async function listAssets(db: Kysely<Database>, listing: AssetListing): Promise<AssetRow[]> {
   const direction = listing.descending ? sql`desc nulls last` : sql`asc nulls last`;
   const result = await sql<AssetRow>`
-    select a.id, a.tag, a.name, a.state, a.firmware, s.code as site_code, s.name as site_name,
+    select a.id, a.tag, a.name, a.state, a.firmware, a.note, a.silence_cost_minor_per_hour, s.code as site_code, s.name as site_name,
       s.latitude, s.longitude, crew.name as crew_name, m.name as model_name, p.id as pack_id,
       p.series, p.parallel, c.designation, c.chemistry, p.installed_at, f.share_left_permille,
       f.out_now_permille, f.p05, f.p50, f.p95, f.stale_since, r.at as read_at, r.millivolts as read_mv

@@ -1,4 +1,4 @@
-import { type Kysely, sql, type Transaction } from "kysely";
+import { type Kysely, type RawBuilder, sql, type Transaction } from "kysely";
 import type { Database } from "../client";
 
 /** A lot with its cell type, or null. */
@@ -45,11 +45,32 @@ export async function insertLot(trx: Transaction<Database>, lot: NewLot): Promis
   await trx.insertInto("lot").values(lot).execute();
 }
 
-/** Lots with what is left of them and where: `places` as name → cells. */
-export async function listLots(
-  db: Kysely<Database>,
-  filter: { readonly cellTypeId?: string | undefined; readonly withStockOnly: boolean },
-) {
+export interface LotFilter {
+  readonly cellTypeId?: string | undefined;
+  readonly withStockOnly: boolean;
+}
+
+export interface LotWindow {
+  /** null: all. */
+  readonly limit: number | null;
+  readonly offset: number;
+}
+
+function where({ cellTypeId: given, withStockOnly }: LotFilter): RawBuilder<unknown> {
+  const cellTypeId = given ?? null;
+  return sql`(${cellTypeId}::uuid is null or l.cell_type_id = ${cellTypeId}::uuid)
+    and (not ${withStockOnly}::boolean
+      or exists (select from lot_stock where lot_id = l.id and cells > 0))`;
+}
+
+export async function countLots(db: Kysely<Database>, filter: LotFilter): Promise<number> {
+  const result = await sql<{ n: number }>`
+    select count(*)::int as n from lot l where ${where(filter)}`.execute(db);
+  return result.rows[0]?.n ?? 0;
+}
+
+/** Lots with what is left of them and where: `places` as name → cells. The newest come first. */
+export async function listLots(db: Kysely<Database>, filter: LotFilter & LotWindow) {
   const result = await sql<{
     id: string;
     code: string;
@@ -75,10 +96,9 @@ export async function listLots(
         json_agg(json_build_object('id', p.id, 'name', p.name, 'cells', ls.cells) order by p.kind, p.name) as places
       from lot_stock ls join stock_place p on p.id = ls.place_id
       where ls.lot_id = l.id and ls.cells > 0) s on true
-    where (${filter.cellTypeId ?? null}::uuid is null or l.cell_type_id = ${filter.cellTypeId ?? null}::uuid)
-      and (not ${filter.withStockOnly}::boolean or coalesce(s.cells, 0) > 0)
+    where ${where(filter)}
     order by l.received_on desc, l.code
-    limit 500`.execute(db);
+    limit ${filter.limit} offset ${filter.offset}`.execute(db);
   return result.rows;
 }
 

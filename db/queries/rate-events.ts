@@ -42,6 +42,15 @@ export async function clearRateBucket(db: Kysely<Database>, bucket: string): Pro
   await db.deleteFrom("rateEvent").where("bucket", "=", bucket).execute();
 }
 
+/** Drops what one bucket no longer counts. */
+export async function forgetBucketEvents(
+  db: Kysely<Database>,
+  bucket: string,
+  before: Date,
+): Promise<void> {
+  await db.deleteFrom("rateEvent").where("bucket", "=", bucket).where("at", "<=", before).execute();
+}
+
 /** Keeps the table small: attempts this old count nowhere. */
 export async function forgetRateEvents(db: Kysely<Database>, before: Date): Promise<void> {
   await db.deleteFrom("rateEvent").where("at", "<", before).execute();

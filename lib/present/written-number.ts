@@ -11,3 +11,10 @@ export function writtenNumber(value: number | null, digits: number, locale: stri
   const short = digits > 0 ? text.replace(/\.?0+$/, "") : text;
   return short.replace(".", sign);
 }
+
+/** An amount as a form shows it, with both decimals: 120 is "1.20". Null is "". */
+export function writtenMoney(minor: number | null, locale: string): string {
+  if (minor === null) return "";
+  const sign = formatNumber(1.5, locale, 1).includes(",") ? "," : ".";
+  return (minor / 100).toFixed(2).replace(".", sign);
+}

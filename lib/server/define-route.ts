@@ -1,18 +1,28 @@
 import type { z } from "zod";
-import { AppError, type ErrorCode, invalid, isAppError } from "@/lib/errors";
+import { AppError, type ErrorCode, isAppError } from "@/lib/errors";
 import type { Actor, UseCase } from "@/lib/usecases/use-case";
 import { deps } from "./deps";
+import { limitCalls } from "./limit-calls";
 import { log } from "./log";
+import { withinLimit } from "./request-body";
 import { actorOfRequest } from "./session";
 
 const STATUS: Record<ErrorCode, number> = {
   invalid: 422,
+  malformed: 400,
+  too_large: 413,
   not_signed_in: 401,
   forbidden: 403,
   not_found: 404,
   conflict: 409,
   too_many: 429,
   unavailable: 503,
+};
+
+/** RFC 9110, 11.6.1: a 401 says how to prove oneself; RFC 6585, 4: a 429 may say when to come again. */
+const HINTS: Readonly<Record<number, Record<string, string>>> = {
+  401: { "www-authenticate": 'Bearer realm="wanewright"' },
+  429: { "retry-after": "60" },
 };
 
 type Params = Promise<Record<string, string | string[] | undefined>>;
@@ -39,10 +49,11 @@ export function defineRoute<Input extends z.ZodType, Result>(
     let response: Response;
     try {
       guardOrigin(request);
-      guardSize(request, options.bodyLimit ?? 1_000_000);
+      const limited = withinLimit(request, options.bodyLimit ?? 1_000_000);
       actor = await actorOfRequest(request);
+      if (actor.kind === "api-key") await limitCalls(deps(), actor.apiKeyId);
       const params = (await context.params) as Record<string, string>;
-      const result = await useCase(deps(), actor, await options.input(request, params));
+      const result = await useCase(deps(), actor, await options.input(limited, params));
       response = options.respond?.(result) ?? Response.json(result ?? null);
     } catch (error) {
       response = errorResponse(error);
@@ -59,21 +70,15 @@ export function defineRoute<Input extends z.ZodType, Result>(
   };
 }
 
-/** The body as JSON. @throws AppError invalid when it is not JSON */
-export async function jsonBody(request: Request): Promise<never> {
-  try {
-    return (await request.json()) as never;
-  } catch {
-    throw invalid("The body is not JSON.");
-  }
-}
-
 /** Errors as `{ error: { code, message, faults } }`. */
 export function errorResponse(error: unknown): Response {
   const known = isAppError(error) ? error : new AppError("unavailable", "Something went wrong.");
   const status = isAppError(error) ? STATUS[error.code] : 500;
   const body = { error: { code: known.code, message: known.message, faults: known.faults } };
-  return Response.json(body, { status, headers: { "cache-control": "no-store" } });
+  return Response.json(body, {
+    status,
+    headers: { "cache-control": "no-store", ...HINTS[status] },
+  });
 }
 
 /** A browser's write must come from our own pages (cookies are SameSite=Lax besides). */
@@ -83,11 +88,5 @@ function guardOrigin(request: Request): void {
   const site = request.headers.get("sec-fetch-site");
   if (site && site !== "same-origin" && site !== "none") {
     throw new AppError("forbidden", "This request came from another site.");
-  }
-}
-
-function guardSize(request: Request, limit: number): void {
-  if (Number(request.headers.get("content-length") ?? 0) > limit) {
-    throw new AppError("invalid", `The body is larger than ${limit} bytes.`);
   }
 }

@@ -4,7 +4,7 @@ import { type ExportContext, type OutTable, scaled } from "./export-table";
 
 /** Every lot with what is left of it and where. */
 export async function lotTable({ deps }: ExportContext): Promise<OutTable> {
-  const lots = await listLots(deps.db, { withStockOnly: false });
+  const lots = await listLots(deps.db, { withStockOnly: false, limit: null, offset: 0 });
   return {
     head: [
       ...["lot", "cell type", "made on", "received on", "supplier reference", "cells received"],

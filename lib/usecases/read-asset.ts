@@ -53,7 +53,7 @@ export const readSwapChoices = defineUseCase({
     if (!asset) throw notFound(`The asset ${tag}`);
     const cellTypes = await listAcceptedCellTypes(deps.db, asset.deviceModelId);
     const accepted = new Set(cellTypes.map((c) => c.id));
-    const lots = await listLots(deps.db, { withStockOnly: true });
+    const lots = await listLots(deps.db, { withStockOnly: true, limit: null, offset: 0 });
     return {
       cellTypes,
       lots: lots.filter((lot) => accepted.has(lot.cellTypeId)),

@@ -1,6 +1,6 @@
 import { z } from "zod";
 import { listCellTypes } from "@/db/queries/cell-types";
-import { listLots } from "@/db/queries/lots";
+import { countLots, listLots } from "@/db/queries/lots";
 import { getOrganisation } from "@/db/queries/organisation";
 import {
   countByTypeAndPlace,
@@ -37,20 +37,26 @@ export const readStores = defineUseCase({
 
 export type StoresView = Awaited<ReturnType<typeof readStores>>;
 
-/** Lots with what is left of them and where. */
+/** One page of lots with what is left of them and where. */
 export const listLotsInStores = defineUseCase({
   name: "list-lots",
   allow,
-  input: z.object({ cellTypeId: filterId, all: z.boolean().catch(false) }),
-  run: async (deps, _actor, { cellTypeId, all }) => {
+  input: z.object({
+    cellTypeId: filterId,
+    all: z.boolean().catch(false),
+    page: listEntries.page,
+  }),
+  run: async (deps, _actor, { cellTypeId, all, page }) => {
     const filter = { cellTypeId: cellTypeId ?? undefined, withStockOnly: !all };
-    const [organisation, lots, places, cellTypes] = await Promise.all([
+    const [organisation, lots, total, places, cellTypes] = await Promise.all([
       getOrganisation(deps.db),
-      listLots(deps.db, filter),
+      listLots(deps.db, { ...filter, ...pageWindow(page) }),
+      countLots(deps.db, filter),
       listPlaces(deps.db),
       listCellTypes(deps.db),
     ]);
-    return { organisation, lots, places, cellTypes, now: deps.now() };
+    const now = deps.now();
+    return { organisation, lots, total, page, pageSize: PAGE_SIZE, places, cellTypes, now };
   },
 });
 

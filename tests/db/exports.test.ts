@@ -4,9 +4,10 @@
  * without doubling"), with the importer as the reader. CSV injection: OWASP's list of signs.
  */
 import { randomUUID } from "node:crypto";
+import { sql } from "kysely";
 import { beforeAll, describe, expect, it } from "vitest";
 import type { ImportReport } from "@/db/queries/import-runs";
-import { checkImport } from "@/lib/usecases/change-import";
+import { applyImport, checkImport } from "@/lib/usecases/change-import";
 import { countCells } from "@/lib/usecases/count-cells";
 import { exportList } from "@/lib/usecases/export-list";
 import { installPack } from "@/lib/usecases/install-pack";
@@ -14,7 +15,7 @@ import { moveCells } from "@/lib/usecases/move-cells";
 import { postReadings } from "@/lib/usecases/post-readings";
 import { readImport } from "@/lib/usecases/read-import";
 import { receiveLot } from "@/lib/usecases/receive-lot";
-import { runImportCheck } from "@/lib/usecases/run-import";
+import { runImportApply, runImportCheck } from "@/lib/usecases/run-import";
 import { saveAsset } from "@/lib/usecases/save-asset";
 import { saveDeviceModel } from "@/lib/usecases/save-device-model";
 import { saveSite } from "@/lib/usecases/save-site";
@@ -41,6 +42,13 @@ beforeAll(async () => {
       longitude: 0.1,
     },
     ...{ noticeDays: "10", opens: "08:00", closes: "16:00", hazards: ["water"] },
+    ...{
+      tickets: ["boat"],
+      keyCode: "=7",
+      contactName: "Ada Reed",
+      contactPhone: "+44 1632 960000",
+    },
+    ...{ contactEmail: "ada@mere.example", driveUpNotes: 'By the weir; "left", then on.' },
     closures: [
       { firstMonthDay: "12-20", lastMonthDay: "01-06", reason: "closed over the holidays" },
     ],
@@ -86,6 +94,23 @@ async function exported(list: Parameters<typeof exportList>[2]["list"]): Promise
   return text;
 }
 
+/** Uploads a file and has it checked. @returns the import's id */
+async function check(
+  fileName: string,
+  kind: Parameters<typeof uploadImport>[2]["kind"],
+  text: string,
+): Promise<string> {
+  const importId = randomUUID();
+  const bytes = new TextEncoder().encode(text);
+  await uploadImport(deps, dispatcher, { id: importId, kind, fileName, bytes });
+  const { run } = await readImport(deps, dispatcher, {
+    ...{ importId, delimiter: null, show: null, page: 1 },
+  });
+  await checkImport(deps, dispatcher, { importId, ...run.settings });
+  await runImportCheck(deps, systemActor, { importId });
+  return importId;
+}
+
 describe("files that go out", () => {
   it.each([
     ["cell-types", "cell_types", 2],
@@ -93,14 +118,7 @@ describe("files that go out", () => {
     ["assets", "assets", 3],
     ["installs", "installs", 1],
   ] as const)("%s come in again and change nothing", async (list, kind, rows) => {
-    const importId = randomUUID();
-    const bytes = new TextEncoder().encode(await exported(list));
-    await uploadImport(deps, dispatcher, { id: importId, kind, fileName: list, bytes });
-    const { run } = await readImport(deps, dispatcher, {
-      ...{ importId, delimiter: null, show: null, page: 1 },
-    });
-    await checkImport(deps, dispatcher, { importId, ...run.settings });
-    await runImportCheck(deps, systemActor, { importId });
+    const importId = await check(list, kind, await exported(list));
     const row = await db
       .selectFrom("importRun")
       .select("report")
@@ -134,6 +152,47 @@ describe("forms", () => {
       deviceModelId: register.modelId,
     });
     await expect(twice).rejects.toMatchObject({ code: "conflict", faults: [{ field: "tag" }] });
+  });
+});
+
+describe("assets with their sites", () => {
+  const columns = [
+    ...(["asset.tag", "asset.name", "asset.state", "asset.firmware", "asset.note"] as const),
+    ...(["asset.silenceCostMinorPerHour", "asset.deviceModelId", "site.code"] as const),
+    ...(["site.name as siteName", "site.latitude", "site.longitude", "site.noticeDays"] as const),
+    ...(["site.opens", "site.closes", "site.keyCode", "site.contactName"] as const),
+    ...(["site.contactEmail", "site.contactPhone", "site.hazards", "site.tickets"] as const),
+    ...(["site.driveUpNotes", "closure.firstMonthDay", "closure.reason"] as const),
+  ];
+  const registered = () =>
+    db
+      .selectFrom("asset")
+      .innerJoin("site", "site.id", "asset.siteId")
+      .leftJoin("siteClosure as closure", "closure.siteId", "site.id")
+      .select(columns)
+      .where("asset.tag", "like", "QF-%")
+      .orderBy("asset.tag")
+      .execute();
+
+  it("make the same register where there is none", async () => {
+    await saveAsset(deps, dispatcher, {
+      ...{ id: register.assets[1] ?? "", tag: "QF-0002", name: "Gauge, lower", siteCode: "S-1" },
+      ...{ deviceModelId: register.modelId, silenceCostPerHour: "2,40", firmware: "4.1" },
+      note: "-behind the second gate",
+    });
+    const before = await registered();
+    expect(before[1]).toMatchObject({ silenceCostMinorPerHour: 240, keyCode: "=7" });
+    const text = await exported("assets");
+    // The old ones step aside, so that the file finds neither its tags nor its site.
+    await db
+      .updateTable("asset")
+      .set({ tag: sql`'OLD-' || tag` })
+      .execute();
+    await db.updateTable("site").set({ code: "OLD" }).where("code", "=", "S-1").execute();
+    const importId = await check("assets", "assets", text);
+    await applyImport(deps, dispatcher, { importId });
+    await runImportApply(deps, systemActor, { importId });
+    expect(await registered()).toEqual(before);
   });
 });
 

@@ -13,11 +13,11 @@ export default async function HorizonPage(props: { searchParams: Promise<Horizon
   const params = await props.searchParams;
   const view = await readHorizon(deps(), await requireActor(), readParams(params));
   return (
-    <main id="main" className="page">
+    <>
       <h1 className="sr-only">Horizon</h1>
       <HorizonFigures view={view} />
       <HorizonFilters view={view} params={params} />
       <HorizonTable view={view} params={params} />
-    </main>
+    </>
   );
 }

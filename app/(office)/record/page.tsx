@@ -22,7 +22,7 @@ export default async function RecordPage(props: {
     crew: params.crew ?? null,
   });
   return (
-    <main id="main" className="page">
+    <>
       <PageHead
         title="Can the dates be trusted?"
         lede="Each pack that came out is held against the forecast of the visit before: what chance had that given to stopping by then?"
@@ -35,6 +35,6 @@ export default async function RecordPage(props: {
         <TrustGroups view={view} />
       </div>
       <TrustSurprises view={view} />
-    </main>
+    </>
   );
 }

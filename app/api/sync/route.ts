@@ -1,4 +1,5 @@
-import { defineRoute, jsonBody } from "@/lib/server/define-route";
+import { defineRoute } from "@/lib/server/define-route";
+import { jsonBody } from "@/lib/server/request-body";
 import { log } from "@/lib/server/log";
 import { syncEntries } from "@/lib/usecases/sync-entries";
 

@@ -1,5 +1,5 @@
 import { PageHead } from "@/components/ui/page-head";
-import { writtenNumber } from "@/lib/present/written-number";
+import { writtenMoney } from "@/lib/present/written-number";
 import { deps } from "@/lib/server/deps";
 import { orNotFound } from "@/lib/server/or-not-found";
 import { requireActor } from "@/lib/server/session";
@@ -25,7 +25,7 @@ export async function AssetFormPage({ tag }: { tag: string | null }) {
         stored={
           asset && {
             ...asset,
-            silenceCost: writtenNumber(asset.silenceCostMinorPerHour, 2, locale),
+            silenceCost: writtenMoney(asset.silenceCostMinorPerHour, locale),
           }
         }
         sites={view.sites}

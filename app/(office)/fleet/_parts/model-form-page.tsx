@@ -1,5 +1,5 @@
 import { PageHead } from "@/components/ui/page-head";
-import { writtenNumber } from "@/lib/present/written-number";
+import { writtenMoney, writtenNumber } from "@/lib/present/written-number";
 import { deps } from "@/lib/server/deps";
 import { mayUse } from "@/lib/server/may-use";
 import { orNotFound } from "@/lib/server/or-not-found";
@@ -28,7 +28,7 @@ export async function ModelFormPage({ id }: { id: string | null }) {
           model && {
             ...model,
             cutoff: write(model.cutoffMv, 3),
-            silenceCost: write(model.silenceCostMinorPerHour, 2),
+            silenceCost: writtenMoney(model.silenceCostMinorPerHour, locale),
             states: model.states.map((s) => ({
               name: s.name,
               current: write(s.currentUa, 3),

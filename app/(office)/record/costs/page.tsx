@@ -12,7 +12,7 @@ export const metadata: Metadata = { title: "Costs" };
 export default async function CostsPage() {
   const view = await readCosts(deps(), await requireActor(), { days: 730 });
   return (
-    <main id="main" className="page">
+    <>
       <PageHead
         title="What swapping cost"
         lede="By month: packs that came out and why, silence, cells, crew and driving of the rounds that were done."
@@ -24,6 +24,6 @@ export default async function CostsPage() {
       />
       <RecordTabs current="costs" />
       <CostsTable view={view} />
-    </main>
+    </>
   );
 }

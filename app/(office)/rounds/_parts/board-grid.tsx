@@ -1,5 +1,6 @@
 "use client";
 
+import { useEffect, useRef } from "react";
 import type { RoundsBoard } from "@/lib/usecases/read-rounds-board";
 import { BoardCell } from "./board-cell";
 import type { Placing } from "./use-placing";
@@ -15,10 +16,15 @@ export interface BoardGridProps {
 /** Technicians by days. */
 export function BoardGrid({ board, chosenId, onChoose, placing, onPlace }: BoardGridProps) {
   const { picked } = placing;
+  const top = useRef<HTMLParagraphElement>(null);
+  // On a phone the stop was picked far below the board on which its places stand.
+  useEffect(() => {
+    if (picked) top.current?.scrollIntoView({ block: "nearest" });
+  }, [picked]);
   return (
     <>
       {picked && (
-        <p role="status" className="mb-2 flex flex-wrap items-center gap-3">
+        <p ref={top} role="status" className="mb-2 scroll-mt-2 flex flex-wrap items-center gap-3">
           <strong className="font-semibold">{picked.name}:</strong> choose a day and a technician.
           Each shows what it would cost.
           <button type="button" className="textlink" onClick={() => placing.pick(null)}>

@@ -1,5 +1,5 @@
 import { PageHead } from "@/components/ui/page-head";
-import { writtenNumber } from "@/lib/present/written-number";
+import { writtenMoney, writtenNumber } from "@/lib/present/written-number";
 import { deps } from "@/lib/server/deps";
 import { mayUse } from "@/lib/server/may-use";
 import { orNotFound } from "@/lib/server/or-not-found";
@@ -39,7 +39,7 @@ export async function CellFormPage({ id }: { id: string | null }) {
             maxPulseMilliamps: write(cellType.maxPulseUa, 3),
             massGrams: write(cellType.massMg, 3),
             shelfLifeMonths: write(cellType.shelfLifeMonths, 0),
-            unitCost: write(cellType.unitCostMinor, 2),
+            unitCost: writtenMoney(cellType.unitCostMinor, organisation.locale),
             reorderPoint: write(cellType.reorderPoint, 0),
             leadTimeDays: write(cellType.leadTimeDays, 0),
             points: cellType.points.map((p) => ({

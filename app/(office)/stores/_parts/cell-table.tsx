@@ -52,7 +52,7 @@ function columns({ places, organisation }: StoresView): Column<Row>[] {
           <Link href={`/stores/cells/${row.id}`} className="font-semibold hover:underline">
             {row.designation}
           </Link>{" "}
-          <span className="text-soft">{row.name}</span>
+          <span className="text-soft max-sm:hidden">{row.name}</span>
         </>
       ),
     },

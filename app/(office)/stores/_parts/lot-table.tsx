@@ -1,10 +1,11 @@
 import { PickFilter } from "@/components/forms/pick-filter";
 import { ChipLink, FilterBar } from "@/components/ui/chip-link";
 import { type Column, DataTable } from "@/components/ui/data-table";
+import { Pager } from "@/components/ui/pager";
 import { EmptyState } from "@/components/ui/states";
 import { formatDay } from "@/lib/present/format-day";
 import { formatNumber, NOTHING } from "@/lib/present/locale";
-import { hrefWith } from "@/lib/present/paging";
+import { hrefWith, pageSummary } from "@/lib/present/paging";
 import type { LotsView } from "@/lib/usecases/read-stores";
 import { CountDialog, MoveDialog } from "./lot-dialogs";
 
@@ -19,9 +20,11 @@ export interface LotTableProps {
 /** Lots with stock, or all there ever were. */
 export function LotTable({ view, params, mayChange }: LotTableProps) {
   const all = params.all === "yes";
+  const { page, pageSize, total } = view;
+  const summary = pageSummary(page, pageSize, total, "lots", view.organisation.locale);
   return (
     <>
-      <FilterBar summary={`${formatNumber(view.lots.length, view.organisation.locale)} lots`}>
+      <FilterBar summary={summary}>
         <PickFilter
           {...{ path: "/stores/lots", params, name: "type", label: "Cell type" }}
           all="All cells"
@@ -41,6 +44,12 @@ export function LotTable({ view, params, mayChange }: LotTableProps) {
             Receive a delivery, and its cells can be moved to the vans.
           </EmptyState>
         }
+      />
+      <Pager
+        page={page}
+        pageCount={Math.max(1, Math.ceil(total / pageSize))}
+        summary={summary}
+        hrefFor={(next) => hrefWith("/stores/lots", params, { page: next })}
       />
     </>
   );

@@ -7,6 +7,7 @@ import { mayUse } from "@/lib/server/may-use";
 import { requireActor } from "@/lib/server/session";
 import { listLotsInStores } from "@/lib/usecases/read-stores";
 import { receiveLot } from "@/lib/usecases/receive-lot";
+import { readLotParams } from "../_parts/lot-params";
 import { LotTable } from "../_parts/lot-table";
 import { ReceiveDialog } from "../_parts/receive-dialog";
 import { StoresTabs } from "../_parts/stores-tabs";
@@ -16,8 +17,7 @@ type Search = Promise<Record<string, string | undefined>>;
 
 export default async function LotsPage(props: { searchParams: Search }) {
   const [params, actor] = [await props.searchParams, await requireActor()];
-  const all = params.all === "yes";
-  const view = await listLotsInStores(deps(), actor, { cellTypeId: params.type ?? null, all });
+  const view = await listLotsInStores(deps(), actor, readLotParams(params));
   const mayChange = mayUse(receiveLot, actor);
   const today = dayOfInstant(view.now, view.organisation.timeZone);
   return (

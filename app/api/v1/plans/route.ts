@@ -1,4 +1,5 @@
-import { defineRoute, jsonBody } from "@/lib/server/define-route";
+import { defineRoute } from "@/lib/server/define-route";
+import { jsonBody } from "@/lib/server/request-body";
 import { planWeek } from "@/lib/usecases/plan-week";
 
 export const POST = defineRoute(planWeek, { input: (request) => jsonBody(request) });

@@ -1,4 +1,5 @@
-import { defineRoute, jsonBody } from "@/lib/server/define-route";
+import { defineRoute } from "@/lib/server/define-route";
+import { jsonBody } from "@/lib/server/request-body";
 import { postReadings } from "@/lib/usecases/post-readings";
 
 /** Logs up to 1,000 voltages; each item gets its own result, a repeat changes nothing. */

@@ -94,7 +94,9 @@ function columns({ organisation }: MailsView): Column<Row>[] {
     { key: "to", head: "To", cell: (row) => row.toEmail },
     {
       ...{ key: "subject", head: "Subject" },
-      cell: (row) => <span className="inline-block max-w-96 whitespace-normal">{row.subject}</span>,
+      cell: (row) => (
+        <span className="inline-block max-w-96 min-w-64 whitespace-normal">{row.subject}</span>
+      ),
     },
     { key: "state", head: "State", cell: (row) => <State row={row} view={organisation} /> },
     {

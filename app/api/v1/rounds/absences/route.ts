@@ -1,4 +1,5 @@
-import { defineRoute, jsonBody } from "@/lib/server/define-route";
+import { defineRoute } from "@/lib/server/define-route";
+import { jsonBody } from "@/lib/server/request-body";
 import { markAbsent } from "@/lib/usecases/mark-absent";
 
 export const POST = defineRoute(markAbsent, { input: (request) => jsonBody(request) });

@@ -20,9 +20,13 @@ export function AbsenceList({ view, mayChange }: { view: TechnicianView; mayChan
               ? day(absence.firstDay)
               : `${day(absence.firstDay)} – ${day(absence.lastDay)}`;
           return (
-            <li key={absence.id} className="flex flex-wrap items-center gap-x-4 px-3 py-1.5">
-              <span className={absence.lastDay < today ? "text-soft" : "font-medium"}>{words}</span>
-              <span className="flex-1 text-soft">{absence.reason}</span>
+            <li key={absence.id} className="flex items-center gap-x-4 px-3 py-1.5">
+              <div className="flex min-w-0 flex-1 flex-wrap gap-x-4">
+                <span className={absence.lastDay < today ? "text-soft" : "font-medium"}>
+                  {words}
+                </span>
+                <span className="text-soft">{absence.reason}</span>
+              </div>
               {mayChange && (
                 <ConfirmRemoval
                   id={absence.id}

@@ -1,4 +1,5 @@
-import { defineRoute, jsonBody } from "@/lib/server/define-route";
+import { defineRoute } from "@/lib/server/define-route";
+import { jsonBody } from "@/lib/server/request-body";
 import { pricePlanAct } from "@/lib/usecases/price-plan-act";
 
 export const POST = defineRoute(pricePlanAct, {

@@ -1,4 +1,5 @@
-import { defineRoute, jsonBody } from "@/lib/server/define-route";
+import { defineRoute } from "@/lib/server/define-route";
+import { jsonBody } from "@/lib/server/request-body";
 import { publishPlan } from "@/lib/usecases/publish-plan";
 import { previewPublication } from "@/lib/usecases/read-publication";
 

@@ -1,4 +1,5 @@
-import { defineRoute, jsonBody } from "@/lib/server/define-route";
+import { defineRoute } from "@/lib/server/define-route";
+import { jsonBody } from "@/lib/server/request-body";
 import { undoPlanEdit } from "@/lib/usecases/undo-plan-edit";
 
 export const POST = defineRoute(undoPlanEdit, {

@@ -105,6 +105,6 @@ function fromField({ field, assets }: Lived, plan: HistoryPlan): Omit<Scenario, 
 export function buildScenario(seed: string | number, now: Date): Scenario {
   const rng = createRng(`quillmere/${seed}`);
   const plan = planFor(now);
-  const staff = hireStaff(rng.fork("staff"));
+  const staff = hireStaff(rng.fork("staff"), plan.today);
   return { people: staff.people, ...fromField(live(staff, plan, rng), plan) };
 }

@@ -96,7 +96,7 @@ function bookAhead(field: Field, today: number): void {
     [1, [1, 3]],
     [2, [3]],
   ] as const) {
-    const day = nthWorkingDay(today, offset);
+    const day = offset === 0 ? today : nthWorkingDay(today + 1, offset - 1);
     const calling = callingSites(field, day);
     for (const index of keys) {
       const technician = field.technicians[index];

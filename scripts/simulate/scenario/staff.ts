@@ -72,8 +72,11 @@ export interface Staff {
   readonly technicians: readonly ScenarioTechnician[];
 }
 
-/** One account for each role, five technicians; the names are ordinary and invented. */
-export function hireStaff(rng: Rng): Staff {
+/**
+ * One account for each role, five technicians; the names are ordinary and invented. The first is
+ * the one whom the demonstration shows at work: on call where it begins on a weekend.
+ */
+export function hireStaff(rng: Rng, today: number): Staff {
   const given = rng.shuffle(GIVEN_NAMES);
   const family = rng.shuffle(FAMILY_NAMES);
   const fullName = (): string => `${given.pop() ?? "Anne"} ${family.pop() ?? "Walker"}`;
@@ -97,7 +100,7 @@ export function hireStaff(rng: Rng): Staff {
     vanKey: `van-${i + 1}`,
     vanName: `Van ${i + 1}`,
     tickets: t.tickets,
-    shifts: week(t.span, t.days),
+    shifts: week(t.span, i === 0 ? [...new Set([...t.days, weekdayOf(today)])] : t.days),
   }));
   return { people: [...office, ...field], technicians };
 }

@@ -44,6 +44,15 @@ describe("the board at a moment", () => {
   }, 240_000);
 });
 
+it("shows its technician at work on a weekend too", () => {
+  // 5 December 2026 is a Saturday.
+  const weekend = buildScenario(1, new Date("2026-12-05T08:00:00Z"));
+  const today = Math.floor(worldTime(new Date("2026-12-05T08:00:00Z")));
+  const shown = weekend.rounds.filter((r) => r.state === "published" && r.day === today);
+  expect(shown.map((round) => round.technicianKey)).toEqual(["technician-1"]);
+  expect(shown[0]!.stops.length).toBeGreaterThan(2);
+}, 240_000);
+
 describe("the history", () => {
   it("never has two packs in one asset, and every voltage lies in its pack's time", () => {
     const byAsset = new Map<string, (typeof s.packs)[number][]>();

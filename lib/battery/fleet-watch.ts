@@ -10,13 +10,23 @@
  */
 import type { EpochDays } from "../units";
 import { type DepthObservation, levelByDepth } from "./draw-observations";
-import { type BadLot, badLots, type DrawShift, drawShifts } from "./fleet-findings";
+import {
+  type BadLot,
+  badLots,
+  type DrawObservation,
+  type DrawShift,
+  drawShifts,
+} from "./fleet-findings";
 import { type FinishedPack, learnCohorts } from "./fleet-prior";
 
 /** A lot or a shift that moves dates by less is not worth a visit. */
 const WORTH = { lifeFactor: 0.85, drawFactor: 1.15 } as const;
 const LEAST_PACKS = 8;
 const LEAST_CHANCE = 1e-5;
+/** A stretch between two voltages is dated by its middle: a shift began up to this long before. */
+const SHIFT_SEEN_LATE_DAYS = 200;
+/** Observations looked at in each model; the search for a step takes the square of their number. */
+const MOST_OBSERVATIONS = 1500;
 
 /** A pack that came out, or one still in (never ended, its life so far). */
 export interface WatchedPack extends FinishedPack {
@@ -39,7 +49,8 @@ export function watchFleet(
   const suspect = new Set(lotsWorthTelling(packs).flatMap((lot) => lot.packKeys));
   const shifts = shiftsWorthTelling(observations.filter((o) => !suspect.has(o.packKey)));
   const shiftedAt = new Map(shifts.map((shift) => [shift.model, shift.at]));
-  const worn = (pack: WatchedPack) => pack.until > (shiftedAt.get(pack.model) ?? Infinity);
+  const worn = (pack: WatchedPack) =>
+    pack.until > (shiftedAt.get(pack.model) ?? Infinity) - SHIFT_SEEN_LATE_DAYS;
   return { lots: lotsWorthTelling(packs.filter((pack) => !worn(pack))), shifts };
 }
 
@@ -61,10 +72,25 @@ function lotsWorthTelling(packs: readonly WatchedPack[]): BadLot[] {
 }
 
 function shiftsWorthTelling(observations: readonly DepthObservation[]): DrawShift[] {
-  return drawShifts(levelByDepth(observations)).filter(
+  return drawShifts(thinned(levelByDepth(observations))).filter(
     (shift) =>
       Math.max(shift.factor, 1 / shift.factor) >= WORTH.drawFactor &&
       shift.chance <= LEAST_CHANCE &&
       shift.packKeys.length >= LEAST_PACKS,
   );
+}
+
+/** Every k-th observation in time of a model that has more than can be looked at. */
+function thinned(observations: readonly DrawObservation[]): DrawObservation[] {
+  const models = new Map<string, DrawObservation[]>();
+  for (const o of observations) {
+    const own = models.get(o.model);
+    if (own) own.push(o);
+    else models.set(o.model, [o]);
+  }
+  return [...models.values()].flatMap((own) => {
+    const step = own.length / Math.min(own.length, MOST_OBSERVATIONS);
+    const sorted = own.sort((a, b) => a.at - b.at);
+    return sorted.filter((_, i) => Math.floor(i / step) !== Math.floor((i - 1) / step));
+  });
 }

@@ -1,5 +1,6 @@
 import { deliverMail } from "@/lib/usecases/deliver-mail";
 import { judgeHistory } from "@/lib/usecases/judge-history";
+import { lookForFindings } from "@/lib/usecases/look-for-findings";
 import { runPlanJob } from "@/lib/usecases/run-plan-job";
 import { refreshForecasts } from "@/lib/usecases/refresh-forecasts";
 import { runImportApply, runImportCheck } from "@/lib/usecases/run-import";
@@ -14,6 +15,7 @@ export const HANDLERS: Record<JobName, (deps: Deps, data: never) => Promise<unkn
   "forecast-all": async (deps) => ({
     ...(await refreshForecasts(deps, system, { packIds: null })),
     ...(await judgeHistory(deps, system, {})),
+    ...(await lookForFindings(deps, system, {})),
   }),
   plan: (deps, data) => runPlanJob(deps, system, data),
   mail: (deps, data) => deliverMail(deps, system, data),

@@ -71,7 +71,6 @@ export const forecastWhatIf = defineUseCase({
       then: summaryOf(then),
       doubt,
       given: { ...given, designation: cell?.designation ?? null },
-      averageUa: Math.max(1, Math.round(then.drawUa.p50)),
     };
   },
 });

@@ -1,3 +1,4 @@
+import { dayShift } from "@/lib/present/day-shift";
 import {
   formatCurrent,
   formatTemperature,
@@ -16,6 +17,8 @@ export interface VoltageRow {
   readonly condition: string;
   readonly expected: string;
   readonly counts: string;
+  /** How far it alone moved the likely date; empty where that was not worked out. */
+  readonly moved: string;
   readonly remark: string;
   readonly by: string;
 }
@@ -36,7 +39,10 @@ const SOURCES: Readonly<Record<string, string>> = {
 };
 
 /** The pack's voltages, newest first, with how much each counted in the forecast and why. */
-export function voltageRows({ readings, forecast, organisation }: AssetView): VoltageRow[] {
+export function voltageRows(
+  { readings, forecast, organisation }: AssetView,
+  moved: Readonly<Record<string, number>>,
+): VoltageRow[] {
   const { locale } = organisation;
   const weights = new Map((forecast?.weights ?? []).map((w) => [w.readingId, w]));
   return readings
@@ -55,6 +61,7 @@ export function voltageRows({ readings, forecast, organisation }: AssetView): Vo
         counts: weight
           ? `${formatPercent(weight.weight, locale)} · ${REASONS[weight.reason] ?? weight.reason}`
           : NOTHING,
+        moved: r.id in moved ? dayShift(moved[r.id] ?? 0) : NOTHING,
         remark: remarkOf(r, locale),
         by: r.personName ?? r.apiKeyName ?? SOURCES[r.source] ?? r.source,
       };

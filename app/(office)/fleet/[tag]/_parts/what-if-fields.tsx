@@ -1,0 +1,55 @@
+"use client";
+
+import { NumberInput } from "@/components/ui/inputs";
+import { Select } from "@/components/ui/select";
+import type { WhatIfProps } from "./what-if";
+
+const KINDS = [
+  { value: "resting", label: "resting" },
+  { value: "loaded", label: "under load" },
+];
+
+type Props = Pick<WhatIfProps, "periodMinutes" | "states" | "otherCells"> & {
+  fault: (name: string) => string | undefined;
+};
+
+/** A voltage read today, other work, other cells: any of the three. */
+export function WhatIfFields({ periodMinutes, states, otherCells, fault }: Props) {
+  const field = (name: string) => ({ name, id: `what-if-${name}`, error: fault(name) });
+  return (
+    <div className="grid gap-x-8 gap-y-5 lg:grid-cols-3">
+      <fieldset className="min-w-0">
+        <legend className="caps mb-2">A voltage read today</legend>
+        <div className="grid gap-4 sm:grid-cols-2">
+          <NumberInput {...field("volts")} label="Voltage of the whole pack" unit="V" optional />
+          <Select {...field("kind")} label="How" options={KINDS} defaultValue="resting" />
+        </div>
+      </fieldset>
+      <fieldset className="min-w-0">
+        <legend className="caps mb-2">The device working otherwise</legend>
+        <div className="grid gap-4 sm:grid-cols-3">
+          <NumberInput
+            {...field("periodMinutes")}
+            label="One period every"
+            hint={`Now ${periodMinutes} min.`}
+            unit="min"
+            optional
+          />
+          <Select {...field("stateName")} label="Or the current of" options={states} />
+          <NumberInput {...field("stateMilliamps")} label="would be" unit="mA" optional />
+        </div>
+      </fieldset>
+      <fieldset className="min-w-0">
+        <legend className="caps mb-2">Other cells</legend>
+        <Select
+          {...field("cellTypeId")}
+          label="Had it run on"
+          hint={otherCells.length === 0 ? "The device model lists no other cells." : undefined}
+          placeholder="the cells that are in"
+          options={otherCells}
+          optional
+        />
+      </fieldset>
+    </div>
+  );
+}

@@ -9,7 +9,7 @@ import type { Decicelsius } from "@/lib/units";
 /** Lowest temperature at which the usual sheet lets a cell work, tenths of a degree. */
 export const COLDEST_DC: Readonly<Record<Chemistry, Decicelsius>> = {
   alkaline: -200,
-  "zinc-carbon": -50,
+  "zinc-carbon": -100,
   "li-fes2": -400,
   "li-socl2": -550,
   "li-mno2": -300,

@@ -1,5 +1,6 @@
 import { z } from "zod";
 import { listCellTypes } from "@/db/queries/cell-types";
+import { badLotIds } from "@/db/queries/findings";
 import { listLots } from "@/db/queries/lots";
 import { getOrganisation } from "@/db/queries/organisation";
 import {
@@ -44,13 +45,14 @@ export const listLotsInStores = defineUseCase({
   input: z.object({ cellTypeId: filterId, all: z.boolean().catch(false) }),
   run: async (deps, _actor, { cellTypeId, all }) => {
     const filter = { cellTypeId: cellTypeId ?? undefined, withStockOnly: !all };
-    const [organisation, lots, places, cellTypes] = await Promise.all([
+    const [organisation, lots, places, cellTypes, weakLots] = await Promise.all([
       getOrganisation(deps.db),
       listLots(deps.db, filter),
       listPlaces(deps.db),
       listCellTypes(deps.db),
+      badLotIds(deps.db),
     ]);
-    return { organisation, lots, places, cellTypes, now: deps.now() };
+    return { organisation, lots, places, cellTypes, weakLots, now: deps.now() };
   },
 });
 

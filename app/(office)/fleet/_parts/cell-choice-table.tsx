@@ -42,7 +42,7 @@ function Wrapped({ children, wide }: { children: ReactNode; wide?: boolean }) {
 
 function columns({ organisation, choice, subject }: CellComparison): Column<Option>[] {
   const { locale } = organisation;
-  const money = (minor: number) => formatMoney(Math.round(minor), organisation, { whole: true });
+  const money = (minor: number) => formatMoney(Math.round(minor), organisation);
   return [
     {
       key: "cell",

@@ -17,6 +17,7 @@ export function CellMisfits({ view }: { view: CellComparison }) {
               <span className="text-soft">{CHEMISTRY_WORDS[cell.spec.chemistry]}</span>
             </dt>
             <dd className="max-w-prose">
+              {cell.accepted && "The device model lists it, but "}
               {fit.misfits.map((misfit) => misfitWords(misfit, organisation.locale)).join("; ")}.
             </dd>
           </div>

@@ -10,6 +10,7 @@ import { horizonAxis, horizonHead, horizonRow, type HorizonRowModel } from "@/li
 import { hrefWith, pageSummary } from "@/lib/present/paging";
 import type { StripHeadModel } from "@/lib/present/strip-head";
 import type { HorizonView } from "@/lib/usecases/read-horizon";
+import { FindingMark } from "./finding-mark";
 import type { HorizonParams } from "./horizon-params";
 
 const STRIP_PX = 430;
@@ -25,7 +26,7 @@ export function HorizonTable({ view, params }: { view: HorizonView; params: Hori
     <>
       <DataTable
         caption="Packs in service by when they reach cut-off"
-        columns={columns(head)}
+        columns={columns(head, view.findings)}
         rows={models}
         rowKey={(row) => row.key}
         sort={{
@@ -68,7 +69,10 @@ function NothingDue({ narrowed }: { narrowed: boolean }) {
   );
 }
 
-function columns(head: StripHeadModel): Column<HorizonRowModel>[] {
+function columns(
+  head: StripHeadModel,
+  findings: HorizonView["findings"],
+): Column<HorizonRowModel>[] {
   return [
     {
       key: "tag",
@@ -90,6 +94,7 @@ function columns(head: StripHeadModel): Column<HorizonRowModel>[] {
       sortKey: "site",
       cell: (row) => (
         <span className="block max-w-60 truncate" title={`${row.asset}, ${row.site}`}>
+          <FindingMark kinds={findings.get(row.key)} />
           {row.asset} <span className="text-soft">{row.site}</span>
         </span>
       ),

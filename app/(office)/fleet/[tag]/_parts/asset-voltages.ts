@@ -8,6 +8,7 @@ import {
 import { formatPercent } from "@/lib/present/format-share";
 import { formatInstant } from "@/lib/present/format-time";
 import { NOTHING } from "@/lib/present/locale";
+import { readingReason, readingSource } from "@/lib/present/reading-words";
 import type { AssetView } from "@/lib/usecases/read-asset";
 
 export interface VoltageRow {
@@ -22,21 +23,6 @@ export interface VoltageRow {
   readonly remark: string;
   readonly by: string;
 }
-
-const REASONS: Readonly<Record<string, string>> = {
-  fits: "fits the curve",
-  doubtful: "does not fit the curve",
-  passivation: "a lithium cell still waking up under load",
-  "before-install": "read before this pack went in",
-  impossible: "cannot be this pack's voltage",
-};
-
-const SOURCES: Readonly<Record<string, string>> = {
-  form: "office",
-  csv: "file",
-  api: "gateway",
-  phone: "phone",
-};
 
 /** The pack's voltages, newest first, with how much each counted in the forecast and why. */
 export function voltageRows(
@@ -59,11 +45,11 @@ export function voltageRows(
           ? formatVoltBand(weight.expectedLowMv, weight.expectedHighMv, locale)
           : NOTHING,
         counts: weight
-          ? `${formatPercent(weight.weight, locale)} · ${REASONS[weight.reason] ?? weight.reason}`
+          ? `${formatPercent(weight.weight, locale)} · ${readingReason(weight.reason)}`
           : NOTHING,
         moved: r.id in moved ? dayShift(moved[r.id] ?? 0) : NOTHING,
         remark: remarkOf(r, locale),
-        by: r.personName ?? r.apiKeyName ?? SOURCES[r.source] ?? r.source,
+        by: r.personName ?? r.apiKeyName ?? readingSource(r.source),
       };
     })
     .reverse();

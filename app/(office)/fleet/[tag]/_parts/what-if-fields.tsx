@@ -15,28 +15,29 @@ type Props = Pick<WhatIfProps, "periodMinutes" | "states" | "otherCells"> & {
 
 /** A voltage read today, other work, other cells: any of the three. */
 export function WhatIfFields({ periodMinutes, states, otherCells, fault }: Props) {
-  const field = (name: string) => ({ name, id: `what-if-${name}`, error: fault(name) });
+  // None is required, so none is marked as optional: the legends say that any will do.
+  const field = (name: string) => {
+    return { name, id: `what-if-${name}`, error: fault(name), required: false };
+  };
   return (
-    <div className="grid gap-x-8 gap-y-5 lg:grid-cols-3">
+    <div className="grid gap-x-8 gap-y-5 xl:grid-cols-[4fr_7fr_3fr]">
       <fieldset className="min-w-0">
         <legend className="caps mb-2">A voltage read today</legend>
-        <div className="grid gap-4 sm:grid-cols-2">
-          <NumberInput {...field("volts")} label="Voltage of the whole pack" unit="V" optional />
+        <div className="grid items-end gap-4 sm:grid-cols-2">
+          <NumberInput {...field("volts")} label="Voltage of the pack" unit="V" />
           <Select {...field("kind")} label="How" options={KINDS} defaultValue="resting" />
         </div>
       </fieldset>
       <fieldset className="min-w-0">
         <legend className="caps mb-2">The device working otherwise</legend>
-        <div className="grid gap-4 sm:grid-cols-3">
+        <div className="grid items-end gap-4 sm:grid-cols-[2fr_3fr_2fr]">
           <NumberInput
             {...field("periodMinutes")}
-            label="One period every"
-            hint={`Now ${periodMinutes} min.`}
+            label={`Every, now ${periodMinutes} min`}
             unit="min"
-            optional
           />
           <Select {...field("stateName")} label="Or the current of" options={states} />
-          <NumberInput {...field("stateMilliamps")} label="would be" unit="mA" optional />
+          <NumberInput {...field("stateMilliamps")} label="would be" unit="mA" />
         </div>
       </fieldset>
       <fieldset className="min-w-0">
@@ -47,7 +48,6 @@ export function WhatIfFields({ periodMinutes, states, otherCells, fault }: Props
           hint={otherCells.length === 0 ? "The device model lists no other cells." : undefined}
           placeholder="the cells that are in"
           options={otherCells}
-          optional
         />
       </fieldset>
     </div>

@@ -23,8 +23,9 @@ export interface DoubtfulReading {
 const HARDLY_COUNTS = 0.5;
 
 /**
- * Readings of packs in service that were marked unlikely when logged, or that the standing
- * forecast hardly counts, and on which nobody has given a verdict; newest first.
+ * Readings of packs in service that the standing forecast hardly counts, or, not weighed yet, that
+ * were marked unlikely when logged, and on which nobody has given a verdict; newest first. One
+ * that was unlikely then and fits now (the one before it was the slip) is in doubt no longer.
  */
 export async function listDoubtfulReadings(
   db: Kysely<Database>,
@@ -47,8 +48,9 @@ export async function listDoubtfulReadings(
     left join api_key on api_key.id = r.api_key_id
     where p.removed_at is null
       and not exists (select 1 from reading_verdict v where v.reading_id = r.id)
-      and (r.doubt is not null
-        or ((w.w->>'weight')::float8 < ${HARDLY_COUNTS} and w.w->>'reason' <> 'passivation'))
+      and case when w.w is null then r.doubt is not null
+        else (w.w->>'weight')::float8 < ${HARDLY_COUNTS}
+          and (r.doubt is not null or w.w->>'reason' <> 'passivation') end
     order by r.at desc, r.id limit ${limit}`.execute(db);
   return { rows: result.rows, total: result.rows[0]?.total ?? 0 };
 }

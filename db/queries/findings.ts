@@ -79,6 +79,10 @@ export interface FindingRow {
   /** In service now, with what is left of the lot in stores and vans. */
   readonly packsConcerned: number;
   readonly cellsLeft: number;
+  /** Assets of the model whose firmware changed in the months before the shift, and when. */
+  readonly firmwareAssets: number;
+  readonly firmwareFrom: Date | null;
+  readonly firmwareTo: Date | null;
   /** Those that reach cut-off first. */
   readonly packs: readonly {
     readonly tag: string;
@@ -88,6 +92,8 @@ export interface FindingRow {
 }
 
 const PACKS_SHOWN = 12;
+/** A shift shows in voltages up to so long after its cause. */
+const FIRMWARE_DAYS_BEFORE = 240;
 
 /** Findings, open ones first, each with the packs in service that it concerns. */
 export async function listFindingRows(db: Kysely<Database>): Promise<FindingRow[]> {
@@ -99,6 +105,7 @@ export async function listFindingRows(db: Kysely<Database>): Promise<FindingRow[
       (select count(*)::int from concerned where finding_id = f.id) as packs_concerned,
       coalesce((select sum(ls.cells)::int from lot_stock ls join stock_place sp on sp.id = ls.place_id
         where ls.lot_id = f.lot_id and sp.kind <> 'return_box'), 0) as cells_left,
+      coalesce(e.assets, 0) as firmware_assets, e.began as firmware_from, e.ended as firmware_to,
       coalesce((select json_agg(row_to_json(first)) from (
         select a.tag, a.name, fc.p50 from concerned k join asset a on a.id = k.asset_id
         left join forecast fc on fc.pack_id = k.pack_id where k.finding_id = f.id
@@ -108,6 +115,10 @@ export async function listFindingRows(db: Kysely<Database>): Promise<FindingRow[
     left join cell_type c on c.id = l.cell_type_id
     left join device_model m on m.id = f.device_model_id
     left join person who on who.id = f.dismissed_by
+    left join lateral (select count(distinct ev.asset_id)::int as assets, min(ev.at) as began,
+      max(ev.at) as ended from device_event ev join asset own on own.id = ev.asset_id
+      where own.device_model_id = f.device_model_id and ev.kind = 'firmware_changed'
+        and ev.at between f.since - ${FIRMWARE_DAYS_BEFORE}::int and f.since + 30) e on true
     order by f.dismissed_at is not null, f.found_at desc, f.id`.execute(db);
   return result.rows;
 }

@@ -6,7 +6,7 @@ import { defineUseCase } from "./use-case";
 /** Shown at once; the others follow as verdicts are given. */
 const SHOWN = 200;
 
-/** Readings nobody has judged that were unlikely when logged or that forecasts hardly count. */
+/** Readings nobody has judged that forecasts hardly count, or that were unlikely when logged. */
 export const listReadingsInDoubt = defineUseCase({
   name: "list-readings-in-doubt",
   allow: { roles: ["administrator", "dispatcher", "supervisor"] },

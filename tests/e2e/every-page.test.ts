@@ -27,6 +27,8 @@ const OFFICE = [
   "/fleet/models",
   "/stores",
   "/record",
+  "/record/findings",
+  "/record/readings",
   "/record/costs",
 ];
 const SETTINGS = [

@@ -30,13 +30,9 @@ export default async function RecordPage(props: {
       <RecordTabs current="trust" />
       <TrustFigures view={view} />
       <TrustFilters view={view} params={params} />
-      <div className="grid grid-cols-[minmax(0,1fr)] gap-x-6 xl:grid-cols-[21rem_minmax(0,1fr)]">
-        <TrustPlots view={view} />
-        <div>
-          <TrustGroups view={view} />
-          <TrustSurprises view={view} />
-        </div>
-      </div>
+      <TrustGroups view={view} />
+      <TrustPlots view={view} />
+      <TrustSurprises view={view} />
     </main>
   );
 }

@@ -3,15 +3,14 @@ import { SpanStrip } from "@/components/charts/span-strip";
 import { StripHead } from "@/components/charts/strip-head";
 import { WaneDisc } from "@/components/charts/wane-disc";
 import { type Column, DataTable } from "@/components/ui/data-table";
-import { LinkButton } from "@/components/ui/button";
 import { Pager } from "@/components/ui/pager";
-import { EmptyState } from "@/components/ui/states";
 import { horizonAxis, horizonHead, horizonRow, type HorizonRowModel } from "@/lib/present/horizon";
 import { hrefWith, pageSummary } from "@/lib/present/paging";
 import type { StripHeadModel } from "@/lib/present/strip-head";
 import type { HorizonView } from "@/lib/usecases/read-horizon";
 import { FindingMark } from "./finding-mark";
 import type { HorizonParams } from "./horizon-params";
+import { NothingDue } from "./nothing-due";
 
 const STRIP_PX = 430;
 
@@ -47,25 +46,6 @@ export function HorizonTable({ view, params }: { view: HorizonView; params: Hori
         hrefFor={(page) => hrefWith("/horizon", params, { page })}
       />
     </>
-  );
-}
-
-function NothingDue({ narrowed }: { narrowed: boolean }) {
-  return (
-    <EmptyState
-      title="No pack reaches cut-off here."
-      action={
-        narrowed ? (
-          <LinkButton href="/horizon?within=all">Show all packs</LinkButton>
-        ) : (
-          <LinkButton href="/import">Import assets and readings</LinkButton>
-        )
-      }
-    >
-      {narrowed
-        ? "Widen the days or take a filter off."
-        : "Nothing in service is due in the next 90 days, or no pack has been entered yet."}
-    </EmptyState>
   );
 }
 

@@ -17,7 +17,7 @@ export default async function ReadingsInDoubtPage() {
     <main id="main" className="page">
       <PageHead
         title="Readings in doubt"
-        lede="Voltages of packs in service that were unlikely when logged, or that the forecast hardly counts. None is thrown away: confirm it, correct it or set it aside. The original stays, and the forecast follows."
+        lede="Voltages of packs in service that the forecast hardly counts. None is thrown away: confirm it, correct it or set it aside. The original stays, and the forecast follows."
       />
       <RecordTabs current="readings" />
       <DoubtTable view={view} mayJudge={mayUse(giveVerdict, actor)} />

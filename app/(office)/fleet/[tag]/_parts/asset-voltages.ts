@@ -42,7 +42,7 @@ export function voltageRows(
         volts: formatVolts(r.millivolts, locale),
         condition: `${r.kind === "loaded" ? `under load${load}` : "resting"}${air}`,
         expected: weight
-          ? formatVoltBand(weight.expectedLowMv, weight.expectedHighMv, locale)
+          ? formatVoltBand(Math.max(0, weight.expectedLowMv), weight.expectedHighMv, locale)
           : NOTHING,
         counts: weight
           ? `${formatPercent(weight.weight, locale)} · ${readingReason(weight.reason)}`

@@ -42,13 +42,16 @@ export function WhatIfFields({ periodMinutes, states, otherCells, fault }: Props
       </fieldset>
       <fieldset className="min-w-0">
         <legend className="caps mb-2">Other cells</legend>
-        <Select
-          {...field("cellTypeId")}
-          label="Had it run on"
-          hint={otherCells.length === 0 ? "The device model lists no other cells." : undefined}
-          placeholder="the cells that are in"
-          options={otherCells}
-        />
+        {otherCells.length === 0 ? (
+          <p className="text-soft">The device model lists no other cells.</p>
+        ) : (
+          <Select
+            {...field("cellTypeId")}
+            label="Had it run on"
+            placeholder="the cells that are in"
+            options={otherCells}
+          />
+        )}
       </fieldset>
     </div>
   );

@@ -14,13 +14,19 @@ export function FindingCard(props: { finding: Finding; view: FindingsView; maySe
   const { finding, view, maySettle } = props;
   const { locale, timeZone } = view.organisation;
   const words = findingWords(finding, locale);
-  const found = formatDay(dayOfInstant(finding.foundAt, timeZone), locale, { today: view.today });
+  const day = (at: Date) => formatDay(dayOfInstant(at, timeZone), locale, { today: view.today });
   return (
     <div id={`finding-${finding.id}`} className="scroll-mt-16">
-      <Section title={words.title} aside={`found ${found}`}>
+      <Section title={words.title} aside={`found ${day(finding.foundAt)}`}>
         <div className="grid gap-x-8 gap-y-4 px-3 py-3 lg:grid-cols-2">
           <div>
             <p className="max-w-prose text-lg">{words.evidence}</p>
+            {finding.firmwareFrom && finding.firmwareTo && (
+              <p className="mt-1 max-w-prose">
+                Firmware changed on {formatNumber(finding.firmwareAssets, locale)} of its assets
+                between {day(finding.firmwareFrom)} and {day(finding.firmwareTo)}.
+              </p>
+            )}
             <p className="mt-1 max-w-prose text-soft">{behind(finding, locale)}</p>
             <h3 className="caps mt-4 mb-1">What to do</h3>
             <ol className="flex max-w-prose list-decimal flex-col gap-1 pl-5">

@@ -78,7 +78,7 @@ function columns({ organisation }: ReadingsInDoubt, mayJudge: boolean): Column<R
       head: "Expected",
       align: "right",
       cell: ({ expectedLowMv: low, expectedHighMv: high }) =>
-        low === null || high === null ? NOTHING : formatVoltBand(low, high, locale),
+        low === null || high === null ? NOTHING : formatVoltBand(Math.max(0, low), high, locale),
     },
     {
       key: "why",

@@ -6,7 +6,7 @@ import { writtenNumber } from "@/lib/present/written-number";
 import type { WhatIf as Answer } from "@/lib/usecases/forecast-what-if";
 import { DrawDialog } from "./draw-dialog";
 import { LogDialog } from "./log-dialog";
-import type { WhatIfProps } from "./what-if";
+import type { WhatIfProps } from "./what-if-props";
 
 type Props = Pick<WhatIfProps, "context" | "modelHref" | "presentation"> & { answer: Answer };
 

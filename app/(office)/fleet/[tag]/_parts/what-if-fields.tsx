@@ -2,7 +2,7 @@
 
 import { NumberInput } from "@/components/ui/inputs";
 import { Select } from "@/components/ui/select";
-import type { WhatIfProps } from "./what-if";
+import type { WhatIfProps } from "./what-if-props";
 
 const KINDS = [
   { value: "resting", label: "resting" },

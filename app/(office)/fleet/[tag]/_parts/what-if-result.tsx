@@ -6,7 +6,7 @@ import { toneText } from "@/components/charts/tone-class";
 import { Notice } from "@/components/ui/notice";
 import { whatIfModel } from "@/lib/present/what-if";
 import type { WhatIf as Answer } from "@/lib/usecases/forecast-what-if";
-import type { WhatIfProps } from "./what-if";
+import type { WhatIfProps } from "./what-if-props";
 
 type Props = Pick<WhatIfProps, "subject" | "today" | "presentation"> & { answer: Answer };
 

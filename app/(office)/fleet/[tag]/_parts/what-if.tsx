@@ -3,28 +3,13 @@
 import { type FormEvent, useState, useTransition } from "react";
 import { Button } from "@/components/ui/button";
 import { Notice } from "@/components/ui/notice";
-import type { SelectOption } from "@/components/ui/select";
-import type { Presentation } from "@/lib/present/locale";
 import type { ActionState } from "@/lib/server/define-action";
 import type { WhatIf as Answer } from "@/lib/usecases/forecast-what-if";
 import { whatIfAction } from "../actions";
-import type { ActContext } from "./act-context";
 import { WhatIfActs } from "./what-if-acts";
 import { WhatIfFields } from "./what-if-fields";
+import type { WhatIfProps } from "./what-if-props";
 import { WhatIfResult } from "./what-if-result";
-
-export interface WhatIfProps {
-  /** null for those who may look and not record. */
-  context: ActContext | null;
-  subject: { readonly tag: string; readonly installedAt: Date };
-  today: string;
-  presentation: Presentation;
-  /** Where the duty cycle and the preferred cells are changed; null: not by this person. */
-  modelHref: string | null;
-  periodMinutes: string;
-  states: readonly SelectOption[];
-  otherCells: readonly SelectOption[];
-}
 
 /** Asks what the forecast would be; what was typed stays, nothing is kept. */
 export function WhatIf(props: WhatIfProps) {

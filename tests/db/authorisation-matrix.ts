@@ -79,6 +79,7 @@ export const MATRIX: Readonly<Record<string, string>> = {
   "dismiss-finding": "AD",
   "reopen-finding": "AD",
   "list-readings-in-doubt": "ADS",
+  "export-readings-in-doubt": "ADS",
   "explain-forecast": "ADS",
   "forecast-what-if": "ADS",
   "compare-cells": "ADS",

@@ -8,6 +8,7 @@ import { beforeAll, describe, expect, it } from "vitest";
 import { MS_PER_DAY } from "@/lib/units";
 import { compareCells } from "@/lib/usecases/compare-cells";
 import { explainForecast } from "@/lib/usecases/explain-forecast";
+import { exportReadingsInDoubt } from "@/lib/usecases/export-readings-in-doubt";
 import { forecastWhatIf } from "@/lib/usecases/forecast-what-if";
 import { giveVerdict } from "@/lib/usecases/give-verdict";
 import { listReadingsInDoubt } from "@/lib/usecases/list-readings-in-doubt";
@@ -171,6 +172,9 @@ describe("readings in doubt", () => {
     expect(list.rows.map((row) => row.id)).toEqual([slip]);
     expect(list.rows[0]).toMatchObject({ tag, millivolts: 1150, total: 1 });
     expect(list.rows[0]?.weight).toBeLessThan(0.5);
+    const csv = await exportReadingsInDoubt(deps, supervisor, {});
+    expect(csv.trim().split("\r\n")).toHaveLength(2);
+    expect(csv).toMatch(/,1\.15,resting,/);
     await giveVerdict(deps, dispatcher, {
       ...{ id: randomUUID(), readingId: slip, verdict: "corrected", correctedVolts: "2.70" },
       note: "Read on the wrong range.",

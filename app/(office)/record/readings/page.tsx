@@ -1,4 +1,5 @@
 import type { Metadata } from "next";
+import { LinkButton } from "@/components/ui/button";
 import { PageHead } from "@/components/ui/page-head";
 import { deps } from "@/lib/server/deps";
 import { mayUse } from "@/lib/server/may-use";
@@ -18,6 +19,11 @@ export default async function ReadingsInDoubtPage() {
       <PageHead
         title="Readings in doubt"
         lede="Voltages of packs in service that the forecast hardly counts. None is thrown away: confirm it, correct it or set it aside. The original stays, and the forecast follows."
+        actions={
+          <LinkButton href="/api/v1/exports/readings-in-doubt" download>
+            Export CSV
+          </LinkButton>
+        }
       />
       <RecordTabs current="readings" />
       <DoubtTable view={view} mayJudge={mayUse(giveVerdict, actor)} />

@@ -37,7 +37,8 @@ export interface WhatIfModel {
   readonly shift: string;
 }
 
-const AXIS_PX = 620;
+/** On a desk, and on a phone 390 px wide. */
+const AXIS_PX = { wide: 620, narrow: 324 } as const;
 /** More likely out than not. */
 const OUT = 0.5;
 
@@ -47,6 +48,7 @@ export interface WhatIfInput {
   readonly today: IsoDay;
   readonly now: ComparedForecast;
   readonly then: ComparedForecast;
+  readonly room: keyof typeof AXIS_PX;
 }
 
 /** The forecast as it stands and as it would be: two strips on one axis, the dates in words. */
@@ -59,13 +61,21 @@ export function whatIfModel(input: WhatIfInput, presentation: Presentation): Wha
 }
 
 /** From a little before today to past both windows, or to where their middles still show. */
-function axisOf({ today, now, then }: WhatIfInput, { locale, timeZone }: Presentation): TimeAxis {
+function axisOf(
+  { today, now, then, room }: WhatIfInput,
+  { locale, timeZone }: Presentation,
+): TimeAxis {
   const day = (at: Date) => dayNumber(dayOfInstant(at, timeZone));
   const start = dayNumber(today) - 45;
   const middles = Math.max(day(now.p50), day(then.p50), dayNumber(today));
   const ends = Math.max(day(now.p95), day(then.p95));
   const to = Math.max(middles + 30, Math.min(ends + 14, middles + 2 * (middles - start)));
-  return timeAxis({ from: dayFromNumber(start), to: dayFromNumber(to), widthPx: AXIS_PX, locale });
+  return timeAxis({
+    from: dayFromNumber(start),
+    to: dayFromNumber(to),
+    widthPx: AXIS_PX[room],
+    locale,
+  });
 }
 
 function rowOf(

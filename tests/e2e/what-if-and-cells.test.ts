@@ -83,20 +83,20 @@ describe.each(["desktop", "phone"] as Size[])("a dispatcher at %s size", (size) 
   });
 
   it("is told by its field what makes no sense, and keeps what was typed", async () => {
-    await form().getByLabel("Voltage of the pack").fill("99");
+    await form().getByLabel("Voltage of the pack").fill("9.9");
     await compare();
     await page
       .getByText(/is more than this pack can show/)
       .first()
       .waitFor();
-    expect(await form().getByLabel("Voltage of the pack").inputValue()).toBe("99");
+    expect(await form().getByLabel("Voltage of the pack").inputValue()).toBe("9.9");
   });
 
   it("sees both strips and dates side by side; nothing is kept", async () => {
     const before = await counts();
     await form().getByLabel("Voltage of the pack").fill("");
     await form()
-      .getByLabel(/^Every, now/)
+      .getByLabel(/^Period, now/)
       .fill("5");
     await compare();
     await answer().waitFor();
@@ -109,7 +109,7 @@ describe.each(["desktop", "phone"] as Size[])("a dispatcher at %s size", (size) 
 
   it("compares other cells, and is told where that is decided", async () => {
     await form()
-      .getByLabel(/^Every, now/)
+      .getByLabel(/^Period, now/)
       .fill("");
     await form().getByLabel("Had it run on").selectOption({ label: "FR6" });
     await compare();

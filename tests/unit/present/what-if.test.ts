@@ -57,7 +57,12 @@ describe("the two strips", () => {
     p50: at("2026-12-15"),
     p95: at("2027-01-02"),
   };
-  const input = { tag: "QF-1", installedAt: at("2025-03-01"), today: "2026-12-01" };
+  const input = {
+    tag: "QF-1",
+    installedAt: at("2025-03-01"),
+    today: "2026-12-01",
+    room: "wide" as const,
+  };
   const model = whatIfModel({ ...input, now: forecast, then: earlier }, presentation);
 
   test("share one axis that holds both windows", () => {

@@ -33,7 +33,7 @@ export function WhatIfFields({ periodMinutes, states, otherCells, fault }: Props
         <div className="grid items-end gap-4 sm:grid-cols-[2fr_3fr_2fr]">
           <NumberInput
             {...field("periodMinutes")}
-            label={`Every, now ${periodMinutes} min`}
+            label={`Period, now ${periodMinutes} min`}
             unit="min"
           />
           <Select {...field("stateName")} label="Or the current of" options={states} />

@@ -6,13 +6,15 @@ import { toneText } from "@/components/charts/tone-class";
 import { Notice } from "@/components/ui/notice";
 import { whatIfModel } from "@/lib/present/what-if";
 import type { WhatIf as Answer } from "@/lib/usecases/forecast-what-if";
+import { WhatIfNarrow } from "./what-if-narrow";
 import type { WhatIfProps } from "./what-if-props";
 
 type Props = Pick<WhatIfProps, "subject" | "today" | "presentation"> & { answer: Answer };
 
 /** Both forecasts on one axis, their dates side by side, and the difference in days. */
 export function WhatIfResult({ answer, subject, today, presentation }: Props) {
-  const model = whatIfModel({ ...subject, today, ...answer }, presentation);
+  const asked = { ...subject, today, ...answer };
+  const model = whatIfModel({ ...asked, room: "wide" }, presentation);
   return (
     <div className="mt-4 border-t border-rule pt-3">
       <p className="mb-2 text-lg">
@@ -26,9 +28,10 @@ export function WhatIfResult({ answer, subject, today, presentation }: Props) {
         role="region"
         aria-label="Forecast as it is and what if"
         tabIndex={0}
-        className="relative overflow-x-auto border border-rule"
+        className="relative overflow-x-auto border-rule md:border"
       >
-        <table className="w-full border-collapse">
+        <WhatIfNarrow model={whatIfModel({ ...asked, room: "narrow" }, presentation)} />
+        <table className="w-full border-collapse max-md:hidden">
           <thead>
             <tr className="border-b border-ink">
               <th scope="col" className="caps px-2.5 py-1.5 text-left align-bottom">

@@ -83,6 +83,8 @@ const JUDGED = [
   "pack.removedAt",
   "pack.stoppedAt",
   "pack.reasonOut",
+  "outcome.forecastAt",
+  "outcome.endedAt",
   "outcome.p05",
   "outcome.p20",
   "outcome.p50",

@@ -180,6 +180,28 @@ export interface DutyState {
   position: number;
 }
 
+export interface Finding {
+  chance: number;
+  deviceModelId: string | null;
+  dismissedAt: Timestamp | null;
+  dismissedBecause: string | null;
+  dismissedBy: string | null;
+  /**
+   * Life of the lot's packs against the others', or draw after against before.
+   */
+  factor: number;
+  foundAt: Timestamp;
+  id: string;
+  kind: string;
+  lotId: string | null;
+  /**
+   * Packs whose evidence it rests on.
+   */
+  packsBehind: number;
+  seenAt: Timestamp;
+  since: string | null;
+}
+
 export interface Forecast {
   basis: Json;
   cdfDays: number[];
@@ -585,6 +607,7 @@ export interface DB {
   digestSetting: DigestSetting;
   drawMeasurement: DrawMeasurement;
   dutyState: DutyState;
+  finding: Finding;
   forecast: Forecast;
   forecastOutcome: ForecastOutcome;
   importRun: ImportRun;

@@ -1,5 +1,6 @@
 import { deliverMail } from "@/lib/usecases/deliver-mail";
 import { judgeHistory } from "@/lib/usecases/judge-history";
+import { lookForFindings } from "@/lib/usecases/look-for-findings";
 import { runPlanJob } from "@/lib/usecases/run-plan-job";
 import { refreshForecasts } from "@/lib/usecases/refresh-forecasts";
 import { runImportApply, runImportCheck } from "@/lib/usecases/run-import";
@@ -11,9 +12,11 @@ const system: Actor = { kind: "system" };
 /** What the worker does for each queue. Every handler may run twice for one job. */
 export const HANDLERS: Record<JobName, (deps: Deps, data: never) => Promise<unknown>> = {
   forecast: (deps, data) => refreshForecasts(deps, system, data),
+  // Judging comes first: packs that came out teach the forecasts of those still in.
   "forecast-all": async (deps) => ({
-    ...(await refreshForecasts(deps, system, { packIds: null })),
     ...(await judgeHistory(deps, system, {})),
+    ...(await refreshForecasts(deps, system, { packIds: null })),
+    ...(await lookForFindings(deps, system, {})),
   }),
   plan: (deps, data) => runPlanJob(deps, system, data),
   mail: (deps, data) => deliverMail(deps, system, data),

@@ -20,15 +20,17 @@ export const readAsset = defineUseCase({
   run: async (deps, _actor, { tag }) => {
     const asset = await findAsset(deps.db, tag);
     if (!asset) throw notFound(`The asset ${tag}`);
-    const [organisation, model, packs, events, visits, draws, acts] = await Promise.all([
-      getOrganisation(deps.db),
-      findDeviceModel(deps.db, asset.deviceModelId),
-      listAssetPacks(deps.db, asset.id),
-      listDeviceEvents(deps.db, asset.id),
-      listAssetVisits(deps.db, asset.id),
-      listDrawMeasurements(deps.db, asset.id),
-      listAudit(deps.db, "asset", asset.id),
-    ]);
+    const [organisation, model, packs, events, visits, draws, acts, acceptedCells] =
+      await Promise.all([
+        getOrganisation(deps.db),
+        findDeviceModel(deps.db, asset.deviceModelId),
+        listAssetPacks(deps.db, asset.id),
+        listDeviceEvents(deps.db, asset.id),
+        listAssetVisits(deps.db, asset.id),
+        listDrawMeasurements(deps.db, asset.id),
+        listAudit(deps.db, "asset", asset.id),
+        listAcceptedCellTypes(deps.db, asset.deviceModelId),
+      ]);
     const pack = packs.find((p) => p.removedAt === null) ?? null;
     const [readings, forecast] = await Promise.all([
       pack ? listPackReadings(deps.db, pack.id) : [],
@@ -36,7 +38,7 @@ export const readAsset = defineUseCase({
     ]);
     return {
       ...{ organisation, asset, model, packs, pack, readings, forecast },
-      ...{ events, visits, draws, acts, now: deps.now() },
+      ...{ events, visits, draws, acts, acceptedCells, now: deps.now() },
     };
   },
 });

@@ -13,6 +13,7 @@ import {
   outNow,
 } from "@/db/queries/horizon-figures";
 import { listCrewNames } from "@/db/queries/crew-names";
+import { findingKindsByPack } from "@/db/queries/findings";
 import { getOrganisation } from "@/db/queries/organisation";
 import { dayFromNumber, dayNumber, dayOfInstant } from "@/lib/present/calendar-days";
 import { countQuantile, poissonBinomial } from "@/lib/stats/poisson-binomial";
@@ -52,7 +53,7 @@ export const readHorizon = defineUseCase({
       notBooked: input.notBooked,
       search: input.search,
     };
-    const [rows, weeks, figures, crews] = await Promise.all([
+    const [rows, weeks, figures, crews, findings] = await Promise.all([
       horizonPage(
         deps.db,
         filter,
@@ -67,8 +68,9 @@ export const readHorizon = defineUseCase({
       cutoffsByWeek(deps.db, filter, WEEKS, from),
       readFigures(deps, input.crew, from),
       listCrewNames(deps.db),
+      findingKindsByPack(deps.db),
     ]);
-    return { organisation, ...from, input, rows, weeks, figures, crews };
+    return { organisation, ...from, input, rows, weeks, figures, crews, findings };
   },
 });
 export type HorizonView = Awaited<ReturnType<typeof readHorizon>>;

@@ -1,5 +1,6 @@
 import { z } from "zod";
 import { listCellTypes } from "@/db/queries/cell-types";
+import { badLotIds } from "@/db/queries/findings";
 import { countLots, listLots } from "@/db/queries/lots";
 import { getOrganisation } from "@/db/queries/organisation";
 import {
@@ -48,15 +49,16 @@ export const listLotsInStores = defineUseCase({
   }),
   run: async (deps, _actor, { cellTypeId, all, page }) => {
     const filter = { cellTypeId: cellTypeId ?? undefined, withStockOnly: !all };
-    const [organisation, lots, total, places, cellTypes] = await Promise.all([
+    const [organisation, lots, total, places, cellTypes, weakLots] = await Promise.all([
       getOrganisation(deps.db),
       listLots(deps.db, { ...filter, ...pageWindow(page) }),
       countLots(deps.db, filter),
       listPlaces(deps.db),
       listCellTypes(deps.db),
+      badLotIds(deps.db),
     ]);
-    const now = deps.now();
-    return { organisation, lots, total, page, pageSize: PAGE_SIZE, places, cellTypes, now };
+    const stock = { lots, total, page, pageSize: PAGE_SIZE, places, cellTypes, weakLots };
+    return { organisation, ...stock, now: deps.now() };
   },
 });
 

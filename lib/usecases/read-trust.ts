@@ -2,11 +2,12 @@ import { z } from "zod";
 import { listCrewNames } from "@/db/queries/crew-names";
 import { listOutcomes, type OutcomeLine } from "@/db/queries/outcomes";
 import { getOrganisation } from "@/db/queries/organisation";
+import { surpriseFacts } from "@/db/queries/surprise-facts";
 import { dayOfInstant } from "@/lib/present/calendar-days";
 import { expectedEnds, reliabilityCurve, type StatedEnd } from "@/lib/stats/reliability";
 import { MS_PER_DAY } from "@/lib/units";
 import { groupBy } from "./forecast-input";
-import { defineUseCase } from "./use-case";
+import { type Deps, defineUseCase } from "./use-case";
 
 export const TRUST_GROUPS = ["chemistry", "model", "crew", "quarter"] as const;
 export type TrustGroup = (typeof TRUST_GROUPS)[number];
@@ -44,11 +45,33 @@ export const readTrust = defineUseCase({
       groups: [...groupBy(lines, named)]
         .map(([name, members]) => ({ name, ...tally(members) }))
         .sort((a, b) => (input.group === "quarter" ? 0 : b.removals - a.removals)),
-      surprises: lines.filter(isSurprise).slice(0, SURPRISES_SHOWN),
+      predictions: lines.map(predictionOf),
+      surprises: await explained(deps, lines.filter(isSurprise).slice(0, SURPRISES_SHOWN)),
       surprising: lines.filter(isSurprise).length,
     };
   },
 });
+
+/** Each with what may explain it. */
+async function explained(deps: Deps, lines: readonly OutcomeLine[]) {
+  const facts = await surpriseFacts(
+    deps.db,
+    lines.map((line) => line.packId),
+  );
+  return lines.map((line) => ({ ...line, facts: facts.get(line.packId) ?? null }));
+}
+
+/** Days left at the visit before, as said and as found. */
+function predictionOf(line: OutcomeLine) {
+  const from = line.forecastAt.getTime();
+  return {
+    key: line.packId,
+    saidDays: (line.p50.getTime() - from) / MS_PER_DAY,
+    foundDays: (line.endedAt.getTime() - from) / MS_PER_DAY,
+    stopped: !line.censored,
+  };
+}
+
 export type TrustView = Awaited<ReturnType<typeof readTrust>>;
 
 function statedOf(line: OutcomeLine): StatedEnd {

@@ -76,6 +76,16 @@ export const MATRIX: Readonly<Record<string, string>> = {
   "export-audit": "AS",
   "refresh-forecasts": "W",
   "judge-history": "W",
+  "look-for-findings": "W",
+  "list-findings": "ADS",
+  "list-asset-findings": "ADS",
+  "dismiss-finding": "AD",
+  "reopen-finding": "AD",
+  "list-readings-in-doubt": "ADS",
+  "export-readings-in-doubt": "ADS",
+  "explain-forecast": "ADS",
+  "forecast-what-if": "ADS",
+  "compare-cells": "ADS",
 
   // The register
   "list-assets": "ADS r",

@@ -28,6 +28,8 @@ const OFFICE = [
   "/stores",
   "/stores/demand",
   "/record",
+  "/record/findings",
+  "/record/readings",
   "/record/costs",
 ];
 const SETTINGS = [

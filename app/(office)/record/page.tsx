@@ -7,7 +7,7 @@ import { RecordTabs } from "./_parts/record-tabs";
 import { TrustFigures } from "./_parts/trust-figures";
 import { TrustFilters } from "./_parts/trust-filters";
 import { TrustGroups } from "./_parts/trust-groups";
-import { TrustPlot } from "./_parts/trust-plot";
+import { TrustPlots } from "./_parts/trust-plots";
 import { TrustSurprises } from "./_parts/trust-surprises";
 
 export const metadata: Metadata = { title: "Record" };
@@ -30,10 +30,8 @@ export default async function RecordPage(props: {
       <RecordTabs current="trust" />
       <TrustFigures view={view} />
       <TrustFilters view={view} params={params} />
-      <div className="grid grid-cols-[minmax(0,1fr)] gap-x-6 xl:grid-cols-[21rem_minmax(0,1fr)]">
-        <TrustPlot view={view} />
-        <TrustGroups view={view} />
-      </div>
+      <TrustGroups view={view} />
+      <TrustPlots view={view} />
       <TrustSurprises view={view} />
     </>
   );

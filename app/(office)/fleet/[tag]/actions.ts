@@ -3,6 +3,7 @@
 import { revalidatePath } from "next/cache";
 import { defineAction } from "@/lib/server/define-action";
 import { changeAssetState } from "@/lib/usecases/change-asset-state";
+import { forecastWhatIf } from "@/lib/usecases/forecast-what-if";
 import { giveVerdict } from "@/lib/usecases/give-verdict";
 import { installPack } from "@/lib/usecases/install-pack";
 import { measureDraw } from "@/lib/usecases/measure-draw";
@@ -54,4 +55,14 @@ export const changeStateAction = defineAction(
   changeAssetState,
   (form) => texts(form, "assetId", "state") as never,
   renew,
+);
+/** Asks and changes nothing, so there is nothing to renew. */
+export const whatIfAction = defineAction(
+  forecastWhatIf,
+  (form) =>
+    texts(
+      form,
+      ...(["tag", "volts", "kind", "periodMinutes", "stateName", "stateMilliamps"] as const),
+      "cellTypeId",
+    ) as never,
 );

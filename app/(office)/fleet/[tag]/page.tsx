@@ -1,14 +1,13 @@
 import type { Metadata } from "next";
-import { deps } from "@/lib/server/deps";
-import { orNotFound } from "@/lib/server/or-not-found";
-import { mayUse } from "@/lib/server/may-use";
-import { requireActor } from "@/lib/server/session";
-import { readAsset, readSwapChoices } from "@/lib/usecases/read-asset";
+import { actContext } from "./_parts/act-context";
 import { AssetActs } from "./_parts/asset-acts";
+import { AssetFindingNotices } from "./_parts/asset-findings";
 import { AssetHead } from "./_parts/asset-head";
 import { AssetHistory } from "./_parts/asset-history-table";
 import { AssetPack } from "./_parts/asset-pack";
 import { AssetVoltages } from "./_parts/asset-voltage-table";
+import { AssetWhatIf } from "./_parts/asset-what-if";
+import { loadAssetPage } from "./_parts/load-asset-page";
 
 interface Props {
   params: Promise<{ tag: string }>;
@@ -20,16 +19,15 @@ export async function generateMetadata(props: Props): Promise<Metadata> {
 
 export default async function AssetPage(props: Props) {
   const tag = decodeURIComponent((await props.params).tag);
-  const actor = await requireActor();
-  const view = await orNotFound(() => readAsset(deps(), actor, { tag }));
-  const choices = mayUse(readSwapChoices, actor)
-    ? await readSwapChoices(deps(), actor, { tag })
-    : null;
+  const { view, choices, explanation, findings } = await loadAssetPage(tag);
+  const context = choices && actContext(view, choices);
   return (
     <>
-      <AssetHead view={view} acts={choices && <AssetActs view={view} choices={choices} />} />
-      <AssetPack view={view} />
-      <AssetVoltages view={view} mayJudge={choices !== null} />
+      <AssetHead view={view} acts={context && <AssetActs view={view} context={context} />} />
+      <AssetFindingNotices view={view} findings={findings} />
+      <AssetPack view={view} explanation={explanation} />
+      <AssetWhatIf view={view} context={context} />
+      <AssetVoltages view={view} moved={explanation?.movedByReading ?? {}} mayJudge={!!choices} />
       <AssetHistory view={view} />
     </>
   );

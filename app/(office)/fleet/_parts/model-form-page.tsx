@@ -1,3 +1,4 @@
+import { LinkButton } from "@/components/ui/button";
 import { PageHead } from "@/components/ui/page-head";
 import { writtenMoney, writtenNumber } from "@/lib/present/written-number";
 import { deps } from "@/lib/server/deps";
@@ -19,6 +20,9 @@ export async function ModelFormPage({ id }: { id: string | null }) {
       <PageHead
         crumb={{ label: "Device models", href: "/fleet/models" }}
         title={model?.name ?? "Add a device model"}
+        actions={
+          model && <LinkButton href={`/fleet/models/${model.id}/cells`}>Which cell?</LinkButton>
+        }
       />
       <ModelForm
         id={model?.id ?? deps().newId()}

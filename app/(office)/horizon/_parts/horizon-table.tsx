@@ -3,14 +3,14 @@ import { SpanStrip } from "@/components/charts/span-strip";
 import { StripHead } from "@/components/charts/strip-head";
 import { WaneDisc } from "@/components/charts/wane-disc";
 import { type Column, DataTable } from "@/components/ui/data-table";
-import { LinkButton } from "@/components/ui/button";
 import { Pager } from "@/components/ui/pager";
-import { EmptyState } from "@/components/ui/states";
 import { horizonAxis, horizonHead, horizonRow, type HorizonRowModel } from "@/lib/present/horizon";
 import { hrefWith, pageSummary } from "@/lib/present/paging";
 import type { StripHeadModel } from "@/lib/present/strip-head";
 import type { HorizonView } from "@/lib/usecases/read-horizon";
+import { FindingMark } from "./finding-mark";
 import type { HorizonParams } from "./horizon-params";
+import { NothingDue } from "./nothing-due";
 
 const STRIP_PX = 430;
 
@@ -25,7 +25,7 @@ export function HorizonTable({ view, params }: { view: HorizonView; params: Hori
     <>
       <DataTable
         caption="Packs in service by when they reach cut-off"
-        columns={columns(head)}
+        columns={columns(head, view.findings)}
         rows={models}
         rowKey={(row) => row.key}
         sort={{
@@ -49,26 +49,10 @@ export function HorizonTable({ view, params }: { view: HorizonView; params: Hori
   );
 }
 
-function NothingDue({ narrowed }: { narrowed: boolean }) {
-  return (
-    <EmptyState
-      title="No pack reaches cut-off here."
-      action={
-        narrowed ? (
-          <LinkButton href="/horizon?within=all">Show all packs</LinkButton>
-        ) : (
-          <LinkButton href="/import">Import assets and readings</LinkButton>
-        )
-      }
-    >
-      {narrowed
-        ? "Widen the days or take a filter off."
-        : "Nothing in service is due in the next 90 days, or no pack has been entered yet."}
-    </EmptyState>
-  );
-}
-
-function columns(head: StripHeadModel): Column<HorizonRowModel>[] {
+function columns(
+  head: StripHeadModel,
+  findings: HorizonView["findings"],
+): Column<HorizonRowModel>[] {
   return [
     {
       key: "tag",
@@ -90,6 +74,7 @@ function columns(head: StripHeadModel): Column<HorizonRowModel>[] {
       sortKey: "site",
       cell: (row) => (
         <span className="block max-w-60 truncate" title={`${row.asset}, ${row.site}`}>
+          <FindingMark kinds={findings.get(row.key)} />
           {row.asset} <span className="text-soft">{row.site}</span>
         </span>
       ),

@@ -1,13 +1,14 @@
 import { Tabs } from "@/components/ui/tabs";
 
-export function RecordTabs({ current }: { current: "trust" | "costs" }) {
-  return (
-    <Tabs
-      label="Record"
-      items={[
-        { label: "Trust", href: "/record", current: current === "trust" },
-        { label: "Costs", href: "/record/costs", current: current === "costs" },
-      ]}
-    />
-  );
+const TABS = [
+  ["trust", "Trust", "/record"],
+  ["findings", "Findings", "/record/findings"],
+  ["readings", "Readings in doubt", "/record/readings"],
+  ["costs", "Costs", "/record/costs"],
+] as const;
+
+/** The parts of the record. */
+export function RecordTabs({ current }: { current: (typeof TABS)[number][0] }) {
+  const items = TABS.map(([key, label, href]) => ({ label, href, current: key === current }));
+  return <Tabs label="Record" items={items} />;
 }

@@ -6,6 +6,7 @@ import { dayOfInstant } from "@/lib/present/calendar-days";
 import { formatDay, formatWindow } from "@/lib/present/format-day";
 import { formatPercent } from "@/lib/present/format-share";
 import { NOTHING } from "@/lib/present/locale";
+import { surpriseCause } from "@/lib/present/surprise-cause";
 import type { TrustView } from "@/lib/usecases/read-trust";
 
 type Surprise = TrustView["surprises"][number];
@@ -74,5 +75,26 @@ function columns({ organisation, today }: TrustView): Column<Surprise>[] {
       cell: (row) => (row.censored ? "still running" : `stopped ${day(row.stoppedAt)}`),
     },
     { key: "removed", head: "Came out", cell: (row) => day(row.removedAt) },
+    {
+      key: "cause",
+      head: "Likely cause",
+      cell: (row) => (
+        <span className="block min-w-44 py-1 whitespace-normal">{causeOf(row, organisation)}</span>
+      ),
+    },
   ];
+}
+
+function causeOf(row: Surprise, { locale, timeZone }: TrustView["organisation"]): string {
+  const { facts } = row;
+  const told = {
+    ...{ readings: facts?.readings ?? 0, monthlyMeanDc: facts?.monthlyMeanDc ?? null },
+    ...{ weakLot: facts?.weakLot ?? null, drawShiftSince: facts?.drawShiftSince ?? null },
+    drawFactor: facts?.drawFactor ?? null,
+  };
+  const endedOn = dayOfInstant(row.endedAt, timeZone);
+  return surpriseCause(
+    { ...told, endedOn, stopped: !row.censored, reasonOut: row.reasonOut },
+    locale,
+  );
 }

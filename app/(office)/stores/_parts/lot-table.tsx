@@ -1,3 +1,4 @@
+import Link from "next/link";
 import { PickFilter } from "@/components/forms/pick-filter";
 import { ChipLink, FilterBar } from "@/components/ui/chip-link";
 import { type Column, DataTable } from "@/components/ui/data-table";
@@ -74,7 +75,16 @@ function columns(view: LotsView, mayChange: boolean): Column<Row>[] {
       key: "code",
       head: "Lot",
       rowHeader: true,
-      cell: (row) => <span className="font-mono text-xs font-semibold">{row.code}</span>,
+      cell: (row) => (
+        <>
+          <span className="font-mono text-xs font-semibold">{row.code}</span>{" "}
+          {view.weakLots.has(row.id) && (
+            <Link href="/record/findings" className="textlink">
+              weak lot
+            </Link>
+          )}
+        </>
+      ),
     },
     { key: "type", head: "Cells", cell: (row) => row.designation },
     { key: "made", head: "Made", cell: (row) => day(row.madeOn) },

@@ -1,4 +1,6 @@
-import type { SwapChoices } from "@/lib/usecases/read-asset";
+import { dayOfInstant } from "@/lib/present/calendar-days";
+import { formatTime } from "@/lib/present/format-time";
+import type { AssetView, SwapChoices } from "@/lib/usecases/read-asset";
 
 /** What the forms of an asset need to know; plain data, as it goes to the browser. */
 export interface ActContext {
@@ -10,4 +12,15 @@ export interface ActContext {
   readonly series: number;
   readonly parallel: number;
   readonly choices: SwapChoices;
+}
+
+/** The context of an asset's forms. */
+export function actContext(view: AssetView, choices: SwapChoices): ActContext {
+  const { asset, pack, organisation, now } = view;
+  const day = dayOfInstant(now, organisation.timeZone);
+  const clock = formatTime(now, { ...organisation, locale: "en-GB" }).slice(0, 5);
+  return {
+    ...{ assetId: asset.id, tag: asset.tag, now: `${day}T${clock}`, choices },
+    ...{ packId: pack?.id ?? null, series: asset.series, parallel: asset.parallel },
+  };
 }

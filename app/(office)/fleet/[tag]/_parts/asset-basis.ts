@@ -3,6 +3,25 @@ import { formatNumber } from "@/lib/present/locale";
 import { averageUa, peakUa } from "@/lib/present/duty-cycle";
 import type { AssetView } from "@/lib/usecases/read-asset";
 
+/** What the forecast rests on in one line: "3 resting readings, measured draw 118 µA, 41 packs". */
+export function basisLine({ forecast, draws, model, organisation }: AssetView): string | null {
+  if (!forecast) return null;
+  const { locale } = organisation;
+  const { basis } = forecast;
+  const counted = (n: number, one: string, many: string) =>
+    n > 0 ? `${formatNumber(n, locale)} ${n === 1 ? one : many}` : "";
+  const measured = basis.measuredDraw ? draws[0] : undefined;
+  const parts = [
+    counted(basis.restingReadings ?? 0, "resting reading", "resting readings"),
+    counted(basis.loadedReadings ?? 0, "reading under load", "readings under load"),
+    measured
+      ? `measured draw ${formatCurrent(measured.averageUa, locale)}`
+      : `duty cycle of ${formatCurrent(averageUa(model?.states ?? []), locale)}`,
+    counted(basis.fleetPacks ?? 0, "finished pack like this one", "finished packs like this one"),
+  ];
+  return parts.filter(Boolean).join(", ");
+}
+
 /** What the forecast rests on, one plain sentence each. */
 export function basisSentences({
   forecast,

@@ -32,7 +32,10 @@ export function AssetHead({ view, acts }: { view: AssetView; acts: ReactNode }) 
             <Link className="textlink" href={`/fleet/models/${asset.deviceModelId}`}>
               {asset.modelName}
             </Link>{" "}
-            · {facts.join(" · ")}
+            · {facts.join(" · ")} ·{" "}
+            <Link className="textlink" href={`/fleet/${encodeURIComponent(asset.tag)}/cells`}>
+              Which cell?
+            </Link>
           </>
         }
         actions={acts}

@@ -8,12 +8,13 @@ import { timeAxis } from "@/lib/present/time-axis";
 import { packTone, type Tone } from "@/lib/present/tone";
 import { voltageChart } from "@/lib/present/voltage-chart";
 import { waneDisc } from "@/lib/present/wane-disc";
+import type { Explanation } from "@/lib/usecases/explain-forecast";
 import type { AssetView } from "@/lib/usecases/read-asset";
 
 const AXIS_PX = 1180;
 
 /** The pack in an asset as marks and words; null when there is none. */
-export function assetMarks(view: AssetView) {
+export function assetMarks(view: AssetView, explanation: Explanation | null) {
   const { pack, forecast, organisation, now, asset } = view;
   if (!pack) return null;
   const { locale, timeZone } = organisation;
@@ -45,7 +46,7 @@ export function assetMarks(view: AssetView) {
     since: formatDay(day(pack.installedAt), locale, { today }),
     tone,
     stale: Boolean(forecast?.staleSince),
-    ...timeMarks(view, tone, cutoff, today),
+    ...timeMarks(view, explanation, { tone, cutoff, today }),
     cutoffVolts: formatVolts(asset.cutoffMv, locale),
   };
 }
@@ -53,7 +54,11 @@ export function assetMarks(view: AssetView) {
 type Cutoff = { p5: string; p50: string; p95: string } | null;
 
 /** Strip and voltages on one axis, from the install to a little past the window. */
-function timeMarks(view: AssetView, tone: Tone, cutoff: Cutoff, today: string) {
+function timeMarks(
+  view: AssetView,
+  explanation: Explanation | null,
+  { tone, cutoff, today }: { tone: Tone; cutoff: Cutoff; today: string },
+) {
   const { pack, readings, asset, organisation, visits } = view;
   const { locale, timeZone } = organisation;
   const installed = dayOfInstant(pack?.installedAt ?? view.now, timeZone);
@@ -83,25 +88,10 @@ function timeMarks(view: AssetView, tone: Tone, cutoff: Cutoff, today: string) {
       doubtful: r.doubt !== null || r.verdict === "set_aside",
       label: `${formatVolts(r.millivolts, locale)} ${r.kind === "loaded" ? "under load" : "resting"}, ${formatDay(dayOfInstant(r.at, timeZone), locale)}`,
     })),
-    expected: expectedBand(view),
+    expected: (explanation?.expected ?? []).map(({ at, ...mv }) => ({
+      ...mv,
+      day: axisDay(at, timeZone),
+    })),
   });
   return { strip, chart };
-}
-
-/** What was expected at rest when each resting voltage was read, before it was seen. */
-function expectedBand({ forecast, readings, organisation }: AssetView) {
-  const weights = new Map((forecast?.weights ?? []).map((w) => [w.readingId, w]));
-  return readings.flatMap((r) => {
-    const weight = r.kind === "resting" ? weights.get(r.id) : undefined;
-    return weight
-      ? [
-          {
-            day: axisDay(r.at, organisation.timeZone),
-            lowMv: weight.expectedLowMv,
-            midMv: weight.expectedMv,
-            highMv: weight.expectedHighMv,
-          },
-        ]
-      : [];
-  });
 }

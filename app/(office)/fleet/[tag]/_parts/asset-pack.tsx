@@ -5,13 +5,15 @@ import { Figure, FigureRow } from "@/components/ui/figure";
 import { Section } from "@/components/ui/page-head";
 import { EmptyState } from "@/components/ui/states";
 import { formatDay } from "@/lib/present/format-day";
+import type { Explanation } from "@/lib/usecases/explain-forecast";
 import type { AssetView } from "@/lib/usecases/read-asset";
-import { basisSentences } from "./asset-basis";
 import { assetMarks } from "./asset-marks";
+import { AssetReasons } from "./asset-reasons";
 
 /** The pack now: what is left, when it will stop, on what that rests. */
-export function AssetPack({ view }: { view: AssetView }) {
-  const marks = assetMarks(view);
+export function AssetPack(props: { view: AssetView; explanation: Explanation | null }) {
+  const { view, explanation } = props;
+  const marks = assetMarks(view, explanation);
   if (!marks) {
     return (
       <Section title="Pack">
@@ -65,13 +67,7 @@ export function AssetPack({ view }: { view: AssetView }) {
           </div>
         </div>
       </Section>
-      <Section title="What the forecast rests on">
-        <ul className="flex max-w-prose flex-col gap-1 px-3 py-3">
-          {basisSentences(view).map((sentence) => (
-            <li key={sentence}>{sentence}</li>
-          ))}
-        </ul>
-      </Section>
+      <AssetReasons view={view} explanation={explanation} />
     </>
   );
 }

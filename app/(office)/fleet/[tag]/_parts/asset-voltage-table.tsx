@@ -5,7 +5,13 @@ import { voltageRows, type VoltageRow } from "./asset-voltages";
 import { VerdictDialog } from "./verdict-dialog";
 
 /** Every voltage of the pack, how much it counted, and the verdicts given on it. */
-export function AssetVoltages({ view, mayJudge }: { view: AssetView; mayJudge: boolean }) {
+export function AssetVoltages(props: {
+  view: AssetView;
+  /** Days by which each reading alone moved the likely date, by its id. */
+  moved: Readonly<Record<string, number>>;
+  mayJudge: boolean;
+}) {
+  const { view, moved, mayJudge } = props;
   if (!view.pack) return null;
   const judge: Column<VoltageRow> = {
     key: "judge",
@@ -19,7 +25,7 @@ export function AssetVoltages({ view, mayJudge }: { view: AssetView; mayJudge: b
         caption="Voltages of this pack"
         showCaption
         columns={mayJudge ? [...COLUMNS, judge] : COLUMNS}
-        rows={voltageRows(view)}
+        rows={voltageRows(view, moved)}
         rowKey={(row) => row.id}
         empty={
           <EmptyState title="No voltage logged yet.">
@@ -46,6 +52,7 @@ const COLUMNS: readonly Column<VoltageRow>[] = [
     head: "Counts",
     cell: (row) => <span className="text-soft">{row.counts}</span>,
   },
+  { key: "moved", head: "Moved the likely date", align: "right", cell: (row) => row.moved },
   {
     key: "remark",
     head: "Remark",

@@ -1,3 +1,4 @@
+import { dayShift } from "@/lib/present/day-shift";
 import {
   formatCurrent,
   formatTemperature,
@@ -7,6 +8,7 @@ import {
 import { formatPercent } from "@/lib/present/format-share";
 import { formatInstant } from "@/lib/present/format-time";
 import { NOTHING } from "@/lib/present/locale";
+import { readingReason, readingSource } from "@/lib/present/reading-words";
 import type { AssetView } from "@/lib/usecases/read-asset";
 
 export interface VoltageRow {
@@ -16,27 +18,17 @@ export interface VoltageRow {
   readonly condition: string;
   readonly expected: string;
   readonly counts: string;
+  /** How far it alone moved the likely date; empty where that was not worked out. */
+  readonly moved: string;
   readonly remark: string;
   readonly by: string;
 }
 
-const REASONS: Readonly<Record<string, string>> = {
-  fits: "fits the curve",
-  doubtful: "does not fit the curve",
-  passivation: "a lithium cell still waking up under load",
-  "before-install": "read before this pack went in",
-  impossible: "cannot be this pack's voltage",
-};
-
-const SOURCES: Readonly<Record<string, string>> = {
-  form: "office",
-  csv: "file",
-  api: "gateway",
-  phone: "phone",
-};
-
 /** The pack's voltages, newest first, with how much each counted in the forecast and why. */
-export function voltageRows({ readings, forecast, organisation }: AssetView): VoltageRow[] {
+export function voltageRows(
+  { readings, forecast, organisation }: AssetView,
+  moved: Readonly<Record<string, number>>,
+): VoltageRow[] {
   const { locale } = organisation;
   const weights = new Map((forecast?.weights ?? []).map((w) => [w.readingId, w]));
   return readings
@@ -50,13 +42,14 @@ export function voltageRows({ readings, forecast, organisation }: AssetView): Vo
         volts: formatVolts(r.millivolts, locale),
         condition: `${r.kind === "loaded" ? `under load${load}` : "resting"}${air}`,
         expected: weight
-          ? formatVoltBand(weight.expectedLowMv, weight.expectedHighMv, locale)
+          ? formatVoltBand(Math.max(0, weight.expectedLowMv), weight.expectedHighMv, locale)
           : NOTHING,
         counts: weight
-          ? `${formatPercent(weight.weight, locale)} · ${REASONS[weight.reason] ?? weight.reason}`
+          ? `${formatPercent(weight.weight, locale)} · ${readingReason(weight.reason)}`
           : NOTHING,
+        moved: r.id in moved ? dayShift(moved[r.id] ?? 0) : NOTHING,
         remark: remarkOf(r, locale),
-        by: r.personName ?? r.apiKeyName ?? SOURCES[r.source] ?? r.source,
+        by: r.personName ?? r.apiKeyName ?? readingSource(r.source),
       };
     })
     .reverse();

@@ -1,16 +1,24 @@
 "use client";
 
 import { FormDialog } from "@/components/forms/form-dialog";
+import type { ButtonKind } from "@/components/ui/button";
 import { NumberInput, TextInput } from "@/components/ui/inputs";
 import { measureDrawAction } from "../actions";
 import type { ActContext } from "./act-context";
 
+export interface DrawDialogProps {
+  context: ActContext;
+  label?: string;
+  kind?: ButtonKind;
+}
+
 /** Records a measured draw. */
-export function DrawDialog({ context }: { context: ActContext }) {
+export function DrawDialog(props: DrawDialogProps) {
+  const { context, label = "Measured draw", kind = "quiet" } = props;
   return (
     <FormDialog
-      kind="quiet"
-      label="Measured draw"
+      kind={kind}
+      label={label}
       title={`Measured draw of ${context.tag}`}
       action={measureDrawAction}
       submit="Save"

@@ -11,12 +11,19 @@ const KINDS = [
   { value: "loaded", label: "under load: while it was sending" },
 ];
 
+export interface LogDialogProps {
+  context: ActContext;
+  label?: string;
+  /** What the form opens with. */
+  opensWith?: { readonly volts: string; readonly kind: string };
+}
+
 /** Logs one voltage. */
-export function LogDialog({ context }: { context: ActContext }) {
+export function LogDialog({ context, label = "Log a voltage", opensWith }: LogDialogProps) {
   return (
     <FormDialog
       kind="go"
-      label="Log a voltage"
+      label={label}
       title={`Voltage of ${context.tag}`}
       action={logVoltageAction}
       submit="Log it"
@@ -31,10 +38,15 @@ export function LogDialog({ context }: { context: ActContext }) {
           <input type="hidden" name="id" value={id} />
           <input type="hidden" name="assetId" value={context.assetId} />
           <div className="grid gap-4 sm:grid-cols-2">
-            <NumberInput {...text("volts")} label="Voltage of the whole pack" unit="V" autoFocus />
+            <NumberInput
+              {...text("volts", opensWith?.volts)}
+              label="Voltage of the whole pack"
+              unit="V"
+              autoFocus
+            />
             <TextInput {...text("at", context.now)} label="Read at" type="datetime-local" />
           </div>
-          <Select {...text("kind", "resting")} label="How" options={KINDS} />
+          <Select {...text("kind", opensWith?.kind ?? "resting")} label="How" options={KINDS} />
           <div className="grid gap-4 sm:grid-cols-2">
             <NumberInput
               {...text("loadMilliamps")}

@@ -180,6 +180,22 @@ export interface DutyState {
   position: number;
 }
 
+export interface FieldMatter {
+  assetId: string | null;
+  closedAt: Timestamp | null;
+  closedBy: string | null;
+  detail: Generated<Json>;
+  entryId: string;
+  id: string;
+  kind: string;
+  note: Generated<string>;
+  outcome: string | null;
+  personId: string;
+  raisedAt: Timestamp;
+  roundId: string | null;
+  stopId: string | null;
+}
+
 export interface Forecast {
   basis: Json;
   cdfDays: number[];
@@ -334,6 +350,25 @@ export interface Person {
   sessionVersion: Generated<number>;
 }
 
+export interface Photo {
+  /**
+   * Null: it shows the site.
+   */
+  assetId: string | null;
+  bytes: number;
+  clockSkewMs: number | null;
+  entryId: string;
+  height: number;
+  id: string;
+  objectKey: string;
+  personId: string;
+  receivedAt: Timestamp;
+  siteId: string;
+  stopId: string | null;
+  takenAt: Timestamp;
+  width: number;
+}
+
 export interface Plan {
   cost: Json | null;
   createdAt: Timestamp;
@@ -419,6 +454,18 @@ export interface ReadingVerdict {
   verdict: string;
 }
 
+export interface ReturnedCells {
+  at: Timestamp;
+  cells: number;
+  cellTypeId: string;
+  collectedAt: Timestamp | null;
+  collectedBy: string | null;
+  look: Generated<string>;
+  lotId: string | null;
+  packId: string;
+  personId: string | null;
+}
+
 export interface Round {
   day: string;
   distanceM: Generated<number>;
@@ -431,6 +478,10 @@ export interface Round {
   overtimeS: Generated<number>;
   planId: string;
   publishedAt: Timestamp | null;
+  /**
+   * When the technician put the stops in an order of their own; null: the planned one holds.
+   */
+  reorderedAt: Timestamp | null;
   startedAt: Timestamp | null;
   startsAt: Timestamp;
   state: Generated<string>;
@@ -566,6 +617,7 @@ export interface DB {
   digestSetting: DigestSetting;
   drawMeasurement: DrawMeasurement;
   dutyState: DutyState;
+  fieldMatter: FieldMatter;
   forecast: Forecast;
   forecastOutcome: ForecastOutcome;
   importRun: ImportRun;
@@ -576,12 +628,14 @@ export interface DB {
   outboundMail: OutboundMail;
   pack: Pack;
   person: Person;
+  photo: Photo;
   plan: Plan;
   planLeftOut: PlanLeftOut;
   planStep: PlanStep;
   rateEvent: RateEvent;
   reading: Reading;
   readingVerdict: ReadingVerdict;
+  returnedCells: ReturnedCells;
   round: Round;
   shift: Shift;
   site: Site;

@@ -1,5 +1,7 @@
 import { openFieldDatabase } from "./database";
 import { FieldStore } from "./field-store";
+import { sendInBackground } from "./background-sync";
+import { shrinkPicture } from "./shrink-photo";
 import { browserTransport } from "./transport";
 
 const CHANNEL = "wanewright-field";
@@ -15,15 +17,19 @@ export function fieldStore(): FieldStore {
 function connect(): FieldStore {
   const channel = typeof BroadcastChannel === "undefined" ? null : new BroadcastChannel(CHANNEL);
   const made = new FieldStore({
-    open: () => openFieldDatabase(),
+    open: (outdated) => openFieldDatabase(undefined, outdated),
     transport: browserTransport(),
     now: () => new Date(),
     newId: () => crypto.randomUUID(),
     chance: () => Math.random(),
     later: (work, ms) => void setTimeout(work, ms),
     announce: () => channel?.postMessage("changed"),
+    shrink: shrinkPicture,
+    sendInBackground,
   });
-  channel?.addEventListener("message", () => void made.reload());
+  // The service worker may have sent entries: asking again settles them here.
+  const hear = (word: unknown) => (word === "sent" ? made.exchange() : made.reload());
+  channel?.addEventListener("message", (event) => void hear(event.data));
   return made;
 }
 

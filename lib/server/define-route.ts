@@ -68,6 +68,22 @@ export async function jsonBody(request: Request): Promise<never> {
   }
 }
 
+/**
+ * The body as bytes, read no further than the limit: a sender need not say how much comes.
+ * @throws AppError invalid when there is more, or nothing
+ */
+export async function bytesBody(request: Request, limit: number): Promise<Uint8Array<ArrayBuffer>> {
+  const parts: Uint8Array[] = [];
+  let size = 0;
+  for await (const part of request.body ?? []) {
+    size += part.length;
+    if (size > limit) throw tooLarge(limit);
+    parts.push(part);
+  }
+  if (size === 0) throw invalid("The body is empty.");
+  return new Uint8Array(Buffer.concat(parts));
+}
+
 /** Errors as `{ error: { code, message, faults } }`. */
 export function errorResponse(error: unknown): Response {
   const known = isAppError(error) ? error : new AppError("unavailable", "Something went wrong.");
@@ -88,6 +104,10 @@ function guardOrigin(request: Request): void {
 
 function guardSize(request: Request, limit: number): void {
   if (Number(request.headers.get("content-length") ?? 0) > limit) {
-    throw new AppError("invalid", `The body is larger than ${limit} bytes.`);
+    throw tooLarge(limit);
   }
+}
+
+function tooLarge(limit: number): AppError {
+  return invalid(`The body is larger than ${limit} bytes.`);
 }

@@ -8,6 +8,7 @@ import { listLots } from "@/db/queries/lots";
 import { getOrganisation } from "@/db/queries/organisation";
 import { listAssetPacks } from "@/db/queries/packs";
 import { listPackReadings } from "@/db/queries/readings";
+import { listAssetPhotos } from "@/db/queries/photos";
 import { listPlaces } from "@/db/queries/stock";
 import { notFound } from "@/lib/errors";
 import { defineUseCase } from "./use-case";
@@ -20,7 +21,7 @@ export const readAsset = defineUseCase({
   run: async (deps, _actor, { tag }) => {
     const asset = await findAsset(deps.db, tag);
     if (!asset) throw notFound(`The asset ${tag}`);
-    const [organisation, model, packs, events, visits, draws, acts] = await Promise.all([
+    const [organisation, model, packs, events, visits, draws, acts, photos] = await Promise.all([
       getOrganisation(deps.db),
       findDeviceModel(deps.db, asset.deviceModelId),
       listAssetPacks(deps.db, asset.id),
@@ -28,6 +29,7 @@ export const readAsset = defineUseCase({
       listAssetVisits(deps.db, asset.id),
       listDrawMeasurements(deps.db, asset.id),
       listAudit(deps.db, "asset", asset.id),
+      listAssetPhotos(deps.db, asset),
     ]);
     const pack = packs.find((p) => p.removedAt === null) ?? null;
     const [readings, forecast] = await Promise.all([
@@ -36,7 +38,7 @@ export const readAsset = defineUseCase({
     ]);
     return {
       ...{ organisation, asset, model, packs, pack, readings, forecast },
-      ...{ events, visits, draws, acts, now: deps.now() },
+      ...{ events, visits, draws, acts, photos, now: deps.now() },
     };
   },
 });

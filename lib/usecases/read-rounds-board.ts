@@ -1,3 +1,4 @@
+import { countOpenMatters } from "@/db/queries/field-matters";
 import { z } from "zod";
 import { getOrganisation, type Organisation } from "@/db/queries/organisation";
 import { lastPlanStep } from "@/db/queries/plan-steps";
@@ -61,6 +62,7 @@ export const readRoundsBoard = defineUseCase({
       })),
       rows: technicians.map((technician) => boardRow(technician, days, organisation.locale)),
       rounds,
+      matters: await countOpenMatters(deps.db),
       leftOut: plan ? await leftOutShown(deps, plan.id, today, organisation) : [],
     };
   },

@@ -116,14 +116,7 @@ const listed = (db: Kysely<Database>) =>
       "site.code as siteCode",
     ])
     .select(["stop.returnOn", "round.id as roundId", "round.day", "syncEntry.body"])
-    .select(["syncEntry.refusal", "syncEntry.happenedAt", "syncEntry.clockSkewMs"])
-    .select((eb) =>
-      eb
-        .selectFrom("photo")
-        .select((count) => count.fn.countAll<number>().as("n"))
-        .whereRef("photo.entryId", "=", "fieldMatter.entryId")
-        .as("photos"),
-    );
+    .select(["syncEntry.refusal", "syncEntry.happenedAt", "syncEntry.clockSkewMs"]);
 
 /** What waits for a decision, oldest first. */
 export async function listOpenMatters(db: Kysely<Database>) {

@@ -92,3 +92,14 @@ export async function listAssetPhotos(
     .limit(MOST_SHOWN)
     .execute();
 }
+
+/** The photos of these entries, in the order taken. */
+export async function listEntryPhotos(db: Kysely<Database>, entryIds: readonly string[]) {
+  if (entryIds.length === 0) return [];
+  return db
+    .selectFrom("photo")
+    .select(["id", "entryId", "takenAt"])
+    .where("entryId", "in", entryIds)
+    .orderBy("takenAt")
+    .execute();
+}

@@ -1,6 +1,7 @@
 import { z } from "zod";
 import { listCellTypeNames } from "@/db/queries/planning-fleet";
 import { listClosedMatters, listOpenMatters } from "@/db/queries/field-matters";
+import { listEntryPhotos } from "@/db/queries/photos";
 import { getOrganisation } from "@/db/queries/organisation";
 import { defineUseCase } from "./use-case";
 
@@ -18,7 +19,16 @@ export const listFieldMatters = defineUseCase({
       listClosedMatters(deps.db, CLOSED_SHOWN),
       listCellTypeNames(deps.db),
     ]);
-    return { organisation, open, closed, cellNames, now: deps.now() };
+    const rows = await listEntryPhotos(
+      deps.db,
+      open.map((matter) => matter.entryId),
+    );
+    const photos = new Map<string, { id: string; label: string }[]>();
+    for (const { id, entryId } of rows) {
+      const own = photos.get(entryId) ?? [];
+      photos.set(entryId, [...own, { id, label: `Photo ${own.length + 1}` }]);
+    }
+    return { organisation, open, closed, cellNames, photos };
   },
 });
 export type FieldMatters = Awaited<ReturnType<typeof listFieldMatters>>;

@@ -8,6 +8,7 @@ import { AssetActs } from "./_parts/asset-acts";
 import { AssetHead } from "./_parts/asset-head";
 import { AssetHistory } from "./_parts/asset-history-table";
 import { AssetPack } from "./_parts/asset-pack";
+import { AssetPhotos } from "./_parts/asset-photos";
 import { AssetVoltages } from "./_parts/asset-voltage-table";
 
 interface Props {
@@ -30,6 +31,7 @@ export default async function AssetPage(props: Props) {
       <AssetHead view={view} acts={choices && <AssetActs view={view} choices={choices} />} />
       <AssetPack view={view} />
       <AssetVoltages view={view} mayJudge={choices !== null} />
+      <AssetPhotos view={view} />
       <AssetHistory view={view} />
     </>
   );

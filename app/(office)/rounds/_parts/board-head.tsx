@@ -36,6 +36,9 @@ export function BoardHead({ acts, crewId }: { acts: BoardActs; crewId: string | 
           Week after →
         </LinkButton>
       </nav>
+      <ChipLink href="/rounds/field" count={board.matters}>
+        From the field
+      </ChipLink>
       {others.map((other) => (
         <ChipLink key={other.id} href={`/rounds?week=${monday}&plan=${other.id}`}>
           {other.name}, {STATES[other.state] ?? other.state}

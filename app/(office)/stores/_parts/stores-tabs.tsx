@@ -4,6 +4,7 @@ const TABS = [
   ["cells", "Cells", "/stores"],
   ["lots", "Lots", "/stores/lots"],
   ["moves", "Moves", "/stores/moves"],
+  ["return-box", "Return box", "/stores/return-box"],
 ] as const;
 
 /** The parts of the stores. */

@@ -6,6 +6,7 @@ import { FieldBar } from "@/components/ui/field-bar";
 import { FieldPage } from "@/components/ui/field-page";
 import { Skeleton } from "@/components/ui/states";
 import { runFieldStore } from "@/lib/offline/browser-store";
+import { prepareScanning } from "@/lib/offline/scan";
 import { keepShell } from "@/lib/offline/shell";
 import { go, staysHere } from "./go";
 import { showNight } from "./night";
@@ -38,7 +39,9 @@ export function FieldApp() {
   useEffect(showNight, []);
   useEffect(() => {
     // Every part must be on the phone before the signal goes, not only the one looked at.
-    void loadEveryPart().then(keepShell, () => undefined);
+    void loadEveryPart()
+      .then(() => prepareScanning().catch(() => undefined))
+      .then(keepShell, () => undefined);
   }, []);
   return (
     <div onClickCapture={answerHere}>

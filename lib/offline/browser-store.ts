@@ -1,7 +1,6 @@
 import { openFieldDatabase } from "./database";
 import { FieldStore } from "./field-store";
 import { sendInBackground } from "./background-sync";
-import { shrinkPicture } from "./shrink-photo";
 import { browserTransport } from "./transport";
 
 const CHANNEL = "wanewright-field";
@@ -24,7 +23,7 @@ function connect(): FieldStore {
     chance: () => Math.random(),
     later: (work, ms) => void setTimeout(work, ms),
     announce: () => channel?.postMessage("changed"),
-    shrink: shrinkPicture,
+    shrink: async (bytes, edgePx) => (await import("./shrink-photo")).shrinkPicture(bytes, edgePx),
     sendInBackground,
   });
   // The service worker may have sent entries: asking again settles them here.
@@ -32,6 +31,10 @@ function connect(): FieldStore {
   channel?.addEventListener("message", (event) => void hear(event.data));
   return made;
 }
+
+/** What the store loads when it is first needed: on the phone before the signal goes. */
+export const loadTraffic = () =>
+  Promise.all([import("./flush-all"), import("./keep-with-photos"), import("./shrink-photo")]);
 
 /**
  * Starts the store and keeps it going: signal that returns, a page that comes back into view.

@@ -15,9 +15,8 @@ import {
   readSkew,
   storageFault,
 } from "./database";
-import { flush, type FlushEnd } from "./flush";
-import { flushPhotos } from "./flush-photos";
-import { keepWithPhotos, type Picture, type Shrink } from "./keep-with-photos";
+import type { FlushEnd } from "./flush";
+import type { Picture, Shrink } from "./keep-with-photos";
 import { oneAtATime } from "./one-at-a-time";
 import {
   allEntries,
@@ -137,6 +136,7 @@ export class FieldStore {
     if (pictures.length === 0) return this.keep(body);
     const { shrink } = this.machine;
     return this.write(async (db, entry) => {
+      const { keepWithPhotos } = await import("./keep-with-photos");
       this.set({ told: await keepWithPhotos(db, entry(body), pictures, shrink) });
     });
   }
@@ -207,11 +207,8 @@ export class FieldStore {
     };
     const { transport, newId } = this.machine;
     const device = await deviceId(db, newId);
-    const context = { db, transport, deviceId: device, personId: person.id, changed };
-    const end = await flush(context);
-    if (end !== "sent" && end !== "again") return end;
-    const photos = await flushPhotos(context);
-    return photos === "sent" ? end : photos;
+    const { flushAll } = await import("./flush-all");
+    return flushAll({ db, transport, deviceId: device, personId: person.id, changed });
   }
 
   private signedOut(): FlushEnd {

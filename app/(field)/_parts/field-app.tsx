@@ -5,12 +5,10 @@ import { lazy, type MouseEvent, Suspense, useEffect } from "react";
 import { FieldBar } from "@/components/ui/field-bar";
 import { FieldPage } from "@/components/ui/field-page";
 import { Skeleton } from "@/components/ui/states";
-import { runFieldStore } from "@/lib/offline/browser-store";
-import { prepareScanning } from "@/lib/offline/scan";
+import { loadTraffic, runFieldStore } from "@/lib/offline/browser-store";
 import { keepShell } from "@/lib/offline/shell";
 import { go, staysHere } from "./go";
 import { showNight } from "./night";
-import { NoDay } from "./no-day";
 import { loadTodayParts, TodayScreen } from "./today-screen";
 import { useField } from "./use-field";
 
@@ -22,6 +20,7 @@ const load = {
   cannot: () => import("./cannot-screen"),
   find: () => import("./find-screen"),
   outbox: () => import("./outbox-screen"),
+  noDay: () => import("./no-day"),
 };
 const StopScreen = lazy(async () => ({ default: (await load.stop()).StopScreen }));
 const LogScreen = lazy(async () => ({ default: (await load.log()).LogScreen }));
@@ -30,8 +29,14 @@ const CannotScreen = lazy(async () => ({ default: (await load.cannot()).CannotSc
 const FindScreen = lazy(async () => ({ default: (await load.find()).FindScreen }));
 const OutboxScreen = lazy(async () => ({ default: (await load.outbox()).OutboxScreen }));
 
+const NoDay = lazy(async () => ({ default: (await load.noDay()).NoDay }));
+
 const loadEveryPart = () =>
-  Promise.all([...Object.values(load).map((part) => part()), loadTodayParts()]);
+  Promise.all([...Object.values(load).map((part) => part()), loadTodayParts(), loadTraffic()]);
+
+/** Where the browser reads no codes itself; without it typing still works. */
+const fetchDecoder = () =>
+  import("@/lib/offline/scan").then((scan) => scan.prepareScanning()).catch(() => undefined);
 
 /** All phone pages: which one is shown follows the address. */
 export function FieldApp() {
@@ -40,7 +45,7 @@ export function FieldApp() {
   useEffect(() => {
     // Every part must be on the phone before the signal goes, not only the one looked at.
     void loadEveryPart()
-      .then(() => prepareScanning().catch(() => undefined))
+      .then(fetchDecoder)
       .then(keepShell, () => undefined);
   }, []);
   return (

@@ -1,4 +1,4 @@
-import Link from "next/link";
+import { FieldLink } from "@/components/ui/field-link";
 import { WaneDisc } from "@/components/charts/wane-disc";
 import type { DayAsset, DayPack, DaySite, DayStop } from "@/lib/sync/day-pack";
 import { discOf } from "./day-view";
@@ -22,9 +22,8 @@ export function Neighbours(props: { day: DayPack; site: DaySite; stop: DayStop }
           const disc = discOf(day, asset);
           return (
             <li key={asset.id} className="border-t border-rule first:border-t-0">
-              <Link
+              <FieldLink
                 href={`/find?asset=${asset.id}&stop=${stop.id}`}
-                prefetch={false}
                 className="flex min-h-14 items-center gap-3 px-4 py-2"
               >
                 <WaneDisc model={disc} size={24} decorative />
@@ -38,7 +37,7 @@ export function Neighbours(props: { day: DayPack; site: DaySite; stop: DayStop }
                     {neighbourWords(day, asset, disc)}
                   </span>
                 </span>
-              </Link>
+              </FieldLink>
             </li>
           );
         })}

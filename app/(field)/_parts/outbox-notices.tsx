@@ -1,4 +1,4 @@
-import Link from "next/link";
+import { FieldLink } from "@/components/ui/field-link";
 import { Notice } from "@/components/ui/notice";
 import type { FieldSnapshot } from "@/lib/offline/field-store";
 
@@ -16,9 +16,9 @@ export function OutboxNotices({ field }: { field: FieldSnapshot }) {
         <Notice
           kind="warn"
           action={
-            <Link className={link} href="/sign-in?from=/today">
+            <FieldLink className={link} href="/sign-in?from=/today">
               Sign in
-            </Link>
+            </FieldLink>
           }
         >
           Your sign-in has run out. {keptWords(count.toSend)} Nothing is lost.
@@ -46,9 +46,9 @@ export function OutboxNotices({ field }: { field: FieldSnapshot }) {
         <Notice
           kind="warn"
           action={
-            <Link className={link} href="/outbox">
+            <FieldLink className={link} href="/outbox">
               Look
-            </Link>
+            </FieldLink>
           }
         >
           {count.refused === 1 ? "One entry was refused" : `${count.refused} entries were refused`}.

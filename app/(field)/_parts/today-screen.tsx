@@ -11,7 +11,6 @@ import { formatDay } from "@/lib/present/format-day";
 import { formatDistance } from "@/lib/present/format-quantity";
 import type { DayPack, DayRound } from "@/lib/sync/day-pack";
 import { fieldStatus } from "./field-status";
-import { FieldMenu } from "./field-menu";
 import { loadLine } from "./load-line";
 import { OtherDays } from "./other-days";
 import { OutboxNotices } from "./outbox-notices";
@@ -22,11 +21,13 @@ import { trueTime, useNow } from "./use-now";
 
 const loadLoad = () => import("./load-list");
 const loadOrder = () => import("./order-screen");
+const loadMenu = () => import("./field-menu");
+const FieldMenu = lazy(async () => ({ default: (await loadMenu()).FieldMenu }));
 const LoadList = lazy(async () => ({ default: (await loadLoad()).LoadList }));
 const OrderScreen = lazy(async () => ({ default: (await loadOrder()).OrderScreen }));
 
 /** The parts of this screen that are loaded when they are asked for. */
-export const loadTodayParts = () => Promise.all([loadLoad(), loadOrder()]);
+export const loadTodayParts = () => Promise.all([loadLoad(), loadOrder(), loadMenu()]);
 
 /** The day's round: what to load, where to go, what is done. */
 export function TodayScreen({ field, day, query }: ScreenProps) {
@@ -58,7 +59,9 @@ export function TodayScreen({ field, day, query }: ScreenProps) {
         )}
         <OtherDays day={day} shown={shown} today={today} />
         <BigButton href="/find">Find an asset</BigButton>
-        <FieldMenu field={field} day={day} />
+        <Suspense>
+          <FieldMenu field={field} day={day} />
+        </Suspense>
       </FieldPage>
     </>
   );

@@ -1,4 +1,4 @@
-import { sql, type Transaction } from "kysely";
+import { type Kysely, sql, type Transaction } from "kysely";
 import type { Database } from "../client";
 
 export interface StopPlace {
@@ -43,4 +43,19 @@ export async function saveStopOrder(
   }
   const newest = sql<Date>`greatest(reordered_at, ${at}::timestamptz)`;
   await trx.updateTable("round").set({ reorderedAt: newest }).where("id", "=", roundId).execute();
+}
+
+/** Which of these rounds stand in their technician's own order. */
+export async function listReordered(
+  db: Kysely<Database>,
+  roundIds: readonly string[],
+): Promise<string[]> {
+  if (roundIds.length === 0) return [];
+  const rows = await db
+    .selectFrom("round")
+    .select("id")
+    .where("id", "in", roundIds)
+    .where("reorderedAt", "is not", null)
+    .execute();
+  return rows.map((row) => row.id);
 }

@@ -1,3 +1,4 @@
+import { listReordered } from "@/db/queries/stop-order";
 import { countOpenMatters } from "@/db/queries/field-matters";
 import { z } from "zod";
 import { getOrganisation, type Organisation } from "@/db/queries/organisation";
@@ -42,6 +43,10 @@ export const readRoundsBoard = defineUseCase({
     const rounds = (await boardInputs(deps.db, technicians, stored)).map((round) =>
       boardRound(round, today, organisation),
     );
+    const reordered = await listReordered(
+      deps.db,
+      stored.map((round) => round.id),
+    );
     const days = daysFrom(week.firstDay, week.lastDay).filter(
       (day) =>
         organisation.workingDays.includes(weekdayOf(day)) || rounds.some((r) => r.day === day),
@@ -63,6 +68,8 @@ export const readRoundsBoard = defineUseCase({
       })),
       rows: technicians.map((technician) => boardRow(technician, days, organisation.locale)),
       rounds,
+      /** Rounds whose stops the technician has put in an order of their own. */
+      reordered,
       matters: await countOpenMatters(deps.db),
       leftOut: plan ? await leftOutShown(deps, plan.id, today, organisation) : [],
     };

@@ -8,7 +8,7 @@ type Row = AssetView["photos"][number];
 const ABOUT: Readonly<Record<string, string>> = {
   reading: "with a voltage",
   swap: "with a swap",
-  cannot: "could not be done",
+  cannot: "the site: could not be done",
   note: "seen at the site",
 };
 
@@ -28,8 +28,7 @@ export function AssetPhotos({ view }: { view: AssetView }) {
           return (
             <li key={entryId} className="border-t border-rule px-3 py-2 first:border-t-0">
               <p>
-                {when} · {first.personName} · {first.assetId ? "" : "the site, "}
-                {ABOUT[first.kind] ?? first.kind}
+                {when} · {first.personName} ·{ABOUT[first.kind] ?? first.kind}
                 {saidWith(first) && <span className="text-soft"> · “{saidWith(first)}”</span>}
               </p>
               <PhotoStrip

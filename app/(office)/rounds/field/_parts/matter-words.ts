@@ -57,7 +57,7 @@ interface Told {
 export function matterWords(matter: FieldMatter, view: FieldMatters): MatterWords {
   const { locale } = view.organisation;
   const body = (matter.body ?? {}) as Told;
-  const round = matter.day ? `round of ${formatDay(matter.day, locale, { weekday: true })}` : "";
+  const round = matter.day ? `Round of ${formatDay(matter.day, locale, { weekday: true })}` : "";
   const asset = matter.tag ? `${matter.tag} ${matter.assetName}` : "";
   const site = matter.siteName ? `${matter.siteCode} ${matter.siteName}` : "";
   return {

@@ -61,7 +61,7 @@ afterAll(async () => {
 async function cameraPhoto(): Promise<{ name: string; mimeType: string; buffer: Buffer }> {
   const noise = { type: "gaussian" as const, mean: 120, sigma: 30 };
   const size = { width: 2400, height: 1800 };
-  const buffer = await sharp({ create: { ...size, channels: 3, noise } })
+  const buffer = await sharp({ create: { ...size, channels: 3, background: "#777", noise } })
     .withExif({ IFD0: { Make: SECRET }, IFD3: { GPSAreaInformation: SECRET } })
     .jpeg({ quality: 90 })
     .toBuffer();
@@ -188,7 +188,7 @@ describe("the office", () => {
       await office.page.getByRole("button", { name: "Leave it to the next plan" }).click();
       await office.page.getByText("left to the next plan").first().waitFor();
       await office.page.goto(productUrl(`/fleet/${scenario.stops[1]?.tag ?? ""}`));
-      await office.page.getByText("Gate hinge broken").waitFor();
+      await office.page.getByText("Gate hinge broken").first().waitFor();
       const shown = office.page.getByRole("img", { name: /^Photo 1/ }).first();
       await expect
         .poll(() => shown.evaluate((img: HTMLImageElement) => img.naturalWidth), {

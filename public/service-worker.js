@@ -144,6 +144,7 @@ async function extra(request) {
 async function page(request, path) {
   const copy = await copyOf(path, "pages");
   if (!copy) return fetch(request);
+  if (self.navigator?.onLine === false) return copy;
   const patience = new Promise((resolve) => {
     setTimeout(() => resolve(null), PATIENCE_MS);
   });

@@ -47,7 +47,9 @@ afterAll(async () => {
 
 async function open(name: string): Promise<void> {
   await page.goto(productUrl(paths[name] ?? ""));
-  await page.getByText("Opening what this phone keeps").waitFor({ state: "detached" });
+  await page.waitForFunction(
+    () => !document.body.textContent?.includes("Opening what this phone keeps"),
+  );
   await page.locator("#main").waitFor();
   if (name === "Today") {
     await page.getByRole("button", { name: "Check the load" }).click();

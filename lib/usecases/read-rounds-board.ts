@@ -43,10 +43,6 @@ export const readRoundsBoard = defineUseCase({
     const rounds = (await boardInputs(deps.db, technicians, stored)).map((round) =>
       boardRound(round, today, organisation),
     );
-    const reordered = await listReordered(
-      deps.db,
-      stored.map((round) => round.id),
-    );
     const days = daysFrom(week.firstDay, week.lastDay).filter(
       (day) =>
         organisation.workingDays.includes(weekdayOf(day)) || rounds.some((r) => r.day === day),
@@ -68,9 +64,7 @@ export const readRoundsBoard = defineUseCase({
       })),
       rows: technicians.map((technician) => boardRow(technician, days, organisation.locale)),
       rounds,
-      /** Rounds whose stops the technician has put in an order of their own. */
-      reordered,
-      matters: await countOpenMatters(deps.db),
+      ...(await fromField(deps, stored)),
       leftOut: plan ? await leftOutShown(deps, plan.id, today, organisation) : [],
     };
   },
@@ -81,6 +75,16 @@ export type { BoardRound };
 const DISPATCHERS: readonly string[] = ["administrator", "dispatcher"];
 
 type TechnicianRow = Awaited<ReturnType<typeof loadTechniciansToPlan>>[number];
+
+/** What the phones have said: matters to decide, rounds in their technician's own order. */
+async function fromField(deps: Deps, shown: readonly { readonly id: string }[]) {
+  const ids = shown.map((round) => round.id);
+  const [matters, reordered] = await Promise.all([
+    countOpenMatters(deps.db),
+    listReordered(deps.db, ids),
+  ]);
+  return { matters, reordered };
+}
 
 /** The plan itself: its state, its version, what can be undone. */
 async function planShown(deps: Deps, plan: PlanRow, shown: readonly { planId: string }[]) {

@@ -1,6 +1,6 @@
 "use client";
 
-import { Button } from "@/components/ui/button";
+import { BigButton } from "@/components/ui/big-button";
 import { ErrorPanel } from "@/components/ui/states";
 
 export interface FailureProps {
@@ -17,7 +17,7 @@ export default function Failure({ error, reset }: FailureProps) {
         kept="Everything that was saved before is safe."
         todo="Try again. If it stays so, tell your administrator the reference."
         {...(error.digest && { reference: error.digest })}
-        action={<Button onClick={reset}>Try again</Button>}
+        action={<BigButton onClick={reset}>Try again</BigButton>}
       />
     </main>
   );

@@ -2,7 +2,7 @@ import Link from "next/link";
 import type { ReactNode } from "react";
 import { Button } from "@/components/ui/button";
 import { ToastRegion } from "@/components/ui/toast";
-import { formatToday } from "@/lib/present/format-day";
+import { formatToday } from "@/lib/present/format-week";
 import { roleNames } from "@/lib/present/role-names";
 import { deps } from "@/lib/server/deps";
 import { requireActor } from "@/lib/server/session";

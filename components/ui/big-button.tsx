@@ -1,4 +1,4 @@
-import Link from "next/link";
+import { FieldLink } from "./field-link";
 import type { ButtonHTMLAttributes, ReactNode } from "react";
 
 export type BigButtonKind = "plain" | "go" | "danger";
@@ -32,9 +32,9 @@ export function BigButton({ kind = "plain", href, aside, children, ...rest }: Bi
   );
   if (href !== undefined) {
     return (
-      <Link href={href} prefetch={false} className={className}>
+      <FieldLink href={href} className={className}>
         {inside}
-      </Link>
+      </FieldLink>
     );
   }
   return (

@@ -1,4 +1,4 @@
-import Link from "next/link";
+import { FieldLink } from "./field-link";
 
 export interface FieldBarProps {
   /** "Wed 9 Dec", "Stop 3 of 8". */
@@ -17,14 +17,13 @@ export function FieldBar({ title, heading, back, status, aside }: FieldBarProps)
   return (
     <header className="sticky top-0 z-10 flex min-h-12 items-center gap-2.5 bg-bar px-4 text-on-bar">
       {back && (
-        <Link
+        <FieldLink
           href={back.href}
-          prefetch={false}
           aria-label={back.label}
           className="-ml-3 flex size-12 items-center justify-center text-2xl"
         >
           <span aria-hidden="true">‹</span>
-        </Link>
+        </FieldLink>
       )}
       {heading ? (
         <h1 className="font-sans text-md font-semibold tracking-normal">{title}</h1>

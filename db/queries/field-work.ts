@@ -75,6 +75,20 @@ export async function markStopDone(
     .execute();
 }
 
+/** The day from which a stop that could not be done is to be planned again. */
+export async function setReturnDay(
+  trx: Transaction<Database>,
+  stopId: string,
+  returnOn: string | null,
+): Promise<void> {
+  await trx
+    .updateTable("stop")
+    .set({ returnOn })
+    .where("id", "=", stopId)
+    .where("state", "=", "cannot_do")
+    .execute();
+}
+
 /** A first act starts the round; the end is the technician's word. */
 export async function markRound(
   trx: Transaction<Database>,

@@ -18,7 +18,8 @@ export interface NewSyncEntry {
 export async function findSyncEntry(db: Kysely<Database>, id: string) {
   return db
     .selectFrom("syncEntry")
-    .select(["id", "personId", "outcome", "refusal"])
+    .select(["id", "personId", "outcome", "refusal", "kind", "body", "happenedAt", "clockSkewMs"])
+    .select("receivedAt")
     .where("id", "=", id)
     .executeTakeFirst();
 }
@@ -42,4 +43,13 @@ export async function insertSyncEntry(
     .returning("id")
     .executeTakeFirst();
   return row !== undefined;
+}
+
+/** A refused entry that the office sent again with success. */
+export async function markEntryApplied(trx: Transaction<Database>, id: string): Promise<void> {
+  await trx
+    .updateTable("syncEntry")
+    .set({ outcome: "applied", refusal: null })
+    .where("id", "=", id)
+    .execute();
 }

@@ -180,6 +180,22 @@ export interface DutyState {
   position: number;
 }
 
+export interface FieldMatter {
+  assetId: string | null;
+  closedAt: Timestamp | null;
+  closedBy: string | null;
+  detail: Generated<Json>;
+  entryId: string;
+  id: string;
+  kind: string;
+  note: Generated<string>;
+  outcome: string | null;
+  personId: string;
+  raisedAt: Timestamp;
+  roundId: string | null;
+  stopId: string | null;
+}
+
 export interface Finding {
   chance: number;
   deviceModelId: string | null;
@@ -360,6 +376,25 @@ export interface Person {
   sessionVersion: Generated<number>;
 }
 
+export interface Photo {
+  /**
+   * Null: it shows the site.
+   */
+  assetId: string | null;
+  bytes: number;
+  clockSkewMs: number | null;
+  entryId: string;
+  height: number;
+  id: string;
+  objectKey: string;
+  personId: string;
+  receivedAt: Timestamp;
+  siteId: string;
+  stopId: string | null;
+  takenAt: Timestamp;
+  width: number;
+}
+
 export interface Plan {
   cost: Json | null;
   createdAt: Timestamp;
@@ -445,6 +480,18 @@ export interface ReadingVerdict {
   verdict: string;
 }
 
+export interface ReturnedCells {
+  at: Timestamp;
+  cells: number;
+  cellTypeId: string;
+  collectedAt: Timestamp | null;
+  collectedBy: string | null;
+  look: Generated<string>;
+  lotId: string | null;
+  packId: string;
+  personId: string | null;
+}
+
 export interface Road {
   id: string;
   line: Json;
@@ -463,6 +510,10 @@ export interface Round {
   overtimeS: Generated<number>;
   planId: string;
   publishedAt: Timestamp | null;
+  /**
+   * When the technician put the stops in an order of their own; null: the planned one holds.
+   */
+  reorderedAt: Timestamp | null;
   startedAt: Timestamp | null;
   startsAt: Timestamp;
   state: Generated<string>;
@@ -607,6 +658,7 @@ export interface DB {
   digestSetting: DigestSetting;
   drawMeasurement: DrawMeasurement;
   dutyState: DutyState;
+  fieldMatter: FieldMatter;
   finding: Finding;
   forecast: Forecast;
   forecastOutcome: ForecastOutcome;
@@ -618,12 +670,14 @@ export interface DB {
   outboundMail: OutboundMail;
   pack: Pack;
   person: Person;
+  photo: Photo;
   plan: Plan;
   planLeftOut: PlanLeftOut;
   planStep: PlanStep;
   rateEvent: RateEvent;
   reading: Reading;
   readingVerdict: ReadingVerdict;
+  returnedCells: ReturnedCells;
   road: Road;
   round: Round;
   shift: Shift;

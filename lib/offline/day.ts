@@ -1,6 +1,6 @@
 import type { DayAsset, DayPack, DayStop } from "@/lib/sync/day-pack";
 
-export { loadOfRound, type LoadLine, type RoundLoad } from "@/lib/sync/load-of-round";
+export { checkLoad, type LoadFound, loadOfRound } from "@/lib/sync/load-of-round";
 
 export function findAsset(day: DayPack, assetId: string | null): DayAsset | null {
   return day.assets.find((asset) => asset.id === assetId) ?? null;

@@ -2,17 +2,21 @@ import type { DayPack } from "@/lib/sync/day-pack";
 import type { EntryBody } from "@/lib/sync/entries";
 import { mergeDay } from "@/lib/sync/merge-day";
 import { countOutbox, type OutboxCount, type OutboxEntry, waitMs } from "@/lib/sync/outbox";
+import { countPhotos, type KeptPhoto } from "@/lib/sync/outbox-photos";
 import {
   deviceId,
   type FieldDatabase,
   forgetPerson,
   keepDay,
+  keepSkew,
   type KnownPerson,
   readDay,
   readPerson,
+  readSkew,
   storageFault,
 } from "./database";
-import { flush, type FlushEnd } from "./flush";
+import type { FlushEnd } from "./flush";
+import type { Picture, Shrink } from "./keep-with-photos";
 import { oneAtATime } from "./one-at-a-time";
 import {
   allEntries,
@@ -22,6 +26,7 @@ import {
   type NewEntry,
   pruneEntries,
 } from "./outbox-store";
+import { allPhotos, dropPhoto } from "./photo-store";
 import type { Transport } from "./transport";
 
 export interface FieldSnapshot {
@@ -30,16 +35,23 @@ export interface FieldSnapshot {
   /** The server's day with this person's entries laid over it. */
   readonly day: DayPack | null;
   readonly entries: readonly OutboxEntry[];
-  readonly count: OutboxCount;
+  readonly photos: readonly KeptPhoto[];
+  readonly count: OutboxCount & { readonly photos: number };
   /** Whether the last call got through. */
   readonly signal: boolean;
   readonly busy: boolean;
   readonly signedOut: boolean;
+  /** How far this phone's clock is ahead, in ms, as last heard. */
+  readonly skewMs: number;
+  /** What the person should know of what was kept last; null: all went as it should. */
+  readonly told: string | null;
+  /** A newer page has taken the store over: this one must be loaded anew. */
+  readonly outdated: boolean;
 }
 
 /** What the store needs from the machine; tests give their own. */
 export interface FieldMachine {
-  readonly open: () => Promise<FieldDatabase>;
+  readonly open: (outdated: () => void) => Promise<FieldDatabase>;
   readonly transport: Transport;
   readonly now: () => Date;
   readonly newId: () => string;
@@ -47,22 +59,29 @@ export interface FieldMachine {
   readonly later: (work: () => void, ms: number) => void;
   /** Tells the other tabs of this phone that something changed. */
   readonly announce: () => void;
+  readonly shrink: Shrink;
+  /** Asks the browser to send what is left when there is signal, page or no page. */
+  readonly sendInBackground: () => void;
 }
 
-const NOTHING: FieldSnapshot = {
+export const NOTHING_YET: FieldSnapshot = {
   phase: "opening",
   person: null,
   day: null,
   entries: [],
-  count: { toSend: 0, refused: 0, others: 0 },
+  photos: [],
+  count: { toSend: 0, refused: 0, others: 0, photos: 0 },
   signal: true,
   busy: false,
   signedOut: false,
+  skewMs: 0,
+  told: null,
+  outdated: false,
 };
 
 /** The field pages' one source: what is kept on the phone, and its traffic with the server. */
 export class FieldStore {
-  private snapshot = NOTHING;
+  private snapshot = NOTHING_YET;
   private readonly listeners = new Set<() => void>();
   private opened: Promise<FieldDatabase> | null = null;
   private raw: DayPack | null = null;
@@ -71,7 +90,7 @@ export class FieldStore {
   constructor(private readonly machine: FieldMachine) {}
 
   readonly getSnapshot = (): FieldSnapshot => this.snapshot;
-  readonly getServerSnapshot = (): FieldSnapshot => NOTHING;
+  readonly getServerSnapshot = (): FieldSnapshot => NOTHING_YET;
   readonly subscribe = (listener: () => void): (() => void) => {
     this.listeners.add(listener);
     return () => this.listeners.delete(listener);
@@ -93,10 +112,15 @@ export class FieldStore {
     const db = await this.db();
     const person = await readPerson(db);
     this.raw = person ? await readDay(db, person.id) : null;
-    const entries = await allEntries(db);
+    const [entries, photos, skewMs] = [
+      await allEntries(db),
+      await allPhotos(db),
+      await readSkew(db),
+    ];
     const day = this.raw && mergeDay(this.raw, entries);
-    const count = countOutbox(entries, person?.id ?? "");
-    this.set({ phase: "ready", person, day, entries, count });
+    const id = person?.id ?? "";
+    const count = { ...countOutbox(entries, id), photos: countPhotos(photos, id) };
+    this.set({ phase: "ready", person, day, entries, photos, count, skewMs });
   };
 
   /**
@@ -105,6 +129,21 @@ export class FieldStore {
    */
   async keep(...bodies: readonly EntryBody[]): Promise<string | null> {
     return this.write((db, entry) => keepEntries(db, bodies.map(entry)));
+  }
+
+  /** The same for one entry with photos; where they do not fit, `told` says what became of them. */
+  async keepSeen(body: EntryBody, pictures: readonly Picture[]): Promise<string | null> {
+    if (pictures.length === 0) return this.keep(body);
+    const { shrink } = this.machine;
+    return this.write(async (db, entry) => {
+      const { keepWithPhotos } = await import("./keep-with-photos");
+      this.set({ told: await keepWithPhotos(db, entry(body), pictures, shrink) });
+    });
+  }
+
+  /** Gives a photo up that the server will not have. */
+  async discardPhoto(id: string): Promise<string | null> {
+    return this.write((db) => dropPhoto(db, id));
   }
 
   /** Sends a refused entry anew, mended; `happenedAt` stays unless given. */
@@ -149,6 +188,7 @@ export class FieldStore {
     this.set({ signal: answer.kind !== "cut" });
     if (answer.kind !== "good") return "again";
     const day = answer.value;
+    await keepSkew(db, this.machine.now().getTime() - Date.parse(day.madeAt));
     const changedHands = day.person.id !== this.snapshot.person?.id;
     await keepDay(db, day);
     await pruneEntries(db, day.madeAt, day.person.id);
@@ -167,7 +207,8 @@ export class FieldStore {
     };
     const { transport, newId } = this.machine;
     const device = await deviceId(db, newId);
-    return flush({ db, transport, deviceId: device, personId: person.id, changed });
+    const { flushAll } = await import("./flush-all");
+    return flushAll({ db, transport, deviceId: device, personId: person.id, changed });
   }
 
   private signedOut(): FlushEnd {
@@ -182,12 +223,14 @@ export class FieldStore {
     if (!person) return "Sign in first, so that it is known whose entry this is.";
     const { now, newId } = this.machine;
     const happenedAt = now().toISOString();
+    this.set({ told: null });
     const entry = (body: EntryBody) => ({ id: newId(), personId: person.id, happenedAt, body });
     try {
       await work(await this.db(), entry);
     } catch (error) {
       return storageFault(error);
     }
+    this.machine.sendInBackground();
     await this.reload();
     this.machine.announce();
     void this.exchange();
@@ -195,7 +238,7 @@ export class FieldStore {
   }
 
   private db(): Promise<FieldDatabase> {
-    this.opened ??= this.machine.open();
+    this.opened ??= this.machine.open(() => this.set({ outdated: true }));
     return this.opened;
   }
 

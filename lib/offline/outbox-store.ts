@@ -9,12 +9,14 @@ import {
   withDependents,
 } from "@/lib/sync/outbox";
 import type { FieldDatabase } from "./database";
+import type { NewPhoto } from "./photo-store";
 
 /** The same word as NOT_YOURS in lib/sync/entries, without the schemas that come with it. */
 const NOT_YOURS = "not_yours";
 
 export interface NewEntry {
   readonly id: string;
+  readonly mends?: string;
   readonly personId: string;
   readonly happenedAt: string;
   readonly body: EntryBody;
@@ -30,9 +32,25 @@ function fresh(entry: NewEntry): Stored {
  * Keeps entries, all or none, each under the next number. When this returns they are on disk
  * as far as the browser can say.
  */
-export async function keepEntries(db: FieldDatabase, entries: readonly NewEntry[]): Promise<void> {
-  const tx = db.transaction("entries", "readwrite", { durability: "strict" });
-  for (const entry of entries) await tx.store.add(fresh(entry) as OutboxEntry);
+export async function keepEntries(
+  db: FieldDatabase,
+  entries: readonly NewEntry[],
+  photos: readonly NewPhoto[] = [],
+): Promise<void> {
+  const stores = ["entries", "photos", "pictures"] as const;
+  const tx = db.transaction(stores, "readwrite", { durability: "strict" });
+  try {
+    for (const entry of entries) await tx.objectStore("entries").add(fresh(entry) as OutboxEntry);
+    for (const { bytes, ...photo } of photos) {
+      await tx.objectStore("photos").add({ ...photo, attempts: 0, refusal: null });
+      await tx.objectStore("pictures").add(bytes, photo.id);
+    }
+  } catch (error) {
+    // All or none: what fitted before the store was full goes too. The reason is told, not the end.
+    tx.done.catch(() => undefined);
+    tx.abort();
+    throw error;
+  }
   await tx.done;
 }
 
@@ -92,27 +110,42 @@ export async function pruneEntries(
 
 /** Drops an entry the person gave up, with all that cannot stand without it. */
 export async function discardEntry(db: FieldDatabase, id: string): Promise<void> {
-  const tx = db.transaction("entries", "readwrite", { durability: "strict" });
-  const entries = await tx.store.getAll();
+  const stores = ["entries", "photos", "pictures"] as const;
+  const tx = db.transaction(stores, "readwrite", { durability: "strict" });
+  const entries = await tx.objectStore("entries").getAll();
   const entry = entries.find((candidate) => candidate.id === id);
   // What is under way, or has arrived, can no longer be taken back here.
   if (entry?.state === "refused" || entry?.state === "kept") {
-    for (const gone of withDependents(entries, entry)) await tx.store.delete(gone.seq);
+    for (const gone of withDependents(entries, entry)) {
+      await tx.objectStore("entries").delete(gone.seq);
+      for (const photo of await tx.objectStore("photos").index("entryId").getAllKeys(gone.id)) {
+        await tx.objectStore("photos").delete(photo);
+        await tx.objectStore("pictures").delete(photo);
+      }
+    }
   }
   await tx.done;
 }
 
 /**
  * Puts a mended entry in the place of a refused one: under an id of its own, since the old one
- * has its answer, and in the old one's order, so that what came after still comes after.
+ * has its answer, and in the old one's order, so that what came after still comes after. Its
+ * photos follow it.
  */
 export async function mendEntry(
   db: FieldDatabase,
   refusedId: string,
   entry: NewEntry,
 ): Promise<void> {
-  const tx = db.transaction("entries", "readwrite", { durability: "strict" });
-  const old = await tx.store.index("id").get(refusedId);
-  if (old?.state === "refused") await tx.store.put({ ...fresh(entry), seq: old.seq });
+  const tx = db.transaction(["entries", "photos"], "readwrite", { durability: "strict" });
+  const entries = tx.objectStore("entries");
+  const photos = tx.objectStore("photos");
+  const old = await entries.index("id").get(refusedId);
+  if (old?.state === "refused") {
+    await entries.put({ ...fresh({ ...entry, mends: refusedId }), seq: old.seq });
+    for (const photo of await photos.index("entryId").getAll(refusedId)) {
+      await photos.put({ ...photo, entryId: entry.id });
+    }
+  }
   await tx.done;
 }

@@ -10,21 +10,34 @@ interface DetectorMaker {
 const WANTED = ["qr_code", "code_128", "data_matrix"];
 const LOOK_EVERY_MS = 250;
 
-function maker(): DetectorMaker | null {
-  return (globalThis as { BarcodeDetector?: DetectorMaker }).BarcodeDetector ?? null;
+/** The browser's own detector, where it reads the codes that stand on plates. */
+async function ownDetector(): Promise<Detector | null> {
+  const Maker = (globalThis as { BarcodeDetector?: DetectorMaker }).BarcodeDetector;
+  const known = (await Maker?.getSupportedFormats().catch(() => [])) ?? [];
+  const formats = known.filter((format) => WANTED.includes(format));
+  return Maker && formats.includes("qr_code") ? new Maker({ formats }) : null;
 }
 
-async function formats(): Promise<string[]> {
-  const known =
-    (await maker()
-      ?.getSupportedFormats()
-      .catch(() => [])) ?? [];
-  return known.filter((format) => WANTED.includes(format));
+type Look = (video: HTMLVideoElement) => Promise<string | null>;
+
+async function looker(): Promise<Look> {
+  const own = await ownDetector();
+  if (own) return async (video) => (await own.detect(video))[0]?.rawValue ?? null;
+  const { decodeFrame } = await import("./decode-code");
+  const canvas = document.createElement("canvas");
+  return (video) => decodeFrame(video, canvas);
 }
 
-/** Whether this browser can read codes from the camera. */
-export async function cameraCanScan(): Promise<boolean> {
-  return "mediaDevices" in navigator && (await formats()).length > 0;
+/** Gets the decoder onto the phone while there is signal, where the browser has none of its own. */
+export async function prepareScanning(): Promise<void> {
+  if (!hasCamera() || (await ownDetector())) return;
+  const { fetchDecoder } = await import("./decode-code");
+  await fetchDecoder();
+}
+
+/** Whether the browser gives cameras to pages at all. */
+export function hasCamera(): boolean {
+  return "mediaDevices" in navigator && Boolean(navigator.mediaDevices.getUserMedia);
 }
 
 /**
@@ -33,7 +46,7 @@ export async function cameraCanScan(): Promise<boolean> {
  */
 export function watchForCode(
   video: HTMLVideoElement,
-  report: { found: (code: string) => void; failed: () => void },
+  report: { found: (code: string) => void; failed: (why: string) => void },
 ): () => void {
   let stopped = false;
   let stream: MediaStream | null = null;
@@ -42,23 +55,38 @@ export function watchForCode(
     for (const track of stream?.getTracks() ?? []) track.stop();
   };
   const run = async () => {
-    const Maker = maker();
-    if (!Maker) throw new Error("no detector");
-    const detector = new Maker({ formats: await formats() });
+    const look = looker();
+    look.catch(() => undefined);
     stream = await navigator.mediaDevices.getUserMedia({ video: { facingMode: "environment" } });
     if (stopped) return stop();
     video.srcObject = stream;
     await video.play();
+    const next = await look;
     while (!stopped) {
-      const [code] = await detector.detect(video);
-      if (code && !stopped) return report.found(code.rawValue);
+      const code = await next(video);
+      if (code && !stopped) return report.found(code);
       await new Promise((resolve) => setTimeout(resolve, LOOK_EVERY_MS));
     }
   };
   run()
-    .catch(() => {
-      if (!stopped) report.failed();
+    .catch((error: unknown) => {
+      if (!stopped) report.failed(cameraTrouble(error));
     })
     .finally(stop);
   return stop;
+}
+
+/** Why there is no picture, and what to do; names as the Media Capture specification has them. */
+function cameraTrouble(error: unknown): string {
+  switch (error instanceof Error ? error.name : "") {
+    case "NotAllowedError":
+      return "The camera is not allowed for this site. Allow it by the sign beside the address, then press again; or type the tag.";
+    case "NotFoundError":
+    case "OverconstrainedError":
+      return "The browser finds no camera on this phone: type the tag.";
+    case "NotReadableError":
+      return "Another app holds the camera. Close it and press again, or type the tag.";
+    default:
+      return "The camera could not be used: type the tag.";
+  }
 }

@@ -1,8 +1,11 @@
 import type { DayPack } from "@/lib/sync/day-pack";
 import type { SyncResponse } from "@/lib/sync/entries";
 import type { OutboxEntry } from "@/lib/sync/outbox";
+import type { KeptPhoto } from "@/lib/sync/outbox-photos";
 
 const SEND_TIMEOUT_MS = 30_000;
+/** A weak signal takes minutes over a picture. */
+const PHOTO_TIMEOUT_MS = 180_000;
 const LOAD_TIMEOUT_MS = 20_000;
 /** Statuses that sending the same again cannot change; with any other it may yet succeed. */
 const UNREADABLE = new Set([400, 413, 422]);
@@ -19,6 +22,8 @@ export type Answer<T> =
 
 export interface Transport {
   loadDay(): Promise<Answer<DayPack>>;
+  /** `refused` means that this photo will never do; anything that may pass is `cut`. */
+  sendPhoto(photo: KeptPhoto, bytes: ArrayBuffer): Promise<Answer<unknown>>;
   send(deviceId: string, entries: readonly OutboxEntry[]): Promise<Answer<SyncResponse>>;
 }
 
@@ -31,12 +36,21 @@ export function browserTransport(): Transport {
       const body = JSON.stringify({
         deviceId,
         sentAt,
-        entries: entries.map(({ id, happenedAt, personId, body }) => {
-          return { id, happenedAt, personId, body };
+        entries: entries.map(({ id, happenedAt, personId, mends = null, body }) => {
+          return { id, happenedAt, personId, mends, body };
         }),
       });
       const headers = { "content-type": "application/json" };
       return ask<SyncResponse>("/api/sync", { method: "POST", headers, body }, SEND_TIMEOUT_MS);
+    },
+    sendPhoto: ({ id, entryId, personId, takenAt }, body) => {
+      const query = new URLSearchParams({
+        ...{ entry: entryId, person: personId, taken: takenAt },
+        sent: new Date().toISOString(),
+      });
+      const headers = { "content-type": "image/jpeg" };
+      const url = `/api/sync/photos/${id}?${query}`;
+      return ask(url, { method: "PUT", headers, body }, PHOTO_TIMEOUT_MS);
     },
   };
 }

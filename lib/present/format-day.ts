@@ -1,5 +1,3 @@
-import { tz } from "@date-fns/tz";
-import { getISOWeek, getISOWeekYear } from "date-fns";
 import { MS_PER_DAY, type IsoDay } from "@/lib/units";
 import { dayNumber, dayOfInstant } from "./calendar-days";
 import { EN_DASH, NBSP, type Presentation } from "./locale";
@@ -65,25 +63,6 @@ export function formatWindow(window: CutoffDays, locale: string, today: IsoDay):
 /** Within a range the year is written once: a day borrows it from the one that follows. */
 function yearUnlessSameAs(next: IsoDay, day: IsoDay, today: IsoDay): DayStyle {
   return day.slice(0, 4) === next.slice(0, 4) ? { year: false } : { today };
-}
-
-/** ISO 8601 week of a calendar day; the week's year may differ from the day's. */
-export function isoWeek(day: IsoDay): { year: number; week: number } {
-  const at = new Date(dayNumber(day) * MS_PER_DAY);
-  const context = { in: tz("UTC") };
-  return { year: getISOWeekYear(at, context), week: getISOWeek(at, context) };
-}
-
-/** "week 49", with the week's year where it is not today's. */
-export function weekLabel(day: IsoDay, today: IsoDay): string {
-  const { year, week } = isoWeek(day);
-  return `week${NBSP}${week}${year === isoWeek(today).year ? "" : ` of ${year}`}`;
-}
-
-/** For the masthead: "Tue 1 Dec 2026 · week 49". */
-export function formatToday(now: Date, { locale, timeZone }: Presentation): string {
-  const today = dayOfInstant(now, timeZone);
-  return `${formatDay(today, locale, { weekday: true, year: true })} · ${weekLabel(today, today)}`;
 }
 
 /** Distance in days in words: "today", "in 3 days", "5 days ago". */

@@ -1,6 +1,7 @@
 import type { IsoDay } from "@/lib/units";
 import { dayNumber } from "./calendar-days";
-import { formatDay, weekLabel } from "./format-day";
+import { formatDay } from "./format-day";
+import { weekLabel } from "./format-week";
 
 export interface LeftOutInput {
   readonly reason: string;

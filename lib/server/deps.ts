@@ -2,8 +2,10 @@ import { randomUUID } from "node:crypto";
 import { connect } from "@/db/client";
 import { type Env, parseEnv } from "@/lib/env";
 import type { Deps } from "@/lib/usecases/use-case";
+import { cleanImage } from "./clean-image";
 import { transactionalJobs } from "./jobs";
 import { resendMailer } from "./mail";
+import { objectStorage } from "./object-storage";
 import { storedLegs } from "./travel-legs";
 import { tableService } from "./travel-table";
 
@@ -33,6 +35,8 @@ function create(): Process {
       mailer: resendMailer(env),
       appUrl: env.APP_URL.replace(/\/+$/, ""),
       travel: tableService(storedLegs(db, currentTime)),
+      storage: objectStorage(env),
+      cleanImage,
     },
   };
 }

@@ -9,14 +9,15 @@ export interface PolicyOptions {
 }
 
 /**
- * The content security policy of a page. Scripts only with the nonce; style attributes are
+ * The content security policy of a page. Scripts only with the nonce, and WebAssembly, which the
+ * phone's code reader is (it can do no more than the script that calls it); style attributes are
  * allowed (positions of marks on a scale), style elements and sheets only from here.
  */
 export function contentSecurityPolicy(options: PolicyOptions): string {
   const { nonce, secure, development, tileOrigin } = options;
   const rules: Record<string, string> = {
     "default-src": "'self'",
-    "script-src": `'self' 'nonce-${nonce}' 'strict-dynamic'${development ? " 'unsafe-eval'" : ""}`,
+    "script-src": `'self' 'nonce-${nonce}' 'strict-dynamic' 'wasm-unsafe-eval'${development ? " 'unsafe-eval'" : ""}`,
     "style-src": `'self' ${development ? "'unsafe-inline'" : `'nonce-${nonce}'`}`,
     "style-src-attr": "'unsafe-inline'",
     "img-src": `'self' data: blob:${tileOrigin ? ` ${tileOrigin}` : ""}`,

@@ -1,4 +1,4 @@
-import { AppError, isAppError } from "@/lib/errors";
+import { AppError, invalid, isAppError } from "@/lib/errors";
 
 /**
  * The same request, whose body cannot be read past `limit` bytes: a length that is announced is
@@ -24,6 +24,16 @@ export function withinLimit(request: Request, limit: number): Request {
 function tooLarge(limit: number): AppError {
   const message = `The body is larger than ${limit} bytes: send it in parts.`;
   return new AppError("too_large", message, [{ field: "body", message }]);
+}
+
+/**
+ * The body as bytes, read no further than the limit: a sender need not say how much comes.
+ * @throws AppError too_large when there is more, invalid when there is nothing
+ */
+export async function bytesBody(request: Request, limit: number): Promise<Uint8Array<ArrayBuffer>> {
+  const bytes = new Uint8Array(await withinLimit(request, limit).arrayBuffer());
+  if (bytes.length === 0) throw invalid("The body is empty.");
+  return bytes;
 }
 
 /** The body as JSON. @throws AppError malformed, naming the sign at which it stops being JSON */

@@ -37,6 +37,8 @@ export interface DayRound {
   readonly driveS: number;
   readonly workS: number;
   readonly distanceM: number;
+  /** When the technician gave the stops an order of their own. A day from before has none. */
+  readonly reorderedAt?: string | null;
   readonly stops: readonly DayStop[];
 }
 
@@ -110,6 +112,18 @@ export interface DayAsset {
   /** Index into `climates`. */
   readonly climate: number;
   readonly pack: DayPackInService | null;
+  /** Whether its pack is worth swapping by somebody who is there; a day from before has none. */
+  readonly worth?: DayWorth | null;
+}
+
+/** What swapping a neighbour while there is worth, against a later trip. */
+export interface DayWorth {
+  /** due: waiting costs more than the life thrown away; near: it saves a trip; later: it can wait. */
+  readonly standing: "due" | "near" | "later";
+  /** What it saves, in minor units of the currency; negative: what it would throw away. */
+  readonly savesMinor: number;
+  /** The day a later visit would be best. */
+  readonly laterDay: string;
 }
 
 export interface DayModel {

@@ -59,6 +59,8 @@ const swapBody = z.object({
   voltageOutMv: millivolts.nullable(),
   voltageInMv: millivolts.nullable(),
   look: z.enum(LOOKS).default("sound"),
+  /** Old cells put into the return box; null: the whole pack, as apps before this one meant it. */
+  cellsOut: z.number().int().min(0).max(288).nullable().default(null),
   /** When the device had last been heard, for one found stopped. */
   stoppedAt: z.iso.datetime().nullable().default(null),
   stopId: atStop,
@@ -73,6 +75,35 @@ const cannotBody = z.object({
   note,
 });
 
+/** Something seen at a stop: words, and the photos that name this entry. */
+const noteBody = z.object({ kind: z.literal("note"), stopId: z.uuid(), text: text(1000) });
+
+/** What was counted in the van in the morning against what the round needs. */
+const loadCheckBody = z.object({
+  kind: z.literal("load-check"),
+  roundId: z.uuid(),
+  lines: z
+    .array(
+      z.object({
+        cellTypeId: z.uuid(),
+        needed: z.number().int().min(0).max(100_000),
+        found: z.number().int().min(0).max(100_000),
+        packsShort: z.number().int().min(0).max(10_000),
+      }),
+    )
+    .max(100),
+  /** Stops that what is in the van does not reach to. */
+  stopsShort: z.array(z.uuid()).max(200).default([]),
+  note,
+});
+
+/** The order in which the technician means to go round. */
+const reorderBody = z.object({
+  kind: z.literal("reorder"),
+  roundId: z.uuid(),
+  stopIds: z.array(z.uuid()).min(1).max(200),
+});
+
 const stopDoneBody = z.object({ kind: z.literal("stop-done"), stopId: z.uuid() });
 const roundBody = z.object({
   kind: z.literal("round"),
@@ -85,6 +116,9 @@ export const entryBody = z.discriminatedUnion("kind", [
   swapBody,
   cannotBody,
   stopDoneBody,
+  noteBody,
+  loadCheckBody,
+  reorderBody,
   roundBody,
 ]);
 export type EntryBody = z.output<typeof entryBody>;
@@ -96,6 +130,8 @@ export const entryEnvelope = z.object({
   happenedAt: z.iso.datetime(),
   /** Whose entry it is: another person on the same phone never sends it as theirs. */
   personId: z.uuid(),
+  /** The refused entry in whose place this one stands. */
+  mends: z.uuid().nullable().default(null),
   body: z.unknown(),
 });
 

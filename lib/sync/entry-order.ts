@@ -11,13 +11,16 @@ interface Ordered {
   readonly roundId?: unknown;
 }
 
+const AT_STOP = new Set(["cannot", "stop-done", "note"]);
+const ON_ROUND = new Set(["round", "load-check", "reorder"]);
+
 /** What an entry is about: entries with the same subject are applied in the order made. */
 export function subjectOf(body: unknown): string | null {
   if (typeof body !== "object" || body === null || !("kind" in body)) return null;
   const { kind, assetId, stopId, roundId } = body as Ordered;
   if (kind === "reading" || kind === "swap") return named("asset", assetId);
-  if (kind === "cannot" || kind === "stop-done") return named("stop", stopId);
-  return kind === "round" ? named("round", roundId) : null;
+  if (AT_STOP.has(kind)) return named("stop", stopId);
+  return ON_ROUND.has(kind) ? named("round", roundId) : null;
 }
 
 function named(what: string, id: unknown): string | null {

@@ -6,6 +6,7 @@
 import type { DayAsset, DayPack, DayRound, DayStop, DayTask } from "./day-pack";
 import type { EntryBody } from "./entries";
 import type { OutboxEntry } from "./outbox";
+import { reordered } from "./round-order";
 
 const MS_PER_DAY = 86_400_000;
 
@@ -32,9 +33,18 @@ function lay(day: DayPack, entry: OutboxEntry): DayPack {
       );
     case "stop-done":
       return onStop(day, body.stopId, at, (stop) => done(stop, at));
+    case "reorder":
+      return onRound(day, body.roundId, (round) => inOrder(round, body.stopIds, at));
     case "round":
       return onRound(day, body.roundId, (round) => actOn(round, body.act));
+    case "note":
+    case "load-check":
+      return day;
   }
+}
+
+function inOrder(round: DayRound, stopIds: readonly string[], at: string): DayRound {
+  return { ...round, stops: reordered(round.stops, stopIds), reorderedAt: at };
 }
 
 function actOn(round: DayRound, act: "started" | "done"): DayRound {

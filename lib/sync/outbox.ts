@@ -19,6 +19,8 @@ export interface OutboxEntry {
   readonly personId: string;
   /** By the phone's own clock. */
   readonly happenedAt: string;
+  /** The refused entry in whose place this one stands. */
+  readonly mends?: string | null;
   readonly body: EntryBody;
   readonly state: EntryState;
   readonly attempts: number;

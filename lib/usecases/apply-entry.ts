@@ -9,11 +9,13 @@ import {
   markStopDone,
   tickTask,
 } from "@/db/queries/field-work";
+import { closeMattersOfStop, raiseMatter } from "@/db/queries/field-matters";
 import { getOrganisation } from "@/db/queries/organisation";
 import { AppError, forbidden, notFound } from "@/lib/errors";
 import { dayOfInstant } from "@/lib/present/calendar-days";
 import type { EntryBody } from "@/lib/sync/entries";
 import { applyPhoneReading, applyPhoneSwap } from "./apply-pack-entry";
+import { applyLoadCheck, applyOrder } from "./apply-round-entry";
 import type { Deps, PersonActor } from "./use-case";
 
 export interface EntryToApply {
@@ -48,15 +50,42 @@ export async function applyEntry(
     case "stop-done": {
       const stop = await ownStop(trx, actor, body.stopId);
       await markStopDone(trx, stop.id, happenedAt);
+      await closeMattersOfStop(trx, stop.id, doneAfterAll(deps, actor));
       return markRound(trx, stop.roundId, "started", happenedAt);
     }
+    case "note":
+      // What was seen stands in the entry itself; the stop must be theirs to speak of.
+      return void (await ownStop(trx, actor, body.stopId));
+    case "load-check":
+      return applyLoadCheck(trx, deps, actor, { ...entry, body }, await ownRound(trx, actor, body));
+    case "reorder":
+      return applyOrder(trx, deps, actor, { ...entry, body }, await ownRound(trx, actor, body));
     case "round": {
-      const round = await lockRound(trx, body.roundId);
-      if (!round) throw notFound("The round");
-      refuseOthers(actor, round.technicianId);
+      const round = await ownRound(trx, actor, body);
       return markRound(trx, round.id, body.act, happenedAt);
     }
   }
+}
+
+function doneAfterAll(deps: Deps, actor: PersonActor) {
+  const note = "Done after all.";
+  return {
+    closedAt: deps.now(),
+    closedBy: actor.personId,
+    outcome: "closed" as const,
+    note,
+  };
+}
+
+async function ownRound(
+  trx: Transaction<Database>,
+  actor: PersonActor,
+  { roundId }: { readonly roundId: string },
+) {
+  const round = await lockRound(trx, roundId);
+  if (!round) throw notFound("The round");
+  refuseOthers(actor, round.technicianId);
+  return round;
 }
 
 async function applyCannot(
@@ -75,6 +104,11 @@ async function applyCannot(
   await appendAudit(trx, {
     ...{ at: deps.now(), personId: actor.personId, act: "cannot-do-stop" },
     ...{ subjectKind: "stop", subjectId: stop.id },
+    detail: { reason: body.reason, returnOn: body.returnOn, note: body.note },
+  });
+  await raiseMatter(trx, {
+    ...{ id: deps.newId(), kind: "cannot", entryId: entry.id, personId: actor.personId },
+    ...{ roundId: stop.roundId, stopId: stop.id, assetId: null, raisedAt: deps.now() },
     detail: { reason: body.reason, returnOn: body.returnOn, note: body.note },
   });
 }

@@ -120,6 +120,7 @@ function outOf(body: Body<"swap">, happenedAt: Date) {
     voltageMv: body.voltageOutMv,
     stoppedAt: stopped ? new Date(body.stoppedAt ?? happenedAt) : null,
     look,
+    returned: { cells: body.cellsOut, look: body.look },
   };
 }
 

@@ -17,6 +17,7 @@ export function assembleRounds({ rounds, stops, tasks }: FieldRoundRows): DayRou
     state: round.state as DayRound["state"],
     startsAt: round.startsAt.toISOString(),
     endsAt: round.endsAt.toISOString(),
+    reorderedAt: round.reorderedAt?.toISOString() ?? null,
     stops: (stopsOf.get(round.id) ?? []).map(({ roundId: _, ...stop }) => ({
       ...stop,
       state: stop.state as DayStop["state"],

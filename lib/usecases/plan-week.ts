@@ -5,7 +5,7 @@ import { loadTechniciansToPlan } from "@/db/queries/planning-fleet";
 import { insertPlan } from "@/db/queries/plans";
 import { invalid } from "@/lib/errors";
 import { addDays, localDay, mondayOf } from "@/lib/planning/local-time";
-import { isoWeek } from "@/lib/present/format-day";
+import { isoWeek } from "@/lib/present/format-week";
 import { type Deps, defineUseCase, personIdOf } from "./use-case";
 
 /**

@@ -8,6 +8,7 @@ import { listLots } from "@/db/queries/lots";
 import { getOrganisation } from "@/db/queries/organisation";
 import { listAssetPacks } from "@/db/queries/packs";
 import { listPackReadings } from "@/db/queries/readings";
+import { listAssetPhotos } from "@/db/queries/photos";
 import { listPlaces } from "@/db/queries/stock";
 import { notFound } from "@/lib/errors";
 import { defineUseCase } from "./use-case";
@@ -20,7 +21,7 @@ export const readAsset = defineUseCase({
   run: async (deps, _actor, { tag }) => {
     const asset = await findAsset(deps.db, tag);
     if (!asset) throw notFound(`The asset ${tag}`);
-    const [organisation, model, packs, events, visits, draws, acts, acceptedCells] =
+    const [organisation, model, packs, events, visits, draws, acts, photos, acceptedCells] =
       await Promise.all([
         getOrganisation(deps.db),
         findDeviceModel(deps.db, asset.deviceModelId),
@@ -29,6 +30,7 @@ export const readAsset = defineUseCase({
         listAssetVisits(deps.db, asset.id),
         listDrawMeasurements(deps.db, asset.id),
         listAudit(deps.db, "asset", asset.id),
+        listAssetPhotos(deps.db, asset),
         listAcceptedCellTypes(deps.db, asset.deviceModelId),
       ]);
     const pack = packs.find((p) => p.removedAt === null) ?? null;
@@ -38,7 +40,7 @@ export const readAsset = defineUseCase({
     ]);
     return {
       ...{ organisation, asset, model, packs, pack, readings, forecast },
-      ...{ events, visits, draws, acts, acceptedCells, now: deps.now() },
+      ...{ events, visits, draws, acts, photos, acceptedCells, now: deps.now() },
     };
   },
 });

@@ -26,6 +26,7 @@ import {
   assembleSites,
 } from "./field-day-parts";
 import { arrangeCatalogue, groupBy } from "./forecast-input";
+import { neighboursWorth } from "./neighbours-worth";
 import { type Deps, defineUseCase, type PersonActor } from "./use-case";
 
 /** Yesterday, for what is still to be sent or looked up, and a week ahead. */
@@ -55,9 +56,11 @@ export const readFieldDay = defineUseCase({
         )
       : { rounds: [], stops: [], tasks: [] };
     const { name, locale, timeZone, currency } = organisation;
-    const [things, van] = await Promise.all([
+    const siteIds = [...new Set(rounds.stops.map((stop) => stop.siteId))];
+    const [{ assets, ...things }, van, worth] = await Promise.all([
       loadThings(deps, rounds, madeAt),
       technicianId ? loadVanStock(deps.db, technicianId) : null,
+      neighboursWorth(deps.db, madeAt, organisation.timeZone, siteIds),
     ]);
     return {
       version: DAY_PACK_VERSION,
@@ -66,6 +69,7 @@ export const readFieldDay = defineUseCase({
       organisation: { name, locale, timeZone, currency },
       van,
       rounds: assembleRounds(rounds),
+      assets: assets.map((asset) => ({ ...asset, worth: worth.get(asset.id) ?? null })),
       ...things,
     };
   },

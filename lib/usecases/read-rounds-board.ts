@@ -1,3 +1,5 @@
+import { listReordered } from "@/db/queries/stop-order";
+import { countOpenMatters } from "@/db/queries/field-matters";
 import { z } from "zod";
 import { getOrganisation, type Organisation } from "@/db/queries/organisation";
 import { lastPlanStep } from "@/db/queries/plan-steps";
@@ -6,7 +8,8 @@ import { findPlan, type PlanRow, plansWithin } from "@/db/queries/plans";
 import { findRound } from "@/db/queries/plan-rounds";
 import { loadLeftOutAssets } from "@/db/queries/plan-left-out";
 import { addDays, daysFrom, localDay, mondayOf, weekdayOf } from "@/lib/planning/local-time";
-import { formatDay, weekLabel } from "@/lib/present/format-day";
+import { formatDay } from "@/lib/present/format-day";
+import { weekLabel } from "@/lib/present/format-week";
 import { formatMoney } from "@/lib/present/format-quantity";
 import { formatHours } from "@/lib/present/format-time";
 import { leftOutWords } from "@/lib/present/left-out-words";
@@ -61,6 +64,7 @@ export const readRoundsBoard = defineUseCase({
       })),
       rows: technicians.map((technician) => boardRow(technician, days, organisation.locale)),
       rounds,
+      ...(await fromField(deps, stored)),
       leftOut: plan ? await leftOutShown(deps, plan.id, today, organisation) : [],
     };
   },
@@ -71,6 +75,16 @@ export type { BoardRound };
 const DISPATCHERS: readonly string[] = ["administrator", "dispatcher"];
 
 type TechnicianRow = Awaited<ReturnType<typeof loadTechniciansToPlan>>[number];
+
+/** What the phones have said: matters to decide, rounds in their technician's own order. */
+async function fromField(deps: Deps, shown: readonly { readonly id: string }[]) {
+  const ids = shown.map((round) => round.id);
+  const [matters, reordered] = await Promise.all([
+    countOpenMatters(deps.db),
+    listReordered(deps.db, ids),
+  ]);
+  return { matters, reordered };
+}
 
 /** The plan itself: its state, its version, what can be undone. */
 async function planShown(deps: Deps, plan: PlanRow, shown: readonly { planId: string }[]) {

@@ -9,6 +9,7 @@ import {
   type ReasonOut,
   settleForecast,
 } from "@/db/queries/packs";
+import { returnCells } from "@/db/queries/returned-cells";
 import { conflict, invalid, notFound } from "@/lib/errors";
 import { judgeReading } from "./judge-reading";
 import type { Chemistry } from "@/lib/battery/pack";
@@ -25,6 +26,8 @@ export interface PackOut {
   readonly stoppedAt: Date | null;
   readonly lastHeardAt?: Date | null;
   readonly look: string;
+  /** What goes into the return box; left out: the whole pack, sound. */
+  readonly returned?: { readonly cells: number | null; readonly look: string };
 }
 
 export interface SwapOrder {
@@ -106,6 +109,11 @@ export async function takeOut(
     recordedAt: deps.now(),
     censored: out.stoppedAt === null,
     endedAt: out.stoppedAt ?? at,
+  });
+  await returnCells(trx, {
+    ...{ packId: old.id, cellTypeId: old.cellTypeId, lotId: old.lotId, at, personId },
+    cells: out.returned?.cells ?? old.series * old.parallel,
+    look: out.returned?.look ?? "sound",
   });
   if (out.stoppedAt) {
     await insertDeviceEvent(trx, {

@@ -1,3 +1,5 @@
+import { z } from "zod";
+import { closeMatterOfEntry, raiseMatter } from "@/db/queries/field-matters";
 import { findSyncEntry, insertSyncEntry, type NewSyncEntry } from "@/db/queries/sync-entries";
 import { forbidden, isAppError } from "@/lib/errors";
 import { clockSkewMs, correctedInstant, recordedSkewMs } from "@/lib/sync/clock-skew";
@@ -36,6 +38,8 @@ export interface SyncResult {
 
 /** A refusal that waiting cannot mend is recorded; these may go through when sent again. */
 const TRY_AGAIN = new Set(["unavailable", "too_many", "not_signed_in"]);
+/** Two people's words against each other: the office decides. */
+const TO_DECIDE = new Set(["conflict", "forbidden", "not_found"]);
 const WAITS = "It waits for an earlier entry about the same thing.";
 
 /**
@@ -86,13 +90,17 @@ async function takeEntry(call: Call, envelope: Envelope): Promise<EntryOutcome> 
     outcome: "applied",
     refusal: null,
   };
-  if (parsed.success) return applyOnce(call, record, parsed.data);
+  if (parsed.success) return applyOnce(call, record, { mends: envelope.mends, body: parsed.data });
   const faults = parsed.error.issues.map((i) => ({ field: i.path.join("."), message: i.message }));
   const message = "This entry could not be read. Enter it again.";
   return recordRefusal(call, record, { code: "invalid", message, faults });
 }
 
-async function applyOnce(call: Call, record: NewSyncEntry, body: EntryBody): Promise<EntryOutcome> {
+async function applyOnce(
+  call: Call,
+  record: NewSyncEntry,
+  { body, mends }: { readonly body: EntryBody; readonly mends: string | null },
+): Promise<EntryOutcome> {
   const { deps, actor, receivedAt, skewMs } = call;
   try {
     const fresh = await deps.db.transaction().execute(async (trx) => {
@@ -102,6 +110,8 @@ async function applyOnce(call: Call, record: NewSyncEntry, body: EntryBody): Pro
         happenedAt: correctedInstant(record.happenedAt, skewMs, receivedAt),
         body,
       });
+      const { personId } = actor;
+      if (mends) await closeMatterOfEntry(trx, { entryId: mends, personId }, mendedBy(call));
       return true;
     });
     return fresh
@@ -119,16 +129,35 @@ async function applyOnce(call: Call, record: NewSyncEntry, body: EntryBody): Pro
   }
 }
 
+function mendedBy({ deps, actor }: Call) {
+  const closedBy = actor.personId;
+  return { closedAt: deps.now(), closedBy, outcome: "mended" as const, note: "" };
+}
+
 /** Between the failed attempt and this, another request may have applied the entry: it counts. */
 async function recordRefusal(
   call: Call,
   record: NewSyncEntry,
   refusal: Refusal,
 ): Promise<EntryOutcome> {
-  const recorded = await call.deps.db
-    .transaction()
-    .execute((trx) => insertSyncEntry(trx, { ...record, outcome: "refused", refusal }));
+  const { deps, actor } = call;
+  const recorded = await deps.db.transaction().execute(async (trx) => {
+    if (!(await insertSyncEntry(trx, { ...record, outcome: "refused", refusal }))) return false;
+    await raiseMatter(trx, {
+      ...{ id: deps.newId(), entryId: record.id, personId: actor.personId },
+      kind: TO_DECIDE.has(refusal.code) ? "conflict" : "refused",
+      ...{ ...aboutOf(record.body), raisedAt: deps.now(), detail: { kind: record.kind } },
+    });
+    return true;
+  });
   return recorded ? refused(record.id, refusal) : recordedOutcome(call, record.id);
+}
+
+/** What a refused entry spoke of, as far as it can be read. */
+function aboutOf(body: unknown) {
+  const { assetId, stopId, roundId } = (body ?? {}) as Record<string, unknown>;
+  const id = (value: unknown) => (z.uuid().safeParse(value).success ? String(value) : null);
+  return { assetId: id(assetId), stopId: id(stopId), roundId: id(roundId) };
 }
 
 /** What became of an entry when it was first sent. */

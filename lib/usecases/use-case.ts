@@ -80,6 +80,33 @@ export interface TravelService {
   >;
 }
 
+/** Keeps pictures and documents by key, outside the database. */
+export interface ObjectStorage {
+  /** Overwrites. @throws AppError unavailable when it cannot be kept now */
+  put(key: string, bytes: Uint8Array, contentType: string): Promise<void>;
+  /** Null: nothing lies there. @throws AppError unavailable when it cannot be asked now */
+  get(key: string): Promise<StoredObject | null>;
+}
+export interface StoredObject {
+  readonly body: ReadableStream<Uint8Array>;
+  readonly bytes: number;
+}
+/** Makes a picture of our own from one that somebody sent, or says why it is none. */
+export interface ImageCleaner {
+  (
+    bytes: Uint8Array,
+  ): Promise<
+    | { readonly ok: true; readonly image: CleanImage }
+    | { readonly ok: false; readonly reason: string }
+  >;
+}
+/** A JPEG without metadata, upright. */
+export interface CleanImage {
+  readonly bytes: Uint8Array;
+  readonly width: number;
+  readonly height: number;
+}
+
 export type JobName =
   "forecast" | "forecast-all" | "plan" | "mail" | "digests" | "import-check" | "import-apply";
 
@@ -93,6 +120,9 @@ export interface Deps {
   readonly appUrl: string;
   /** Without it driving times are reckoned by the great circle. */
   readonly travel?: TravelService;
+  /** Photos are taken in and shown by the web process alone; the worker needs neither. */
+  readonly storage?: ObjectStorage;
+  readonly cleanImage?: ImageCleaner;
 }
 
 export interface Allowed {

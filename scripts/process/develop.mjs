@@ -7,7 +7,7 @@ import { Lifetime } from "./lifetime.mjs";
 import { homeOf, makeHome, ROOT, secretsOf } from "./place.mjs";
 import { freePort, portFrom } from "./ports.mjs";
 import { migrate, seed } from "./schema.mjs";
-import { startMailFake } from "./services.mjs";
+import { startMailFake, startStorageFake } from "./services.mjs";
 import { Steps } from "./steps.mjs";
 import { printTrouble } from "./trouble.mjs";
 
@@ -49,9 +49,12 @@ async function bringUp(steps, life, databaseUrl) {
   await steps.step("Packages", () => ensurePackages(ROOT), String);
   const web = portFrom("PORT") ?? (await freePort(3000));
   const mail = await freePort(3025, [web]);
+  const storage = await freePort(3035, [web, mail]);
   const { authSecret } = secretsOf(home);
   const mailAddress = `http://127.0.0.1:${mail}`;
-  const env = childEnvironment(process.env, { databaseUrl, authSecret, port: web, mailAddress });
+  const storageAddress = process.env.S3_BUCKET ? undefined : `http://127.0.0.1:${storage}`;
+  const found = { databaseUrl, authSecret, port: web, mailAddress, storageAddress };
+  const env = childEnvironment(process.env, found);
   Object.assign(env, { NODE_ENV: "development" });
   const { empty } = await steps.step(
     "Schema",
@@ -71,6 +74,7 @@ async function bringUp(steps, life, databaseUrl) {
     () => startMailFake(setting, mail, null),
     () => mailAddress,
   );
+  if (storageAddress) await startStorageFake(setting, storage, join(home, "objects"));
   const next = ["node_modules/next/dist/bin/next", "dev", "-H", "127.0.0.1", "-p", String(web)];
   reloading("web", next, setting);
   reloading("worker", ["node_modules/tsx/dist/cli.mjs", "watch", "scripts/worker.ts"], setting);

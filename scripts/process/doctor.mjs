@@ -71,6 +71,7 @@ const EXAMINATIONS = {
     throw new Note("not built from these sources yet.", "`npm start` builds them.");
   },
   Settings: examineSettings,
+  Photos: examineStorage,
   Chromium: () => {
     const found = findChromium();
     if (found) return found;
@@ -106,6 +107,21 @@ function examineSettings() {
     );
   }
   return RESEND_API_KEY ? "mails go out through the provider" : "mails stay on the mail page";
+}
+
+function examineStorage() {
+  const { S3_BUCKET, S3_ENDPOINT, S3_ACCESS_KEY_ID, S3_SECRET_ACCESS_KEY } = process.env;
+  if (!S3_BUCKET) return "kept in the data folder by a stand-in";
+  if (S3_ENDPOINT && !/^https?:\/\/[^/\s]+/.test(S3_ENDPOINT)) {
+    throw new Trouble(`S3_ENDPOINT is "${S3_ENDPOINT}".`, "Write it as https://s3.example.org");
+  }
+  if (!S3_ACCESS_KEY_ID !== !S3_SECRET_ACCESS_KEY) {
+    throw new Trouble(
+      "Of S3_ACCESS_KEY_ID and S3_SECRET_ACCESS_KEY only one is given.",
+      "Give both, or neither where the machine itself may use the bucket.",
+    );
+  }
+  return `bucket ${S3_BUCKET}${S3_ENDPOINT ? ` at ${S3_ENDPOINT}` : ""}`;
 }
 
 /**

@@ -7,7 +7,7 @@ import { ROOT } from "./place.mjs";
 import { freePort } from "./ports.mjs";
 import { ensureDatabase, newPassword } from "./postgres.mjs";
 import { migrate, seed } from "./schema.mjs";
-import { startMailFake, startWeb, startWorker } from "./services.mjs";
+import { startMailFake, startStorageFake, startWeb, startWorker } from "./services.mjs";
 import { printTrouble, Trouble } from "./trouble.mjs";
 
 const DATABASE = "wanewright_e2e";
@@ -72,6 +72,7 @@ async function awaitForecasts(server, life) {
 async function environment(server) {
   const web = await freePort(3100);
   const mail = await freePort(web + 1);
+  const storage = await freePort(mail + 1);
   const given = { ...process.env };
   for (const name of ["APP_URL", "AUTH_URL", "AUTH_SECRET", "RESEND_API_KEY"]) delete given[name];
   const env = childEnvironment(given, {
@@ -79,9 +80,10 @@ async function environment(server) {
     authSecret: newPassword() + newPassword(),
     port: web,
     mailAddress: `http://127.0.0.1:${mail}`,
+    storageAddress: `http://127.0.0.1:${storage}`,
   });
   env.WANEWRIGHT_SCENARIO = "quillmere";
-  return { env, ports: { web, mail } };
+  return { env, ports: { web, mail, storage } };
 }
 
 /**
@@ -100,7 +102,7 @@ async function fill(server, env, logs) {
  * @param {import("./tally.mjs").Tally} tally
  * @param {object} with_
  * @param {NodeJS.ProcessEnv} with_.env
- * @param {{ web: number, mail: number }} with_.ports
+ * @param {{ web: number, mail: number, storage: number }} with_.ports
  * @param {string} with_.logs
  */
 async function startProduct(life, tally, { env, ports, logs }) {
@@ -119,6 +121,7 @@ async function startProduct(life, tally, { env, ports, logs }) {
     },
   };
   await startMailFake(setting, ports.mail, null);
+  await startStorageFake(setting, ports.storage, join(logs, "objects"));
   await startWeb(setting, ports.web);
   await startWorker(setting);
   return `web on ${ports.web}, mail page on ${ports.mail}`;

@@ -64,6 +64,20 @@ export async function startMailFake(setting, port, folder) {
 }
 
 /**
+ * @param {Setting} setting
+ * @param {number} port
+ * @param {string} folder where objects are kept
+ */
+export async function startStorageFake(setting, port, folder) {
+  const args = ["--import", "tsx", "scripts/storage-fake/run.ts"];
+  const more = { STORAGE_FAKE_PORT: String(port), STORAGE_FAKE_FOLDER: folder };
+  const child = start(setting, "storage", args, more);
+  const { check } = setting;
+  await waitUntilAnswers(`http://127.0.0.1:${port}/_health`, { child, check });
+  return child;
+}
+
+/**
  * The worker has no port to ask: it is up when it says so, or, where its log is silenced,
  * when it has lived through its first seconds.
  * @param {Setting} setting

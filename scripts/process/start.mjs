@@ -10,13 +10,14 @@ import { freePort, isFree, portFrom } from "./ports.mjs";
 import { pause } from "./processes.mjs";
 import { claim } from "./run-record.mjs";
 import { migrate, seed } from "./schema.mjs";
-import { startMailFake, startWeb, startWorker } from "./services.mjs";
+import { startMailFake, startStorageFake, startWeb, startWorker } from "./services.mjs";
 import { signInLines } from "./sign-ins.mjs";
 import { Steps } from "./steps.mjs";
 import { printTrouble, Trouble } from "./trouble.mjs";
 
 const FIRST_WEB_PORT = 3000;
 const FIRST_MAIL_PORT = 3025;
+const FIRST_STORAGE_PORT = 3035;
 /** A first start may not take much longer than this for them. */
 const FORECAST_PATIENCE_S = 90;
 
@@ -66,7 +67,10 @@ async function bringUp(life, print) {
   life.onEnd("database", database.stop);
   const mailAddress = ports.mail === undefined ? undefined : `http://127.0.0.1:${ports.mail}`;
   const { authSecret } = secrets;
-  const found = { databaseUrl: database.url, authSecret, port: ports.web, mailAddress };
+  const storageAddress =
+    ports.storage === undefined ? undefined : `http://127.0.0.1:${ports.storage}`;
+  const addresses = { databaseUrl: database.url, port: ports.web, mailAddress };
+  const found = { ...addresses, authSecret, storageAddress };
   const env = childEnvironment(process.env, found);
   const demonstration = await fill(steps, database, home, env);
   const log = join(home, "logs/build.log");
@@ -95,7 +99,9 @@ async function claimHome(home, life, print) {
   return record;
 }
 
-/** @returns {Promise<{ web: number, mail: number | undefined }>} */
+/** @typedef {{ web: number, mail: number | undefined, storage: number | undefined }} Ports */
+
+/** @returns {Promise<Ports>} */
 async function choosePorts() {
   const wanted = portFrom("PORT");
   if (wanted !== undefined && !(await isFree(wanted))) {
@@ -105,8 +111,12 @@ async function choosePorts() {
     );
   }
   const web = wanted ?? (await freePort(FIRST_WEB_PORT));
-  if (process.env.RESEND_API_KEY) return { web, mail: undefined };
-  return { web, mail: await freePort(portFrom("MAIL_FAKE_PORT") ?? FIRST_MAIL_PORT, [web]) };
+  const { RESEND_API_KEY, S3_BUCKET } = process.env;
+  const mail = RESEND_API_KEY
+    ? undefined
+    : await freePort(portFrom("MAIL_FAKE_PORT") ?? FIRST_MAIL_PORT, [web]);
+  const storage = S3_BUCKET ? undefined : await freePort(FIRST_STORAGE_PORT, [web, mail ?? 0]);
+  return { web, mail, storage };
 }
 
 /**
@@ -140,7 +150,7 @@ async function fill(steps, database, home, env) {
  * @param {object} with_
  * @param {string} with_.home
  * @param {NodeJS.ProcessEnv} with_.env
- * @param {{ web: number, mail: number | undefined }} with_.ports
+ * @param {Ports} with_.ports
  * @param {Awaited<ReturnType<typeof claim>>} with_.record
  */
 async function startServices(steps, life, { home, env, ports, record }) {
@@ -167,11 +177,7 @@ async function startServices(steps, life, { home, env, ports, record }) {
       life.ask(`the ${child.name} ended`, 1);
     },
   };
-  const { mail } = ports;
-  if (mail !== undefined) {
-    const tell = () => `http://127.0.0.1:${mail}`;
-    await steps.step("Mail page", () => startMailFake(setting, mail, join(home, "mails")), tell);
-  }
+  await startStandIns(steps, setting, ports, home);
   const tellWeb = () => `listening on 127.0.0.1:${ports.web}`;
   await steps.step("Web", () => startWeb(setting, ports.web), tellWeb);
   await steps.step(
@@ -179,6 +185,28 @@ async function startServices(steps, life, { home, env, ports, record }) {
     () => startWorker(setting),
     () => "running",
   );
+}
+
+/**
+ * What stands in for services outside, where none is configured.
+ * @param {Steps} steps
+ * @param {import("./services.mjs").Setting} setting
+ * @param {Ports} ports
+ * @param {string} home
+ */
+async function startStandIns(steps, setting, { mail, storage }, home) {
+  if (mail !== undefined) {
+    const tell = () => `http://127.0.0.1:${mail}`;
+    await steps.step("Mail page", () => startMailFake(setting, mail, join(home, "mails")), tell);
+  }
+  if (storage !== undefined) {
+    const folder = join(home, "objects");
+    await steps.step(
+      "Storage",
+      () => startStorageFake(setting, storage, folder),
+      () => folder,
+    );
+  }
 }
 
 /**

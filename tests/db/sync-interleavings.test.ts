@@ -50,7 +50,13 @@ function enter(phone: Phone, base: PhoneRound, { act, asset }: Step, minute: num
       ? {
           ...{ ...shared, kind: "swap", oldPackId: known, newPackId, reason: "due" },
           ...{ cellTypeId: register.lr20, lotId: register.lotId, fromPlaceId: base.vanPlaceId },
-          ...{ voltageOutMv: 2300, voltageInMv: 3100, look: "sound", stoppedAt: null },
+          ...{
+            voltageOutMv: 2300,
+            voltageInMv: 3100,
+            look: "sound",
+            stoppedAt: null,
+            cellsOut: null,
+          },
         }
       : {
           ...{ ...shared, kind: "reading", millivolts: 2700, mode: "resting", packId: known },

@@ -10,7 +10,12 @@ import { join } from "node:path";
 import { type BrowserContext, chromium, type Page } from "playwright-core";
 import { afterAll, beforeAll, expect, it } from "vitest";
 import accounts from "../../scripts/seed/demo-accounts.json";
-import { expectAccessible, expectNoSidewaysScroll, productUrl } from "../support/browser";
+import {
+  expectAccessible,
+  expectNoSidewaysScroll,
+  productUrl,
+  withoutBackgroundSync,
+} from "../support/browser";
 import { type FieldScenario, fieldScenario, type FieldStop } from "../support/field-scenario";
 
 const profile = mkdtempSync(join(tmpdir(), "wanewright-phone-"));
@@ -36,6 +41,7 @@ async function switchOn(offline: boolean): Promise<void> {
   });
   await phone.setOffline(offline);
   page = phone.pages()[0] ?? (await phone.newPage());
+  await withoutBackgroundSync(page);
   page.on("console", (message) => {
     if (message.type() === "error") errors.push(message.text());
   });
@@ -103,7 +109,7 @@ it("loads the day once and keeps the pages", async () => {
   await stopLink(11).waitFor({ timeout: 60_000 });
   expect(await page.getByRole("heading", { level: 1 }).textContent()).toBe("12 stops, 61\u00a0km");
   const kept = async () =>
-    page.evaluate(async () => (await (await caches.open("wanewright-pages-1")).keys()).length);
+    page.evaluate(async () => (await (await caches.open("wanewright-pages-2")).keys()).length);
   await expect.poll(kept, { timeout: 60_000 }).toBe(7);
   await expectAccessible(page);
   await expectNoSidewaysScroll(page);

@@ -110,3 +110,13 @@ export async function expectNoSidewaysScroll(page: Page): Promise<void> {
   ]);
   expect(needed, `width of ${page.url()}`).toBeLessThanOrEqual(there ?? 0);
 }
+
+/**
+ * Takes Background Sync away from a page. `setOffline` cuts pages off, but not the service worker that
+ * the browser wakes: it would send at once what a test means to keep.
+ */
+export async function withoutBackgroundSync(page: Page): Promise<void> {
+  await page.addInitScript(
+    'Object.defineProperty(ServiceWorkerRegistration.prototype, "sync", { value: undefined })',
+  );
+}

@@ -11,5 +11,6 @@ export async function signOutAction(): Promise<void> {
   const actor = await currentActor();
   if (actor) await signOut(deps(), actor, {});
   await dropCookie({ redirect: false });
-  redirect("/sign-in");
+  // The page there takes the day off this phone.
+  redirect("/sign-in?left=1");
 }

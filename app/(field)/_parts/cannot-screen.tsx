@@ -14,7 +14,9 @@ import { stopTitle } from "./day-view";
 import { FieldChoice } from "./field-chip";
 import { CANNOT_WORDS } from "./field-words";
 import { go } from "./go";
+import { PhotoField } from "./photo-field";
 import type { ScreenProps } from "./screen";
+import { usePictures } from "./use-pictures";
 
 const OPTIONS = Object.entries(CANNOT_WORDS) as [CannotReason, string][];
 
@@ -24,6 +26,7 @@ export function CannotScreen({ day, query }: ScreenProps) {
   const [reason, setReason] = useState<CannotReason | null>(null);
   const [note, setNote] = useState("");
   const [returnOn, setReturnOn] = useState("");
+  const pictures = usePictures();
   const [trouble, setTrouble] = useState<string | null>(null);
   const back = { href: stop ? `/stop?id=${stop.id}` : "/today", label: "Back to the stop" };
   if (!stop) {
@@ -38,13 +41,11 @@ export function CannotScreen({ day, query }: ScreenProps) {
   }
   const keep = async () => {
     if (!reason) return setTrouble("Choose the reason first.");
-    const fault = await fieldStore().keep({
-      kind: "cannot",
-      stopId: stop.id,
-      reason,
-      returnOn: returnOn || null,
-      note: note.trim(),
-    });
+    const { id: stopId } = stop;
+    const fault = await fieldStore().keepSeen(
+      { kind: "cannot", stopId, reason, returnOn: returnOn || null, note: note.trim() },
+      pictures.list,
+    );
     if (fault) setTrouble(fault);
     else go("/today", true);
   };
@@ -53,7 +54,7 @@ export function CannotScreen({ day, query }: ScreenProps) {
       <FieldBar title="Can’t do it today" heading back={back} />
       <FieldPage
         foot={
-          <BigButton kind="go" onClick={() => void keep()}>
+          <BigButton kind="go" disabled={pictures.busy} onClick={() => void keep()}>
             Keep this
           </BigButton>
         }
@@ -78,6 +79,7 @@ export function CannotScreen({ day, query }: ScreenProps) {
           value={note}
           onChange={(event) => setNote(event.target.value)}
         />
+        <PhotoField pictures={pictures} />
       </FieldPage>
     </>
   );

@@ -25,6 +25,12 @@ export function entryTitle({ body }: OutboxEntry, day: DayPack | null): string {
       return `${stop(body.stopId)}: ${CANNOT_WORDS[body.reason].toLowerCase()}`;
     case "stop-done":
       return `${stop(body.stopId)}: done`;
+    case "note":
+      return `${stop(body.stopId)}: ${body.text ? `“${body.text.slice(0, 40)}”` : "photo"}`;
+    case "load-check":
+      return body.stopsShort.length > 0 ? "Load checked: short" : "Load checked";
+    case "reorder":
+      return "Order of the stops changed";
     case "round":
       return body.act === "done" ? "Round finished" : "Round started";
   }

@@ -5,22 +5,38 @@ import { lazy, type MouseEvent, Suspense, useEffect } from "react";
 import { FieldBar } from "@/components/ui/field-bar";
 import { FieldPage } from "@/components/ui/field-page";
 import { Skeleton } from "@/components/ui/states";
-import { runFieldStore } from "@/lib/offline/browser-store";
+import { loadTraffic, runFieldStore } from "@/lib/offline/browser-store";
 import { keepShell } from "@/lib/offline/shell";
-import { CannotScreen } from "./cannot-screen";
-import { FindScreen } from "./find-screen";
 import { go, staysHere } from "./go";
 import { showNight } from "./night";
-import { NoDay } from "./no-day";
-import { OutboxScreen } from "./outbox-screen";
-import { StopScreen } from "./stop-screen";
-import { TodayScreen } from "./today-screen";
+import { loadTodayParts, TodayScreen } from "./today-screen";
 import { useField } from "./use-field";
 
-const loadLog = () => import("./log-screen");
-const loadSwap = () => import("./swap-screen");
-const LogScreen = lazy(async () => ({ default: (await loadLog()).LogScreen }));
-const SwapScreen = lazy(async () => ({ default: (await loadSwap()).SwapScreen }));
+// Today comes first and alone; the rest follows at once, and is on the phone before the signal goes.
+const load = {
+  stop: () => import("./stop-screen"),
+  log: () => import("./log-screen"),
+  swap: () => import("./swap-screen"),
+  cannot: () => import("./cannot-screen"),
+  find: () => import("./find-screen"),
+  outbox: () => import("./outbox-screen"),
+  noDay: () => import("./no-day"),
+};
+const StopScreen = lazy(async () => ({ default: (await load.stop()).StopScreen }));
+const LogScreen = lazy(async () => ({ default: (await load.log()).LogScreen }));
+const SwapScreen = lazy(async () => ({ default: (await load.swap()).SwapScreen }));
+const CannotScreen = lazy(async () => ({ default: (await load.cannot()).CannotScreen }));
+const FindScreen = lazy(async () => ({ default: (await load.find()).FindScreen }));
+const OutboxScreen = lazy(async () => ({ default: (await load.outbox()).OutboxScreen }));
+
+const NoDay = lazy(async () => ({ default: (await load.noDay()).NoDay }));
+
+const loadEveryPart = () =>
+  Promise.all([...Object.values(load).map((part) => part()), loadTodayParts(), loadTraffic()]);
+
+/** Where the browser reads no codes itself; without it typing still works. */
+const fetchDecoder = () =>
+  import("@/lib/offline/scan").then((scan) => scan.prepareScanning()).catch(() => undefined);
 
 /** All phone pages: which one is shown follows the address. */
 export function FieldApp() {
@@ -28,7 +44,9 @@ export function FieldApp() {
   useEffect(showNight, []);
   useEffect(() => {
     // Every part must be on the phone before the signal goes, not only the one looked at.
-    void Promise.all([loadLog(), loadSwap()]).then(keepShell, () => undefined);
+    void loadEveryPart()
+      .then(fetchDecoder)
+      .then(keepShell, () => undefined);
   }, []);
   return (
     <div onClickCapture={answerHere}>

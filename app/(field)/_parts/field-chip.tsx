@@ -1,4 +1,4 @@
-import Link from "next/link";
+import { FieldLink } from "@/components/ui/field-link";
 import type { ReactNode } from "react";
 
 const look = (on: boolean) =>
@@ -46,8 +46,8 @@ export function ChipPage({
   children: ReactNode;
 }) {
   return (
-    <Link href={href} prefetch={false} aria-current={on ? "page" : undefined} className={look(on)}>
+    <FieldLink href={href} aria-current={on ? "page" : undefined} className={look(on)}>
       {children}
-    </Link>
+    </FieldLink>
   );
 }

@@ -1,6 +1,6 @@
 "use client";
 
-import Link from "next/link";
+import { FieldLink } from "@/components/ui/field-link";
 import { useState } from "react";
 import { FieldBar } from "@/components/ui/field-bar";
 import { FieldPage } from "@/components/ui/field-page";
@@ -52,14 +52,13 @@ export function FindScreen({ day, query }: ScreenProps) {
           <ul aria-label="Assets" className="-mx-4 border-y border-rule bg-sheet">
             {found.slice(0, MOST_SHOWN).map((one) => (
               <li key={one.id} className="border-t border-rule first:border-t-0">
-                <Link
+                <FieldLink
                   href={`/find?asset=${one.id}`}
-                  prefetch={false}
                   className="flex min-h-14 flex-col justify-center px-4 py-2"
                 >
                   <span className="font-mono text-sm font-semibold">{one.tag}</span>
                   <span className="text-soft">{one.name}</span>
-                </Link>
+                </FieldLink>
               </li>
             ))}
           </ul>

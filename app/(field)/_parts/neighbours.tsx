@@ -1,7 +1,8 @@
-import Link from "next/link";
+import { FieldLink } from "@/components/ui/field-link";
 import { WaneDisc } from "@/components/charts/wane-disc";
 import type { DayAsset, DayPack, DaySite, DayStop } from "@/lib/sync/day-pack";
 import { discOf } from "./day-view";
+import { neighbourWords } from "./neighbour-words";
 
 /** What else stands here: dying packs first, with a word on whether a swap now is worth it. */
 export function Neighbours(props: { day: DayPack; site: DaySite; stop: DayStop }) {
@@ -9,7 +10,7 @@ export function Neighbours(props: { day: DayPack; site: DaySite; stop: DayStop }
   const planned = new Set(stop.tasks.map((task) => task.assetId));
   const others = day.assets
     .filter((asset) => asset.siteId === site.id && !planned.has(asset.id))
-    .sort((a, b) => likely(a) - likely(b));
+    .sort(byWorth);
   if (others.length === 0) return null;
   return (
     <section aria-labelledby="neighbours" className="flex flex-col gap-2">
@@ -21,9 +22,8 @@ export function Neighbours(props: { day: DayPack; site: DaySite; stop: DayStop }
           const disc = discOf(day, asset);
           return (
             <li key={asset.id} className="border-t border-rule first:border-t-0">
-              <Link
+              <FieldLink
                 href={`/find?asset=${asset.id}&stop=${stop.id}`}
-                prefetch={false}
                 className="flex min-h-14 items-center gap-3 px-4 py-2"
               >
                 <WaneDisc model={disc} size={24} decorative />
@@ -31,9 +31,13 @@ export function Neighbours(props: { day: DayPack; site: DaySite; stop: DayStop }
                   <span className="block">
                     <span className="font-mono text-sm">{asset.tag}</span> {asset.name}
                   </span>
-                  <span className="block text-soft">{worth(disc.tone, disc.label)}</span>
+                  <span
+                    className={`block ${asset.worth?.standing === "due" ? "font-semibold" : "text-soft"}`}
+                  >
+                    {neighbourWords(day, asset, disc)}
+                  </span>
                 </span>
-              </Link>
+              </FieldLink>
             </li>
           );
         })}
@@ -42,12 +46,13 @@ export function Neighbours(props: { day: DayPack; site: DaySite; stop: DayStop }
   );
 }
 
-function likely(asset: DayAsset): number {
-  return asset.pack?.forecast ? Date.parse(asset.pack.forecast.p50) : Number.MAX_VALUE;
+/** Those most worth doing first, then by when they are likely to stop. */
+function byWorth(a: DayAsset, b: DayAsset): number {
+  const rank = { due: 0, near: 1, later: 2 };
+  const of = (asset: DayAsset) => rank[asset.worth?.standing ?? "later"];
+  return of(a) - of(b) || likely(a) - likely(b);
 }
 
-function worth(tone: string, label: string): string {
-  if (tone === "out") return `${label}: swap it while you are here`;
-  if (tone === "soon") return `${label} left: worth swapping while you are here`;
-  return tone === "order" ? `${label} left: can wait` : label;
+function likely(asset: DayAsset): number {
+  return asset.pack?.forecast ? Date.parse(asset.pack.forecast.p50) : Number.MAX_VALUE;
 }

@@ -7,6 +7,7 @@ import type { FieldSnapshot } from "@/lib/offline/field-store";
 import { fieldStatus } from "./field-status";
 import { OutboxItem } from "./outbox-item";
 import { OutboxNotices } from "./outbox-notices";
+import { PhotoItems } from "./photo-items";
 
 /** Every entry on this phone with its state; refused ones with their reason and a way on. */
 export function OutboxScreen({ field }: { field: FieldSnapshot }) {
@@ -23,7 +24,8 @@ export function OutboxScreen({ field }: { field: FieldSnapshot }) {
       />
       <FieldPage>
         <OutboxNotices field={{ ...field, count: { ...field.count, refused: 0 } }} />
-        {sorted.length === 0 ? (
+        <PhotoItems field={field} />
+        {sorted.length === 0 && field.count.photos === 0 ? (
           <EmptyState title="Everything has been sent.">
             Entries stand here from the moment you keep them until the office has them.
           </EmptyState>

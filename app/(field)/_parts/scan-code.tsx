@@ -3,17 +3,13 @@
 import { useEffect, useRef, useState } from "react";
 import { BigButton } from "@/components/ui/big-button";
 import { Notice } from "@/components/ui/notice";
-import { cameraCanScan, watchForCode } from "@/lib/offline/scan";
+import { hasCamera, watchForCode } from "@/lib/offline/scan";
 
-/** Scans the code on a device's plate, where the browser can. */
+/** Scans the code on a device’s plate; typing the tag is always possible beside it. */
 export function ScanCode({ onCode }: { onCode: (code: string) => void }) {
   const [on, setOn] = useState(false);
   const [trouble, setTrouble] = useState<string | null>(null);
-  const [able, setAble] = useState(false);
   const video = useRef<HTMLVideoElement>(null);
-  useEffect(() => {
-    void cameraCanScan().then(setAble);
-  }, []);
   useEffect(() => {
     if (!on || !video.current) return;
     return watchForCode(video.current, {
@@ -21,13 +17,17 @@ export function ScanCode({ onCode }: { onCode: (code: string) => void }) {
         setOn(false);
         onCode(code);
       },
-      failed: () => {
+      failed: (why) => {
         setOn(false);
-        setTrouble("The camera could not be used. Allow it for this site, or type the tag.");
+        setTrouble(why);
       },
     });
   }, [on, onCode]);
-  if (!able) return null;
+  if (!hasCamera()) return null;
+  const press = () => {
+    setTrouble(null);
+    setOn(!on);
+  };
   return (
     <>
       {trouble && <Notice kind="warn">{trouble}</Notice>}
@@ -40,7 +40,7 @@ export function ScanCode({ onCode }: { onCode: (code: string) => void }) {
           aria-label="Camera picture"
         />
       )}
-      <BigButton onClick={() => setOn(!on)}>{on ? "Stop the camera" : "Scan the code"}</BigButton>
+      <BigButton onClick={press}>{on ? "Stop the camera" : "Scan the code"}</BigButton>
     </>
   );
 }

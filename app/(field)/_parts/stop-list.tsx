@@ -1,4 +1,4 @@
-import Link from "next/link";
+import { FieldLink } from "@/components/ui/field-link";
 import { WaneDisc } from "@/components/charts/wane-disc";
 import { formatTime } from "@/lib/present/format-time";
 import type { DayPack, DayRound, DayStop } from "@/lib/sync/day-pack";
@@ -12,9 +12,8 @@ export function StopList({ day, round }: { day: DayPack; round: DayRound }) {
     <ol aria-label="Stops" className="-mx-4 border-y border-rule bg-sheet">
       {round.stops.map((stop) => (
         <li key={stop.id} className="border-t border-rule first:border-t-0">
-          <Link
+          <FieldLink
             href={`/stop?id=${stop.id}`}
-            prefetch={false}
             aria-current={stop === next ? "step" : undefined}
             className={`flex min-h-17 items-center gap-3.5 py-2.5 pr-4 ${
               stop === next ? "border-l-[5px] border-spruce pl-2.75" : "pl-4"
@@ -26,7 +25,7 @@ export function StopList({ day, round }: { day: DayPack; round: DayRound }) {
               <span className="block text-soft">{aboutStop(day, stop)}</span>
             </span>
             <Due day={day} stop={stop} />
-          </Link>
+          </FieldLink>
         </li>
       ))}
     </ol>

@@ -15,6 +15,7 @@ import { Neighbours } from "./neighbours";
 import type { ScreenProps } from "./screen";
 import { SiteFacts } from "./site-facts";
 import { SiteMap } from "./site-map";
+import { StopNote } from "./stop-note";
 import { stopTitle } from "./day-view";
 
 const back = { href: "/today", label: "Back to the round" };
@@ -68,6 +69,7 @@ export function StopScreen({ day, query }: ScreenProps) {
           ) : null;
         })}
         <div className="flex flex-col gap-2.5 border-t border-rule pt-4">
+          <StopNote stopId={stop.id} />
           {stop.state !== "done" && (
             <BigButton href={`/cannot?stop=${stop.id}`}>Can’t do it today</BigButton>
           )}

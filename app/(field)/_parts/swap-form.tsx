@@ -5,21 +5,14 @@ import { FieldBar } from "@/components/ui/field-bar";
 import { FieldPage } from "@/components/ui/field-page";
 import { Caution, Notice } from "@/components/ui/notice";
 import { TextArea } from "@/components/ui/inputs";
-import { FieldChoice } from "./field-chip";
-import { chemistryCaution, LOOK_WORDS, REASON_OUT_WORDS } from "./field-words";
+import { chemistryCaution } from "./field-words";
+import { PhotoField } from "./photo-field";
 import { SwapCells } from "./swap-cells";
+import { SwapOut } from "./swap-out";
 import { SwapChecks } from "./swap-checks";
 import type { SwapFormProps } from "./swap-form-props";
 import { useSwap } from "./use-swap";
 import { VoltsField } from "./volts-field";
-
-const REASONS = Object.entries(REASON_OUT_WORDS) as [keyof typeof REASON_OUT_WORDS, string][];
-const LOOKS = Object.entries(LOOK_WORDS) as [keyof typeof LOOK_WORDS, string][];
-
-function cellCount(pack: { series: number; parallel: number }): string {
-  const cells = pack.series * pack.parallel;
-  return cells === 1 ? "1 cell" : `${cells} cells`;
-}
 
 /** Voltage out, cells out, cells in, checks, voltage in: in the order of the hands. */
 export function SwapForm(props: SwapFormProps) {
@@ -42,7 +35,7 @@ export function SwapForm(props: SwapFormProps) {
         foot={
           <>
             {swap.trouble && <Notice kind="trouble">{swap.trouble}</Notice>}
-            <BigButton kind="go" onClick={() => void swap.keep()}>
+            <BigButton kind="go" disabled={swap.pictures.busy} onClick={() => void swap.keep()}>
               {asset.pack ? "Keep this swap" : "Keep this pack"}
             </BigButton>
           </>
@@ -54,34 +47,7 @@ export function SwapForm(props: SwapFormProps) {
             {caution.text}
           </Caution>
         ))}
-        {asset.pack && (
-          <>
-            <h2 className="text-xl">Out</h2>
-            <VoltsField
-              {...{ day, asset, kind: "resting" }}
-              label="Voltage of the old pack, resting"
-              value={draft.voltsOut}
-              onChange={(voltsOut) => set({ voltsOut })}
-            />
-            <FieldChoice
-              label="Why"
-              options={REASONS}
-              value={draft.reason}
-              onChange={(reason) => set({ reason })}
-            />
-            <FieldChoice
-              label={`The old pack looks (${cellCount(asset.pack)})`}
-              options={LOOKS}
-              value={draft.look}
-              onChange={(look) => set({ look })}
-            />
-            {draft.look !== "sound" && (
-              <Caution title="Damaged cells">
-                Gloves and eye protection on. Bag each cell alone, terminals taped.
-              </Caution>
-            )}
-          </>
-        )}
+        {asset.pack && <SwapOut {...{ day, asset, pack: asset.pack, draft, set }} />}
         <h2 className="text-xl">In</h2>
         <SwapCells {...{ day, asset, draft, set }} />
         <SwapChecks {...{ draft, set }} />
@@ -91,6 +57,7 @@ export function SwapForm(props: SwapFormProps) {
           value={draft.voltsIn}
           onChange={(voltsIn) => set({ voltsIn })}
         />
+        {!props.mended && <PhotoField pictures={swap.pictures} />}
         <TextArea
           {...{ name: "note", label: "Note", optional: true, rows: 2, maxLength: 800 }}
           value={draft.note}

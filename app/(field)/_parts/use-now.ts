@@ -13,3 +13,11 @@ export function useNow(): Date {
   }, []);
   return now;
 }
+
+/** A phone's clock may be a day off; within five minutes it is left alone. */
+const LEEWAY_MS = 5 * 60_000;
+
+/** The phone's time put right by what the server's clock said last. */
+export function trueTime(now: Date, skewMs: number): Date {
+  return Math.abs(skewMs) > LEEWAY_MS ? new Date(now.getTime() - skewMs) : now;
+}

@@ -7,6 +7,7 @@ import type { EntryBody } from "@/lib/sync/entries";
 import { go } from "./go";
 import type { SwapFormProps } from "./swap-form-props";
 import { thousandths } from "./typed-number";
+import { usePictures } from "./use-pictures";
 
 type SwapBody = Extract<EntryBody, { kind: "swap" }>;
 
@@ -14,6 +15,8 @@ export interface SwapDraft {
   readonly voltsOut: string;
   readonly reason: SwapBody["reason"];
   readonly look: SwapBody["look"];
+  /** Old cells that go into the return box. */
+  readonly cellsOut: number;
   readonly cellTypeId: string;
   /** "" stands for cells whose lot is not in the van's list. */
   readonly lotId: string;
@@ -30,6 +33,7 @@ export function useSwap({ day, asset, stopId, task, back, mended }: SwapFormProp
   const [newPackId] = useState(() => before?.newPackId ?? crypto.randomUUID());
   const [draft, setDraft] = useState(() => firstDraft(day, asset, task?.cellTypeId, before));
   const [trouble, setTrouble] = useState<string | null>(null);
+  const pictures = usePictures();
   const set = (change: Partial<SwapDraft>) => setDraft((known) => ({ ...known, ...change }));
 
   const keep = async () => {
@@ -47,16 +51,17 @@ export function useSwap({ day, asset, stopId, task, back, mended }: SwapFormProp
       voltageOutMv: asset.pack ? thousandths(draft.voltsOut) : null,
       voltageInMv: thousandths(draft.voltsIn),
       look: draft.look,
+      cellsOut: asset.pack ? draft.cellsOut : null,
       stoppedAt: null,
       stopId,
       note: draft.note.trim(),
     };
     const store = fieldStore();
-    const said = await (mended ? store.mend(mended, body) : store.keep(body));
+    const said = await (mended ? store.mend(mended, body) : store.keepSeen(body, pictures.list));
     if (said) setTrouble(said);
     else go(back.href, true);
   };
-  return { draft, set, trouble, keep };
+  return { draft, set, trouble, keep, pictures };
 }
 
 function firstDraft(
@@ -72,6 +77,7 @@ function firstDraft(
     voltsOut: typed(before?.voltageOutMv),
     reason: before?.reason ?? (plannedCells ? "due" : "early"),
     look: before?.look ?? "sound",
+    cellsOut: before?.cellsOut ?? (asset.pack ? asset.pack.series * asset.pack.parallel : 0),
     cellTypeId,
     lotId: before?.lotId ?? firstLot(day, asset, cellTypeId),
     voltsIn: typed(before?.voltageInMv),

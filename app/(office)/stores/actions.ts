@@ -5,6 +5,7 @@ import { redirect } from "next/navigation";
 import { defineAction } from "@/lib/server/define-action";
 import { countCells } from "@/lib/usecases/count-cells";
 import { moveCells } from "@/lib/usecases/move-cells";
+import { collectReturnedCells } from "@/lib/usecases/return-box";
 import { receiveLot } from "@/lib/usecases/receive-lot";
 import { saveCellType } from "@/lib/usecases/save-cell-type";
 import { rows, texts } from "../fleet/_parts/form-entries";
@@ -27,6 +28,11 @@ export const moveCellsAction = defineAction(
 export const countCellsAction = defineAction(
   countCells,
   (form) => texts(form, "id", "lotId", "placeId", "counted", "note"),
+  renew,
+);
+export const collectReturnedAction = defineAction(
+  collectReturnedCells,
+  (form) => texts(form, "cellTypeId", "until"),
   renew,
 );
 export const saveCellTypeAction = defineAction(

@@ -6,13 +6,15 @@
  */
 import "fake-indexeddb/auto";
 import { randomUUID } from "node:crypto";
+import { openDB } from "idb";
 import { beforeEach, describe, expect, it, vi } from "vitest";
 import { openFieldDatabase } from "@/lib/offline/database";
 import { FieldStore } from "@/lib/offline/field-store";
 import type { Answer, Transport } from "@/lib/offline/transport";
 import type { SyncResponse } from "@/lib/sync/entries";
 import type { OutboxEntry } from "@/lib/sync/outbox";
-import { BODY, dayPack } from "../sync/day-fixture";
+import type { KeptPhoto } from "@/lib/sync/outbox-photos";
+import { BODY, dayPack, outboxEntry } from "../sync/day-fixture";
 
 type Fate = "good" | "cut" | "lost" | "signed-out" | "too-large" | "poison";
 
@@ -26,7 +28,11 @@ class Server {
   clock = Date.parse("2026-12-01T12:00:00Z");
 
   transport(): Transport {
-    return { loadDay: async () => this.loadDay(), send: async (_, e) => this.send(e) };
+    return {
+      loadDay: async () => this.loadDay(),
+      send: async (_, e) => this.send(e),
+      sendPhoto: async (photo, bytes) => this.sendPhoto(photo, bytes),
+    };
   }
 
   private loadDay(): Answer<ReturnType<typeof dayPack>> {
@@ -37,6 +43,20 @@ class Server {
       kind: "good",
       value: { ...dayPack(), madeAt, person: { id: this.signedIn, name: "" } },
     };
+  }
+
+  readonly photos = new Map<string, { entryId: string; bytes: number; times: number }>();
+  photoFate: Fate = "good";
+
+  /** Keeps a photo whose entry it has, once. */
+  private sendPhoto(photo: KeptPhoto, bytes: ArrayBuffer): Answer<unknown> {
+    if (this.fate === "cut" || this.photoFate === "cut") return { kind: "cut" };
+    if (this.photoFate === "poison") return { kind: "refused", message: "no photo" };
+    if (photo.personId !== this.signedIn) return { kind: "cut" };
+    if (!this.applied.includes(photo.entryId)) return { kind: "cut" };
+    const times = (this.photos.get(photo.id)?.times ?? 0) + 1;
+    this.photos.set(photo.id, { entryId: photo.entryId, bytes: bytes.byteLength, times });
+    return this.photoFate === "lost" ? { kind: "cut" } : { kind: "good", value: {} };
   }
 
   private send(entries: readonly OutboxEntry[]): Answer<SyncResponse> {
@@ -76,16 +96,40 @@ beforeEach(() => {
   retries = [];
 });
 
+/** A model of the camera's work: a picture takes as many bytes as its edge has pixels. */
+const shrink = async (_: ArrayBuffer, edgePx: number) => new ArrayBuffer(edgePx);
+
+const picture = (bytes = 1600) => ({
+  ...{ id: randomUUID(), takenAt: "2026-12-01T10:00:00Z", bytes: new ArrayBuffer(bytes) },
+});
+
+/** A phone that takes pictures up to so many bytes and says what browsers say beyond. */
+function fullPhone(room: number): void {
+  const add = IDBObjectStore.prototype.add;
+  vi.spyOn(IDBObjectStore.prototype, "add").mockImplementation(function (
+    this: IDBObjectStore,
+    ...given: Parameters<typeof add>
+  ) {
+    const [value] = given;
+    if (value instanceof ArrayBuffer && value.byteLength > room) {
+      throw new DOMException("full", "QuotaExceededError");
+    }
+    return add.apply(this, given);
+  });
+}
+
 /** A page opened on this phone; the store beneath outlives it. */
 async function openPage(): Promise<FieldStore> {
   const store = new FieldStore({
-    open: () => openFieldDatabase(name),
+    open: (outdated) => openFieldDatabase(name, outdated),
     transport: server.transport(),
     now: () => new Date("2026-12-01T10:00:00Z"),
     newId: randomUUID,
     chance: () => 0,
     later: (work) => void retries.push(work),
     announce: () => undefined,
+    sendInBackground: () => undefined,
+    shrink,
   });
   await store.start();
   return store;
@@ -222,4 +266,145 @@ describe("refusals", () => {
     await store.exchange();
     expect(server.applied).toHaveLength(5);
   });
+});
+
+describe("photos", () => {
+  it("follow their entry once it is through, and leave the phone when the server has them", async () => {
+    let store = await openPage();
+    server.fate = "cut";
+    expect(await store.keepSeen(BODY.cannot, [picture(), picture(900)])).toBeNull();
+    await settledDown(store);
+    expect(store.getSnapshot()).toMatchObject({ count: { toSend: 1, photos: 2 } });
+    store = await openPage();
+    server.fate = "good";
+    await store.exchange();
+    const sent = [...server.photos.values()];
+    expect(sent.map((photo) => photo.bytes).sort()).toEqual([1600, 900].sort());
+    expect(new Set(sent.map((photo) => photo.entryId))).toEqual(new Set(server.applied));
+    expect(store.getSnapshot()).toMatchObject({ photos: [], count: { photos: 0 } });
+  });
+
+  it("go again under the same id when the answer was lost, after their entry has left", async () => {
+    const store = await openPage();
+    server.photoFate = "lost";
+    await store.keepSeen(BODY.reading, [picture()]);
+    await settledDown(store);
+    expect(store.getSnapshot()).toMatchObject({ entries: [], count: { photos: 1 } });
+    expect(retries.length).toBeGreaterThan(0);
+    server.photoFate = "good";
+    await store.exchange();
+    expect([...server.photos.values()]).toMatchObject([{ times: 2 }]);
+    expect(store.getSnapshot().photos).toEqual([]);
+  });
+
+  it("wait with a refused entry and follow the one that mends it", async () => {
+    const store = await openPage();
+    server.refuse.add("cannot");
+    await store.keepSeen(BODY.cannot, [picture()]);
+    await settledDown(store);
+    expect(server.photos.size).toBe(0);
+    const [refused] = store.getSnapshot().entries;
+    if (!refused) throw new Error("nothing was refused");
+    server.refuse.clear();
+    await store.mend(refused, BODY.cannot);
+    await settledDown(store);
+    await store.exchange();
+    expect([...server.photos.values()]).toMatchObject([{ entryId: server.applied[0] }]);
+    expect(server.applied).not.toContain(refused.id);
+  });
+
+  it("go with a discarded entry", async () => {
+    const store = await openPage();
+    server.refuse.add("cannot");
+    await store.keepSeen(BODY.cannot, [picture()]);
+    await settledDown(store);
+    await store.discard(store.getSnapshot().entries[0]?.id ?? "");
+    expect(store.getSnapshot().photos).toEqual([]);
+  });
+
+  it("that the server will never have stay until the person gives them up, and block nothing", async () => {
+    const store = await openPage();
+    server.photoFate = "poison";
+    await store.keepSeen(BODY.cannot, [picture()]);
+    await settledDown(store);
+    expect(store.getSnapshot().photos).toMatchObject([{ refusal: { message: "no photo" } }]);
+    server.photoFate = "good";
+    await store.keepSeen(BODY.reading, [picture()]);
+    await settledDown(store);
+    expect(server.photos.size).toBe(1);
+    await store.discardPhoto(store.getSnapshot().photos[0]?.id ?? "");
+    expect(store.getSnapshot().photos).toEqual([]);
+  });
+
+  it("of one person never go as another's", async () => {
+    const store = await openPage();
+    server.fate = "cut";
+    await store.keepSeen(BODY.reading, [picture()]);
+    await settledDown(store);
+    server.fate = "good";
+    server.signedIn = "other";
+    await store.exchange();
+    expect(server.photos.size).toBe(0);
+    expect(store.getSnapshot().count).toMatchObject({ photos: 0, others: 1 });
+    server.signedIn = "me";
+    await store.exchange();
+    expect(server.photos.size).toBe(1);
+  });
+});
+
+describe("a full phone", () => {
+  it("keeps photos smaller, and says so", async () => {
+    const store = await openPage();
+    server.fate = "cut";
+    fullPhone(700);
+    expect(await store.keepSeen(BODY.cannot, [picture(), picture()])).toBeNull();
+    await settledDown(store);
+    vi.restoreAllMocks();
+    expect(store.getSnapshot().told).toContain("smaller");
+    server.fate = "good";
+    await store.exchange();
+    expect([...server.photos.values()].map((photo) => photo.bytes)).toEqual([600, 600]);
+    expect(server.applied).toHaveLength(1);
+  });
+
+  it("keeps the entry without photos rather than nothing, once, and says so", async () => {
+    const store = await openPage();
+    server.fate = "cut";
+    fullPhone(10);
+    expect(await store.keepSeen(BODY.cannot, [picture()])).toBeNull();
+    await settledDown(store);
+    vi.restoreAllMocks();
+    expect(store.getSnapshot()).toMatchObject({ photos: [], count: { toSend: 1 } });
+    expect(store.getSnapshot().told).toContain("without its photo");
+    await store.keep(BODY.done);
+    expect(store.getSnapshot().told).toBeNull();
+  });
+});
+
+describe("an older app on the phone", () => {
+  it("leaves its entries to the newer one, and is told that it is old", async () => {
+    const old = await openDB(name, 1, {
+      upgrade(db) {
+        db.createObjectStore("days");
+        const entries = db.createObjectStore("entries", { keyPath: "seq", autoIncrement: true });
+        entries.createIndex("id", "id", { unique: true });
+        db.createObjectStore("meta");
+      },
+      blocking: (_c, _b, event) => (event.target as IDBDatabase).close(),
+    });
+    await old.put("meta", { id: "me", name: "Jo" }, "person");
+    await old.put("entries", { ...outboxEntry(1, BODY.cannot), id: "from-before" });
+    const store = await openPage();
+    expect(server.applied).toEqual(["from-before"]);
+    // And the other way round: a page of today hears when a later one takes the store over.
+    const later = await openDB(name, 99);
+    await vi.waitFor(() => expect(store.getSnapshot().outdated).toBe(true));
+    later.close();
+  });
+});
+
+it("a phone's clock that is a day off is measured when the day is loaded", async () => {
+  const store = await openPage();
+  // The page's clock stands at ten, the server's just after noon.
+  expect(Math.round(store.getSnapshot().skewMs / 60_000)).toBe(-120);
 });

@@ -1,13 +1,7 @@
 import { describe, expect, it, vi } from "vitest";
 import { axisDay, dayFromNumber, dayNumber, dayOfInstant } from "@/lib/present/calendar-days";
-import {
-  formatDay,
-  formatDaysAway,
-  formatToday,
-  formatWindow,
-  isoWeek,
-  weekLabel,
-} from "@/lib/present/format-day";
+import { formatDay, formatDaysAway, formatWindow } from "@/lib/present/format-day";
+import { formatToday, isoWeek, weekLabel } from "@/lib/present/format-week";
 
 const NBSP = "\u00a0";
 const today = "2026-12-01";

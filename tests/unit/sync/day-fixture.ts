@@ -85,7 +85,7 @@ export const BODY = {
   swap: {
     ...{ ...at, kind: "swap", oldPackId: "pack-1", newPackId: "new", cellTypeId: "lr20" },
     ...{ lotId: "lot", fromPlaceId: "van", reason: "due", voltageOutMv: 2300, voltageInMv: 3100 },
-    ...{ look: "sound", stoppedAt: null },
+    ...{ look: "sound", stoppedAt: null, cellsOut: null },
   },
   cannot: { kind: "cannot", stopId: "stop-2", reason: "flooded", returnOn: null, note: "" },
   done: { kind: "stop-done", stopId: "stop-2" },

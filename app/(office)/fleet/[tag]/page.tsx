@@ -5,6 +5,7 @@ import { AssetFindingNotices } from "./_parts/asset-findings";
 import { AssetHead } from "./_parts/asset-head";
 import { AssetHistory } from "./_parts/asset-history-table";
 import { AssetPack } from "./_parts/asset-pack";
+import { AssetPhotos } from "./_parts/asset-photos";
 import { AssetVoltages } from "./_parts/asset-voltage-table";
 import { AssetWhatIf } from "./_parts/asset-what-if";
 import { loadAssetPage } from "./_parts/load-asset-page";
@@ -28,6 +29,7 @@ export default async function AssetPage(props: Props) {
       <AssetPack view={view} explanation={explanation} />
       <AssetWhatIf view={view} context={context} />
       <AssetVoltages view={view} moved={explanation?.movedByReading ?? {}} mayJudge={!!choices} />
+      <AssetPhotos view={view} />
       <AssetHistory view={view} />
     </>
   );

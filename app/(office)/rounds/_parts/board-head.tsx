@@ -36,6 +36,9 @@ export function BoardHead({ acts, crewId }: { acts: BoardActs; crewId: string | 
           Week after →
         </LinkButton>
       </nav>
+      <ChipLink href="/rounds/field" count={board.matters}>
+        From the field
+      </ChipLink>
       {others.map((other) => (
         <span key={other.id} className="inline-flex flex-wrap items-center gap-1.5">
           <ChipLink href={`/rounds?week=${monday}&plan=${other.id}`}>

@@ -63,6 +63,11 @@ export function RoundPanel({ board, round, acts, editable, placing }: RoundPanel
             <h2 className="text-md font-semibold">{round.title}</h2>
             <span className="text-soft">{round.summary}</span>
           </div>
+          {board.reordered.includes(round.roundId) && (
+            <p className="border-b border-rule px-3 py-2">
+              In the technician’s own order, from the phone: times are about right.
+            </p>
+          )}
           <ol>
             {round.stops.map((stop, i) => (
               <StopLine

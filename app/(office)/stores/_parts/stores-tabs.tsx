@@ -5,6 +5,7 @@ const TABS = [
   ["lots", "Lots", "/stores/lots"],
   ["demand", "Demand", "/stores/demand"],
   ["moves", "Moves", "/stores/moves"],
+  ["return-box", "Return box", "/stores/return-box"],
 ] as const;
 
 /** The parts of the stores. */

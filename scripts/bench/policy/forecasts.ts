@@ -1,0 +1,141 @@
+/**
+ * The product's forecasts over the bench's records: one pack's input as the office knows it, and
+ * what finished packs teach, put together as the product does it.
+ */
+import {
+  cohortPrior,
+  devicePrior,
+  type CohortLife,
+  type FinishedPack,
+  type FleetPrior,
+  type Forecast,
+  type ForecastInput,
+  forecastPack,
+  learnCohorts,
+  type PackEvent,
+} from "@/lib/battery";
+import { groupBy } from "@/lib/usecases/forecast-input";
+import { catalogueCell } from "../../simulate/scenario/cell-catalogue";
+import { modelByCode } from "../../simulate/scenario/device-models";
+import type { BenchField, BenchPack } from "./field";
+import type { Fleet } from "./fleet";
+
+/** A forecast this old is made anew, as is one with news, or whose pack may stop this soon. */
+const OLD_DAYS = 63;
+const NEAR_DAYS = 45;
+/** The fleet's lessons are drawn again so often. */
+const LEARN_DAYS = 28;
+
+function modelOf(tag: string) {
+  return modelByCode(tag.split("-")[0] ?? "");
+}
+
+function cohortOf(pack: BenchPack): string {
+  return `${modelOf(pack.tag).code} ${pack.designation}`;
+}
+
+function eventsOf(field: BenchField, pack: BenchPack, now: number): PackEvent[] {
+  const changes = (field.drawChanges.get(pack.tag) ?? [])
+    .filter((at) => at >= pack.installedAt && at <= now)
+    .map((at): PackEvent => ({ at, kind: "draw-changed" }));
+  const { silence } = pack;
+  if (!silence || silence.knownAt > now) {
+    const heard = Math.max(pack.installedAt, Math.min(now - 0.02, silence?.lastAliveAt ?? now));
+    return [...changes, { at: heard, kind: "reporting" }];
+  }
+  const at = Math.min(now, Math.max(silence.at, pack.installedAt));
+  return [...changes, { at, kind: "stopped", lastAliveAt: silence.lastAliveAt }];
+}
+
+function packSpec({ monthlyMeanDc }: Fleet, pack: BenchPack): ForecastInput["pack"] {
+  const { series, parallel, cutoffMv, duty } = modelOf(pack.tag);
+  const { make: _, ...cell } = catalogueCell(pack.designation);
+  return {
+    cell,
+    series,
+    parallel,
+    cutoffMv,
+    duty,
+    measuredDraw: null,
+    monthlyMeanDc,
+    madeAt: pack.madeAt,
+    installedAt: pack.installedAt,
+  };
+}
+
+/** Keeps a forecast for every pack, made anew where that could matter. */
+export class ForecastDesk {
+  private readonly kept = new Map<string, { at: number; readings: number; forecast: Forecast }>();
+  private readonly lessons = new Map<string, FinishedPack>();
+  private cohorts = new Map<string, CohortLife>();
+  private ofDevice = new Map<string, FinishedPack[]>();
+  private learnedAt = -Infinity;
+
+  constructor(private readonly field: BenchField) {}
+
+  /** The forecast as it stands on a morning. */
+  forecast(pack: BenchPack, now: number): Forecast {
+    const kept = this.kept.get(pack.key);
+    if (kept && kept.readings === pack.readings.length && !this.isPressing(pack, kept, now)) {
+      return kept.forecast;
+    }
+    const forecast = forecastPack({
+      pack: packSpec(this.field.fleet, pack),
+      readings: pack.readings,
+      events: eventsOf(this.field, pack, now),
+      prior: this.prior(pack, now),
+      now,
+    });
+    this.kept.set(pack.key, { at: now, readings: pack.readings.length, forecast });
+    return forecast;
+  }
+
+  private isPressing(
+    pack: BenchPack,
+    kept: { readonly at: number; readonly forecast: Forecast },
+    now: number,
+  ): boolean {
+    if (this.field.isKnownSilent(pack.tag, now) || now - kept.at > OLD_DAYS) return true;
+    return kept.forecast.cdfDays[0]! < now + NEAR_DAYS;
+  }
+
+  private prior(pack: BenchPack, now: number): FleetPrior | null {
+    if (now - this.learnedAt >= LEARN_DAYS) this.learn(now);
+    const cohort = cohortOf(pack);
+    const life = this.cohorts.get(cohort);
+    if (!life) return null;
+    const own = this.ofDevice.get(`${pack.tag} ${cohort}`);
+    return own ? devicePrior(life, own) : cohortPrior(life);
+  }
+
+  private learn(now: number): void {
+    this.learnedAt = now;
+    const finished = this.field.finished.map((pack) => this.lesson(pack));
+    this.cohorts = new Map(learnCohorts(finished).map((life) => [life.cohort, life]));
+    this.ofDevice = groupBy(finished, (pack) => `${pack.deviceKey} ${pack.cohort}`);
+  }
+
+  private lesson(pack: BenchPack): FinishedPack {
+    const known = this.lessons.get(pack.key);
+    if (known) return known;
+    const end = Math.min(pack.silence?.at ?? Infinity, pack.removedAt ?? Infinity);
+    const lesson: FinishedPack = {
+      packKey: pack.key,
+      deviceKey: pack.tag,
+      cohort: cohortOf(pack),
+      lot: null,
+      lifeRatio: (end - pack.installedAt) / this.promisedDays(pack),
+      ranOut: pack.silence !== null,
+    };
+    this.lessons.set(pack.key, lesson);
+    return lesson;
+  }
+
+  /** Median life by the data sheet and the duty cycle alone, from the day the pack went in. */
+  private promisedDays(pack: BenchPack): number {
+    const at = pack.installedAt;
+    const spec = packSpec(this.field.fleet, pack);
+    const unread = { pack: spec, readings: [], events: [], prior: null, now: at };
+    return Math.max(1, forecastPack(unread).quantiles.p50 - at);
+  }
+}

@@ -19,6 +19,8 @@ export interface BenchPack {
   removedAt: number | null;
 }
 
+/** When the office plans, as a share of the day. */
+export const BEFORE_WORK = 0.2;
 /** Days for which one delivery of each cell type lasts, and how old it is when it comes. */
 const DELIVERY_DAYS = 56;
 const DELIVERED_AGE_DAYS = 70;
@@ -119,7 +121,11 @@ export class BenchField {
     const lotKey = `${asset.designation}/${delivery}`;
     const madeAt = delivery * DELIVERY_DAYS - DELIVERED_AGE_DAYS;
     // A lot's truth hangs on its key alone: adding it again changes nothing.
-    world.addLot({ key: lotKey, makeKey: catalogueCell(asset.designation).designation, madeDay: madeAt });
+    world.addLot({
+      key: lotKey,
+      makeKey: catalogueCell(asset.designation).designation,
+      madeDay: madeAt,
+    });
     world.swap(tag, lotKey, at);
     this.installed.set(tag, {
       key: `${tag}/${this.packs++}`,
@@ -155,8 +161,7 @@ export class BenchField {
     let value = 0;
     for (const asset of this.fleet.assets.values()) {
       const workMinor = (asset.model.swapMinutes / 60) * PRICES.crewMinorPerHour;
-      value +=
-        (this.world.truth(asset.tag)?.chargeLeft ?? 0) * (asset.cellsMinor + workMinor);
+      value += (this.world.truth(asset.tag)?.chargeLeft ?? 0) * (asset.cellsMinor + workMinor);
     }
     return value;
   }

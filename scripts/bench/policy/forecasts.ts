@@ -3,6 +3,8 @@
  * what finished packs teach, put together as the product does it.
  */
 import {
+  CDF_PROBABILITIES,
+  chanceOutBy,
   cohortPrior,
   devicePrior,
   type CohortLife,
@@ -14,15 +16,21 @@ import {
   learnCohorts,
   type PackEvent,
 } from "@/lib/battery";
+import { interpolate } from "@/lib/stats/interpolate";
 import { groupBy } from "@/lib/usecases/forecast-input";
 import { catalogueCell } from "../../simulate/scenario/cell-catalogue";
 import { modelByCode } from "../../simulate/scenario/device-models";
 import type { BenchField, BenchPack } from "./field";
 import type { Fleet } from "./fleet";
 
-/** A forecast this old is made anew, as is one with news, or whose pack may stop this soon. */
+/**
+ * A forecast this old is made anew, as is one with news. One whose pack may stop soon is made
+ * anew sooner; in between it is only told that the device still reports. (The product makes all
+ * of them anew every night.)
+ */
 const OLD_DAYS = 63;
 const NEAR_DAYS = 45;
+const RECENT_DAYS = 13;
 /** The fleet's lessons are drawn again so often. */
 const LEARN_DAYS = 28;
 
@@ -63,6 +71,16 @@ function packSpec({ monthlyMeanDc }: Fleet, pack: BenchPack): ForecastInput["pac
   };
 }
 
+/** The quantiles of a forecast once it is known that the device runs on a later day. */
+function stillRunning(forecast: Forecast, now: number): readonly number[] {
+  const days = forecast.cdfDays;
+  const past = chanceOutBy(forecast, now);
+  if (days[0]! > now || past > 0.9) return days;
+  return CDF_PROBABILITIES.map((p) =>
+    Math.max(now, interpolate(CDF_PROBABILITIES, days, past + p * (1 - past))),
+  );
+}
+
 /** Keeps a forecast for every pack, made anew where that could matter. */
 export class ForecastDesk {
   private readonly kept = new Map<string, { at: number; readings: number; forecast: Forecast }>();
@@ -77,7 +95,7 @@ export class ForecastDesk {
   forecast(pack: BenchPack, now: number): Forecast {
     const kept = this.kept.get(pack.key);
     if (kept && kept.readings === pack.readings.length && !this.isPressing(pack, kept, now)) {
-      return kept.forecast;
+      return { ...kept.forecast, cdfDays: stillRunning(kept.forecast, now) };
     }
     const forecast = forecastPack({
       pack: packSpec(this.field.fleet, pack),
@@ -96,7 +114,7 @@ export class ForecastDesk {
     now: number,
   ): boolean {
     if (this.field.isKnownSilent(pack.tag, now) || now - kept.at > OLD_DAYS) return true;
-    return kept.forecast.cdfDays[0]! < now + NEAR_DAYS;
+    return now - kept.at > RECENT_DAYS && kept.forecast.cdfDays[0]! < now + NEAR_DAYS;
   }
 
   private prior(pack: BenchPack, now: number): FleetPrior | null {

@@ -11,13 +11,12 @@ import type { Visit } from "@/lib/planning/visit";
 import { seededRng } from "@/lib/routing/rng";
 import { afterIterations } from "@/lib/routing/solve";
 import { fromEpochDays } from "@/lib/units";
-import type { BenchField } from "./field";
+import { BEFORE_WORK, type BenchField } from "./field";
 import { type BenchAsset, PRICES, ROAD, TIME_ZONE } from "./fleet";
 
 /** Turns of the search for one week; the product takes more, with more to gain on a whole fleet. */
 const TURNS = 6_000;
 const PLENTY = 1_000_000;
-const BEFORE_WORK = 0.2;
 
 /** The week from a Monday, planned that morning. Cells never run out, under any policy. */
 export function weekInput(

@@ -1,11 +1,10 @@
 /** The three policies that are usual without forecasts. */
 import type { PlannedTask } from "@/lib/planning/fleet";
-import type { BenchField, BenchPack } from "./field";
+import { BEFORE_WORK, type BenchField, type BenchPack } from "./field";
 import { assetOf, type BenchAsset } from "./fleet";
 import { roundsForWanted, type WantedVisit } from "./rounds";
 import type { Policy } from "./week";
 
-const BEFORE_WORK = 0.2;
 /** A visit that is called for is made unless nobody can go there. */
 const MUST_MINOR = 40_000;
 

@@ -13,6 +13,8 @@ import { fleetOf, type Fleet } from "./fleet";
 /** A Tuesday; the first planned week begins on the Monday after. */
 const NOW = new Date("2026-12-01T09:00:00Z");
 const DAYS_TO_MONDAY = 6;
+/** As scripts/seed has it. */
+const DEMONSTRATION_SEED = 1;
 
 export interface Start {
   readonly fleet: Fleet;
@@ -65,7 +67,9 @@ function opener(s: Scenario, fleet: Fleet, firstDay: number): () => BenchField {
     takenIn(s).map((taken) => taken.reading),
     (r) => r.packKey,
   );
-  const packs = s.packs.map((p) => packOf(p, (readings.get(p.key) ?? []).map(readingOf), undefined));
+  const packs = s.packs.map((p) =>
+    packOf(p, (readings.get(p.key) ?? []).map(readingOf), undefined),
+  );
   const drawChanges = drawChangesOf(s);
   return () => {
     const own = packs.map((p) => ({ ...p, readings: [...p.readings] }));
@@ -78,7 +82,15 @@ function opener(s: Scenario, fleet: Fleet, firstDay: number): () => BenchField {
 
 /** Lives through the scenario of a seed and takes its fleet, or a part of it, from there. */
 export function startOf(seed: string, assets: number, years: number): Start {
-  const scenario = buildScenario(`policy/${seed}`, NOW);
+  return startFrom(buildScenario(`policy/${seed}`, NOW), seed, assets, years);
+}
+
+/** The demonstration itself, whole. */
+export function demonstration(): Start {
+  return startFrom(buildScenario(DEMONSTRATION_SEED, NOW), "demonstration", Infinity, 1);
+}
+
+function startFrom(scenario: Scenario, seed: string, assets: number, years: number): Start {
   const firstDay = scenario.today + DAYS_TO_MONDAY;
   const lastDay = firstDay + Math.round(years * 365.25);
   const fleet = fleetOf(scenario, seed, assets, lastDay);

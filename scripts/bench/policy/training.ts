@@ -100,7 +100,7 @@ function cheapest<T>(choices: readonly T[], rate: (choice: T) => number): T {
   return choices.reduce((best, choice) => (rate(choice) < rate(best) ? choice : best));
 }
 
-const LOOKS_EVERY = [28, 56, 84, 112, 168, 252, 364];
+const LOOKS_EVERY = [28, 42, 56, 84, 112, 140, 168, 210, 252, 308, 364, 448, 546];
 const NEVER = { everyDays: Infinity, belowMv: 0 };
 
 /** The cheapest age of each device model over these lives. */
@@ -120,7 +120,10 @@ export function bestInspections(lives: readonly TrainingLife[]): Inspections["by
   return new Map(
     [...byModel].map(([code, own]) => {
       const volts = own.flatMap((life) => life.restingMv).sort((a, b) => a - b);
-      const levels = Array.from({ length: 40 }, (_, i) => volts[Math.floor((i / 80) * volts.length)]!);
+      const levels = Array.from(
+        { length: 40 },
+        (_, i) => volts[Math.floor((i / 80) * volts.length)]!,
+      );
       const choices = LOOKS_EVERY.flatMap((everyDays) =>
         [...new Set(levels)].map((belowMv) => ({ everyDays, belowMv })),
       );

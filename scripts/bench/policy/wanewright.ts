@@ -1,13 +1,11 @@
 /** The product itself, week by week, with nothing but its own records. */
 import type { PlanningPack } from "@/lib/planning/fleet";
 import { preparePlan } from "@/lib/planning/plan";
-import type { BenchField } from "./field";
+import { BEFORE_WORK, type BenchField } from "./field";
 import type { BenchAsset } from "./fleet";
 import { ForecastDesk } from "./forecasts";
 import { roundsFor, weekInput } from "./rounds";
 import type { Policy } from "./week";
-
-const BEFORE_WORK = 0.2;
 
 function planningPack(
   field: BenchField,

@@ -65,14 +65,20 @@ export function endDepth(
   dropMv: Millivolts,
 ): number {
   const { restMv, resistance, restScale } = curve;
-  let before = restScale * restMv[0]! + driftMv - dropMv * resistance[0]! - cutoffMv;
-  if (!(before > 0)) return 0;
-  for (let i = 1; i <= CURVE_STEPS; i++) {
-    const after = restScale * restMv[i]! + driftMv - dropMv * resistance[i]! - cutoffMv;
-    if (after <= 0) return (i - 1 + before / (before - after)) / CURVE_STEPS;
-    before = after;
+  const above = (i: number): number =>
+    restScale * restMv[i]! + driftMv - dropMv * resistance[i]! - cutoffMv;
+  if (!(above(0) > 0)) return 0;
+  if (above(CURVE_STEPS) > 0) return 1;
+  // the voltage falls throughout: halve the span that holds the crossing
+  let low = 0;
+  let high = CURVE_STEPS;
+  while (high - low > 1) {
+    const middle = (low + high) >> 1;
+    if (above(middle) > 0) low = middle;
+    else high = middle;
   }
-  return 1;
+  const before = above(low);
+  return (low + before / (before - above(high))) / CURVE_STEPS;
 }
 
 /** End depth of a pack under a current at a temperature. */

@@ -8,9 +8,9 @@ import type { EpochDays } from "../units";
 import { ASSUMED } from "./assumptions";
 import { DAYS_PER_YEAR, monthOf } from "./climate";
 import { consume } from "./consume";
-import { openRate, redrawOffset, wander } from "./draw-walk";
+import { drift, openRate } from "./draw-walk";
 import { type EndOfLife, type ResistanceBelief, endOfLife } from "./end-of-life";
-import { type Grid, newGrid, normalise, weighDepth } from "./grid";
+import { type Grid, depthMarginal, newGrid, normalise, weighDepth } from "./grid";
 import type { ForecastInput, PackEvent, PackReading, ReadingWeight } from "./pack";
 import { type PackModel, leakBetween, packModel } from "./pack-model";
 import { impossibleAboveMv, observe } from "./reading";
@@ -102,6 +102,7 @@ class Run {
     const loaded = reading.kind === "loaded";
     const rested = this.at - this.lastLoaded > ASSUMED.passivationRestDays;
     const film = loaded && rested && this.model.pack.cell.chemistry === "li-socl2";
+    depthMarginal(this.grid, this.grid.nodeC);
     const guess = loaded ? guessRest(this.model, this.grid, reading) : null;
     const said = observe(this.model, this.grid, reading, this.resistance, film);
     this.weights.set(reading.id, said);
@@ -149,10 +150,9 @@ function elapse(model: PackModel, grid: Grid, from: EpochDays, to: EpochDays): v
   for (let s = 0; s < steps; s++) {
     const start = from + (days * s) / steps;
     const end = from + (days * (s + 1)) / steps;
-    wander(grid, variance);
     const share = model.drawPerDay * (end - start);
     const leak = leakBetween(model, start, end);
-    redrawOffset(grid, 1 - Math.exp(-(share + leak) / ASSUMED.curveErrorDepth));
+    drift(grid, variance, 1 - Math.exp(-(share + leak) / ASSUMED.curveErrorDepth));
     consume(grid, share, leak);
   }
 }

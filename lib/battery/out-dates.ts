@@ -4,14 +4,13 @@
  * still do, carried through the seasons (a cold month stops a pack that a warm one would
  * still run) and cut to what is known (alive then, found stopped then).
  */
-import { gridQuantile } from "../stats/grid-quantile";
 import type { EpochDays } from "../units";
 import { ASSUMED } from "./assumptions";
 import { DAYS_PER_YEAR } from "./climate";
 import type { Filtered } from "./filter";
 import { type SeasonalClock, seasonalClock } from "./season-clock";
 
-const BINS = 400;
+const BINS = 240;
 const IGNORED = 1e-8;
 /** Slower than this a pack outlasts every horizon; keeps idle packs finite. */
 const SLOWEST_PER_DAY = 1 / (4 * ASSUMED.horizonDays);
@@ -52,8 +51,9 @@ export function outDates(filtered: Filtered, now: EpochDays): OutDates {
   const below = aliveAt === null ? 0 : massBelow(left, aliveAt - at);
   const above = stoppedAt === null ? 1 : massBelow(left, stoppedAt - at);
   const known = above - below > 1e-9;
+  const sums = cumulative(left.mass);
   const daysLeft = (probability: number): number =>
-    gridQuantile(left.mass, left.from, left.step, below + probability * (above - below));
+    daysAt(left, sums, below + probability * (above - below));
   const quantile = (probability: number): EpochDays => {
     if (!known) return fallback(probability, aliveAt, stoppedAt, at);
     const day = clock.dateOf(daysLeft(probability));
@@ -75,6 +75,26 @@ function fallback(
   return from + probability * (to - from);
 }
 
+function cumulative(mass: Float64Array): Float64Array {
+  let sum = 0;
+  return mass.map((m) => (sum += m));
+}
+
+/** Days left at a probability: each bin's mass lies evenly around its middle. */
+function daysAt(left: TimeLeft, sums: Float64Array, probability: number): number {
+  const target = probability * sums[BINS - 1]!;
+  let low = 0;
+  let high = BINS - 1;
+  while (low < high) {
+    const middle = (low + high) >> 1;
+    if (sums[middle]! >= target && sums[middle]! > 0) high = middle;
+    else low = middle + 1;
+  }
+  const m = left.mass[low]!;
+  const part = m > 0 ? (target - (sums[low]! - m)) / m : 0;
+  return left.from + (low - 0.5 + part) * left.step;
+}
+
 function massBelow(left: TimeLeft, days: number): number {
   const place = (days - left.from) / left.step + 0.5;
   if (!(place > 0)) return 0;
@@ -90,7 +110,9 @@ function collect({ model, grid, end }: Filtered): TimeLeft {
   const leak = model.leakPerDay * model.ageing.meanFactor;
   const draws = grid.rate.map((rate) => Math.max(SLOWEST_PER_DAY, model.drawPerDay * rate));
   const joint = new Float64Array(grid.nr * grid.nx);
-  for (let k = 0; k < grid.p.length; k++) joint[k % joint.length]! += grid.p[k]!;
+  for (let from = 0; from < grid.p.length; from += joint.length) {
+    for (let k = 0; k < joint.length; k++) joint[k]! += grid.p[from + k]!;
+  }
   const days = new Float64Array(joint.length);
   let from = Infinity;
   let to = -Infinity;

@@ -13,7 +13,7 @@ import { temperatureAt } from "./climate";
 import { CURVES } from "./curve-tables";
 import { CURVE_STEPS } from "./curves";
 import { freshDropMv } from "./cutoff";
-import { type Grid, depthMarginal, normalise } from "./grid";
+import { type Grid, normalise } from "./grid";
 import type { ResistanceBelief } from "./end-of-life";
 import type { PackReading, ReadingWeight } from "./pack";
 import { type PackModel, resistanceAge } from "./pack-model";
@@ -79,9 +79,12 @@ function fixedVariance(model: PackModel, grid: Grid, reading: Circumstances): nu
   );
 }
 
-/** 5th, 50th and 95th percentile of a voltage to be read, mV, after `expectAt`. */
+/**
+ * 5th, 50th and 95th percentile of a voltage to be read, mV, after `expectAt`; wants the depth
+ * marginal in `nodeC`.
+ */
 function expectedBand(grid: Grid): [number, number, number] {
-  const marginal = depthMarginal(grid, grid.nodeC);
+  const marginal = grid.nodeC;
   let total = 0;
   for (let i = 0; i < grid.nx; i++) total += marginal[i]!;
   const mean = grid.nodeA;
@@ -104,7 +107,7 @@ function expectedBand(grid: Grid): [number, number, number] {
   ];
 }
 
-/** Update the grid by one reading; says how much it counted and why. */
+/** Update the grid by one reading (depth marginal in `nodeC`); says how much it counted and why. */
 export function observe(
   model: PackModel,
   grid: Grid,

@@ -10,7 +10,7 @@ import { CURVES } from "./curve-tables";
 import { CURVE_STEPS, atDepth } from "./curves";
 import { freshDropMv } from "./cutoff";
 import type { ResistanceBelief } from "./end-of-life";
-import { type Grid, depthMarginal } from "./grid";
+import type { Grid } from "./grid";
 import type { PackReading } from "./pack";
 import { type PackModel, resistanceAge } from "./pack-model";
 
@@ -36,13 +36,16 @@ export interface RestGuess {
   readonly dropMv: number;
 }
 
-/** Resting voltage and fall under load that the grid expects at a loaded reading. */
+/**
+ * Resting voltage and fall under load that the grid expects at a loaded reading; wants the
+ * depth marginal in `nodeC`.
+ */
 export function guessRest(model: PackModel, grid: Grid, reading: PackReading): RestGuess {
   const { curve, pack } = model;
   const dc = reading.temperatureDc ?? temperatureAt(pack.monthlyMeanDc, reading.at);
   const ua = reading.loadUa ?? model.peakUa;
   const fall = freshDropMv(pack, curve, ua, dc) * resistanceAge(model, reading.at);
-  const marginal = depthMarginal(grid, grid.nodeC);
+  const marginal = grid.nodeC;
   let total = 0;
   let first = 0;
   let second = 0;

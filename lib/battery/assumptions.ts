@@ -17,6 +17,8 @@ export const ASSUMED = {
   startDepthSd: 0.01,
   /** Depth over which a curve's error stays the same, roughly. */
   curveErrorDepth: 0.3,
+  /** The same once the curve was learned from finished packs: what is left is the pack's own. */
+  taughtErrorDepth: 1,
   /** Where on the depth axis the curve of this very pack lies. */
   curveDepthSd: 0.012,
   /** Cells of one lot differ; a string ends a little before its mean cell does. */

@@ -5,8 +5,9 @@
  */
 import type { Decicelsius, Microamps, Millivolts } from "../units";
 import { CURVE_STEPS, atDepth, elementsOf, resistanceFactor, sampledCurves } from "./curves";
+import { taughtCurves } from "./taught-curves";
 import { CURVES } from "./curve-tables";
-import type { PackSpec } from "./pack";
+import type { CurveLesson, PackSpec } from "./pack";
 
 /** Voltage of a whole pack: k rest(x) + drift(T) - I R(x) factor(T). */
 export interface PackCurve {
@@ -19,10 +20,10 @@ export interface PackCurve {
   readonly freshMohm: number;
 }
 
-export function packCurve(pack: PackSpec): PackCurve {
+export function packCurve(pack: PackSpec, lesson: CurveLesson | null = null): PackCurve {
   const restScale = pack.series * elementsOf(pack.cell);
   return {
-    ...sampledCurves(pack.cell.chemistry),
+    ...(lesson ? taughtCurves(pack.cell.chemistry, lesson) : sampledCurves(pack.cell.chemistry)),
     restScale,
     driftMvPerKelvin: restScale * CURVES[pack.cell.chemistry].restMvPerKelvin,
     freshMohm: (pack.cell.resistanceMohm * pack.series) / pack.parallel,

@@ -14,7 +14,7 @@ import { type Grid, depthMarginal, newGrid, normalise, weighDepth } from "./grid
 import type { ForecastInput, PackEvent, PackReading, ReadingWeight } from "./pack";
 import { type PackModel, leakBetween, packModel } from "./pack-model";
 import { impossibleAboveMv, observe } from "./reading";
-import { SHEET_RESISTANCE, guessRest, learnResistance, loosen } from "./resistance";
+import { guessRest, learnResistance, loosen } from "./resistance";
 import { type Bounds, aliveBounds, passedOver, timeline } from "./timeline";
 
 const LONGEST_STEP_DAYS = 120;
@@ -65,7 +65,7 @@ export function filterPack(input: ForecastInput): Filtered {
 /** One pass over one pack's history. */
 class Run {
   readonly weights = new Map<string, ReadingWeight>();
-  private resistance: ResistanceBelief = SHEET_RESISTANCE;
+  private resistance: ResistanceBelief;
   private lastLoaded = -Infinity;
   private learned = false;
 
@@ -73,11 +73,13 @@ class Run {
     private readonly model: PackModel,
     private readonly grid: Grid,
     private at: EpochDays,
-  ) {}
+  ) {
+    this.resistance = model.resistance;
+  }
 
   to(day: EpochDays): void {
     elapse(this.model, this.grid, this.at, day);
-    if (this.learned) this.resistance = loosen(this.resistance, day - this.at);
+    if (this.learned) this.resistance = loosen(this.resistance, this.model.resistance.sd, day - this.at);
     this.at = Math.max(this.at, day);
   }
 
@@ -152,7 +154,7 @@ function elapse(model: PackModel, grid: Grid, from: EpochDays, to: EpochDays): v
     const end = from + (days * (s + 1)) / steps;
     const share = model.drawPerDay * (end - start);
     const leak = leakBetween(model, start, end);
-    drift(grid, variance, 1 - Math.exp(-(share + leak) / ASSUMED.curveErrorDepth));
+    drift(grid, variance, 1 - Math.exp(-(share + leak) / model.offsetDepth));
     consume(grid, share, leak);
   }
 }

@@ -2,7 +2,9 @@
 export type {
   CapacityPoint,
   CellSpec,
+  Calibration,
   Chemistry,
+  CurveLesson,
   DutyState,
   FleetPrior,
   Forecast,
@@ -29,6 +31,7 @@ export {
   devicePrior,
   learnCohorts,
 } from "./fleet-prior";
+export { type FinishedHistory, learnCurves } from "./curve-lesson";
 export {
   type BadLot,
   type DrawObservation,

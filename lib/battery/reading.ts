@@ -10,7 +10,6 @@
  */
 import { ASSUMED } from "./assumptions";
 import { temperatureAt } from "./climate";
-import { CURVES } from "./curve-tables";
 import { CURVE_STEPS } from "./curves";
 import { freshDropMv } from "./cutoff";
 import { type Grid, normalise } from "./grid";
@@ -68,12 +67,11 @@ function expectAt(
 /** The part of a reading's variance that does not depend on depth, mV². */
 function fixedVariance(model: PackModel, grid: Grid, reading: Circumstances): number {
   const warmth = reading.temperatureDc === null ? ASSUMED.temperatureSdK : 1;
-  const cell = 0.25 * model.curve.restScale * CURVES[model.pack.cell.chemistry].spreadMv;
   const accuracy = reading.accuracyMv ?? ASSUMED.accuracyMv;
   return (
     accuracy ** 2 +
     grid.offsetStepMv ** 2 / 12 +
-    cell ** 2 +
+    model.noiseMv ** 2 +
     (model.curve.driftMvPerKelvin * warmth) ** 2 +
     1e-6
   );

@@ -6,7 +6,6 @@
 import type { EpochDays } from "../units";
 import { ASSUMED } from "./assumptions";
 import { temperatureAt } from "./climate";
-import { CURVES } from "./curve-tables";
 import { CURVE_STEPS, atDepth } from "./curves";
 import { freshDropMv } from "./cutoff";
 import type { ResistanceBelief } from "./end-of-life";
@@ -19,14 +18,15 @@ const LOWEST = 0.2;
 const HIGHEST = 8;
 const REACH = 5 / CURVE_STEPS;
 
-/** Belief before any loaded reading. */
-export const SHEET_RESISTANCE: ResistanceBelief = { mean: 1, sd: ASSUMED.resistanceSd };
-
 /** Let days pass: the belief loosens, up to what it was at first. */
-export function loosen(belief: ResistanceBelief, days: EpochDays): ResistanceBelief {
+export function loosen(
+  belief: ResistanceBelief,
+  firstSd: number,
+  days: EpochDays,
+): ResistanceBelief {
   const grown = ASSUMED.resistanceWalkPerYear ** 2 * (Math.max(0, days) / 365.2425);
   const sd = Math.sqrt(belief.sd ** 2 + grown * belief.mean ** 2);
-  return { mean: belief.mean, sd: Math.min(sd, ASSUMED.resistanceSd * Math.max(1, belief.mean)) };
+  return { mean: belief.mean, sd: Math.min(sd, firstSd * Math.max(1, belief.mean)) };
 }
 
 export interface RestGuess {
@@ -59,7 +59,7 @@ export function guessRest(model: PackModel, grid: Grid, reading: PackReading): R
   const depthSd = Math.sqrt(Math.max(0, second / total - depth * depth));
   const volts = (x: number): number => curve.restScale * atDepth(curve.restMv, x);
   const slope = (volts(depth - REACH) - volts(depth + REACH)) / (2 * REACH);
-  const offset = curve.restScale * CURVES[pack.cell.chemistry].spreadMv;
+  const offset = Math.hypot(model.offsetSdMv, model.noiseMv);
   const unsure = Math.hypot(depthSd, ASSUMED.curveDepthSd);
   const accuracy = reading.accuracyMv ?? ASSUMED.accuracyMv;
   return {

@@ -8,6 +8,7 @@ import {
   type FinishedPack,
   forecastPack,
   learnCohorts,
+  learnCurves,
 } from "../../../lib/battery";
 import type { Trial } from "./score";
 import type { TrialDevice } from "./trial";
@@ -35,11 +36,19 @@ function finished(device: TrialDevice, index: number): FinishedPack {
 /** Second packs with what the first ones taught. */
 export function taughtTrials(devices: readonly TrialDevice[]): Trial[] {
   const past = devices.map(finished);
+  const curves = learnCurves(
+    devices.flatMap((device, i) => {
+      const { spec, readings, end } = device.packs[0]!;
+      const history = { cohort: device.cohort, pack: spec, readings, stoppedAt: end };
+      return past[i]!.ranOut ? [history] : [];
+    }),
+  );
   const cohorts = new Map(learnCohorts(past).map((life) => [life.cohort, life]));
   return devices.map((device, i) => {
     const life = cohorts.get(device.cohort);
     const own = past[i]!;
     const prior = life ? (own.ranOut ? devicePrior(life, [own]) : cohortPrior(life)) : null;
-    return { pack: device.packs[1]!, prior };
+    const curve = curves.get(device.cohort) ?? null;
+    return { pack: device.packs[1]!, prior: prior && { ...prior, curve } };
   });
 }

@@ -7,10 +7,15 @@ export const ASSUMED = {
   capacityMean: 1.03,
   /** Cell-to-cell and lot-to-lot capacity (5-10 % across brands of LR6 under one load). */
   capacitySd: 0.08,
+  /**
+   * ln(life) from pack to pack in one device: cells of one type differ little (Dong & Gupta
+   * found their lives' variation negligible), a device's draw hardly more from pack to pack.
+   */
+  packLifeSd: 0.06,
   /** Device draw against its duty cycle. */
   drawSd: 0.15,
   /** Wander of ln(draw) in a year, as a random walk. */
-  drawWalkPerYear: 0.08,
+  drawWalkPerYear: 0.05,
   /** Draw after a firmware or device change, against the duty cycle. */
   changedDrawSd: 0.35,
   /** Depth at which a new pack starts, beside shelf ageing. */

@@ -31,6 +31,7 @@ export {
   devicePrior,
   learnCohorts,
 } from "./fleet-prior";
+export { expectedRatio } from "./expected-ratio";
 export { type FinishedHistory, learnCurves } from "./curve-lesson";
 export {
   type BadLot,

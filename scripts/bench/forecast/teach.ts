@@ -5,11 +5,13 @@
 import {
   cohortPrior,
   devicePrior,
+  expectedRatio,
   type FinishedPack,
   forecastPack,
   learnCohorts,
   learnCurves,
 } from "../../../lib/battery";
+import type { FleetPrior } from "../../../lib/battery";
 import type { Trial } from "./score";
 import type { TrialDevice } from "./trial";
 
@@ -33,6 +35,16 @@ function finished(device: TrialDevice, index: number): FinishedPack {
   };
 }
 
+/** What the readings of a pack swapped early promised of its life when it came out. */
+function promise(device: TrialDevice, own: FinishedPack, prior: FleetPrior): FinishedPack {
+  const { spec, readings, end } = device.packs[0]!;
+  const now = spec.installedAt + (end - spec.installedAt) * EARLY;
+  const seen = readings.filter((r) => r.at <= now);
+  const events = [{ kind: "reporting" as const, at: now }];
+  const expected = expectedRatio({ pack: spec, readings: seen, events, prior, now });
+  return { ...own, expected };
+}
+
 /** Second packs with what the first ones taught. */
 export function taughtTrials(devices: readonly TrialDevice[]): Trial[] {
   const past = devices.map(finished);
@@ -46,9 +58,10 @@ export function taughtTrials(devices: readonly TrialDevice[]): Trial[] {
   const cohorts = new Map(learnCohorts(past).map((life) => [life.cohort, life]));
   return devices.map((device, i) => {
     const life = cohorts.get(device.cohort);
-    const own = past[i]!;
-    const prior = life ? (own.ranOut ? devicePrior(life, [own]) : cohortPrior(life)) : null;
+    if (!life) return { pack: device.packs[1]!, prior: null };
     const curve = curves.get(device.cohort) ?? null;
-    return { pack: device.packs[1]!, prior: prior && { ...prior, curve } };
+    const shared = { ...cohortPrior(life), curve };
+    const own = past[i]!.ranOut ? past[i]! : promise(device, past[i]!, shared);
+    return { pack: device.packs[1]!, prior: { ...devicePrior(life, [own]), curve } };
   });
 }

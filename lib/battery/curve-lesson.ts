@@ -16,8 +16,9 @@ import { CURVES } from "./curve-tables";
 import { atDepth } from "./curves";
 import { freshDropMv } from "./cutoff";
 import { monthOf, temperatureAt } from "./climate";
-import type { CurveLesson, PackReading, PackSpec } from "./pack";
-import { type PackModel, leakBetween, packModel, resistanceAge } from "./pack-model";
+import { type Spent, endUnder } from "./end-lesson";
+import type { CurveLesson, PackReading } from "./pack";
+import { type PackModel, leakBetween, resistanceAge } from "./pack-model";
 
 /** Depths of a lesson: 0, 1/20 ... 1. */
 const NODES = 21;
@@ -32,12 +33,14 @@ const COURSE_SD = 0.03;
 /** Share of the table's own spread by which cohorts differ from each other. */
 const COHORT_SHARE = 0.6;
 
-export interface FinishedHistory {
-  readonly cohort: string;
-  readonly pack: PackSpec;
-  readonly readings: readonly PackReading[];
-  /** The day it stopped its device; packs swapped early do not belong here. */
-  readonly stoppedAt: EpochDays;
+/** A pack that came out, prepared; those swapped early teach nothing here. */
+export interface TaughtBy {
+  readonly history: {
+    readonly cohort: string;
+    readonly readings: readonly PackReading[];
+    readonly ranOut: boolean;
+  };
+  readonly spent: Spent;
 }
 
 /** One reading of a finished pack, as a residual. */
@@ -51,70 +54,76 @@ interface Residual {
 
 /** A finished pack placed on its depth axis. */
 interface Placed {
-  readonly history: FinishedHistory;
+  readonly cohort: string;
+  readonly readings: readonly PackReading[];
   readonly index: number;
+  readonly stoppedAt: EpochDays;
   readonly model: PackModel;
   depthAt(at: EpochDays): number;
 }
 
-/** Lessons by cohort; histories must be of one chemistry. */
-export function learnCurves(histories: readonly FinishedHistory[]): Map<string, CurveLesson> {
-  const placed = histories.flatMap((history, index) => place(history, index) ?? []);
+/**
+ * Lessons by cohort, and under null what all cohorts share; packs must be of one chemistry.
+ * `endOf` is each cohort's factor on the resistance at the end.
+ */
+export function learnCurves(
+  packs: readonly TaughtBy[],
+  endOf: (cohort: string) => number,
+): Map<string | null, CurveLesson> {
+  const placed = packs
+    .filter(({ history }) => history.ranOut)
+    .map((pack, index) => place(pack, index, endOf(pack.history.cohort)));
   if (placed.length < LEAST_PACKS) return new Map();
-  const { spreadMv } = CURVES[placed[0]!.history.pack.cell.chemistry];
+  const { spreadMv } = CURVES[placed[0]!.model.pack.cell.chemistry];
   const rest = layered(placed.flatMap(restResiduals), spreadMv);
   const grown = layered(
-    placed.flatMap((p) => loadResiduals(p, rest.shiftOf(p.history.cohort))),
+    placed.flatMap((p) => loadResiduals(p, rest.shiftOf(p.cohort))),
     ASSUMED.resistanceSd,
   );
-  const cohorts = new Set(placed.map((p) => p.history.cohort));
-  return new Map(
-    [...cohorts].map((cohort) => [
-      cohort,
-      {
-        restShiftMv: rest.shiftOf(cohort),
-        resistanceFactor: grown.shiftOf(cohort).map((x) => Math.exp(x)),
-        spreadMv: rest.between,
-        noiseMv: rest.within,
-        resistanceSd: grown.between,
-        packs: placed.filter((p) => p.history.cohort === cohort).length,
-      },
-    ]),
-  );
+  const lesson = (cohort: string | null): CurveLesson => ({
+    restShiftMv: rest.shiftOf(cohort),
+    resistanceFactor: grown.shiftOf(cohort).map((x) => Math.exp(x)),
+    spreadMv: rest.between,
+    noiseMv: rest.within,
+    resistanceSd: grown.between,
+    packs: placed.filter((p) => cohort === null || p.cohort === cohort).length,
+  });
+  const cohorts = new Set<string | null>([null, ...placed.map((p) => p.cohort)]);
+  return new Map([...cohorts].map((cohort) => [cohort, lesson(cohort)]));
 }
 
 /** Depth runs evenly with the charge that was due, from the start to where such packs stop. */
-function place(history: FinishedHistory, index: number): Placed | null {
-  const { pack, stoppedAt } = history;
-  const from = pack.installedAt;
-  if (!(stoppedAt > from)) return null;
-  const model = packModel(pack, null);
-  const end = model.end.byMonth[monthOf(stoppedAt)]!;
+function place({ history, spent }: TaughtBy, index: number, endFactor: number): Placed {
+  const { model, outAt } = spent;
+  const from = model.pack.installedAt;
+  const end = endUnder(spent, endFactor).byMonth[monthOf(outAt)]!;
   const due = (at: EpochDays): number =>
     model.drawPerDay * (at - from) + leakBetween(model, from, at);
-  const whole = due(stoppedAt);
+  const whole = due(outAt);
   const start = model.startDepth;
   return {
-    history,
+    cohort: history.cohort,
+    readings: history.readings,
     index,
+    stoppedAt: outAt,
     model,
     depthAt: (at) => start + ((end - start) * due(at)) / whole,
   };
 }
 
-const counts = ({ history }: Placed, kind: PackReading["kind"]): PackReading[] =>
-  history.readings.filter(
+const counts = (placed: Placed, kind: PackReading["kind"]): PackReading[] =>
+  placed.readings.filter(
     (r) =>
       r.kind === kind &&
-      r.at > history.pack.installedAt &&
-      r.at < history.stoppedAt &&
+      r.at > placed.model.pack.installedAt &&
+      r.at < placed.stoppedAt &&
       r.millivolts > 0,
   );
 
 /** Variance of a resting voltage of one element at a depth, apart from the curve's own error. */
-function restVariance({ history, model }: Placed, reading: PackReading, depth: number): number {
+function restVariance({ stoppedAt, model }: Placed, reading: PackReading, depth: number): number {
   const { curve, pack } = model;
-  const life = (reading.at - pack.installedAt) / (history.stoppedAt - pack.installedAt);
+  const life = (reading.at - pack.installedAt) / (stoppedAt - pack.installedAt);
   const course = 2 * COURSE_SD * Math.sqrt(Math.max(0, life * (1 - life)));
   const reach = 0.02;
   const fall = atDepth(curve.restMv, depth - reach) - atDepth(curve.restMv, depth + reach);
@@ -130,20 +139,20 @@ function temperatureOf(model: PackModel, reading: PackReading): number {
 }
 
 function restResiduals(placed: Placed): Residual[] {
-  const { model, history, index } = placed;
+  const { model, cohort, index } = placed;
   const { curve } = model;
   return counts(placed, "resting").map((reading) => {
     const depth = placed.depthAt(reading.at);
     const drift = curve.driftMvPerKelvin * (temperatureOf(model, reading) / 10 - 20);
     const value = (reading.millivolts - drift) / curve.restScale - atDepth(curve.restMv, depth);
     const variance = restVariance(placed, reading, depth);
-    return { cohort: history.cohort, pack: index, depth, value, variance };
+    return { cohort, pack: index, depth, value, variance };
   });
 }
 
 /** ln(fall under load over the sheet's); near 0 taken as fall ratio less 1. */
 function loadResiduals(placed: Placed, shift: readonly number[]): Residual[] {
-  const { model, history, index } = placed;
+  const { model, cohort, index } = placed;
   const { curve, pack } = model;
   return counts(placed, "loaded").flatMap((reading) => {
     const depth = placed.depthAt(reading.at);
@@ -158,7 +167,7 @@ function loadResiduals(placed: Placed, shift: readonly number[]): Residual[] {
     if (!(noise < 1)) return [];
     const value = Math.log(Math.min(5, Math.max(0.2, ratio)));
     const variance = noise ** 2 / Math.max(0.25, ratio * ratio);
-    return [{ cohort: history.cohort, pack: index, depth, value, variance }];
+    return [{ cohort, pack: index, depth, value, variance }];
   });
 }
 
@@ -170,7 +179,7 @@ function at(nodes: readonly number[], depth: number): number {
 }
 
 interface Layered {
-  shiftOf(cohort: string): number[];
+  shiftOf(cohort: string | null): number[];
   /** Spread of packs around their cohort's curve, and of readings around their pack's. */
   readonly between: number;
   readonly within: number;
@@ -190,7 +199,7 @@ function layered(residuals: readonly Residual[], spread: number): Layered {
     left.push(...kept.map((r) => ({ ...r, value: r.value - at(shift, r.depth) })));
   }
   const { between, within } = scatter(left, spread);
-  return { shiftOf: (cohort) => own.get(cohort) ?? all, between, within };
+  return { shiftOf: (cohort) => own.get(cohort ?? "") ?? all, between, within };
 }
 
 function groupsOf<Key>(

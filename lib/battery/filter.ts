@@ -79,7 +79,8 @@ class Run {
 
   to(day: EpochDays): void {
     elapse(this.model, this.grid, this.at, day);
-    if (this.learned) this.resistance = loosen(this.resistance, this.model.resistance.sd, day - this.at);
+    if (this.learned)
+      this.resistance = loosen(this.resistance, this.model.resistance.sd, day - this.at);
     this.at = Math.max(this.at, day);
   }
 
@@ -129,7 +130,14 @@ class Run {
   }
 
   end(): EndOfLife {
-    return this.learned ? endOfLife(this.model.endTerms, this.resistance) : this.model.end;
+    const { end, endTerms, endResistance } = this.model;
+    if (!this.learned) return end;
+    const { mean, sd } = this.resistance;
+    // what this pack shows beside its curve, on what such packs take to stop
+    return endOfLife(endTerms, {
+      mean: mean * endResistance.mean,
+      sd: Math.min(sd * endResistance.mean, endResistance.sd * Math.max(1, mean)),
+    });
   }
 }
 

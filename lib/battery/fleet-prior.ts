@@ -82,6 +82,18 @@ function ownFit(cohort: string, packs: readonly FinishedPack[]): OwnFit | null {
   };
 }
 
+/**
+ * What is known of a cohort nobody has seen the end of: the fleet's mean, with the spread
+ * between cohorts in its error. Null when no cohort taught anything.
+ */
+export function pooledLife(lives: readonly CohortLife[]): CohortLife | null {
+  const pool = poolGroups(lives);
+  if (!pool) return null;
+  const spread = Math.sqrt(lives.reduce((s, l) => s + l.spread ** 2, 0) / lives.length);
+  const packs = lives.reduce((s, l) => s + l.packs, 0);
+  return { cohort: "", mean: pool.mean, se: Math.sqrt(pool.se ** 2 + pool.tau2), spread, packs };
+}
+
 /** Variance of ln(life) by device, and by pack within a device. */
 function parts({ spread, se }: CohortLife): { device: number; pack: number } {
   const whole = spread ** 2 + se ** 2;

@@ -31,8 +31,12 @@ export {
   devicePrior,
   learnCohorts,
 } from "./fleet-prior";
-export { expectedRatio } from "./expected-ratio";
-export { type FinishedHistory, learnCurves } from "./curve-lesson";
+export {
+  type FinishedHistory,
+  type FleetLesson,
+  type FleetMember,
+  learnFleet,
+} from "./fleet-lesson";
 export {
   type BadLot,
   type DrawObservation,

@@ -9,7 +9,13 @@ import { DAYS_PER_YEAR } from "./climate";
 import { CURVES } from "./curve-tables";
 import { type PackCurve, packCurve, packEndDepth } from "./cutoff";
 import { packAverageUa, packPeakUa } from "./duty";
-import { type EndOfLife, type EndTerms, type ResistanceBelief, endOfLife, tableEndDepth } from "./end-of-life";
+import {
+  type EndOfLife,
+  type EndTerms,
+  type ResistanceBelief,
+  endOfLife,
+  tableEndDepth,
+} from "./end-of-life";
 import type { Chemistry, FleetPrior, PackSpec } from "./pack";
 import { type Ageing, ageing } from "./self-discharge";
 
@@ -42,6 +48,8 @@ export interface PackModel {
   readonly endTerms: EndTerms;
   /** Where it stops, before any loaded reading has told of the resistance. */
   readonly end: EndOfLife;
+  /** The resistance that decides it, relative to the sheet's. */
+  readonly endResistance: ResistanceBelief;
   readonly startDepth: number;
   readonly startSd: number;
   /** Spread of the pack's voltage offset against the curve, and of readings around that, mV. */
@@ -111,6 +119,7 @@ export function packModel(pack: PackSpec, fleet: FleetPrior | null): PackModel {
     aged: grown(pack, 1 / Math.max(drawPerDay + leakPerDay, TINY)),
   };
   const resistance = { mean: 1, sd: lesson?.resistanceSd ?? ASSUMED.resistanceSd };
+  const endResistance = fleet?.endResistance ?? { mean: 1, sd: ASSUMED.resistanceSd };
   const { spreadMv } = CURVES[pack.cell.chemistry];
   const startDepth = shelfLoss(pack, leakPerDay);
   return {
@@ -122,7 +131,8 @@ export function packModel(pack: PackSpec, fleet: FleetPrior | null): PackModel {
     leakPerDay,
     ageing: ageing(pack.monthlyMeanDc),
     endTerms: terms,
-    end: endOfLife(terms, resistance),
+    end: endOfLife(terms, endResistance),
+    endResistance,
     startDepth,
     startSd: Math.hypot(ASSUMED.startDepthSd, startDepth * 0.5),
     offsetSdMv: curve.restScale * (lesson?.spreadMv ?? spreadMv),

@@ -123,6 +123,8 @@ export interface FleetPrior {
   /** How many finished packs the prior rests on. */
   readonly packs: number;
   readonly curve?: CurveLesson | null;
+  /** Resistance that decides the end, relative to the sheet's. */
+  readonly endResistance?: { readonly mean: number; readonly sd: number } | null;
   readonly calibration?: Calibration | null;
 }
 

@@ -12,7 +12,9 @@ export function taughtCurves(chemistry: Chemistry, lesson: CurveLesson): Sampled
   const before = known.get(chemistry);
   if (before) return before;
   const { restMv, resistance } = sampledCurves(chemistry);
-  const nodes = lesson.restShiftMv.map((_, n) => (n * CURVE_STEPS) / (lesson.restShiftMv.length - 1));
+  const nodes = lesson.restShiftMv.map(
+    (_, n) => (n * CURVE_STEPS) / (lesson.restShiftMv.length - 1),
+  );
   const taught = {
     restMv: restMv.map((mv, i) => mv + interpolate(nodes, lesson.restShiftMv, i)),
     resistance: resistance.map((r, i) => r * interpolate(nodes, lesson.resistanceFactor, i)),

@@ -1,0 +1,138 @@
+/**
+ * All that finished packs teach about those still in, put together: the end (end-lesson.ts),
+ * lives by cohort and device (fleet-prior.ts), the voltage curve (curve-lesson.ts). Histories
+ * are learned from by chemistry; a cohort nobody has seen the end of gets what its chemistry
+ * taught.
+ */
+import type { EpochDays } from "../units";
+import { ASSUMED } from "./assumptions";
+import { learnCurves } from "./curve-lesson";
+import { endUnder, learnEnds, paceTo, type Spent, spent } from "./end-lesson";
+import { expectedLife } from "./expected-life";
+import {
+  type CohortLife,
+  cohortPrior,
+  devicePrior,
+  type FinishedPack,
+  learnCohorts,
+  pooledLife,
+} from "./fleet-prior";
+import type { Chemistry, FleetPrior, PackReading, PackSpec } from "./pack";
+
+export interface FinishedHistory {
+  readonly packKey: string;
+  readonly deviceKey: string;
+  readonly cohort: string;
+  readonly lot: string | null;
+  readonly pack: PackSpec;
+  readonly readings: readonly PackReading[];
+  /** The day it stopped its device, or was swapped before that. */
+  readonly outAt: EpochDays;
+  readonly ranOut: boolean;
+}
+
+export interface FleetMember {
+  readonly deviceKey: string;
+  readonly cohort: string;
+  readonly chemistry: Chemistry;
+}
+
+export interface FleetLesson {
+  /** What is known beforehand of the next pack of a device; null where nothing is. */
+  priorFor(member: FleetMember): FleetPrior | null;
+}
+
+/** Learn from every pack that came out. */
+export function learnFleet(histories: readonly FinishedHistory[]): FleetLesson {
+  const chemistries = groupBy(histories, (h) => h.pack.cell.chemistry);
+  const lessons = new Map([...chemistries].map(([key, group]) => [key, learnChemistry(group)]));
+  return { priorFor: (member) => lessons.get(member.chemistry)?.(member) ?? null };
+}
+
+function groupBy<Item, Key>(items: readonly Item[], key: (item: Item) => Key): Map<Key, Item[]> {
+  const groups = new Map<Key, Item[]>();
+  for (const item of items) {
+    const group = groups.get(key(item));
+    if (group) group.push(item);
+    else groups.set(key(item), [item]);
+  }
+  return groups;
+}
+
+type PriorFor = (member: Pick<FleetMember, "deviceKey" | "cohort">) => FleetPrior | null;
+
+interface Told {
+  readonly history: FinishedHistory;
+  readonly spent: Spent;
+}
+
+/** A history counts when its pack was in at all. */
+function prepared(histories: readonly FinishedHistory[]): Told[] {
+  return histories
+    .filter((h) => h.outAt - h.pack.installedAt > 1)
+    .map((history) => ({ history, spent: spent(history.pack, history.outAt) }));
+}
+
+function learnChemistry(histories: readonly FinishedHistory[]): PriorFor {
+  const told = prepared(histories);
+  const ranOut = groupBy(
+    told.filter(({ history }) => history.ranOut),
+    ({ history }) => history.cohort,
+  );
+  const ends = learnEnds(
+    new Map([...ranOut].map(([cohort, packs]) => [cohort, packs.map((p) => p.spent)])),
+  );
+  const endOf = (cohort: string): number => ends.get(cohort) ?? 1;
+  const finished = told.map((one) => finishedPack(one, endOf(one.history.cohort)));
+  const lives = learnCohorts(finished);
+  const pooled = pooledLife(lives);
+  const curves = learnCurves(told, endOf);
+  const lifeOf = new Map(lives.map((life) => [life.cohort, life]));
+  const shared = (cohort: string, prior: FleetPrior): FleetPrior => ({
+    ...prior,
+    curve: curves.get(cohort) ?? curves.get(null) ?? null,
+    endResistance: ends.has(cohort) ? { mean: endOf(cohort), sd: ASSUMED.taughtEndSd } : null,
+  });
+  const ofDevice = groupBy(
+    told.map((one, i) => ({ ...one, pack: finished[i]! })),
+    ({ history }) => `${history.deviceKey} ${history.cohort}`,
+  );
+  const known = new Map<string, FleetPrior>();
+  const cohortOf = (cohort: string, life: CohortLife): FleetPrior => {
+    const prior = known.get(cohort) ?? shared(cohort, cohortPrior(life));
+    known.set(cohort, prior);
+    return prior;
+  };
+  return ({ deviceKey, cohort }) => {
+    const life = lifeOf.get(cohort) ?? pooled;
+    if (!life) return null;
+    const base = cohortOf(cohort, life);
+    const own = ofDevice.get(`${deviceKey} ${cohort}`);
+    if (!own) return base;
+    const packs = own.map((one) => (one.history.ranOut ? one.pack : promised(one, base)));
+    return shared(cohort, devicePrior(life, packs));
+  };
+}
+
+/** Its life beside the sheet's, at the depth where such a pack stops in that month. */
+function finishedPack({ history, spent: one }: Told, endFactor: number): FinishedPack {
+  const { packKey, deviceKey, cohort, lot, ranOut } = history;
+  const pace = paceTo(one, endUnder(one, endFactor), history.outAt);
+  return { packKey, deviceKey, cohort, lot, lifeRatio: lifeRatio(pace), ranOut };
+}
+
+/** Life relative to a pack of the assumed capacity and the sheet's draw. */
+const lifeRatio = (pace: number): number => 1 / (pace * ASSUMED.capacityMean);
+
+/** A swapped pack with the life that its readings promised. */
+function promised(one: Told & { readonly pack: FinishedPack }, prior: FleetPrior): FinishedPack {
+  const { history } = one;
+  const { lnPace, sd } = expectedLife({
+    pack: history.pack,
+    readings: history.readings.filter((r) => r.at <= history.outAt),
+    events: [{ kind: "reporting", at: history.outAt }],
+    prior,
+    now: history.outAt,
+  });
+  return { ...one.pack, expected: { lnRatio: -lnPace - Math.log(ASSUMED.capacityMean), sd } };
+}

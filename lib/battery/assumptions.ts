@@ -16,6 +16,8 @@ export const ASSUMED = {
   drawSd: 0.15,
   /** Wander of ln(draw) in a year, as a random walk. */
   drawWalkPerYear: 0.05,
+  /** A season's draw against the year's mean (cold, daylight, wet-weather reporting). */
+  seasonalDrawSd: 0.08,
   /** Draw after a firmware or device change, against the duty cycle. */
   changedDrawSd: 0.35,
   /** Depth at which a new pack starts, beside shelf ageing. */

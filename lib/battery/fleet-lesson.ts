@@ -6,6 +6,8 @@
  */
 import type { EpochDays } from "../units";
 import { ASSUMED } from "./assumptions";
+import { DAYS_PER_YEAR } from "./climate";
+import { calibrate, endScores } from "./calibration";
 import { learnCurves } from "./curve-lesson";
 import { endUnder, learnEnds, paceTo, type Spent, spent } from "./end-lesson";
 import { expectedLife } from "./expected-life";
@@ -17,7 +19,10 @@ import {
   learnCohorts,
   pooledLife,
 } from "./fleet-prior";
-import type { Chemistry, FleetPrior, PackReading, PackSpec } from "./pack";
+import type { Calibration, Chemistry, FleetPrior, PackReading, PackSpec } from "./pack";
+
+/** Forecasts of this many packs are judged: enough to know a spread to a few percent. */
+const MOST_JUDGED = 200;
 
 export interface FinishedHistory {
   readonly packKey: string;
@@ -84,19 +89,28 @@ function learnChemistry(histories: readonly FinishedHistory[]): PriorFor {
   );
   const endOf = (cohort: string): number => ends.get(cohort) ?? 1;
   const finished = told.map((one) => finishedPack(one, endOf(one.history.cohort)));
-  const lives = learnCohorts(finished);
+  const lives = learnCohorts(finished).map((life) => ({
+    ...life,
+    years: meanYears(told, life.cohort),
+  }));
   const pooled = pooledLife(lives);
   const curves = learnCurves(told, endOf);
   const lifeOf = new Map(lives.map((life) => [life.cohort, life]));
+  let calibration: Calibration | null = null;
   const shared = (cohort: string, prior: FleetPrior): FleetPrior => ({
     ...prior,
     curve: curves.get(cohort) ?? curves.get(null) ?? null,
+    calibration,
     endResistance: ends.has(cohort) ? { mean: endOf(cohort), sd: ASSUMED.taughtEndSd } : null,
   });
   const ofDevice = groupBy(
     told.map((one, i) => ({ ...one, pack: finished[i]! })),
     ({ history }) => `${history.deviceKey} ${history.cohort}`,
   );
+  calibration = judge(told, (cohort) => {
+    const life = lifeOf.get(cohort) ?? pooled;
+    return life && shared(cohort, cohortPrior(life));
+  });
   const known = new Map<string, FleetPrior>();
   const cohortOf = (cohort: string, life: CohortLife): FleetPrior => {
     const prior = known.get(cohort) ?? shared(cohort, cohortPrior(life));
@@ -112,6 +126,27 @@ function learnChemistry(histories: readonly FinishedHistory[]): PriorFor {
     const packs = own.map((one) => (one.history.ranOut ? one.pack : promised(one, base)));
     return shared(cohort, devicePrior(life, packs));
   };
+}
+
+function meanYears(told: readonly Told[], cohort: string): number {
+  const own = told.filter(({ history }) => history.cohort === cohort && history.ranOut);
+  const days = own.reduce((s, { history }) => s + history.outAt - history.pack.installedAt, 0);
+  return days / own.length / DAYS_PER_YEAR;
+}
+
+/** Forecasts of packs that ran out, held against their ends. */
+function judge(
+  told: readonly Told[],
+  priorOf: (cohort: string) => FleetPrior | null,
+): Calibration | null {
+  const scores = told
+    .filter(({ history }) => history.ranOut)
+    .slice(-MOST_JUDGED)
+    .map(({ history }) => {
+      const prior = priorOf(history.cohort);
+      return prior ? endScores({ ...history, prior }) : [];
+    });
+  return scores.length > 0 ? calibrate(scores) : null;
 }
 
 /** Its life beside the sheet's, at the depth where such a pack stops in that month. */

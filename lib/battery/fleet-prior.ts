@@ -33,11 +33,12 @@ export interface CohortLife {
   readonly se: number;
   readonly spread: number;
   readonly packs: number;
+  /** Mean life where it is known, years. */
+  readonly years?: number;
 }
 
 const VARIANCE = { capacity: ASSUMED.capacitySd ** 2, draw: ASSUMED.drawSd ** 2 };
 const DRAW_PART = VARIANCE.draw / (VARIANCE.draw + VARIANCE.capacity);
-const PACK_VARIANCE = ASSUMED.packLifeSd ** 2;
 /** A cohort's own spread counts as much as this many packs of the assumed spread. */
 const SPREAD_WEIGHT = 6;
 
@@ -95,9 +96,11 @@ export function pooledLife(lives: readonly CohortLife[]): CohortLife | null {
 }
 
 /** Variance of ln(life) by device, and by pack within a device. */
-function parts({ spread, se }: CohortLife): { device: number; pack: number } {
+function parts({ spread, se, years }: CohortLife): { device: number; pack: number } {
   const whole = spread ** 2 + se ** 2;
-  const pack = Math.min(PACK_VARIANCE, whole / 2);
+  // a short life does not average the seasons out: a sine's mean over T years
+  const seasons = (2 * ASSUMED.seasonalDrawSd) / (Math.PI * Math.max(years ?? 3, 0.5));
+  const pack = Math.min(ASSUMED.packLifeSd ** 2 + seasons ** 2, whole / 2);
   return { device: whole - pack, pack };
 }
 

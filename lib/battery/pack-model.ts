@@ -16,7 +16,7 @@ import {
   endOfLife,
   tableEndDepth,
 } from "./end-of-life";
-import type { Chemistry, FleetPrior, PackSpec } from "./pack";
+import type { Calibration, Chemistry, FleetPrior, PackSpec } from "./pack";
 import { type Ageing, ageing } from "./self-discharge";
 
 const MIN_FULL_SHARE = 0.5;
@@ -60,6 +60,7 @@ export interface PackModel {
   /** Resistance of this pack before any reading, relative to its curve. */
   readonly resistance: ResistanceBelief;
   readonly prior: RatePrior;
+  readonly calibration: Calibration | null;
 }
 
 /** Charge of one cell at depth 1 of its curve, at the device's average draw, mAh. */
@@ -140,6 +141,7 @@ export function packModel(pack: PackSpec, fleet: FleetPrior | null): PackModel {
     offsetDepth: lesson ? ASSUMED.taughtErrorDepth : ASSUMED.curveErrorDepth,
     resistance,
     prior: ratePrior(pack, fleet),
+    calibration: fleet?.calibration ?? null,
   };
 }
 

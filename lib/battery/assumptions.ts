@@ -39,7 +39,7 @@ export const ASSUMED = {
   /** Internal resistance against the table. */
   resistanceSd: 0.25,
   /** The resistance that decides the end, once learned from where a cohort's packs stopped. */
-  taughtEndSd: 0.15,
+  taughtEndSd: 0.3,
   /** How unevenly it grows in a year, as a share. */
   resistanceWalkPerYear: 0.1,
   /** Chance that a reading is not of this pack, mistyped, or of another state. */

@@ -15,6 +15,8 @@ import type { Calibration, FleetPrior, PackReading, PackSpec } from "./pack";
 const JUDGED_AT = [0.2, 0.4, 0.6, 0.8] as const;
 /** No window is scaled on fewer than this many packs' word alone. */
 const OWN_WEIGHT = 6;
+/** A common shift is half believed: the next packs meet other winters than the last ones did. */
+const SHIFT_SHARE = 0.5;
 /** A perfect forecaster's scores lie within this of 0 four times in five. */
 const Z80 = 1.2815515655446004;
 const LEAST_CHANCE = 0.002;
@@ -47,7 +49,7 @@ export function calibrate(scores: readonly (readonly number[])[]): Calibration {
   const packs = scores.filter((s) => s.length > 0);
   const all = packs.flat().sort((a, b) => a - b);
   const own = packs.length / (packs.length + OWN_WEIGHT);
-  const shift = own * (all[all.length >> 1] ?? 0);
+  const shift = SHIFT_SHARE * own * (all[all.length >> 1] ?? 0);
   const away = all.map((z) => Math.abs(z - shift)).sort((a, b) => a - b);
   const ratio = (away[Math.floor(0.8 * away.length)] ?? Z80) / Z80;
   const spread = Math.exp(own * Math.log(Math.max(0.2, ratio)));

@@ -15,10 +15,10 @@ import { ASSUMED } from "./assumptions";
 import { CURVES } from "./curve-tables";
 import { atDepth } from "./curves";
 import { freshDropMv } from "./cutoff";
-import { monthOf, temperatureAt } from "./climate";
-import { type Spent, endUnder } from "./end-lesson";
+import { temperatureAt } from "./climate";
+import { type Spent, depthAfter, endUnder, paceTo } from "./end-lesson";
 import type { CurveLesson, PackReading } from "./pack";
-import { type PackModel, leakBetween, resistanceAge } from "./pack-model";
+import { type PackModel, resistanceAge } from "./pack-model";
 
 /** Depths of a lesson: 0, 1/20 ... 1. */
 const NODES = 21;
@@ -30,6 +30,13 @@ const LEAST_PACKS = 3;
 const SLIP = 4;
 /** How far the draw's course may have bent a pack's way through its depths, at mid-life. */
 const COURSE_SD = 0.03;
+/**
+ * A lesson leaves at least these shares of the table's own spread: between packs, within one.
+ * Packs of the same years share their weather, and agree with each other more than the next
+ * ones will with them.
+ */
+const LEAST_BETWEEN = 0.5;
+const LEAST_WITHIN = 0.25;
 /** Share of the table's own spread by which cohorts differ from each other. */
 const COHORT_SHARE = 0.6;
 
@@ -92,22 +99,17 @@ export function learnCurves(
   return new Map([...cohorts].map((cohort) => [cohort, lesson(cohort)]));
 }
 
-/** Depth runs evenly with the charge that was due, from the start to where such packs stop. */
+/** Depth runs at one pace from the start to where such packs stop. */
 function place({ history, spent }: TaughtBy, index: number, endFactor: number): Placed {
   const { model, outAt } = spent;
-  const from = model.pack.installedAt;
-  const end = endUnder(spent, endFactor).byMonth[monthOf(outAt)]!;
-  const due = (at: EpochDays): number =>
-    model.drawPerDay * (at - from) + leakBetween(model, from, at);
-  const whole = due(outAt);
-  const start = model.startDepth;
+  const pace = paceTo(spent, endUnder(spent, endFactor), outAt);
   return {
     cohort: history.cohort,
     readings: history.readings,
     index,
     stoppedAt: outAt,
     model,
-    depthAt: (at) => start + ((end - start) * due(at)) / whole,
+    depthAt: (at) => depthAfter(spent, pace, at),
   };
 }
 
@@ -250,7 +252,6 @@ function smooth(residuals: readonly Residual[], base: readonly number[], spread:
 function scatter(left: readonly Residual[], spread: number): { between: number; within: number } {
   const packs = [...groupsOf(left, (r) => r.pack).values()].filter((group) => group.length > 1);
   const extra = packs.map(excess).reduce((a, b) => [a[0] + b[0], a[1] + b[1]], [0, 0] as const);
-  const floor = 0.15 * spread;
   const within = extra[1] > 0 ? Math.sqrt(Math.max(0, extra[0] / extra[1])) : spread;
   const means = packs.map((group) => {
     const weights = group.map((r) => 1 / (r.variance + within ** 2));
@@ -261,7 +262,10 @@ function scatter(left: readonly Residual[], spread: number): { between: number; 
     };
   });
   const between = Math.sqrt(poolGroups(means)?.tau2 ?? spread ** 2);
-  return { between: Math.max(floor, between), within: Math.max(floor, within) };
+  return {
+    between: Math.max(LEAST_BETWEEN * spread, between),
+    within: Math.max(LEAST_WITHIN * spread, within),
+  };
 }
 
 /** Chi squared beyond its degrees of freedom, and what one unit of variance would add to it. */

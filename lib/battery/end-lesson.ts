@@ -47,13 +47,34 @@ export function endUnder({ model }: Spent, factor: number): EndOfLife {
  * Draw over capacity, relative to the sheet, by which a pack comes to the end depth of a month
  * on a day, self-discharge apart.
  */
-export function paceTo({ model }: Spent, end: EndOfLife, at: EpochDays): number {
+export function paceTo(one: Spent, end: EndOfLife, at: EpochDays): number {
+  const { lost, drawn } = courseTo(one, at);
+  const left = end.byMonth[monthOf(at)]! - lost;
+  return Math.max(SHALLOWEST, left) / Math.max(drawn, 1e-9);
+}
+
+/** Depth on a day at a pace: as the filter consumes, 1 - (1 - start) e^-leak + draw. */
+export function depthAfter(one: Spent, pace: number, at: EpochDays): number {
+  const { lost, drawn } = courseTo(one, at);
+  return lost + pace * drawn;
+}
+
+/** Share gone by a day without the draw, and what the draw takes at a pace of 1. */
+function courseTo({ model }: Spent, at: EpochDays): { lost: number; drawn: number } {
   const from = model.pack.installedAt;
   const leak = leakBetween(model, from, at);
   const kept = Math.exp(-leak);
-  const left = end.byMonth[monthOf(at)]! - (1 - (1 - model.startDepth) * kept);
   const drawn = model.drawPerDay * (at - from) * (leak > 1e-9 ? (1 - kept) / leak : 1);
-  return Math.max(SHALLOWEST, left) / Math.max(drawn, 1e-9);
+  return { lost: 1 - (1 - model.startDepth) * kept, drawn };
+}
+
+/** How unsure ln(depth) is at which a pack stopped in its month: by the cold and its resistance. */
+export function endSdAt(one: Spent, factor: number): number {
+  const month = monthOf(one.outAt);
+  const depth = (share: number): number =>
+    Math.max(SHALLOWEST, endUnder(one, factor * share).byMonth[month]!);
+  const sd = ASSUMED.taughtEndSd;
+  return Math.abs(Math.log(depth(1 + sd) / depth(1 - sd))) / 2;
 }
 
 /** How far ln(pace) lies above what an earlier month of the last year would have borne. */

@@ -9,7 +9,7 @@ import { ASSUMED } from "./assumptions";
 import { DAYS_PER_YEAR } from "./climate";
 import { calibrate, endScores } from "./calibration";
 import { learnCurves } from "./curve-lesson";
-import { endUnder, learnEnds, paceTo, type Spent, spent } from "./end-lesson";
+import { endSdAt, endUnder, learnEnds, paceTo, type Spent, spent } from "./end-lesson";
 import { expectedLife } from "./expected-life";
 import {
   type CohortLife,
@@ -23,6 +23,7 @@ import type { Calibration, Chemistry, FleetPrior, PackReading, PackSpec } from "
 
 /** Forecasts of this many packs are judged: enough to know a spread to a few percent. */
 const MOST_JUDGED = 200;
+const MOST_END_SD = 0.4;
 
 export interface FinishedHistory {
   readonly packKey: string;
@@ -91,7 +92,7 @@ function learnChemistry(histories: readonly FinishedHistory[]): PriorFor {
   const finished = told.map((one) => finishedPack(one, endOf(one.history.cohort)));
   const lives = learnCohorts(finished).map((life) => ({
     ...life,
-    years: meanYears(told, life.cohort),
+    ...meansOf(finished, told, life.cohort),
   }));
   const pooled = pooledLife(lives);
   const curves = learnCurves(told, endOf);
@@ -128,10 +129,18 @@ function learnChemistry(histories: readonly FinishedHistory[]): PriorFor {
   };
 }
 
-function meanYears(told: readonly Told[], cohort: string): number {
-  const own = told.filter(({ history }) => history.cohort === cohort && history.ranOut);
-  const days = own.reduce((s, { history }) => s + history.outAt - history.pack.installedAt, 0);
-  return days / own.length / DAYS_PER_YEAR;
+/** Mean life, years, and mean variance of the end of a cohort's packs that ran out. */
+function meansOf(finished: readonly FinishedPack[], told: readonly Told[], cohort: string) {
+  let days = 0;
+  let variance = 0;
+  let packs = 0;
+  told.forEach(({ history }, i) => {
+    if (history.cohort !== cohort || !history.ranOut) return;
+    days += history.outAt - history.pack.installedAt;
+    variance += (finished[i]!.endSd ?? 0) ** 2;
+    packs++;
+  });
+  return { years: days / packs / DAYS_PER_YEAR, endVariance: variance / packs };
 }
 
 /** Forecasts of packs that ran out, held against their ends. */
@@ -153,7 +162,8 @@ function judge(
 function finishedPack({ history, spent: one }: Told, endFactor: number): FinishedPack {
   const { packKey, deviceKey, cohort, lot, ranOut } = history;
   const pace = paceTo(one, endUnder(one, endFactor), history.outAt);
-  return { packKey, deviceKey, cohort, lot, lifeRatio: lifeRatio(pace), ranOut };
+  const endSd = Math.min(MOST_END_SD, endSdAt(one, endFactor));
+  return { packKey, deviceKey, cohort, lot, lifeRatio: lifeRatio(pace), ranOut, endSd };
 }
 
 /** Life relative to a pack of the assumed capacity and the sheet's draw. */

@@ -19,6 +19,8 @@ export interface FinishedPack {
   readonly lifeRatio: number;
   /** True: the device stopped. False: swapped before that. */
   readonly ranOut: boolean;
+  /** How unsure the depth was at which it stopped, as one standard deviation of ln(life ratio). */
+  readonly endSd?: number;
   /**
    * For a pack swapped early: the ln(life ratio) that its readings promised when it came out,
    * under its cohort's prior, and one standard deviation.
@@ -33,14 +35,17 @@ export interface CohortLife {
   readonly se: number;
   readonly spread: number;
   readonly packs: number;
-  /** Mean life where it is known, years. */
+  /** Mean life where it is known, years, and the packs' mean variance of `endSd`. */
   readonly years?: number;
+  readonly endVariance?: number;
 }
 
 const VARIANCE = { capacity: ASSUMED.capacitySd ** 2, draw: ASSUMED.drawSd ** 2 };
 const DRAW_PART = VARIANCE.draw / (VARIANCE.draw + VARIANCE.capacity);
 /** A cohort's own spread counts as much as this many packs of the assumed spread. */
 const SPREAD_WEIGHT = 6;
+/** At least this share of the spread of lives is the devices' own. */
+const LEAST_DEVICE = 0.25;
 
 interface OwnFit extends GroupMean {
   readonly cohort: string;
@@ -96,12 +101,12 @@ export function pooledLife(lives: readonly CohortLife[]): CohortLife | null {
 }
 
 /** Variance of ln(life) by device, and by pack within a device. */
-function parts({ spread, se, years }: CohortLife): { device: number; pack: number } {
+function parts({ spread, se, years, endVariance }: CohortLife): { device: number; pack: number } {
   const whole = spread ** 2 + se ** 2;
   // a short life does not average the seasons out: a sine's mean over T years
   const seasons = (2 * ASSUMED.seasonalDrawSd) / (Math.PI * Math.max(years ?? 3, 0.5));
   const pack = Math.min(ASSUMED.packLifeSd ** 2 + seasons ** 2, whole / 2);
-  return { device: whole - pack, pack };
+  return { device: Math.max(whole - pack - (endVariance ?? 0), LEAST_DEVICE * whole), pack };
 }
 
 /** Prior of a pack whose device is new: the cohort's mean, its error and spread together. */
@@ -142,12 +147,12 @@ export function devicePrior(life: CohortLife, own: readonly FinishedPack[]): Fle
 
 /** What one pack alone says of its ln(life ratio): an expectation has the prior taken out. */
 function toldBy(
-  { lifeRatio, ranOut, expected }: FinishedPack,
+  { lifeRatio, ranOut, expected, endSd }: FinishedPack,
   mean: number,
   variance: number,
 ): { lnRatio: number; variance: number } | null {
   if (!(lifeRatio > 0)) return null;
-  if (ranOut) return { lnRatio: Math.log(lifeRatio), variance: 0 };
+  if (ranOut) return { lnRatio: Math.log(lifeRatio), variance: (endSd ?? 0) ** 2 };
   if (!expected) return null;
   const precision = 1 / Math.max(expected.sd ** 2, 1e-6) - 1 / variance;
   // hardly narrower than the prior: nothing was read

@@ -29,6 +29,23 @@ export async function installedPackIds(
   return rows.map((row) => row.id);
 }
 
+/** The next packs in service by id, after one (from the first when null). */
+export async function installedPackPage(
+  db: Kysely<Database>,
+  after: string | null,
+  count: number,
+): Promise<string[]> {
+  const rows = await db
+    .selectFrom("pack")
+    .select("id")
+    .where("removedAt", "is", null)
+    .$if(after !== null, (query) => query.where("id", ">", after ?? ""))
+    .orderBy("id")
+    .limit(count)
+    .execute();
+  return rows.map((row) => row.id);
+}
+
 export interface ForecastRow {
   readonly packId: string;
   readonly p05: Date;

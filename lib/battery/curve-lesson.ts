@@ -15,7 +15,7 @@ import { ASSUMED } from "./assumptions";
 import { CURVES } from "./curve-tables";
 import { atDepth } from "./curves";
 import { freshDropMv } from "./cutoff";
-import { temperatureAt } from "./climate";
+import { DAYS_PER_YEAR, temperatureAt } from "./climate";
 import { type Spent, depthAfter, endUnder, paceTo } from "./end-lesson";
 import type { CurveLesson, PackReading } from "./pack";
 import { type PackModel, resistanceAge } from "./pack-model";
@@ -31,12 +31,13 @@ const SLIP = 4;
 /** How far the draw's course may have bent a pack's way through its depths, at mid-life. */
 const COURSE_SD = 0.03;
 /**
- * A lesson leaves at least these shares of the table's own spread: between packs, within one.
- * Packs of the same years share their weather, and agree with each other more than the next
- * ones will with them.
+ * A lesson leaves at least this share of the table's own spread: all but a tenth where packs
+ * live a year or less, half from two years on. Packs of the same months share their weather,
+ * and agree with each other more than the next ones will with them.
  */
-const LEAST_BETWEEN = 0.5;
-const LEAST_WITHIN = 0.25;
+const leastShare = (years: number): number => Math.min(0.9, Math.max(0.5, 1.3 - 0.4 * years));
+/** Spread of readings around their pack's curve at least, beside that between packs. */
+const WITHIN_SHARE = 0.5;
 /** Share of the table's own spread by which cohorts differ from each other. */
 const COHORT_SHARE = 0.6;
 
@@ -82,10 +83,13 @@ export function learnCurves(
     .map((pack, index) => place(pack, index, endOf(pack.history.cohort)));
   if (placed.length < LEAST_PACKS) return new Map();
   const { spreadMv } = CURVES[placed[0]!.model.pack.cell.chemistry];
-  const rest = layered(placed.flatMap(restResiduals), spreadMv);
+  const days = placed.reduce((s, p) => s + p.stoppedAt - p.model.pack.installedAt, 0);
+  const share = leastShare(days / placed.length / DAYS_PER_YEAR);
+  const rest = layered(placed.flatMap(restResiduals), spreadMv, share);
   const grown = layered(
     placed.flatMap((p) => loadResiduals(p, rest.shiftOf(p.cohort))),
     ASSUMED.resistanceSd,
+    share,
   );
   const lesson = (cohort: string | null): CurveLesson => ({
     restShiftMv: rest.shiftOf(cohort),
@@ -190,7 +194,7 @@ interface Layered {
 const FLAT: readonly number[] = Array.from({ length: NODES }, () => 0);
 
 /** Smooth over all, then what is left over each cohort. */
-function layered(residuals: readonly Residual[], spread: number): Layered {
+function layered(residuals: readonly Residual[], spread: number, share: number): Layered {
   const all = smooth(withoutSlips(residuals, FLAT), FLAT, spread);
   const own = new Map<string, number[]>();
   const left: Residual[] = [];
@@ -200,7 +204,7 @@ function layered(residuals: readonly Residual[], spread: number): Layered {
     own.set(cohort, shift);
     left.push(...kept.map((r) => ({ ...r, value: r.value - at(shift, r.depth) })));
   }
-  const { between, within } = scatter(left, spread);
+  const { between, within } = scatter(left, spread, share * spread);
   return { shiftOf: (cohort) => own.get(cohort ?? "") ?? all, between, within };
 }
 
@@ -249,7 +253,11 @@ function smooth(residuals: readonly Residual[], base: readonly number[], spread:
  * Spread of readings around their own pack's curve, and of packs around the cohort's: both by
  * DerSimonian and Laird's moments, floored, for a small sample may show none.
  */
-function scatter(left: readonly Residual[], spread: number): { between: number; within: number } {
+function scatter(
+  left: readonly Residual[],
+  spread: number,
+  least: number,
+): { between: number; within: number } {
   const packs = [...groupsOf(left, (r) => r.pack).values()].filter((group) => group.length > 1);
   const extra = packs.map(excess).reduce((a, b) => [a[0] + b[0], a[1] + b[1]], [0, 0] as const);
   const within = extra[1] > 0 ? Math.sqrt(Math.max(0, extra[0] / extra[1])) : spread;
@@ -263,8 +271,8 @@ function scatter(left: readonly Residual[], spread: number): { between: number; 
   });
   const between = Math.sqrt(poolGroups(means)?.tau2 ?? spread ** 2);
   return {
-    between: Math.max(LEAST_BETWEEN * spread, between),
-    within: Math.max(LEAST_WITHIN * spread, within),
+    between: Math.max(least, between),
+    within: Math.max(WITHIN_SHARE * least, within),
   };
 }
 

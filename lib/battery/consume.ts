@@ -6,7 +6,7 @@ import { type Grid, WINDOW } from "./grid";
 
 const MIN_SPREAD = 0.004;
 /** Rows that hold less than this share of the mass are left out. */
-const NEGLIGIBLE = 1e-7;
+const NEGLIGIBLE = 1e-6;
 /** A new window this much finer than the old one is filled by reading between the nodes. */
 const REFINED = 1.05;
 

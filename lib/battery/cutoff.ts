@@ -65,21 +65,23 @@ export function endDepth(
   driftMv: Millivolts,
   dropMv: Millivolts,
 ): number {
-  const { restMv, resistance, restScale } = curve;
-  const above = (i: number): number =>
-    restScale * restMv[i]! + driftMv - dropMv * resistance[i]! - cutoffMv;
-  if (!(above(0) > 0)) return 0;
-  if (above(CURVE_STEPS) > 0) return 1;
+  if (!(aboveAt(curve, 0, driftMv - cutoffMv, dropMv) > 0)) return 0;
+  if (aboveAt(curve, CURVE_STEPS, driftMv - cutoffMv, dropMv) > 0) return 1;
   // the voltage falls throughout: halve the span that holds the crossing
   let low = 0;
   let high = CURVE_STEPS;
   while (high - low > 1) {
     const middle = (low + high) >> 1;
-    if (above(middle) > 0) low = middle;
+    if (aboveAt(curve, middle, driftMv - cutoffMv, dropMv) > 0) low = middle;
     else high = middle;
   }
-  const before = above(low);
-  return (low + before / (before - above(high))) / CURVE_STEPS;
+  const before = aboveAt(curve, low, driftMv - cutoffMv, dropMv);
+  return (low + before / (before - aboveAt(curve, high, driftMv - cutoffMv, dropMv))) / CURVE_STEPS;
+}
+
+/** Voltage at a node of the table, `addMv` added, mV. */
+function aboveAt(curve: PackCurve, i: number, addMv: number, dropMv: number): number {
+  return curve.restScale * curve.restMv[i]! + addMv - dropMv * curve.resistance[i]!;
 }
 
 /** End depth of a pack under a current at a temperature. */

@@ -8,17 +8,30 @@ import type { Grid } from "./grid";
 const MOST_PART = 0.3;
 const SURELY_ANEW = 0.999;
 
+/** Less than this is owed until more has come together: both are small against the prior. */
+const WORTH_A_PASS = { part: 0.05, anew: 0.04 };
+
 /**
  * Random walk of ln(rate) by a variance: mass spreads between neighbouring rates, ends
  * reflecting. And a curve errs here in one way and there in another: with chance `anew` the
  * offset is drawn again from its prior, so that readings far apart on the curve never average
- * its error away.
+ * its error away. Leaves each row's moments in the grid.
  */
 export function drift(grid: Grid, variance: number, anew: number): void {
-  const whole = variance / (2 * grid.rateStep * grid.rateStep);
-  const passes = Math.max(1, Math.ceil(whole / MOST_PART));
-  for (let pass = 1; pass < passes; pass++) mix(grid, whole / passes, 0);
-  mix(grid, whole / passes, Math.min(anew, SURELY_ANEW));
+  grid.owedVariance += variance;
+  grid.owedRedraw = 1 - (1 - grid.owedRedraw) * (1 - anew);
+  const whole = grid.owedVariance / (2 * grid.rateStep * grid.rateStep);
+  if (whole >= WORTH_A_PASS.part || grid.owedRedraw >= WORTH_A_PASS.anew) {
+    const passes = Math.max(1, Math.ceil(whole / MOST_PART));
+    for (let pass = 1; pass < passes; pass++) mix(grid, whole / passes, 0);
+    mix(grid, whole / passes, Math.min(grid.owedRedraw, SURELY_ANEW));
+    grid.owedVariance = 0;
+    grid.owedRedraw = 0;
+  } else measureRows(grid);
+}
+
+function measureRows(grid: Grid): void {
+  for (let row = 0; row < grid.rowMass.length; row++) measureRow(grid, row);
 }
 
 /** One pass for all three offsets; leaves each row's moments in the grid. */
@@ -36,9 +49,9 @@ function mix(grid: Grid, part: number, anew: number): void {
     if (lives > 0) mixRow(grid, at, { below: below * nx - at, above: above * nx - at }, part, anew);
     else for (let base = at; base < spare.length; base += plane) spare.fill(0, base, base + nx);
   }
-  for (let row = 0; row < rowMass.length; row++) measureRow(grid, row);
   grid.spare = grid.p;
   grid.p = spare;
+  measureRows(grid);
 }
 
 interface Neighbours {
@@ -68,13 +81,13 @@ function mixRow(grid: Grid, at: number, by: Neighbours, part: number, anew: numb
   }
 }
 
-/** Moments of a row of the next `p`. */
-function measureRow({ spare, nx, rowMass, rowFirst, rowSecond }: Grid, row: number): void {
+/** Moments of a row. */
+function measureRow({ p, nx, rowMass, rowFirst, rowSecond }: Grid, row: number): void {
   let mass = 0;
   let first = 0;
   let second = 0;
   for (let i = 0, k = row * nx; i < nx; i++, k++) {
-    const m = spare[k]!;
+    const m = p[k]!;
     const moment = m * i;
     mass += m;
     first += moment;

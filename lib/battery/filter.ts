@@ -10,7 +10,7 @@ import { DAYS_PER_YEAR, monthOf } from "./climate";
 import { consume } from "./consume";
 import { drift, openRate } from "./draw-walk";
 import { type EndOfLife, type ResistanceBelief, endOfLife } from "./end-of-life";
-import { type Grid, depthMarginal, newGrid, normalise, weighDepth } from "./grid";
+import { type Grid, depthMarginal, newGrid, normalise, retire, weighDepth } from "./grid";
 import type { ForecastInput, PackEvent, PackReading, ReadingWeight } from "./pack";
 import { type PackModel, leakBetween, packModel } from "./pack-model";
 import { impossibleAboveMv, observe } from "./reading";
@@ -58,6 +58,7 @@ export function filterPack(input: ForecastInput): Filtered {
   }
   const stands = run.follow(last);
   normalise(grid);
+  retire(grid);
   const weights = input.readings.map((r) => run.weights.get(r.id) ?? passedOver(r, input));
   return { model, grid, at: stands, weights, end: run.end(), ...bounds };
 }

@@ -6,8 +6,8 @@
 import { ASSUMED } from "./assumptions";
 import type { PackModel } from "./pack-model";
 
-const DEPTH_NODES = 40;
-const RATE_NODES = 17;
+const DEPTH_NODES = 36;
+const RATE_NODES = 15;
 /**
  * Three offsets, 1.5 spreads apart: with the variance inside a cell (spacing²/12, added to each
  * reading) the prior's variance is that of a normal.
@@ -41,6 +41,9 @@ export interface Grid {
   readonly nodeC: Float64Array;
   depthFrom: number;
   depthStep: number;
+  /** Walk of ln(rate), as a variance, and redrawing of the offset still to be laid on. */
+  owedVariance: number;
+  owedRedraw: number;
   readonly lnRate: Float64Array;
   readonly rate: Float64Array;
   readonly rateStep: number;
@@ -49,6 +52,15 @@ export interface Grid {
   readonly offsetStepMv: number;
   /** Prior probability of each offset. */
   readonly offsetPrior: Float64Array;
+}
+
+/** Working space of finished grids, written over before it is read: spares the collector. */
+const IDLE: Float64Array[] = [];
+
+/** Give back a grid's working space; nothing can be consumed afterwards. */
+export function retire(grid: Grid): void {
+  IDLE.push(grid.spare);
+  grid.spare = new Float64Array(0);
 }
 
 /** Grid of a new pack. `years`: how long the draw will have wandered; `sd`: widest prior. */
@@ -67,7 +79,7 @@ export function newGrid(model: PackModel, years: number, sd: number): Grid {
     nr: RATE_NODES,
     no: OFFSET_NODES,
     p: new Float64Array(size),
-    spare: new Float64Array(size),
+    spare: IDLE.pop() ?? new Float64Array(size),
     rowMass: new Float64Array(rows).fill(1),
     rowFirst: new Float64Array(rows),
     rowSecond: new Float64Array(rows),
@@ -76,6 +88,8 @@ export function newGrid(model: PackModel, years: number, sd: number): Grid {
     nodeC: new Float64Array(DEPTH_NODES),
     depthFrom: model.startDepth - WINDOW * model.startSd,
     depthStep: (2 * WINDOW * model.startSd) / (DEPTH_NODES - 1),
+    owedVariance: 0,
+    owedRedraw: 0,
     lnRate,
     rate: lnRate.map(Math.exp),
     rateStep,

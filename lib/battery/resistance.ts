@@ -57,13 +57,14 @@ export function guessRest(model: PackModel, grid: Grid, reading: PackReading): R
   }
   const depth = first / total;
   const depthSd = Math.sqrt(Math.max(0, second / total - depth * depth));
-  const volts = (x: number): number => curve.restScale * atDepth(curve.restMv, x);
-  const slope = (volts(depth - REACH) - volts(depth + REACH)) / (2 * REACH);
+  const { restMv, restScale } = curve;
+  const fallen = atDepth(restMv, depth - REACH) - atDepth(restMv, depth + REACH);
+  const slope = (restScale * fallen) / (2 * REACH);
   const offset = Math.hypot(model.offsetSdMv, model.noiseMv);
   const unsure = Math.hypot(depthSd, ASSUMED.curveDepthSd);
   const accuracy = reading.accuracyMv ?? ASSUMED.accuracyMv;
   return {
-    restMv: volts(depth) + curve.driftMvPerKelvin * (dc / 10 - 20),
+    restMv: restScale * atDepth(restMv, depth) + curve.driftMvPerKelvin * (dc / 10 - 20),
     variance: (slope * unsure) ** 2 + offset ** 2 + accuracy ** 2 + 1e-6,
     dropMv: fall * atDepth(curve.resistance, depth),
   };

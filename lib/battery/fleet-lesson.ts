@@ -104,13 +104,17 @@ function learnChemistry(histories: readonly FinishedHistory[]): PriorFor {
     calibration,
     endResistance: ends.has(cohort) ? { mean: endOf(cohort), sd: ASSUMED.taughtEndSd } : null,
   });
-  const ofDevice = groupBy(
-    told.map((one, i) => ({ ...one, pack: finished[i]! })),
-    ({ history }) => `${history.deviceKey} ${history.cohort}`,
+  // each half is judged with the curve that the other half taught: none on its own readings
+  const halves = [0, 1].map((half) =>
+    learnCurves(
+      told.filter((_, i) => i % 2 !== half),
+      endOf,
+    ),
   );
-  calibration = judge(told, (cohort) => {
+  calibration = judge(told, (cohort, i) => {
     const life = lifeOf.get(cohort) ?? pooled;
-    return life && shared(cohort, cohortPrior(life));
+    const curve = halves[i % 2]!.get(cohort) ?? halves[i % 2]!.get(null) ?? null;
+    return life && { ...shared(cohort, cohortPrior(life)), curve };
   });
   const known = new Map<string, FleetPrior>();
   const cohortOf = (cohort: string, life: CohortLife): FleetPrior => {
@@ -118,14 +122,20 @@ function learnChemistry(histories: readonly FinishedHistory[]): PriorFor {
     known.set(cohort, prior);
     return prior;
   };
+  // worked out now, so that no history is held on to
+  const packs = told.map((one, i) => {
+    const life = lifeOf.get(one.history.cohort) ?? pooled;
+    const swapped = life && !one.history.ranOut;
+    return swapped
+      ? promised(one.history, finished[i]!, cohortOf(one.history.cohort, life))
+      : finished[i]!;
+  });
+  const ofDevice = groupBy(packs, (pack) => `${pack.deviceKey} ${pack.cohort}`);
   return ({ deviceKey, cohort }) => {
     const life = lifeOf.get(cohort) ?? pooled;
     if (!life) return null;
-    const base = cohortOf(cohort, life);
     const own = ofDevice.get(`${deviceKey} ${cohort}`);
-    if (!own) return base;
-    const packs = own.map((one) => (one.history.ranOut ? one.pack : promised(one, base)));
-    return shared(cohort, devicePrior(life, packs));
+    return own ? shared(cohort, devicePrior(life, own)) : cohortOf(cohort, life);
   };
 }
 
@@ -146,15 +156,13 @@ function meansOf(finished: readonly FinishedPack[], told: readonly Told[], cohor
 /** Forecasts of packs that ran out, held against their ends. */
 function judge(
   told: readonly Told[],
-  priorOf: (cohort: string) => FleetPrior | null,
+  priorOf: (cohort: string, index: number) => FleetPrior | null,
 ): Calibration | null {
-  const scores = told
-    .filter(({ history }) => history.ranOut)
-    .slice(-MOST_JUDGED)
-    .map(({ history }) => {
-      const prior = priorOf(history.cohort);
-      return prior ? endScores({ ...history, prior }) : [];
-    });
+  const scores = told.flatMap(({ history }, i) => {
+    if (!history.ranOut || i < told.length - MOST_JUDGED) return [];
+    const prior = priorOf(history.cohort, i);
+    return prior ? [endScores({ ...history, prior })] : [];
+  });
   return scores.length > 0 ? calibrate(scores) : null;
 }
 
@@ -170,8 +178,7 @@ function finishedPack({ history, spent: one }: Told, endFactor: number): Finishe
 const lifeRatio = (pace: number): number => 1 / (pace * ASSUMED.capacityMean);
 
 /** A swapped pack with the life that its readings promised. */
-function promised(one: Told & { readonly pack: FinishedPack }, prior: FleetPrior): FinishedPack {
-  const { history } = one;
+function promised(history: FinishedHistory, pack: FinishedPack, prior: FleetPrior): FinishedPack {
   const { lnPace, sd } = expectedLife({
     pack: history.pack,
     readings: history.readings.filter((r) => r.at <= history.outAt),
@@ -179,5 +186,5 @@ function promised(one: Told & { readonly pack: FinishedPack }, prior: FleetPrior
     prior,
     now: history.outAt,
   });
-  return { ...one.pack, expected: { lnRatio: -lnPace - Math.log(ASSUMED.capacityMean), sd } };
+  return { ...pack, expected: { lnRatio: -lnPace - Math.log(ASSUMED.capacityMean), sd } };
 }

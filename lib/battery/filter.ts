@@ -8,13 +8,13 @@ import type { EpochDays } from "../units";
 import { ASSUMED } from "./assumptions";
 import { DAYS_PER_YEAR, monthOf } from "./climate";
 import { consume } from "./consume";
-import { openRate, redrawOffset, wander } from "./draw-walk";
+import { drift, openRate } from "./draw-walk";
 import { type EndOfLife, type ResistanceBelief, endOfLife } from "./end-of-life";
-import { type Grid, newGrid, normalise, weighDepth } from "./grid";
+import { type Grid, depthMarginal, newGrid, normalise, retire, weighDepth } from "./grid";
 import type { ForecastInput, PackEvent, PackReading, ReadingWeight } from "./pack";
 import { type PackModel, leakBetween, packModel } from "./pack-model";
 import { impossibleAboveMv, observe } from "./reading";
-import { SHEET_RESISTANCE, guessRest, learnResistance, loosen } from "./resistance";
+import { guessRest, learnResistance, loosen } from "./resistance";
 import { type Bounds, aliveBounds, passedOver, timeline } from "./timeline";
 
 const LONGEST_STEP_DAYS = 120;
@@ -58,6 +58,7 @@ export function filterPack(input: ForecastInput): Filtered {
   }
   const stands = run.follow(last);
   normalise(grid);
+  retire(grid);
   const weights = input.readings.map((r) => run.weights.get(r.id) ?? passedOver(r, input));
   return { model, grid, at: stands, weights, end: run.end(), ...bounds };
 }
@@ -65,7 +66,7 @@ export function filterPack(input: ForecastInput): Filtered {
 /** One pass over one pack's history. */
 class Run {
   readonly weights = new Map<string, ReadingWeight>();
-  private resistance: ResistanceBelief = SHEET_RESISTANCE;
+  private resistance: ResistanceBelief;
   private lastLoaded = -Infinity;
   private learned = false;
 
@@ -73,11 +74,14 @@ class Run {
     private readonly model: PackModel,
     private readonly grid: Grid,
     private at: EpochDays,
-  ) {}
+  ) {
+    this.resistance = model.resistance;
+  }
 
   to(day: EpochDays): void {
     elapse(this.model, this.grid, this.at, day);
-    if (this.learned) this.resistance = loosen(this.resistance, day - this.at);
+    if (this.learned)
+      this.resistance = loosen(this.resistance, this.model.resistance.sd, day - this.at);
     this.at = Math.max(this.at, day);
   }
 
@@ -102,6 +106,7 @@ class Run {
     const loaded = reading.kind === "loaded";
     const rested = this.at - this.lastLoaded > ASSUMED.passivationRestDays;
     const film = loaded && rested && this.model.pack.cell.chemistry === "li-socl2";
+    depthMarginal(this.grid, this.grid.nodeC);
     const guess = loaded ? guessRest(this.model, this.grid, reading) : null;
     const said = observe(this.model, this.grid, reading, this.resistance, film);
     this.weights.set(reading.id, said);
@@ -126,7 +131,14 @@ class Run {
   }
 
   end(): EndOfLife {
-    return this.learned ? endOfLife(this.model.endTerms, this.resistance) : this.model.end;
+    const { end, endTerms, endResistance } = this.model;
+    if (!this.learned) return end;
+    const { mean, sd } = this.resistance;
+    // what this pack shows beside its curve, on what such packs take to stop
+    return endOfLife(endTerms, {
+      mean: mean * endResistance.mean,
+      sd: Math.min(sd * endResistance.mean, endResistance.sd * Math.max(1, mean)),
+    });
   }
 }
 
@@ -149,10 +161,9 @@ function elapse(model: PackModel, grid: Grid, from: EpochDays, to: EpochDays): v
   for (let s = 0; s < steps; s++) {
     const start = from + (days * s) / steps;
     const end = from + (days * (s + 1)) / steps;
-    wander(grid, variance);
     const share = model.drawPerDay * (end - start);
     const leak = leakBetween(model, start, end);
-    redrawOffset(grid, 1 - Math.exp(-(share + leak) / ASSUMED.curveErrorDepth));
+    drift(grid, variance, 1 - Math.exp(-(share + leak) / model.offsetDepth));
     consume(grid, share, leak);
   }
 }

@@ -6,17 +6,24 @@ import type { EpochDays, Microamps, Millivolts } from "../units";
 import { ASSUMED } from "./assumptions";
 import { baseCutoffMv, grossCapacity } from "./capacity";
 import { DAYS_PER_YEAR } from "./climate";
-import { elementsOf } from "./curves";
 import { CURVES } from "./curve-tables";
 import { type PackCurve, packCurve, packEndDepth } from "./cutoff";
 import { packAverageUa, packPeakUa } from "./duty";
-import { type EndOfLife, type EndTerms, endOfLife, tableEndDepth } from "./end-of-life";
-import type { Chemistry, FleetPrior, PackSpec } from "./pack";
+import {
+  type EndOfLife,
+  type EndTerms,
+  type ResistanceBelief,
+  endOfLife,
+  tableEndDepth,
+} from "./end-of-life";
+import type { Calibration, Chemistry, FleetPrior, PackSpec } from "./pack";
 import { type Ageing, ageing } from "./self-discharge";
 
 const MIN_FULL_SHARE = 0.5;
 const MAX_SHELF_LOSS = 0.9;
 const TINY = 1e-9;
+/** Share of a table's spread that differs from one reading to the next. */
+const UNTAUGHT_NOISE = 0.25;
 const LONGEST_AGE_YEARS = 15;
 const RECHARGED: readonly Chemistry[] = ["vrla", "lifepo4"];
 
@@ -41,11 +48,19 @@ export interface PackModel {
   readonly endTerms: EndTerms;
   /** Where it stops, before any loaded reading has told of the resistance. */
   readonly end: EndOfLife;
+  /** The resistance that decides it, relative to the sheet's. */
+  readonly endResistance: ResistanceBelief;
   readonly startDepth: number;
   readonly startSd: number;
-  /** Spread of the pack's voltage offset against the curve, mV. */
+  /** Spread of the pack's voltage offset against the curve, and of readings around that, mV. */
   readonly offsetSdMv: Millivolts;
+  readonly noiseMv: Millivolts;
+  /** Depth over which that offset stays the same, roughly. */
+  readonly offsetDepth: number;
+  /** Resistance of this pack before any reading, relative to its curve. */
+  readonly resistance: ResistanceBelief;
   readonly prior: RatePrior;
+  readonly calibration: Calibration | null;
 }
 
 /** Charge of one cell at depth 1 of its curve, at the device's average draw, mAh. */
@@ -87,7 +102,10 @@ function shelfLoss(pack: PackSpec, leakPerDay: number): number {
 
 /** Prepare a pack for the filter. */
 export function packModel(pack: PackSpec, fleet: FleetPrior | null): PackModel {
-  const curve = packCurve(pack);
+  const lesson = fleet?.curve ?? null;
+  // the depth axis ends where the published curve does; what was learned lies on that axis
+  const published = packCurve(pack);
+  const curve = lesson ? packCurve(pack, lesson) : published;
   const averageUa = packAverageUa(pack);
   const peakUa = packPeakUa(pack);
   const fullMah = fullCapacity(pack, averageUa);
@@ -96,11 +114,14 @@ export function packModel(pack: PackSpec, fleet: FleetPrior | null): PackModel {
   const drawPerDay = (averageUa * 0.024) / (fullMah * pack.parallel);
   const terms: EndTerms = {
     pack,
-    curve,
+    curve: published,
     peakUa,
     cap: tableEndDepth(pack, averageUa, fullMah),
     aged: grown(pack, 1 / Math.max(drawPerDay + leakPerDay, TINY)),
   };
+  const resistance = { mean: 1, sd: lesson?.resistanceSd ?? ASSUMED.resistanceSd };
+  const endResistance = fleet?.endResistance ?? { mean: 1, sd: ASSUMED.resistanceSd };
+  const { spreadMv } = CURVES[pack.cell.chemistry];
   const startDepth = shelfLoss(pack, leakPerDay);
   return {
     pack,
@@ -111,11 +132,16 @@ export function packModel(pack: PackSpec, fleet: FleetPrior | null): PackModel {
     leakPerDay,
     ageing: ageing(pack.monthlyMeanDc),
     endTerms: terms,
-    end: endOfLife(terms, { mean: 1, sd: ASSUMED.resistanceSd }),
+    end: endOfLife(terms, endResistance),
+    endResistance,
     startDepth,
     startSd: Math.hypot(ASSUMED.startDepthSd, startDepth * 0.5),
-    offsetSdMv: pack.series * elementsOf(pack.cell) * CURVES[pack.cell.chemistry].spreadMv,
+    offsetSdMv: curve.restScale * (lesson?.spreadMv ?? spreadMv),
+    noiseMv: curve.restScale * (lesson?.noiseMv ?? UNTAUGHT_NOISE * spreadMv),
+    offsetDepth: lesson ? ASSUMED.taughtErrorDepth : ASSUMED.curveErrorDepth,
+    resistance,
     prior: ratePrior(pack, fleet),
+    calibration: fleet?.calibration ?? null,
   };
 }
 

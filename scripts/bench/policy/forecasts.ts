@@ -5,15 +5,13 @@
 import {
   CDF_PROBABILITIES,
   chanceOutBy,
-  cohortPrior,
-  devicePrior,
-  type CohortLife,
-  type FinishedPack,
+  type FinishedHistory,
+  type FleetLesson,
   type FleetPrior,
   type Forecast,
   type ForecastInput,
   forecastPack,
-  learnCohorts,
+  learnFleet,
   type PackEvent,
 } from "@/lib/battery";
 import { interpolate } from "@/lib/stats/interpolate";
@@ -31,8 +29,10 @@ import type { Fleet } from "./fleet";
 const OLD_DAYS = 63;
 const NEAR_DAYS = 45;
 const RECENT_DAYS = 13;
-/** The fleet's lessons are drawn again so often. */
-const LEARN_DAYS = 28;
+/** The fleet's lessons are drawn again so often; the product does it when a pack has come out. */
+const LEARN_DAYS = 56;
+/** As lib/usecases/fleet-priors.ts has it. */
+const OF_EACH_MODEL = 200;
 
 function modelOf(tag: string) {
   return modelByCode(tag.split("-")[0] ?? "");
@@ -84,9 +84,7 @@ function stillRunning(forecast: Forecast, now: number): readonly number[] {
 /** Keeps a forecast for every pack, made anew where that could matter. */
 export class ForecastDesk {
   private readonly kept = new Map<string, { at: number; readings: number; forecast: Forecast }>();
-  private readonly lessons = new Map<string, FinishedPack>();
-  private cohorts = new Map<string, CohortLife>();
-  private ofDevice = new Map<string, FinishedPack[]>();
+  private lesson: FleetLesson | null = null;
   private learnedAt = -Infinity;
 
   constructor(private readonly field: BenchField) {}
@@ -118,42 +116,33 @@ export class ForecastDesk {
   }
 
   private prior(pack: BenchPack, now: number): FleetPrior | null {
-    if (now - this.learnedAt >= LEARN_DAYS) this.learn(now);
-    const cohort = cohortOf(pack);
-    const life = this.cohorts.get(cohort);
-    if (!life) return null;
-    const own = this.ofDevice.get(`${pack.tag} ${cohort}`);
-    return own ? devicePrior(life, own) : cohortPrior(life);
+    if (!this.lesson || now - this.learnedAt >= LEARN_DAYS) {
+      this.lesson = learnFleet(latestOf(this.field).map((one) => historyOf(this.field.fleet, one)));
+      this.learnedAt = now;
+    }
+    const { chemistry } = catalogueCell(pack.designation);
+    return this.lesson.priorFor({ deviceKey: pack.tag, cohort: cohortOf(pack), chemistry });
   }
+}
 
-  private learn(now: number): void {
-    this.learnedAt = now;
-    const finished = this.field.finished.map((pack) => this.lesson(pack));
-    this.cohorts = new Map(learnCohorts(finished).map((life) => [life.cohort, life]));
-    this.ofDevice = groupBy(finished, (pack) => `${pack.deviceKey} ${pack.cohort}`);
-  }
+/** The latest finished packs of each device model: as many as the product learns from. */
+function latestOf({ finished }: BenchField): BenchPack[] {
+  const byModel = groupBy(finished, (pack) => modelOf(pack.tag).code);
+  return [...byModel.values()].flatMap((own) =>
+    own.sort((a, b) => (b.removedAt ?? 0) - (a.removedAt ?? 0)).slice(0, OF_EACH_MODEL),
+  );
+}
 
-  private lesson(pack: BenchPack): FinishedPack {
-    const known = this.lessons.get(pack.key);
-    if (known) return known;
-    const end = Math.min(pack.silence?.at ?? Infinity, pack.removedAt ?? Infinity);
-    const lesson: FinishedPack = {
-      packKey: pack.key,
-      deviceKey: pack.tag,
-      cohort: cohortOf(pack),
-      lot: null,
-      lifeRatio: (end - pack.installedAt) / this.promisedDays(pack),
-      ranOut: pack.silence !== null,
-    };
-    this.lessons.set(pack.key, lesson);
-    return lesson;
-  }
-
-  /** Median life by the data sheet and the duty cycle alone, from the day the pack went in. */
-  private promisedDays(pack: BenchPack): number {
-    const at = pack.installedAt;
-    const spec = packSpec(this.field.fleet, pack);
-    const unread = { pack: spec, readings: [], events: [], prior: null, now: at };
-    return Math.max(1, forecastPack(unread).quantiles.p50 - at);
-  }
+function historyOf(fleet: Fleet, pack: BenchPack): FinishedHistory {
+  const outAt = Math.min(pack.silence?.at ?? Infinity, pack.removedAt ?? Infinity);
+  return {
+    packKey: pack.key,
+    deviceKey: pack.tag,
+    cohort: cohortOf(pack),
+    lot: null,
+    pack: packSpec(fleet, pack),
+    readings: pack.readings,
+    outAt,
+    ranOut: pack.silence !== null,
+  };
 }

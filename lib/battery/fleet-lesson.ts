@@ -1,0 +1,190 @@
+/**
+ * All that finished packs teach about those still in, put together: the end (end-lesson.ts),
+ * lives by cohort and device (fleet-prior.ts), the voltage curve (curve-lesson.ts). Histories
+ * are learned from by chemistry; a cohort nobody has seen the end of gets what its chemistry
+ * taught.
+ */
+import type { EpochDays } from "../units";
+import { ASSUMED } from "./assumptions";
+import { DAYS_PER_YEAR } from "./climate";
+import { calibrate, endScores } from "./calibration";
+import { learnCurves } from "./curve-lesson";
+import { endSdAt, endUnder, learnEnds, paceTo, type Spent, spent } from "./end-lesson";
+import { expectedLife } from "./expected-life";
+import {
+  type CohortLife,
+  cohortPrior,
+  devicePrior,
+  type FinishedPack,
+  learnCohorts,
+  pooledLife,
+} from "./fleet-prior";
+import type { Calibration, Chemistry, FleetPrior, PackReading, PackSpec } from "./pack";
+
+/** Forecasts of this many packs are judged: enough to know a spread to a few percent. */
+const MOST_JUDGED = 200;
+const MOST_END_SD = 0.4;
+
+export interface FinishedHistory {
+  readonly packKey: string;
+  readonly deviceKey: string;
+  readonly cohort: string;
+  readonly lot: string | null;
+  readonly pack: PackSpec;
+  readonly readings: readonly PackReading[];
+  /** The day it stopped its device, or was swapped before that. */
+  readonly outAt: EpochDays;
+  readonly ranOut: boolean;
+}
+
+export interface FleetMember {
+  readonly deviceKey: string;
+  readonly cohort: string;
+  readonly chemistry: Chemistry;
+}
+
+export interface FleetLesson {
+  /** What is known beforehand of the next pack of a device; null where nothing is. */
+  priorFor(member: FleetMember): FleetPrior | null;
+}
+
+/** Learn from every pack that came out. */
+export function learnFleet(histories: readonly FinishedHistory[]): FleetLesson {
+  const chemistries = groupBy(histories, (h) => h.pack.cell.chemistry);
+  const lessons = new Map([...chemistries].map(([key, group]) => [key, learnChemistry(group)]));
+  return { priorFor: (member) => lessons.get(member.chemistry)?.(member) ?? null };
+}
+
+function groupBy<Item, Key>(items: readonly Item[], key: (item: Item) => Key): Map<Key, Item[]> {
+  const groups = new Map<Key, Item[]>();
+  for (const item of items) {
+    const group = groups.get(key(item));
+    if (group) group.push(item);
+    else groups.set(key(item), [item]);
+  }
+  return groups;
+}
+
+type PriorFor = (member: Pick<FleetMember, "deviceKey" | "cohort">) => FleetPrior | null;
+
+interface Told {
+  readonly history: FinishedHistory;
+  readonly spent: Spent;
+}
+
+/** A history counts when its pack was in at all. */
+function prepared(histories: readonly FinishedHistory[]): Told[] {
+  return histories
+    .filter((h) => h.outAt - h.pack.installedAt > 1)
+    .map((history) => ({ history, spent: spent(history.pack, history.outAt) }));
+}
+
+function learnChemistry(histories: readonly FinishedHistory[]): PriorFor {
+  const told = prepared(histories);
+  const ranOut = groupBy(
+    told.filter(({ history }) => history.ranOut),
+    ({ history }) => history.cohort,
+  );
+  const ends = learnEnds(
+    new Map([...ranOut].map(([cohort, packs]) => [cohort, packs.map((p) => p.spent)])),
+  );
+  const endOf = (cohort: string): number => ends.get(cohort) ?? 1;
+  const finished = told.map((one) => finishedPack(one, endOf(one.history.cohort)));
+  const lives = learnCohorts(finished).map((life) => ({
+    ...life,
+    ...meansOf(finished, told, life.cohort),
+  }));
+  const pooled = pooledLife(lives);
+  const curves = learnCurves(told, endOf);
+  const lifeOf = new Map(lives.map((life) => [life.cohort, life]));
+  let calibration: Calibration | null = null;
+  const shared = (cohort: string, prior: FleetPrior): FleetPrior => ({
+    ...prior,
+    curve: curves.get(cohort) ?? curves.get(null) ?? null,
+    calibration,
+    endResistance: ends.has(cohort) ? { mean: endOf(cohort), sd: ASSUMED.taughtEndSd } : null,
+  });
+  // each half is judged with the curve that the other half taught: none on its own readings
+  const halves = [0, 1].map((half) =>
+    learnCurves(
+      told.filter((_, i) => i % 2 !== half),
+      endOf,
+    ),
+  );
+  calibration = judge(told, (cohort, i) => {
+    const life = lifeOf.get(cohort) ?? pooled;
+    const curve = halves[i % 2]!.get(cohort) ?? halves[i % 2]!.get(null) ?? null;
+    return life && { ...shared(cohort, cohortPrior(life)), curve };
+  });
+  const known = new Map<string, FleetPrior>();
+  const cohortOf = (cohort: string, life: CohortLife): FleetPrior => {
+    const prior = known.get(cohort) ?? shared(cohort, cohortPrior(life));
+    known.set(cohort, prior);
+    return prior;
+  };
+  // worked out now, so that no history is held on to
+  const packs = told.map((one, i) => {
+    const life = lifeOf.get(one.history.cohort) ?? pooled;
+    const swapped = life && !one.history.ranOut;
+    return swapped
+      ? promised(one.history, finished[i]!, cohortOf(one.history.cohort, life))
+      : finished[i]!;
+  });
+  const ofDevice = groupBy(packs, (pack) => `${pack.deviceKey} ${pack.cohort}`);
+  return ({ deviceKey, cohort }) => {
+    const life = lifeOf.get(cohort) ?? pooled;
+    if (!life) return null;
+    const own = ofDevice.get(`${deviceKey} ${cohort}`);
+    return own ? shared(cohort, devicePrior(life, own)) : cohortOf(cohort, life);
+  };
+}
+
+/** Mean life, years, and mean variance of the end of a cohort's packs that ran out. */
+function meansOf(finished: readonly FinishedPack[], told: readonly Told[], cohort: string) {
+  let days = 0;
+  let variance = 0;
+  let packs = 0;
+  told.forEach(({ history }, i) => {
+    if (history.cohort !== cohort || !history.ranOut) return;
+    days += history.outAt - history.pack.installedAt;
+    variance += (finished[i]!.endSd ?? 0) ** 2;
+    packs++;
+  });
+  return { years: days / packs / DAYS_PER_YEAR, endVariance: variance / packs };
+}
+
+/** Forecasts of packs that ran out, held against their ends. */
+function judge(
+  told: readonly Told[],
+  priorOf: (cohort: string, index: number) => FleetPrior | null,
+): Calibration | null {
+  const scores = told.flatMap(({ history }, i) => {
+    if (!history.ranOut || i < told.length - MOST_JUDGED) return [];
+    const prior = priorOf(history.cohort, i);
+    return prior ? [endScores({ ...history, prior })] : [];
+  });
+  return scores.length > 0 ? calibrate(scores) : null;
+}
+
+/** Its life beside the sheet's, at the depth where such a pack stops in that month. */
+function finishedPack({ history, spent: one }: Told, endFactor: number): FinishedPack {
+  const { packKey, deviceKey, cohort, lot, ranOut } = history;
+  const pace = paceTo(one, endUnder(one, endFactor), history.outAt);
+  const endSd = Math.min(MOST_END_SD, endSdAt(one, endFactor));
+  return { packKey, deviceKey, cohort, lot, lifeRatio: lifeRatio(pace), ranOut, endSd };
+}
+
+/** Life relative to a pack of the assumed capacity and the sheet's draw. */
+const lifeRatio = (pace: number): number => 1 / (pace * ASSUMED.capacityMean);
+
+/** A swapped pack with the life that its readings promised. */
+function promised(history: FinishedHistory, pack: FinishedPack, prior: FleetPrior): FinishedPack {
+  const { lnPace, sd } = expectedLife({
+    pack: history.pack,
+    readings: history.readings.filter((r) => r.at <= history.outAt),
+    events: [{ kind: "reporting", at: history.outAt }],
+    prior,
+    now: history.outAt,
+  });
+  return { ...pack, expected: { lnRatio: -lnPace - Math.log(ASSUMED.capacityMean), sd } };
+}

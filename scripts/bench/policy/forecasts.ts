@@ -30,7 +30,7 @@ const OLD_DAYS = 63;
 const NEAR_DAYS = 45;
 const RECENT_DAYS = 13;
 /** The fleet's lessons are drawn again so often; the product does it when a pack has come out. */
-const LEARN_DAYS = 56;
+const LEARN_DAYS = 91;
 /** As lib/usecases/fleet-priors.ts has it. */
 const OF_EACH_MODEL = 200;
 

@@ -75,7 +75,12 @@ function run(): void {
   const results: Result[] = [];
   for (const seed of names("seeds")) {
     const from = start(seed);
-    for (const make of made) results.push(live(from, make()));
+    for (const make of made) {
+      const result = live(from, make());
+      results.push(result);
+      const pounds = result.costPerDeviceYear.toFixed(2);
+      process.stderr.write(`${seed} ${result.policy}: £${pounds} a device-year\n`);
+    }
   }
   const rows = [...results, ...means(results)];
   say(`\n${mainTable(rows)}\n\nPounds a device-year by cause\n\n${causeTable(rows)}`);

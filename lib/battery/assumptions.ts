@@ -38,6 +38,8 @@ export const ASSUMED = {
   coldHourSdK: 3,
   /** Internal resistance against the table. */
   resistanceSd: 0.25,
+  /** Where a load that hardly ever pauses ends beside where the curves say. */
+  steadyEndSd: 0.05,
   /** The resistance that decides the end, once learned from where a cohort's packs stopped. */
   taughtEndSd: 0.3,
   /** How unevenly it grows in a year, as a share. */

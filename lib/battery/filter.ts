@@ -135,9 +135,10 @@ class Run {
     if (!this.learned) return end;
     const { mean, sd } = this.resistance;
     // what this pack shows beside its curve, on what such packs take to stop
+    const first = this.model.resistance.mean;
     return endOfLife(endTerms, {
-      mean: mean * endResistance.mean,
-      sd: Math.min(sd * endResistance.mean, endResistance.sd * Math.max(1, mean)),
+      mean: (mean / first) * endResistance.mean,
+      sd: Math.min((sd / first) * endResistance.mean, endResistance.sd * Math.max(1, mean / first)),
     });
   }
 }

@@ -120,6 +120,17 @@ function resistanceOf(pack: PackSpec, curve: PackCurve, lesson: CurveLesson | nu
   return { mean, sd: 0.4 * mean };
 }
 
+/** A full cell's charge, and the shares of it that a day takes by leak and by draw. */
+function charges(pack: PackSpec, averageUa: Microamps) {
+  const fullMah = fullCapacity(pack, averageUa);
+  const yearlyLeak = (pack.cell.selfDischargePpmPerYear / 1e6) * pack.cell.rated.capacityMah;
+  return {
+    fullMah,
+    leakPerDay: yearlyLeak / fullMah / DAYS_PER_YEAR,
+    drawPerDay: (averageUa * 0.024) / (fullMah * pack.parallel),
+  };
+}
+
 /** Prepare a pack for the filter. */
 export function packModel(pack: PackSpec, fleet: FleetPrior | null): PackModel {
   const lesson = fleet?.curve ?? null;
@@ -128,10 +139,7 @@ export function packModel(pack: PackSpec, fleet: FleetPrior | null): PackModel {
   const curve = lesson ? packCurve(pack, lesson) : published;
   const averageUa = packAverageUa(pack);
   const peakUa = packPeakUa(pack);
-  const fullMah = fullCapacity(pack, averageUa);
-  const yearlyLeak = (pack.cell.selfDischargePpmPerYear / 1e6) * pack.cell.rated.capacityMah;
-  const leakPerDay = yearlyLeak / fullMah / DAYS_PER_YEAR;
-  const drawPerDay = (averageUa * 0.024) / (fullMah * pack.parallel);
+  const { fullMah, leakPerDay, drawPerDay } = charges(pack, averageUa);
   const terms: EndTerms = {
     pack,
     curve: published,

@@ -41,6 +41,8 @@ export interface FleetMember {
   readonly deviceKey: string;
   readonly cohort: string;
   readonly chemistry: Chemistry;
+  /** When the device or its firmware last changed, if ever: earlier packs told of another draw. */
+  readonly changedAt?: EpochDays | null;
 }
 
 export interface FleetLesson {
@@ -65,7 +67,7 @@ function groupBy<Item, Key>(items: readonly Item[], key: (item: Item) => Key): M
   return groups;
 }
 
-type PriorFor = (member: Pick<FleetMember, "deviceKey" | "cohort">) => FleetPrior | null;
+type PriorFor = (member: Omit<FleetMember, "chemistry">) => FleetPrior | null;
 
 interface Told {
   readonly history: FinishedHistory;
@@ -141,13 +143,26 @@ function learnChemistry(histories: readonly FinishedHistory[]): PriorFor {
     if (!life || history.ranOut) return finished[i]!;
     return promised(history, finished[i]!, cohortOf(history.cohort, life));
   });
+  const since = new Map(told.map(({ history }) => [history.packKey, history.pack.installedAt]));
   const ofDevice = groupBy(packs, (pack) => `${pack.deviceKey} ${pack.cohort}`);
-  return ({ deviceKey, cohort }) => {
+  return ({ deviceKey, cohort, changedAt = null }) => {
     const life = lifeOf(cohort);
     if (!life) return null;
-    const own = ofDevice.get(`${deviceKey} ${cohort}`);
+    const own = ofDevice
+      .get(`${deviceKey} ${cohort}`)
+      ?.filter(({ packKey }) => changedAt === null || since.get(packKey)! >= changedAt);
     const base = cohortOf(cohort, life);
-    return own ? { ...base, ...devicePrior(life, own) } : base;
+    if (own && own.length > 0) return { ...base, ...devicePrior(life, own) };
+    return changedAt === null ? base : opened(base);
+  };
+}
+
+/** A changed device draws as such devices do, give or take what a change may do. */
+function opened(prior: FleetPrior): FleetPrior {
+  const { mean, relativeSd } = prior.drawFactor;
+  return {
+    ...prior,
+    drawFactor: { mean, relativeSd: Math.hypot(relativeSd, ASSUMED.changedDrawSd) },
   };
 }
 

@@ -50,8 +50,13 @@ export const ASSUMED = {
   accuracyMv: 10,
   /** Temperature of a reading when only the month's mean is known, K. */
   temperatureSdK: 5,
-  /** A Li-SOCl2 pack not loaded on purpose for this long may be passivated, days. */
-  passivationRestDays: 30,
+  /**
+   * A low loaded reading of Li-SOCl2 is the film's with this chance at the most, rested or kept
+   * thin by the device's own pulses, and grows towards it in about so many days (from memory).
+   */
+  filmMost: 0.95,
+  filmMostPulsed: 0.35,
+  filmDays: 60,
   /** Readings above this multiple of the fresh resting voltage are impossible. */
   impossibleShare: 1.25,
   /** No date lies further ahead of `now` or the installation than this, days. */

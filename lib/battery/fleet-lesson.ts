@@ -197,7 +197,8 @@ function judge({ told, lifeOf, endOf, withLesson }: Raw): Calibration | null {
     const prior = withLesson(history.cohort, cohortPrior(life), halves[i % 2]);
     return [endScores({ ...history, prior })];
   });
-  return scores.length > 0 ? calibrate(scores) : null;
+  const days = told.reduce((s, { history }) => s + history.outAt - history.pack.installedAt, 0);
+  return scores.length > 0 ? calibrate(scores, days / told.length / DAYS_PER_YEAR) : null;
 }
 
 /** Its life beside the sheet's, at the depth where such a pack stops in that month. */

@@ -134,15 +134,20 @@ describe("calibration", () => {
     Array.from({ length: 400 }, (_, i) => [mean + sd * normalQuantile((i + 0.5) / 400)]);
 
   test("even probabilities leave the windows alone", () => {
-    const { shift, spread } = calibrate(scores(0, 1));
+    const { shift, spread } = calibrate(scores(0, 1), 3);
     expect(shift).toBeCloseTo(0, 2);
     expect(spread).toBeCloseTo(1, 1);
   });
 
   test("ends twice as far out make them twice as wide, up to the stated limits", () => {
-    expect(calibrate(scores(0, 2)).spread).toBeCloseTo(2, 1);
-    expect(calibrate(scores(0, 20)).spread).toBe(3);
-    expect(calibrate(scores(0, 0.1)).spread).toBe(0.6);
+    expect(calibrate(scores(0, 2), 3).spread).toBeCloseTo(2, 1);
+    expect(calibrate(scores(0, 20), 3).spread).toBe(3);
+    expect(calibrate(scores(0, 0.01), 3).spread).toBe(0.6);
+  });
+
+  test("a short life's narrowing is half believed, a long one's wholly, as stated", () => {
+    expect(calibrate(scores(0, 0.5), 1).spread).toBeCloseTo(Math.SQRT1_2, 1);
+    expect(calibrate(scores(0, 0.7), 3).spread).toBeCloseTo(0.7, 1);
   });
 
   test("a wider calibration widens a forecast about its median", () => {

@@ -38,6 +38,8 @@ export const ASSUMED = {
   coldHourSdK: 3,
   /** Internal resistance against the table. */
   resistanceSd: 0.25,
+  /** Where a load that hardly ever pauses ends beside where the curves say. */
+  steadyEndSd: 0.05,
   /** The resistance that decides the end, once learned from where a cohort's packs stopped. */
   taughtEndSd: 0.3,
   /** How unevenly it grows in a year, as a share. */
@@ -48,8 +50,13 @@ export const ASSUMED = {
   accuracyMv: 10,
   /** Temperature of a reading when only the month's mean is known, K. */
   temperatureSdK: 5,
-  /** A Li-SOCl2 pack not loaded on purpose for this long may be passivated, days. */
-  passivationRestDays: 30,
+  /**
+   * A low loaded reading of Li-SOCl2 is the film's with this chance at the most, rested or kept
+   * thin by the device's own pulses, and grows towards it in about so many days (from memory).
+   */
+  filmMost: 0.95,
+  filmMostPulsed: 0.35,
+  filmDays: 60,
   /** Readings above this multiple of the fresh resting voltage are impossible. */
   impossibleShare: 1.25,
   /** No date lies further ahead of `now` or the installation than this, days. */

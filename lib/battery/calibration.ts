@@ -17,6 +17,12 @@ const JUDGED_AT = [0.2, 0.4, 0.6, 0.8] as const;
 const OWN_WEIGHT = 6;
 /** A common shift is half believed: the next packs meet other winters than the last ones did. */
 const SHIFT_SHARE = 0.5;
+/**
+ * How far narrowing is believed, as a power: packs are judged under their cohort's prior, wider
+ * than the one of a device with a history of its own, and short lives with few readings hang on
+ * that. Half up to a year's life, the whole from two years on.
+ */
+const narrowing = (years: number): number => Math.min(1, Math.max(0.5, years / 2));
 /** A perfect forecaster's scores lie within this of 0 four times in five. */
 const Z80 = 1.2815515655446004;
 const LEAST_CHANCE = 0.002;
@@ -44,14 +50,18 @@ export function endScores({ pack, readings, outAt, prior }: JudgedPack): number[
   });
 }
 
-/** Shift and spread of the scores of many packs, drawn towards 0 and 1 where they are few. */
-export function calibrate(scores: readonly (readonly number[])[]): Calibration {
+/**
+ * Shift and spread of the scores of many packs, drawn towards 0 and 1 where they are few;
+ * `years` is their mean life.
+ */
+export function calibrate(scores: readonly (readonly number[])[], years: number): Calibration {
   const packs = scores.filter((s) => s.length > 0);
   const all = packs.flat().sort((a, b) => a - b);
   const own = packs.length / (packs.length + OWN_WEIGHT);
   const shift = SHIFT_SHARE * own * (all[all.length >> 1] ?? 0);
   const away = all.map((z) => Math.abs(z - shift)).sort((a, b) => a - b);
-  const ratio = (away[Math.floor(0.8 * away.length)] ?? Z80) / Z80;
+  const found = (away[Math.floor(0.8 * away.length)] ?? Z80) / Z80;
+  const ratio = found < 1 ? found ** narrowing(years) : found;
   const spread = Math.exp(own * Math.log(Math.max(0.2, ratio)));
   return { shift, spread: Math.min(WIDEST, Math.max(NARROWEST, spread)) };
 }

@@ -7,7 +7,7 @@
 import type { Decicelsius, Microamps, MilliampHours, Millivolts } from "../units";
 import { interpolate } from "../stats/interpolate";
 import { capacityFactor } from "./curves";
-import type { CapacityPoint, CellSpec } from "./pack";
+import type { CapacityPoint, CellSpec, Chemistry } from "./pack";
 import { selfDischargeUa } from "./self-discharge";
 
 /** Every point of the table, the rated one included once. */
@@ -123,6 +123,32 @@ export function grossCapacity(
   temperatureDc: Decicelsius,
 ): MilliampHours {
   return lookUp(cell, tablesOf(cell).gross, currentUa, cutoffMv, temperatureDc);
+}
+
+/**
+ * How far a cell may fall short of its table above the table's highest current: ln(capacity)
+ * lost for each unit of ln(current), and its standard deviation. A prior for readings to move,
+ * not a law. Alkaline: LR6 2.8 Ah at 25 mA, below 1.0 Ah at 1 A (a part of that is the end's
+ * resistance, reckoned apart). Li-FeS2: 0.018 from logs of an FR6. Li-SOCl2: 0.2 to 1.2 above a
+ * D cell's best current (Linden 4e Fig. 14.17). Lead: common practice. The rest from memory.
+ */
+const OVERLOAD: Readonly<Record<Chemistry, readonly [number, number]>> = {
+  alkaline: [0.15, 0.1],
+  "zinc-carbon": [0.25, 0.12],
+  "li-fes2": [0.018, 0.03],
+  "li-socl2": [0.25, 0.15],
+  "li-mno2": [0.05, 0.05],
+  "silver-oxide": [0.08, 0.08],
+  vrla: [0.12, 0.06],
+  lifepo4: [0.02, 0.03],
+};
+
+/** Mean and standard deviation of ln(capacity) beside the table's at a current of one cell. */
+export function overload(cell: CellSpec, currentUa: Microamps): { mean: number; sd: number } {
+  const top = cell.capacityTable.reduce((a, p) => Math.max(a, p.currentUa), cell.rated.currentUa);
+  const beyond = Math.max(0, Math.log(currentUa / top));
+  const [lost, sd] = OVERLOAD[cell.chemistry];
+  return { mean: -lost * beyond, sd: sd * beyond };
 }
 
 /** Lowest cut-off of the table: the one on which depth of discharge is measured, mV. */

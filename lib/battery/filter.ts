@@ -14,6 +14,7 @@ import { type Grid, depthMarginal, newGrid, normalise, retire, weighDepth } from
 import type { ForecastInput, PackEvent, PackReading, ReadingWeight } from "./pack";
 import { type PackModel, leakBetween, packModel } from "./pack-model";
 import { impossibleAboveMv, observe } from "./reading";
+import { filmChance } from "./passivation";
 import { guessRest, learnResistance, loosen } from "./resistance";
 import { type Bounds, aliveBounds, passedOver, timeline } from "./timeline";
 
@@ -54,7 +55,7 @@ export function filterPack(input: ForecastInput): Filtered {
     run.to(Math.min(item.at, last));
     if ("reading" in item) run.read(item.reading);
     else if ("event" in item) run.hear(item.event);
-    else weighDepth(grid, (depth) => aliveChance(model, depth, item.at));
+    else run.live(item.at);
   }
   const stands = run.follow(last);
   normalise(grid);
@@ -104,23 +105,29 @@ class Run {
 
   read(reading: PackReading): void {
     const loaded = reading.kind === "loaded";
-    const rested = this.at - this.lastLoaded > ASSUMED.passivationRestDays;
-    const film = loaded && rested && this.model.pack.cell.chemistry === "li-socl2";
     depthMarginal(this.grid, this.grid.nodeC);
     const guess = loaded ? guessRest(this.model, this.grid, reading) : null;
+    const film = loaded ? filmChance(this.model, this.at - this.lastLoaded) : 0;
     const said = observe(this.model, this.grid, reading, this.resistance, film);
     this.weights.set(reading.id, said);
     if (!guess) return;
     this.lastLoaded = this.at;
-    if (film) return;
+    if (said.reason === "passivation") return;
     this.resistance = learnResistance(this.resistance, guess, reading.millivolts, said.weight);
     this.learned = true;
+  }
+
+  /** It ran on a day: judged by the end as this pack's own resistance sets it. */
+  live(at: EpochDays): void {
+    const end = this.end();
+    weighDepth(this.grid, (depth) => aliveChance(end, depth, at));
   }
 
   hear(event: PackEvent): void {
     const { model, grid } = this;
     if (event.kind === "stopped") {
-      weighDepth(grid, (depth) => 1 - aliveChance(model, depth, event.at));
+      const end = this.end();
+      weighDepth(grid, (depth) => 1 - aliveChance(end, depth, event.at));
     } else if (event.kind === "draw-changed") {
       openRate(
         grid,
@@ -135,16 +142,17 @@ class Run {
     if (!this.learned) return end;
     const { mean, sd } = this.resistance;
     // what this pack shows beside its curve, on what such packs take to stop
+    const first = this.model.resistance.mean;
     return endOfLife(endTerms, {
-      mean: mean * endResistance.mean,
-      sd: Math.min(sd * endResistance.mean, endResistance.sd * Math.max(1, mean)),
+      mean: (mean / first) * endResistance.mean,
+      sd: Math.min((sd / first) * endResistance.mean, endResistance.sd * Math.max(1, mean / first)),
     });
   }
 }
 
 /** Chance that the device runs at a depth in the month of a day. */
-function aliveChance(model: PackModel, depth: number, at: EpochDays): number {
-  return normalCdf((model.end.byMonth[monthOf(at)]! - depth) / model.end.sd);
+function aliveChance(end: EndOfLife, depth: number, at: EpochDays): number {
+  return normalCdf((end.byMonth[monthOf(at)]! - depth) / end.sd);
 }
 
 /** Steps into which a stretch of days is cut. */

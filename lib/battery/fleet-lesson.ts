@@ -41,6 +41,8 @@ export interface FleetMember {
   readonly deviceKey: string;
   readonly cohort: string;
   readonly chemistry: Chemistry;
+  /** When the device or its firmware last changed, if ever: earlier packs told of another draw. */
+  readonly changedAt?: EpochDays | null;
 }
 
 export interface FleetLesson {
@@ -65,7 +67,7 @@ function groupBy<Item, Key>(items: readonly Item[], key: (item: Item) => Key): M
   return groups;
 }
 
-type PriorFor = (member: Pick<FleetMember, "deviceKey" | "cohort">) => FleetPrior | null;
+type PriorFor = (member: Omit<FleetMember, "chemistry">) => FleetPrior | null;
 
 interface Told {
   readonly history: FinishedHistory;
@@ -79,8 +81,20 @@ function prepared(histories: readonly FinishedHistory[]): Told[] {
     .map((history) => ({ history, spent: spent(history.pack, history.outAt) }));
 }
 
-function learnChemistry(histories: readonly FinishedHistory[]): PriorFor {
-  const told = prepared(histories);
+/** What was learned of one chemistry, its windows not yet calibrated. */
+interface Raw {
+  readonly told: readonly Told[];
+  readonly finished: readonly FinishedPack[];
+  /** The life of a cohort, or of the chemistry where its own was not seen. */
+  lifeOf(cohort: string): CohortLife | null;
+  /** Curve and end added to what is known of the life. */
+  withLesson(cohort: string, prior: FleetPrior, curves?: Curves): FleetPrior;
+  endOf(cohort: string): number;
+}
+
+type Curves = ReturnType<typeof learnCurves>;
+
+function learnRaw(told: readonly Told[]): Raw {
   const ranOut = groupBy(
     told.filter(({ history }) => history.ranOut),
     ({ history }) => history.cohort,
@@ -90,52 +104,65 @@ function learnChemistry(histories: readonly FinishedHistory[]): PriorFor {
   );
   const endOf = (cohort: string): number => ends.get(cohort) ?? 1;
   const finished = told.map((one) => finishedPack(one, endOf(one.history.cohort)));
-  const lives = learnCohorts(finished).map((life) => ({
+  const own = learnCohorts(finished).map((life) => ({
     ...life,
     ...meansOf(finished, told, life.cohort),
   }));
-  const pooled = pooledLife(lives);
-  const curves = learnCurves(told, endOf);
-  const lifeOf = new Map(lives.map((life) => [life.cohort, life]));
-  let calibration: Calibration | null = null;
-  const shared = (cohort: string, prior: FleetPrior): FleetPrior => ({
-    ...prior,
-    curve: curves.get(cohort) ?? curves.get(null) ?? null,
-    calibration,
-    endResistance: ends.has(cohort) ? { mean: endOf(cohort), sd: ASSUMED.taughtEndSd } : null,
-  });
-  // each half is judged with the curve that the other half taught: none on its own readings
-  const halves = [0, 1].map((half) =>
-    learnCurves(
-      told.filter((_, i) => i % 2 !== half),
-      endOf,
-    ),
-  );
-  calibration = judge(told, (cohort, i) => {
-    const life = lifeOf.get(cohort) ?? pooled;
-    const curve = halves[i % 2]!.get(cohort) ?? halves[i % 2]!.get(null) ?? null;
-    return life && { ...shared(cohort, cohortPrior(life)), curve };
-  });
+  const pooled = pooledLife(own);
+  const lives = new Map(own.map((life) => [life.cohort, life]));
+  const learned = learnCurves(told, endOf);
+  return {
+    told,
+    finished,
+    endOf,
+    lifeOf: (cohort) => lives.get(cohort) ?? pooled,
+    withLesson: (cohort, prior, curves = learned) => ({
+      ...prior,
+      curve: curves.get(cohort) ?? curves.get(null) ?? null,
+      endResistance: ends.has(cohort) ? { mean: endOf(cohort), sd: ASSUMED.taughtEndSd } : null,
+    }),
+  };
+}
+
+function learnChemistry(histories: readonly FinishedHistory[]): PriorFor {
+  const raw = learnRaw(prepared(histories));
+  const { told, finished, lifeOf, withLesson } = raw;
+  const calibration = judge(raw);
   const known = new Map<string, FleetPrior>();
   const cohortOf = (cohort: string, life: CohortLife): FleetPrior => {
-    const prior = known.get(cohort) ?? shared(cohort, cohortPrior(life));
+    const prior = known.get(cohort) ?? {
+      ...withLesson(cohort, cohortPrior(life)),
+      calibration,
+    };
     known.set(cohort, prior);
     return prior;
   };
   // worked out now, so that no history is held on to
-  const packs = told.map((one, i) => {
-    const life = lifeOf.get(one.history.cohort) ?? pooled;
-    const swapped = life && !one.history.ranOut;
-    return swapped
-      ? promised(one.history, finished[i]!, cohortOf(one.history.cohort, life))
-      : finished[i]!;
+  const packs = told.map(({ history }, i) => {
+    const life = lifeOf(history.cohort);
+    if (!life || history.ranOut) return finished[i]!;
+    return promised(history, finished[i]!, cohortOf(history.cohort, life));
   });
+  const since = new Map(told.map(({ history }) => [history.packKey, history.pack.installedAt]));
   const ofDevice = groupBy(packs, (pack) => `${pack.deviceKey} ${pack.cohort}`);
-  return ({ deviceKey, cohort }) => {
-    const life = lifeOf.get(cohort) ?? pooled;
+  return ({ deviceKey, cohort, changedAt = null }) => {
+    const life = lifeOf(cohort);
     if (!life) return null;
-    const own = ofDevice.get(`${deviceKey} ${cohort}`);
-    return own ? shared(cohort, devicePrior(life, own)) : cohortOf(cohort, life);
+    const own = ofDevice
+      .get(`${deviceKey} ${cohort}`)
+      ?.filter(({ packKey }) => changedAt === null || since.get(packKey)! >= changedAt);
+    const base = cohortOf(cohort, life);
+    if (own && own.length > 0) return { ...base, ...devicePrior(life, own) };
+    return changedAt === null ? base : opened(base);
+  };
+}
+
+/** A changed device draws as such devices do, give or take what a change may do. */
+function opened(prior: FleetPrior): FleetPrior {
+  const { mean, relativeSd } = prior.drawFactor;
+  return {
+    ...prior,
+    drawFactor: { mean, relativeSd: Math.hypot(relativeSd, ASSUMED.changedDrawSd) },
   };
 }
 
@@ -153,17 +180,25 @@ function meansOf(finished: readonly FinishedPack[], told: readonly Told[], cohor
   return { years: days / packs / DAYS_PER_YEAR, endVariance: variance / packs };
 }
 
-/** Forecasts of packs that ran out, held against their ends. */
-function judge(
-  told: readonly Told[],
-  priorOf: (cohort: string, index: number) => FleetPrior | null,
-): Calibration | null {
+/**
+ * Forecasts of packs that ran out, held against their ends. Each half is judged with the curve
+ * that the other half taught: none on its own readings.
+ */
+function judge({ told, lifeOf, endOf, withLesson }: Raw): Calibration | null {
+  const halves = [0, 1].map((half) =>
+    learnCurves(
+      told.filter((_, i) => i % 2 !== half),
+      endOf,
+    ),
+  );
   const scores = told.flatMap(({ history }, i) => {
-    if (!history.ranOut || i < told.length - MOST_JUDGED) return [];
-    const prior = priorOf(history.cohort, i);
-    return prior ? [endScores({ ...history, prior })] : [];
+    const life = lifeOf(history.cohort);
+    if (!life || !history.ranOut || i < told.length - MOST_JUDGED) return [];
+    const prior = withLesson(history.cohort, cohortPrior(life), halves[i % 2]);
+    return [endScores({ ...history, prior })];
   });
-  return scores.length > 0 ? calibrate(scores) : null;
+  const days = told.reduce((s, { history }) => s + history.outAt - history.pack.installedAt, 0);
+  return scores.length > 0 ? calibrate(scores, days / told.length / DAYS_PER_YEAR) : null;
 }
 
 /** Its life beside the sheet's, at the depth where such a pack stops in that month. */

@@ -103,8 +103,8 @@ export function pooledLife(lives: readonly CohortLife[]): CohortLife | null {
 /** Variance of ln(life) by device, and by pack within a device. */
 function parts({ spread, se, years, endVariance }: CohortLife): { device: number; pack: number } {
   const whole = spread ** 2 + se ** 2;
-  // a short life does not average the seasons out: a sine's mean over T years
-  const seasons = (2 * ASSUMED.seasonalDrawSd) / (Math.PI * Math.max(years ?? 3, 0.5));
+  // a short life does not average the seasons out, in its draw or in what the cold leaves of it
+  const seasons = (4 * ASSUMED.seasonalDrawSd) / (Math.PI * Math.max(years ?? 3, 0.5));
   const pack = Math.min(ASSUMED.packLifeSd ** 2 + seasons ** 2, whole / 2);
   return { device: Math.max(whole - pack - (endVariance ?? 0), LEAST_DEVICE * whole), pack };
 }

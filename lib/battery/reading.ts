@@ -111,14 +111,16 @@ export function observe(
   grid: Grid,
   reading: PackReading,
   resistance: ResistanceBelief,
-  passivated: boolean,
+  filmChance: number,
 ): ReadingWeight {
   expectAt(model, grid, reading, resistance);
   const [low, middle, high] = expectedBand(grid);
-  // the film's transient minimum says nothing about charge; a higher voltage would
-  const dip = passivated && reading.millivolts < middle;
-  const weight = dip ? 0 : multiply(grid, reading.millivolts, impossibleAboveMv(model));
-  const reason = dip ? "passivation" : weight >= 0.5 ? "fits" : "doubtful";
+  // the film only ever lowers a voltage: a higher one is the cell's own
+  const dip = reading.millivolts < middle ? filmChance : 0;
+  const slip = Math.max(ASSUMED.outlierShare, dip);
+  const weight = multiply(grid, reading.millivolts, impossibleAboveMv(model), slip);
+  const doubted = dip > ASSUMED.outlierShare ? "passivation" : "doubtful";
+  const reason = weight >= 0.5 ? "fits" : doubted;
   return {
     readingId: reading.id,
     weight,
@@ -130,10 +132,10 @@ export function observe(
 }
 
 /** Multiply by the mixture likelihood; returns the weight of its first term. */
-function multiply(grid: Grid, millivolts: number, rangeMv: number): number {
+function multiply(grid: Grid, millivolts: number, rangeMv: number, slip: number): number {
   const { p, nx, nr, no, nodeA: mean, nodeB: variance, nodeC: fit, rowMass } = grid;
-  const outlier = ASSUMED.outlierShare / rangeMv;
-  const share = (1 - ASSUMED.outlierShare) / Math.sqrt(2 * Math.PI);
+  const outlier = slip / rangeMv;
+  const share = (1 - slip) / Math.sqrt(2 * Math.PI);
   let fitting = 0;
   let total = 0;
   for (let o = 0; o < no; o++) {

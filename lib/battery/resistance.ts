@@ -13,9 +13,9 @@ import type { Grid } from "./grid";
 import type { PackReading } from "./pack";
 import { type PackModel, resistanceAge } from "./pack-model";
 
-/** The factor never leaves this range: a pack is not a tenth of its sheet, nor ten times. */
+/** The factor never leaves this range; only a steady load comes near its top. */
 const LOWEST = 0.2;
-const HIGHEST = 8;
+const HIGHEST = 60;
 const REACH = 5 / CURVE_STEPS;
 
 /** Let days pass: the belief loosens, up to what it was at first. */

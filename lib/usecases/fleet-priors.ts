@@ -1,6 +1,7 @@
 import type { Kysely } from "kysely";
 import type { Database } from "@/db/client";
 import {
+  type DeviceEventRow,
   loadPacksToForecast,
   loadReadingsToForecast,
   type PackToForecast,
@@ -16,6 +17,10 @@ interface Member {
   readonly deviceModelId: string;
   readonly cellTypeId: string;
   readonly climateId: string | null;
+}
+
+interface Forecastable extends Member {
+  readonly installedAt: Date;
 }
 
 /** Enough to know a model's packs by; older ones tell of older cells. */
@@ -43,8 +48,8 @@ function cohortOf(member: Member): string {
 export async function fleetPriors(
   db: Kysely<Database>,
   catalogue: ForecastCatalogue,
-  packs: readonly Member[],
-): Promise<(pack: Member) => FleetPrior | null> {
+  packs: readonly Forecastable[],
+): Promise<(pack: Forecastable, events: readonly DeviceEventRow[]) => FleetPrior | null> {
   const chemistryOf = (pack: Member) => catalogue.cells.get(pack.cellTypeId)?.chemistry;
   const wanted = new Set(packs.map(chemistryOf));
   const known = LEARNED.get(db) ?? new Map<string, Learned>();
@@ -55,12 +60,22 @@ export async function fleetPriors(
     const lesson = learnFleet(await loadHistories(db, catalogue, chemistry));
     known.set(chemistry, { version, lesson });
   }
-  return (pack) => {
+  return (pack, events) => {
     const chemistry = chemistryOf(pack);
     if (!chemistry) return null;
-    const member = { deviceKey: pack.assetId, cohort: cohortOf(pack), chemistry };
+    const changedAt = changedBefore(pack, events);
+    const member = { deviceKey: pack.assetId, cohort: cohortOf(pack), chemistry, changedAt };
     return known.get(chemistry)?.lesson.priorFor(member) ?? null;
   };
+}
+
+/** The last change of the device before this pack went in; later ones are the filter's to hear. */
+function changedBefore(pack: Forecastable, events: readonly DeviceEventRow[]): number | null {
+  const changes = events.filter(
+    ({ kind, at }) =>
+      (kind === "firmware_changed" || kind === "device_replaced") && at <= pack.installedAt,
+  );
+  return changes.length > 0 ? Math.max(...changes.map(({ at }) => toEpochDays(at))) : null;
 }
 
 async function loadHistories(

@@ -82,7 +82,7 @@ async function refreshBatch(
         pack,
         readingsOf.get(pack.packId) ?? [],
         eventsOf.get(pack.assetId) ?? [],
-        priorOf(pack),
+        priorOf(pack, eventsOf.get(pack.assetId) ?? []),
         knownAt,
       ),
     );

@@ -121,8 +121,19 @@ export class ForecastDesk {
       this.learnedAt = now;
     }
     const { chemistry } = catalogueCell(pack.designation);
-    return this.lesson.priorFor({ deviceKey: pack.tag, cohort: cohortOf(pack), chemistry });
+    const changedAt = changedBefore(this.field, pack);
+    return this.lesson.priorFor({
+      deviceKey: pack.tag,
+      cohort: cohortOf(pack),
+      chemistry,
+      changedAt,
+    });
   }
+}
+
+/** When the device last changed before this pack went in. */
+function changedBefore({ drawChanges }: BenchField, pack: BenchPack): number | null {
+  return drawChanges.get(pack.tag)?.findLast((at) => at < pack.installedAt) ?? null;
 }
 
 /** The latest finished packs of each device model: as many as the product learns from. */

@@ -29,6 +29,7 @@ import {
   costOfFailure,
   keepCostPerDay,
   priceVisit,
+  sufferedSoFar,
   waitingCostPerWeek,
   type SilencePrices,
   type VisitPrice,
@@ -51,6 +52,8 @@ export interface PackOutlook {
   readonly gainMinor: Minor;
   readonly standing: Standing;
   readonly waitingMinorPerWeek: Minor;
+  /** Silence that a device known to be out has cost already; 0 for any other. */
+  readonly sufferedMinor: Minor;
 }
 
 /** What outlooks of one plan share. */
@@ -188,5 +191,6 @@ export function outlookOf(
     gainMinor,
     standing: standingOf(gainMinor, trip.shareMinor, day, context),
     waitingMinorPerWeek: waitingCostPerWeek(waiting, context.now, context.moments.at(-1)!),
+    sufferedMinor: sufferedSoFar(waiting, context.now),
   };
 }

@@ -123,6 +123,12 @@ export function waitingCostPerWeek(pack: WaitingPack, now: EpochDays, at: EpochD
   return Math.max(0, change);
 }
 
+/** What the silence of a device that is out for certain has cost until now; 0 for any other. */
+export function sufferedSoFar(pack: WaitingPack, now: EpochDays): Minor {
+  if (countUpTo(pack.life, now) < pack.life.length) return 0;
+  return (now - meanLife(pack.life)) * 24 * pack.silenceMinorPerHour;
+}
+
 /** The cheapest of several moments, and its price. @throws RangeError when none is given */
 export function cheapestVisit(
   pack: WaitingPack,

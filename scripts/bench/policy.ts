@@ -54,11 +54,12 @@ function policies(): (() => Policy)[] {
   const lives = starts.flatMap(trainingLives);
   const intervals = tunedInterval(starts, lives);
   const inspections = tunedInspection(starts, lives);
-  say(`fixed intervals, days: ${[...intervals.days].map(([m, d]) => `${m} ${Math.round(d)}`)}`);
+  const ages = [...intervals.days].map(([m, d]) => `${m} ${Math.round(d)}`);
+  say(`fixed intervals, days: ${ages}; along within ${intervals.alongDays} days`);
   const rules = [...inspections.byModel].map(
     ([m, r]) => `${m} ${Math.round(r.everyDays)}/${r.belowMv}`,
   );
-  say(`inspections, days/mV: ${rules}`);
+  say(`inspections, days/mV: ${rules}; along within ${inspections.alongDays} days`);
   return [
     () => fixedInterval(intervals),
     () => inspectionThreshold(inspections),

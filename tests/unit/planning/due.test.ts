@@ -1,6 +1,10 @@
 import { describe, expect, it } from "vitest";
-import { preparePlan } from "@/lib/planning/plan";
-import { evenLife, MONDAY, pack, planInput, site } from "./district";
+import { makePlan, preparePlan } from "@/lib/planning/plan";
+import { placesOf } from "@/lib/planning/problem";
+import { greatCircleTable } from "@/lib/planning/travel";
+import { seededRng } from "@/lib/routing/rng";
+import { afterIterations } from "@/lib/routing/solve";
+import { evenLife, MONDAY, pack, planInput, ROAD, site } from "./district";
 
 /** One site: a pack that is due, and one with a wide window that is not. */
 function tasksWhenReadingTakes(readS: number, silenceMinorPerHour = 60) {
@@ -28,5 +32,30 @@ describe("voltages taken on the way", () => {
 
   it("are left alone where a failure costs nothing", () => {
     expect(tasksWhenReadingTakes(120, 0)).toEqual(["swap asset-0"]);
+  });
+});
+
+describe("a lonely device of low criticality that is out", () => {
+  // Ski rental (Karlin, Manasse, Rudolph & Sleator 1988, from memory): go once what waiting has
+  // cost comes to what going costs; then no more than twice the best is ever paid.
+  function swapsWhenOutFor(days: number): number {
+    const far = { latitude: 53.2, longitude: 1.3 };
+    const life = evenLife(MONDAY, -7 - days, -6.9 - days);
+    const input = planInput({
+      sites: [site(0, far)],
+      packs: [pack(0, "site-0", { life, silenceMinorPerHour: 10 })],
+    });
+    const prepared = preparePlan(input);
+    const travel = greatCircleTable(placesOf(input.technicians, prepared.visits), ROAD);
+    const search = { stop: afterIterations(320), rng: seededRng(1) };
+    return makePlan(prepared, travel, search).figures.swaps;
+  }
+
+  it("waits for company at first", () => {
+    expect(swapsWhenOutFor(1)).toBe(0);
+  });
+
+  it("is not put off week after week", () => {
+    expect(swapsWhenOutFor(200)).toBe(1);
   });
 });

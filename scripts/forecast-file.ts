@@ -5,14 +5,34 @@
  */
 import { parse } from "csv-parse/sync";
 import { z } from "zod";
-import { CHEMISTRIES, type ForecastInput } from "../lib/battery/pack";
+import { packPeakUa } from "../lib/battery";
+import {
+  CHEMISTRIES,
+  type ForecastInput,
+  type PackEvent,
+  type PackReading,
+} from "../lib/battery/pack";
 import { type Fault, invalid } from "../lib/errors";
 import { MS_PER_DAY } from "../lib/units";
 
+/** A date, a time of day and a zone, of which the later two may be missing; no zone means UTC. */
+const WHEN =
+  /^(\d{4}-\d{2}-\d{2})(?:[T ](\d{1,2}:\d{2}(?::\d{2}(?:\.\d+)?)?))?\s*(Z|[+-]\d{2}:?\d{2})?$/i;
+
+function epochMs(text: string): number {
+  const [, date, time = "00:00", zone = "Z"] = WHEN.exec(text.trim()) ?? [];
+  if (!date) return Number.NaN;
+  const ms = Date.parse(
+    `${date}T${time.padStart(time.indexOf(":") === 1 ? time.length + 1 : 0, "0")}${zone.toUpperCase()}`,
+  );
+  // 30 February would otherwise become 2 March
+  return new Date(Date.parse(date)).toISOString().startsWith(date) ? ms : Number.NaN;
+}
+
 const day = z.string().transform((text, context) => {
-  const ms = /^\d{4}-\d{2}-\d{2}/.test(text) ? Date.parse(text) : Number.NaN;
+  const ms = epochMs(text);
   if (Number.isNaN(ms)) {
-    context.addIssue("Give a date as 2026-03-31 or 2026-03-31T09:30Z.");
+    context.addIssue("Give a date as 2026-03-31, 2026-03-31 09:30 or 2026-03-31T09:30+02:00.");
     return z.NEVER;
   }
   return ms / MS_PER_DAY;
@@ -81,15 +101,45 @@ export function readForecastFile(text: string, name: string): ForecastInput {
   const parsed = file.safeParse(raw);
   if (!parsed.success) throw invalid(`${name} cannot be used.`, parsed.error.issues.map(toFault));
   const { readings, events, now, ...rest } = parsed.data;
-  const dated = readings.map(({ id, ...r }) => ({
-    id: id ?? new Date(r.at * MS_PER_DAY).toISOString().slice(0, 10),
-    ...r,
-  }));
+  const dated = named(readings);
   const last = [...dated, ...events].reduce((at, r) => Math.max(at, r.at), rest.pack.installedAt);
   const known = events.map(({ lastAliveAt, ...e }) =>
     lastAliveAt === undefined ? e : { ...e, lastAliveAt },
   );
-  return { ...rest, readings: dated, events: known, prior: null, now: now ?? last };
+  const input = { ...rest, readings: dated, events: known, prior: null, now: now ?? last };
+  return { ...input, events: [...known, ...heldUp(input)] };
+}
+
+/** Readings without an id are called by their time, told apart where two share it. */
+function named(readings: readonly (Omit<PackReading, "id"> & { id?: string | undefined })[]) {
+  const taken = new Map<string, number>();
+  return readings.map(({ id, ...reading }): PackReading => {
+    const time = timeText(reading.at, reading.at % 1 !== 0);
+    const count = (taken.get(time) ?? 0) + 1;
+    taken.set(time, count);
+    return { id: id ?? (count > 1 ? `${time} (${count})` : time), ...reading };
+  });
+}
+
+/** A day since the epoch as text, UTC, with the time of day where it matters. */
+export function timeText(epochDays: number, withTime: boolean): string {
+  const text = new Date(Math.round(epochDays * MS_PER_DAY)).toISOString();
+  return withTime ? text.slice(0, 16).replace("T", " ") : text.slice(0, 10);
+}
+
+/** A voltage above the cut-off under the device's own peak: it ran at that moment. */
+function heldUp({ pack, readings, now }: ForecastInput): PackEvent[] {
+  const peak = packPeakUa(pack);
+  const held = readings.filter(
+    (r) =>
+      r.kind === "loaded" &&
+      r.millivolts > pack.cutoffMv &&
+      (r.loadUa ?? peak) >= peak &&
+      r.at >= pack.installedAt &&
+      r.at <= now,
+  );
+  const last = held.reduce((at, r) => Math.max(at, r.at), -Infinity);
+  return held.length > 0 ? [{ at: last, kind: "reporting" }] : [];
 }
 
 function toFault(issue: z.core.$ZodIssue): Fault {
@@ -130,6 +180,8 @@ function packFromLines(lines: ReadonlyMap<string, string>): unknown {
       resistanceMohm: number("resistanceMohm"),
     },
     series: number("series"),
+    monthlyMeanDc: yearOf(number("temperatureDc")),
+    madeAt: lines.get("madeAt") || undefined,
     parallel: number("parallel"),
     cutoffMv: number("cutoffMv"),
     // a pulse too short to change the average
@@ -141,16 +193,51 @@ function packFromLines(lines: ReadonlyMap<string, string>): unknown {
   };
 }
 
+/** One temperature all the year; left out, the file's default holds. */
+const yearOf = (dc: number | undefined): number[] | undefined =>
+  dc === undefined ? undefined : Array.from({ length: 12 }, () => dc);
+
+/** Columns by the names they should have, whatever their case; those of other names are kept. */
+const COLUMNS = [
+  "at",
+  "millivolts",
+  "kind",
+  "loadUa",
+  "temperatureDc",
+  "accuracyMv",
+  "id",
+] as const;
+
+const column = (text: string): string =>
+  COLUMNS.find((name) => name.toLowerCase() === text.toLowerCase()) ?? text;
+
+/** Rows of a CSV parted by commas, semicolons or tabs, whichever its table's header has most of. */
+function parseRows(text: string): string[][] {
+  const line = text.split(/\r?\n/).find((one) => /\bmillivolts\b/i.test(one)) ?? "";
+  const count = (mark: string): number => line.split(mark).length;
+  const delimiter = [",", ";", "\t"].reduce((a, b) => (count(b) > count(a) ? b : a));
+  try {
+    return parse(text, { bom: true, delimiter, relax_column_count: true, trim: true });
+  } catch (error) {
+    const why = error instanceof Error ? error.message : String(error);
+    throw invalid("The file is not CSV.", [{ field: "file", message: why }]);
+  }
+}
+
 function fromCsv(text: string): unknown {
-  const rows: string[][] = parse(text, { bom: true, relax_column_count: true, trim: true });
-  const start = rows.findIndex((row) => row[0] === "at");
-  if (start < 0) {
+  const rows = parseRows(text);
+  const start = rows.findIndex((row) => row.some((cell) => column(cell) === "at"));
+  const header = (rows[start] ?? []).map(column);
+  for (const needed of ["at", "millivolts"]) {
+    if (header.includes(needed)) continue;
     throw invalid("The file holds no readings.", [
-      { field: "at", message: "Begin the table of readings with a header: at,millivolts,kind,..." },
+      {
+        field: needed,
+        message: "Begin the table of readings with a header: at,millivolts,kind,...",
+      },
     ]);
   }
   const lines = new Map(rows.slice(0, start).map((row) => [row[0] ?? "", row[1] ?? ""]));
-  const header = rows[start] ?? [];
   const text_ = new Set(["at", "kind", "id"]);
   const readings = rows.slice(start + 1).map((row) =>
     Object.fromEntries(

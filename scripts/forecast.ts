@@ -7,17 +7,17 @@
 import { readFileSync } from "node:fs";
 import { coldSnap, type Forecast, forecastPack } from "../lib/battery";
 import { isAppError } from "../lib/errors";
-import { MS_PER_DAY } from "../lib/units";
-import { readForecastFile } from "./forecast-file";
+import { readForecastFile, timeText } from "./forecast-file";
 
-const day = (epochDays: number): string =>
-  new Date(Math.round(epochDays * MS_PER_DAY)).toISOString().slice(0, 10);
+/** Windows narrower than this are told with the time of day. */
+const SHORT_DAYS = 7;
 
 const percent = (share: number): string => `${Math.round(share * 100)} %`;
 
 function print(forecast: Forecast, cold: ReturnType<typeof coldSnap>): void {
   const { quantiles, shareLeft, drawUa, outNow, basis, weights } = forecast;
   const { p05, p20, p50, p80, p95 } = quantiles;
+  const day = (at: number): string => timeText(at, p95 - p05 < SHORT_DAYS);
   console.log(`Out, likely      ${day(p50)}`);
   console.log(`  3 in 5         ${day(p20)} to ${day(p80)}`);
   console.log(`  9 in 10        ${day(p05)} to ${day(p95)}`);

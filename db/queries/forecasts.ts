@@ -15,16 +15,33 @@ export async function markForecastsStale(
     .execute();
 }
 
-/** Packs in service of these assets (all when null). */
+/** Packs in service of these assets. */
 export async function installedPackIds(
   db: Kysely<Database>,
-  assetIds: readonly string[] | null,
+  assetIds: readonly string[],
 ): Promise<string[]> {
   const rows = await db
     .selectFrom("pack")
     .select("id")
     .where("removedAt", "is", null)
-    .$if(assetIds !== null, (query) => query.where("assetId", "in", assetIds ?? []))
+    .where("assetId", "in", assetIds)
+    .execute();
+  return rows.map((row) => row.id);
+}
+
+/** The next packs in service by id, after one (from the first when null). */
+export async function installedPackPage(
+  db: Kysely<Database>,
+  after: string | null,
+  count: number,
+): Promise<string[]> {
+  const rows = await db
+    .selectFrom("pack")
+    .select("id")
+    .where("removedAt", "is", null)
+    .$if(after !== null, (query) => query.where("id", ">", after ?? ""))
+    .orderBy("id")
+    .limit(count)
     .execute();
   return rows.map((row) => row.id);
 }

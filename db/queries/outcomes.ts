@@ -36,32 +36,45 @@ export async function insertOutcomes(
     .execute();
 }
 
-/** Finished packs of these device models, as the fleet learns from them. */
-export async function listFinishedPacks(db: Kysely<Database>, deviceModelIds: readonly string[]) {
-  if (deviceModelIds.length === 0) return [];
+/** How much there is to learn of each chemistry: changes when a pack comes out. */
+export async function finishedByChemistry(db: Kysely<Database>) {
   return db
     .selectFrom("forecastOutcome as outcome")
     .innerJoin("pack", "pack.id", "outcome.packId")
-    .innerJoin("asset", "asset.id", "pack.assetId")
-    .innerJoin("site", "site.id", "asset.siteId")
+    .innerJoin("cellType", "cellType.id", "pack.cellTypeId")
     .select([
-      "pack.id as packId",
-      "pack.assetId",
-      "pack.cellTypeId",
-      "pack.lotId",
-      "asset.deviceModelId",
-      "site.climateId",
-      "outcome.censored",
-      "outcome.promisedDays",
-      sql<number>`extract(epoch from outcome.ended_at - pack.installed_at)::float8 / 86400`.as(
-        "days",
-      ),
+      "cellType.chemistry",
+      sql<string>`count(*) || ' ' || max(outcome.recorded_at)`.as("version"),
     ])
-    .where("asset.deviceModelId", "in", deviceModelIds)
-    .where("outcome.promisedDays", "is not", null)
+    .groupBy("cellType.chemistry")
     .execute();
 }
-export type FinishedRow = Awaited<ReturnType<typeof listFinishedPacks>>[number];
+
+/** The latest finished packs on cells of a chemistry, at most so many of a device model. */
+export async function listFinishedPacks(
+  db: Kysely<Database>,
+  chemistry: string,
+  ofEachModel: number,
+) {
+  return db
+    .with("latest", (eb) =>
+      eb
+        .selectFrom("forecastOutcome as outcome")
+        .innerJoin("pack", "pack.id", "outcome.packId")
+        .innerJoin("asset", "asset.id", "pack.assetId")
+        .innerJoin("cellType", "cellType.id", "pack.cellTypeId")
+        .select(["pack.id as packId", "pack.lotId", "outcome.censored", "outcome.endedAt"])
+        .select(
+          sql<number>`row_number() over (partition by asset.device_model_id
+            order by outcome.ended_at desc, pack.id)`.as("place"),
+        )
+        .where("cellType.chemistry", "=", chemistry),
+    )
+    .selectFrom("latest")
+    .select(["packId", "lotId", "censored", "endedAt"])
+    .where("place", "<=", ofEachModel)
+    .execute();
+}
 
 export interface OutcomeFilter {
   /** Removals since then. */

@@ -6,7 +6,7 @@ import { type Grid, WINDOW } from "./grid";
 
 const MIN_SPREAD = 0.004;
 /** Rows that hold less than this share of the mass are left out. */
-const NEGLIGIBLE = 1e-10;
+const NEGLIGIBLE = 1e-6;
 /** A new window this much finer than the old one is filled by reading between the nodes. */
 const REFINED = 1.05;
 
@@ -20,8 +20,9 @@ interface Window {
 /**
  * Let a stretch of time consume: `draw` is the share drawn at rate 1, `leak` the exponent of
  * self-discharge, which takes its share of what is left: x -> 1 - (1 - x) e^-leak + draw x
- * rate (1 - e^-leak)/leak. Brings the mass to a sum of 1. Each rate row shifts as one; its
- * mass is split between the two nearest nodes of the new window, which keeps total and mean.
+ * rate (1 - e^-leak)/leak. Needs the rows' moments as `drift` leaves them; brings the mass to
+ * a sum of 1. Each rate row shifts as one; its mass is split between the two nearest nodes of
+ * the new window, which keeps total and mean.
  */
 export function consume(grid: Grid, draw: number, leak: number): void {
   const kept = Math.exp(-leak);
@@ -51,28 +52,19 @@ function shiftRows(grid: Grid, draw: number): void {
   grid.depthStep = window.step;
 }
 
-/** Mean +/- WINDOW spreads of the moved mass; leaves each row's mass in `rowMass`. */
+/** Mean +/- WINDOW spreads of the moved mass. */
 function movedWindow(grid: Grid, draw: number): Window {
-  const { p, nx, nr, rowMass } = grid;
+  const { nx, nr, rowMass, rowFirst, rowSecond, depthStep } = grid;
   let total = 0;
   let first = 0;
   let second = 0;
-  for (let row = 0, k = 0; row < rowMass.length; row++) {
-    let mass = 0;
-    let sum = 0;
-    let squares = 0;
-    for (let i = 0; i < nx; i++, k++) {
-      const m = p[k]!;
-      mass += m;
-      sum += m * i;
-      squares += m * i * i;
-    }
-    rowMass[row] = mass;
+  for (let row = 0; row < rowMass.length; row++) {
+    const mass = rowMass[row]!;
     const from = draw * grid.rate[row % nr]!;
-    const moved = sum * grid.depthStep;
+    const moved = rowFirst[row]! * depthStep;
     total += mass;
     first += mass * from + moved;
-    second += mass * from * from + 2 * from * moved + squares * grid.depthStep * grid.depthStep;
+    second += mass * from * from + 2 * from * moved + rowSecond[row]! * depthStep * depthStep;
   }
   const mean = first / total;
   const sd = Math.max(MIN_SPREAD, Math.sqrt(Math.max(0, second / total - mean * mean)));

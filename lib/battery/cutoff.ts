@@ -5,8 +5,9 @@
  */
 import type { Decicelsius, Microamps, Millivolts } from "../units";
 import { CURVE_STEPS, atDepth, elementsOf, resistanceFactor, sampledCurves } from "./curves";
+import { taughtCurves } from "./taught-curves";
 import { CURVES } from "./curve-tables";
-import type { PackSpec } from "./pack";
+import type { CurveLesson, PackSpec } from "./pack";
 
 /** Voltage of a whole pack: k rest(x) + drift(T) - I R(x) factor(T). */
 export interface PackCurve {
@@ -19,10 +20,10 @@ export interface PackCurve {
   readonly freshMohm: number;
 }
 
-export function packCurve(pack: PackSpec): PackCurve {
+export function packCurve(pack: PackSpec, lesson: CurveLesson | null = null): PackCurve {
   const restScale = pack.series * elementsOf(pack.cell);
   return {
-    ...sampledCurves(pack.cell.chemistry),
+    ...(lesson ? taughtCurves(pack.cell.chemistry, lesson) : sampledCurves(pack.cell.chemistry)),
     restScale,
     driftMvPerKelvin: restScale * CURVES[pack.cell.chemistry].restMvPerKelvin,
     freshMohm: (pack.cell.resistanceMohm * pack.series) / pack.parallel,
@@ -64,15 +65,23 @@ export function endDepth(
   driftMv: Millivolts,
   dropMv: Millivolts,
 ): number {
-  const { restMv, resistance, restScale } = curve;
-  let before = restScale * restMv[0]! + driftMv - dropMv * resistance[0]! - cutoffMv;
-  if (!(before > 0)) return 0;
-  for (let i = 1; i <= CURVE_STEPS; i++) {
-    const after = restScale * restMv[i]! + driftMv - dropMv * resistance[i]! - cutoffMv;
-    if (after <= 0) return (i - 1 + before / (before - after)) / CURVE_STEPS;
-    before = after;
+  if (!(aboveAt(curve, 0, driftMv - cutoffMv, dropMv) > 0)) return 0;
+  if (aboveAt(curve, CURVE_STEPS, driftMv - cutoffMv, dropMv) > 0) return 1;
+  // the voltage falls throughout: halve the span that holds the crossing
+  let low = 0;
+  let high = CURVE_STEPS;
+  while (high - low > 1) {
+    const middle = (low + high) >> 1;
+    if (aboveAt(curve, middle, driftMv - cutoffMv, dropMv) > 0) low = middle;
+    else high = middle;
   }
-  return 1;
+  const before = aboveAt(curve, low, driftMv - cutoffMv, dropMv);
+  return (low + before / (before - aboveAt(curve, high, driftMv - cutoffMv, dropMv))) / CURVE_STEPS;
+}
+
+/** Voltage at a node of the table, `addMv` added, mV. */
+function aboveAt(curve: PackCurve, i: number, addMv: number, dropMv: number): number {
+  return curve.restScale * curve.restMv[i]! + addMv - dropMv * curve.resistance[i]!;
 }
 
 /** End depth of a pack under a current at a temperature. */

@@ -26,6 +26,8 @@ export interface EndTerms {
   readonly peakUa: Microamps;
   /** Depth beyond which the capacity table does not reach at this cut-off. */
   readonly cap: number;
+  /** The load hardly ever pauses: the curves, taken from pulses and rest, tell its end less well. */
+  readonly steady: boolean;
   /** Resistance at the end of life relative to new. */
   readonly aged: number;
 }
@@ -45,10 +47,19 @@ export function endOfLife(terms: EndTerms, resistance: ResistanceBelief): EndOfL
   const weakest =
     1 - (ASSUMED.weakestCellShare * weakestOf(pack.series)) / Math.sqrt(pack.parallel);
   const byMonth = Float64Array.from({ length: 12 }, (_, m) => {
-    const dc = (pack.monthlyMeanDc[m] ?? 200) - 10 * ASSUMED.coldHourK;
+    const dc = (pack.monthlyMeanDc[m] ?? 200) - coldHourDc(pack);
     return weakest * Math.min(terms.cap, depthAt(terms, dc, resistance.mean));
   });
   return { byMonth, warm: Math.max(TINY, ...byMonth), sd: spread(terms, resistance) };
+}
+
+/**
+ * How far the coldest hour lies below the month's mean, tenths of a degree: nothing where the
+ * year has no seasons (indoors, a laboratory), the whole from 10 K between months on.
+ */
+function coldHourDc({ monthlyMeanDc }: PackSpec): number {
+  const swing = Math.max(...monthlyMeanDc) - Math.min(...monthlyMeanDc);
+  return 10 * ASSUMED.coldHourK * Math.min(1, swing / 100);
 }
 
 function depthAt({ pack, curve, peakUa, aged }: EndTerms, dc: number, resistance: number): number {
@@ -58,12 +69,14 @@ function depthAt({ pack, curve, peakUa, aged }: EndTerms, dc: number, resistance
 
 /** How far the end moves by one spread of the resistance, and by a colder or milder night. */
 function spread(terms: EndTerms, { mean, sd }: ResistanceBelief): number {
-  const coldest = Math.min(...terms.pack.monthlyMeanDc) - 10 * ASSUMED.coldHourK;
-  const swing = 10 * ASSUMED.coldHourSdK;
+  const below = coldHourDc(terms.pack);
+  const coldest = Math.min(...terms.pack.monthlyMeanDc) - below;
+  const swing = (below / ASSUMED.coldHourK) * ASSUMED.coldHourSdK;
   const low = Math.max(0, mean - sd);
   const byResistance = depthAt(terms, coldest, low) - depthAt(terms, coldest, mean + sd);
   const byCold = depthAt(terms, coldest + swing, mean) - depthAt(terms, coldest - swing, mean);
-  const own = CURVES[terms.pack.cell.chemistry].endDepthSd;
+  const table = CURVES[terms.pack.cell.chemistry].endDepthSd;
+  const own = terms.steady ? Math.hypot(table, ASSUMED.steadyEndSd) : table;
   return Math.hypot(own, byResistance / 2, byCold / 2);
 }
 

@@ -8,13 +8,14 @@ import type { EpochDays } from "../units";
 import { ASSUMED } from "./assumptions";
 import { DAYS_PER_YEAR, monthOf } from "./climate";
 import { consume } from "./consume";
-import { openRate, redrawOffset, wander } from "./draw-walk";
+import { drift, openRate } from "./draw-walk";
 import { type EndOfLife, type ResistanceBelief, endOfLife } from "./end-of-life";
-import { type Grid, newGrid, normalise, weighDepth } from "./grid";
+import { type Grid, depthMarginal, newGrid, normalise, retire, weighDepth } from "./grid";
 import type { ForecastInput, PackEvent, PackReading, ReadingWeight } from "./pack";
 import { type PackModel, leakBetween, packModel } from "./pack-model";
 import { impossibleAboveMv, observe } from "./reading";
-import { SHEET_RESISTANCE, guessRest, learnResistance, loosen } from "./resistance";
+import { filmChance } from "./passivation";
+import { guessRest, learnResistance, loosen } from "./resistance";
 import { type Bounds, aliveBounds, passedOver, timeline } from "./timeline";
 
 const LONGEST_STEP_DAYS = 120;
@@ -54,10 +55,11 @@ export function filterPack(input: ForecastInput): Filtered {
     run.to(Math.min(item.at, last));
     if ("reading" in item) run.read(item.reading);
     else if ("event" in item) run.hear(item.event);
-    else weighDepth(grid, (depth) => aliveChance(model, depth, item.at));
+    else run.live(item.at);
   }
   const stands = run.follow(last);
   normalise(grid);
+  retire(grid);
   const weights = input.readings.map((r) => run.weights.get(r.id) ?? passedOver(r, input));
   return { model, grid, at: stands, weights, end: run.end(), ...bounds };
 }
@@ -65,7 +67,7 @@ export function filterPack(input: ForecastInput): Filtered {
 /** One pass over one pack's history. */
 class Run {
   readonly weights = new Map<string, ReadingWeight>();
-  private resistance: ResistanceBelief = SHEET_RESISTANCE;
+  private resistance: ResistanceBelief;
   private lastLoaded = -Infinity;
   private learned = false;
 
@@ -73,11 +75,14 @@ class Run {
     private readonly model: PackModel,
     private readonly grid: Grid,
     private at: EpochDays,
-  ) {}
+  ) {
+    this.resistance = model.resistance;
+  }
 
   to(day: EpochDays): void {
     elapse(this.model, this.grid, this.at, day);
-    if (this.learned) this.resistance = loosen(this.resistance, day - this.at);
+    if (this.learned)
+      this.resistance = loosen(this.resistance, this.model.resistance.sd, day - this.at);
     this.at = Math.max(this.at, day);
   }
 
@@ -100,22 +105,29 @@ class Run {
 
   read(reading: PackReading): void {
     const loaded = reading.kind === "loaded";
-    const rested = this.at - this.lastLoaded > ASSUMED.passivationRestDays;
-    const film = loaded && rested && this.model.pack.cell.chemistry === "li-socl2";
+    depthMarginal(this.grid, this.grid.nodeC);
     const guess = loaded ? guessRest(this.model, this.grid, reading) : null;
+    const film = loaded ? filmChance(this.model, this.at - this.lastLoaded) : 0;
     const said = observe(this.model, this.grid, reading, this.resistance, film);
     this.weights.set(reading.id, said);
     if (!guess) return;
     this.lastLoaded = this.at;
-    if (film) return;
+    if (said.reason === "passivation") return;
     this.resistance = learnResistance(this.resistance, guess, reading.millivolts, said.weight);
     this.learned = true;
+  }
+
+  /** It ran on a day: judged by the end as this pack's own resistance sets it. */
+  live(at: EpochDays): void {
+    const end = this.end();
+    weighDepth(this.grid, (depth) => aliveChance(end, depth, at));
   }
 
   hear(event: PackEvent): void {
     const { model, grid } = this;
     if (event.kind === "stopped") {
-      weighDepth(grid, (depth) => 1 - aliveChance(model, depth, event.at));
+      const end = this.end();
+      weighDepth(grid, (depth) => 1 - aliveChance(end, depth, event.at));
     } else if (event.kind === "draw-changed") {
       openRate(
         grid,
@@ -126,13 +138,21 @@ class Run {
   }
 
   end(): EndOfLife {
-    return this.learned ? endOfLife(this.model.endTerms, this.resistance) : this.model.end;
+    const { end, endTerms, endResistance } = this.model;
+    if (!this.learned) return end;
+    const { mean, sd } = this.resistance;
+    // what this pack shows beside its curve, on what such packs take to stop
+    const first = this.model.resistance.mean;
+    return endOfLife(endTerms, {
+      mean: (mean / first) * endResistance.mean,
+      sd: Math.min((sd / first) * endResistance.mean, endResistance.sd * Math.max(1, mean / first)),
+    });
   }
 }
 
 /** Chance that the device runs at a depth in the month of a day. */
-function aliveChance(model: PackModel, depth: number, at: EpochDays): number {
-  return normalCdf((model.end.byMonth[monthOf(at)]! - depth) / model.end.sd);
+function aliveChance(end: EndOfLife, depth: number, at: EpochDays): number {
+  return normalCdf((end.byMonth[monthOf(at)]! - depth) / end.sd);
 }
 
 /** Steps into which a stretch of days is cut. */
@@ -149,10 +169,9 @@ function elapse(model: PackModel, grid: Grid, from: EpochDays, to: EpochDays): v
   for (let s = 0; s < steps; s++) {
     const start = from + (days * s) / steps;
     const end = from + (days * (s + 1)) / steps;
-    wander(grid, variance);
     const share = model.drawPerDay * (end - start);
     const leak = leakBetween(model, start, end);
-    redrawOffset(grid, 1 - Math.exp(-(share + leak) / ASSUMED.curveErrorDepth));
+    drift(grid, variance, 1 - Math.exp(-(share + leak) / model.offsetDepth));
     consume(grid, share, leak);
   }
 }

@@ -6,24 +6,19 @@
 import { ASSUMED } from "./assumptions";
 import type { PackModel } from "./pack-model";
 
-const DEPTH_NODES = 48;
-const RATE_NODES = 17;
-const OFFSET_NODES = 5;
+const DEPTH_NODES = 36;
+const RATE_NODES = 15;
+/**
+ * Three offsets, 1.5 spreads apart: with the variance inside a cell (spacing²/12, added to each
+ * reading) the prior's variance is that of a normal.
+ */
+export const OFFSET_NODES = 3;
+const OFFSET_SPACING = 1.5;
+const OFFSET_PRIOR = Float64Array.of(0.18, 0.64, 0.18);
 /** The depth window reaches this many spreads to either side of the mean. */
 export const WINDOW = 4.5;
 /** Added to every weight of evidence: nothing becomes certain. */
 const DOUBT = 1e-9;
-
-const OFFSET_PRIOR = bells(OFFSET_NODES);
-
-/** Normal weights at whole spreads around 0, summing to 1. */
-function bells(count: number): Float64Array {
-  const weights = Float64Array.from({ length: count }, (_, o) =>
-    Math.exp(-0.5 * (o - (count - 1) / 2) ** 2),
-  );
-  const total = weights.reduce((a, b) => a + b, 0);
-  return weights.map((w) => w / total);
-}
 
 export interface Grid {
   readonly nx: number;
@@ -34,14 +29,21 @@ export interface Grid {
    * `consume` and the filter's end bring it back to a sum of 1.
    */
   p: Float64Array;
-  /** Working space: the next `p`, one value a row, three a depth node. */
+  /** Working space: the next `p`, and three values a depth node. */
   spare: Float64Array;
+  /** Mass of each row when it last moved; a row of 0 holds nothing and is passed over. */
   readonly rowMass: Float64Array;
+  /** First and second moment of each row over its node numbers, when it last moved. */
+  readonly rowFirst: Float64Array;
+  readonly rowSecond: Float64Array;
   readonly nodeA: Float64Array;
   readonly nodeB: Float64Array;
   readonly nodeC: Float64Array;
   depthFrom: number;
   depthStep: number;
+  /** Walk of ln(rate), as a variance, and redrawing of the offset still to be laid on. */
+  owedVariance: number;
+  owedRedraw: number;
   readonly lnRate: Float64Array;
   readonly rate: Float64Array;
   readonly rateStep: number;
@@ -52,6 +54,15 @@ export interface Grid {
   readonly offsetPrior: Float64Array;
 }
 
+/** Working space of finished grids, written over before it is read: spares the collector. */
+const IDLE: Float64Array[] = [];
+
+/** Give back a grid's working space; nothing can be consumed afterwards. */
+export function retire(grid: Grid): void {
+  IDLE.push(grid.spare);
+  grid.spare = new Float64Array(0);
+}
+
 /** Grid of a new pack. `years`: how long the draw will have wandered; `sd`: widest prior. */
 export function newGrid(model: PackModel, years: number, sd: number): Grid {
   const half = 3 * Math.hypot(sd, ASSUMED.drawWalkPerYear * Math.sqrt(Math.min(years, 15)));
@@ -60,28 +71,30 @@ export function newGrid(model: PackModel, years: number, sd: number): Grid {
     { length: RATE_NODES },
     (_, r) => model.prior.mean - half + r * rateStep,
   );
-  const size = OFFSET_NODES * RATE_NODES * DEPTH_NODES;
-  const middle = (OFFSET_NODES - 1) / 2;
+  const rows = OFFSET_NODES * RATE_NODES;
+  const size = rows * DEPTH_NODES;
+  const offsetStepMv = OFFSET_SPACING * model.offsetSdMv;
   const grid: Grid = {
     nx: DEPTH_NODES,
     nr: RATE_NODES,
     no: OFFSET_NODES,
     p: new Float64Array(size),
-    spare: new Float64Array(size),
-    rowMass: new Float64Array(OFFSET_NODES * RATE_NODES).fill(1),
+    spare: IDLE.pop() ?? new Float64Array(size),
+    rowMass: new Float64Array(rows).fill(1),
+    rowFirst: new Float64Array(rows),
+    rowSecond: new Float64Array(rows),
     nodeA: new Float64Array(DEPTH_NODES),
     nodeB: new Float64Array(DEPTH_NODES),
     nodeC: new Float64Array(DEPTH_NODES),
     depthFrom: model.startDepth - WINDOW * model.startSd,
     depthStep: (2 * WINDOW * model.startSd) / (DEPTH_NODES - 1),
+    owedVariance: 0,
+    owedRedraw: 0,
     lnRate,
     rate: lnRate.map(Math.exp),
     rateStep,
-    offsetMv: Float64Array.from(
-      { length: OFFSET_NODES },
-      (_, o) => (o - middle) * model.offsetSdMv,
-    ),
-    offsetStepMv: model.offsetSdMv,
+    offsetMv: Float64Array.of(-offsetStepMv, 0, offsetStepMv),
+    offsetStepMv,
     offsetPrior: OFFSET_PRIOR,
   };
   fillPrior(grid, model);
@@ -92,14 +105,15 @@ function fillPrior(grid: Grid, model: PackModel): void {
   const { nx, nr, no } = grid;
   const bell = (x: number, mean: number, sd: number): number =>
     Math.exp(-0.5 * ((x - mean) / sd) ** 2);
-  for (let o = 0; o < no; o++) {
-    const wo = grid.offsetPrior[o]!;
-    for (let r = 0; r < nr; r++) {
-      const wr = wo * bell(grid.lnRate[r]!, model.prior.mean, model.prior.sd);
-      for (let i = 0; i < nx; i++) {
-        const depth = grid.depthFrom + i * grid.depthStep;
-        grid.p[(o * nr + r) * nx + i] = wr * bell(depth, model.startDepth, model.startSd);
-      }
+  const { nodeA: depths } = grid;
+  for (let i = 0; i < nx; i++) {
+    depths[i] = bell(grid.depthFrom + i * grid.depthStep, model.startDepth, model.startSd);
+  }
+  for (let r = 0; r < nr; r++) {
+    const wr = bell(grid.lnRate[r]!, model.prior.mean, model.prior.sd);
+    for (let o = 0; o < no; o++) {
+      const base = (o * nr + r) * nx;
+      for (let i = 0; i < nx; i++) grid.p[base + i] = wr * grid.offsetPrior[o]! * depths[i]!;
     }
   }
   normalise(grid);

@@ -2,7 +2,9 @@
 export type {
   CapacityPoint,
   CellSpec,
+  Calibration,
   Chemistry,
+  CurveLesson,
   DutyState,
   FleetPrior,
   Forecast,
@@ -29,6 +31,12 @@ export {
   devicePrior,
   learnCohorts,
 } from "./fleet-prior";
+export {
+  type FinishedHistory,
+  type FleetLesson,
+  type FleetMember,
+  learnFleet,
+} from "./fleet-lesson";
 export {
   type BadLot,
   type DrawObservation,

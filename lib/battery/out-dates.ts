@@ -4,14 +4,15 @@
  * still do, carried through the seasons (a cold month stops a pack that a warm one would
  * still run) and cut to what is known (alive then, found stopped then).
  */
-import { gridQuantile } from "../stats/grid-quantile";
+import { normalCdf, normalQuantile } from "../stats/normal";
 import type { EpochDays } from "../units";
 import { ASSUMED } from "./assumptions";
 import { DAYS_PER_YEAR } from "./climate";
 import type { Filtered } from "./filter";
+import type { Calibration } from "./pack";
 import { type SeasonalClock, seasonalClock } from "./season-clock";
 
-const BINS = 400;
+const BINS = 240;
 const IGNORED = 1e-8;
 /** Slower than this a pack outlasts every horizon; keeps idle packs finite. */
 const SLOWEST_PER_DAY = 1 / (4 * ASSUMED.horizonDays);
@@ -21,6 +22,8 @@ const SPREAD_Z = [-2.4, -1.6, -0.8, 0, 0.8, 1.6, 2.4] as const;
 const SPREAD_W = [0.018, 0.0892, 0.2328, 0.32, 0.2328, 0.0892, 0.018] as const;
 /** When the evidence leaves no mass at all, the stop is put into this many days. */
 const FALLBACK_DAYS = 30;
+/** A season's draw differs from the year's for about this long. */
+const SEASON_DAYS = 90;
 
 /** Mass over days left, counted from `at` on a clock of mean consumption. */
 interface TimeLeft {
@@ -52,16 +55,30 @@ export function outDates(filtered: Filtered, now: EpochDays): OutDates {
   const below = aliveAt === null ? 0 : massBelow(left, aliveAt - at);
   const above = stoppedAt === null ? 1 : massBelow(left, stoppedAt - at);
   const known = above - below > 1e-9;
+  const sums = cumulative(left.mass);
   const daysLeft = (probability: number): number =>
-    gridQuantile(left.mass, left.from, left.step, below + probability * (above - below));
+    daysAt(left, sums, below + probability * (above - below));
   const quantile = (probability: number): EpochDays => {
     if (!known) return fallback(probability, aliveAt, stoppedAt, at);
-    const day = clock.dateOf(daysLeft(probability));
+    const day = clock.dateOf(daysLeft(calibrated(probability, model.calibration)));
     return Math.min(stoppedAt ?? latest, Math.max(aliveAt ?? earliest, day));
   };
   const gone = massBelow(left, clock.reachedAt(now));
   const share = known ? Math.min(1, Math.max(0, gone - below) / (above - below)) : 0;
-  return { quantile, daysLeft, clock, outNow: stoppedAt === null ? share : 1 };
+  const outNow = stoppedAt === null ? held(share, model.calibration) : 1;
+  return { quantile, daysLeft, clock, outNow };
+}
+
+/** The probability of the raw distribution that stands for `probability` of the calibrated one. */
+function calibrated(probability: number, by: Calibration | null): number {
+  if (!by) return probability;
+  return normalCdf(by.shift + by.spread * normalQuantile(probability));
+}
+
+/** And back. */
+function held(chance: number, by: Calibration | null): number {
+  if (!by || chance <= 0 || chance >= 1) return chance;
+  return normalCdf((normalQuantile(chance) - by.shift) / by.spread);
 }
 
 function fallback(
@@ -73,6 +90,26 @@ function fallback(
   const from = aliveAt ?? (stoppedAt ?? at) - FALLBACK_DAYS;
   const to = stoppedAt ?? from + FALLBACK_DAYS;
   return from + probability * (to - from);
+}
+
+function cumulative(mass: Float64Array): Float64Array {
+  let sum = 0;
+  return mass.map((m) => (sum += m));
+}
+
+/** Days left at a probability: each bin's mass lies evenly around its middle. */
+function daysAt(left: TimeLeft, sums: Float64Array, probability: number): number {
+  const target = probability * sums[BINS - 1]!;
+  let low = 0;
+  let high = BINS - 1;
+  while (low < high) {
+    const middle = (low + high) >> 1;
+    if (sums[middle]! >= target && sums[middle]! > 0) high = middle;
+    else low = middle + 1;
+  }
+  const m = left.mass[low]!;
+  const part = m > 0 ? (target - (sums[low]! - m)) / m : 0;
+  return left.from + (low - 0.5 + part) * left.step;
 }
 
 function massBelow(left: TimeLeft, days: number): number {
@@ -90,7 +127,9 @@ function collect({ model, grid, end }: Filtered): TimeLeft {
   const leak = model.leakPerDay * model.ageing.meanFactor;
   const draws = grid.rate.map((rate) => Math.max(SLOWEST_PER_DAY, model.drawPerDay * rate));
   const joint = new Float64Array(grid.nr * grid.nx);
-  for (let k = 0; k < grid.p.length; k++) joint[k % joint.length]! += grid.p[k]!;
+  for (let from = 0; from < grid.p.length; from += joint.length) {
+    for (let k = 0; k < joint.length; k++) joint[k]! += grid.p[from + k]!;
+  }
   const days = new Float64Array(joint.length);
   let from = Infinity;
   let to = -Infinity;
@@ -140,7 +179,10 @@ function deposit(mass: Float64Array, place: number, amount: number): void {
 function widen(left: TimeLeft, endSd: number): TimeLeft {
   const endDays = endSd / left.ratePerDay;
   const spread = (t: number): number => {
-    const walk = t > 0 ? ASSUMED.drawWalkPerYear * Math.sqrt(t / DAYS_PER_YEAR / 3) * t : 0;
+    if (t <= 0) return endDays;
+    const season = ASSUMED.seasonalDrawSd * Math.min(1, SEASON_DAYS / t);
+    const drift = ASSUMED.drawWalkPerYear * Math.sqrt(t / DAYS_PER_YEAR / 3);
+    const walk = Math.hypot(season, drift) * t;
     return Math.hypot(Math.min(walk, 0.4 * t), endDays);
   };
   const last = left.from + left.step * (BINS - 1);

@@ -4,19 +4,26 @@
  */
 import type { EpochDays, Microamps, Millivolts } from "../units";
 import { ASSUMED } from "./assumptions";
-import { baseCutoffMv, grossCapacity } from "./capacity";
+import { baseCutoffMv, grossCapacity, overload } from "./capacity";
 import { DAYS_PER_YEAR } from "./climate";
-import { elementsOf } from "./curves";
 import { CURVES } from "./curve-tables";
 import { type PackCurve, packCurve, packEndDepth } from "./cutoff";
 import { packAverageUa, packPeakUa } from "./duty";
-import { type EndOfLife, type EndTerms, endOfLife, tableEndDepth } from "./end-of-life";
-import type { Chemistry, FleetPrior, PackSpec } from "./pack";
+import {
+  type EndOfLife,
+  type EndTerms,
+  type ResistanceBelief,
+  endOfLife,
+  tableEndDepth,
+} from "./end-of-life";
+import type { Calibration, Chemistry, CurveLesson, FleetPrior, PackSpec } from "./pack";
 import { type Ageing, ageing } from "./self-discharge";
 
 const MIN_FULL_SHARE = 0.5;
 const MAX_SHELF_LOSS = 0.9;
 const TINY = 1e-9;
+/** Share of a table's spread that differs from one reading to the next. */
+const UNTAUGHT_NOISE = 0.25;
 const LONGEST_AGE_YEARS = 15;
 const RECHARGED: readonly Chemistry[] = ["vrla", "lifepo4"];
 
@@ -41,11 +48,19 @@ export interface PackModel {
   readonly endTerms: EndTerms;
   /** Where it stops, before any loaded reading has told of the resistance. */
   readonly end: EndOfLife;
+  /** The resistance that decides it, relative to the sheet's. */
+  readonly endResistance: ResistanceBelief;
   readonly startDepth: number;
   readonly startSd: number;
-  /** Spread of the pack's voltage offset against the curve, mV. */
+  /** Spread of the pack's voltage offset against the curve, and of readings around that, mV. */
   readonly offsetSdMv: Millivolts;
+  readonly noiseMv: Millivolts;
+  /** Depth over which that offset stays the same, roughly. */
+  readonly offsetDepth: number;
+  /** Resistance of this pack before any reading, relative to its curve. */
+  readonly resistance: ResistanceBelief;
   readonly prior: RatePrior;
+  readonly calibration: Calibration | null;
 }
 
 /** Charge of one cell at depth 1 of its curve, at the device's average draw, mAh. */
@@ -59,9 +74,10 @@ export function fullCapacity(pack: PackSpec, averageUa: Microamps): number {
 }
 
 function ratePrior(pack: PackSpec, fleet: FleetPrior | null): RatePrior {
+  const beyond = overload(pack.cell, packAverageUa(pack) / pack.parallel);
   const capacity = fleet?.capacityFactor ?? {
-    mean: ASSUMED.capacityMean,
-    relativeSd: ASSUMED.capacitySd,
+    mean: ASSUMED.capacityMean * Math.exp(beyond.mean),
+    relativeSd: Math.hypot(ASSUMED.capacitySd, beyond.sd),
   };
   const learned = fleet?.drawFactor ?? { mean: 1, relativeSd: ASSUMED.drawSd };
   const draw = pack.measuredDraw ? { mean: 1, relativeSd: pack.measuredDraw.relativeSd } : learned;
@@ -85,22 +101,56 @@ function shelfLoss(pack: PackSpec, leakPerDay: number): number {
   return Math.min(MAX_SHELF_LOSS, -Math.expm1(-leakPerDay * (pack.installedAt - pack.madeAt)));
 }
 
-/** Prepare a pack for the filter. */
-export function packModel(pack: PackSpec, fleet: FleetPrior | null): PackModel {
-  const curve = packCurve(pack);
-  const averageUa = packAverageUa(pack);
-  const peakUa = packPeakUa(pack);
+/** A load that hardly ever pauses: its mean is a good part of its peak. */
+const isSteady = (averageUa: number, peakUa: number): boolean => averageUa > 0.3 * peakUa;
+
+/**
+ * Resistance before any loaded reading. A sheet states what a short pulse meets; a load that
+ * hardly ever pauses meets the cell's slow polarisation as well: taken as 40 mV an element at
+ * the 20-hour rate, with the square root of the current (an LR6 on 5.5 ohm and an FR6 on 15 ohm
+ * fall by 0.11 V and 0.03 V; the rest from memory), and known to two fifths.
+ */
+function resistanceOf(pack: PackSpec, curve: PackCurve, lesson: CurveLesson | null) {
+  if (lesson) return { mean: 1, sd: lesson.resistanceSd };
+  const ua = packAverageUa(pack);
+  if (!isSteady(ua, packPeakUa(pack))) return { mean: 1, sd: ASSUMED.resistanceSd };
+  const twentyHourUa = (pack.cell.rated.capacityMah * 1000 * pack.parallel) / 20;
+  const slowMv = 40 * curve.restScale * Math.sqrt(ua / twentyHourUa);
+  const mean = 1 + Math.min(40, slowMv / Math.max(1e-3, (ua * curve.freshMohm) / 1e6));
+  return { mean, sd: 0.4 * mean };
+}
+
+/** A full cell's charge, and the shares of it that a day takes by leak and by draw. */
+function charges(pack: PackSpec, averageUa: Microamps) {
   const fullMah = fullCapacity(pack, averageUa);
   const yearlyLeak = (pack.cell.selfDischargePpmPerYear / 1e6) * pack.cell.rated.capacityMah;
-  const leakPerDay = yearlyLeak / fullMah / DAYS_PER_YEAR;
-  const drawPerDay = (averageUa * 0.024) / (fullMah * pack.parallel);
+  return {
+    fullMah,
+    leakPerDay: yearlyLeak / fullMah / DAYS_PER_YEAR,
+    drawPerDay: (averageUa * 0.024) / (fullMah * pack.parallel),
+  };
+}
+
+/** Prepare a pack for the filter. */
+export function packModel(pack: PackSpec, fleet: FleetPrior | null): PackModel {
+  const lesson = fleet?.curve ?? null;
+  // the depth axis ends where the published curve does; what was learned lies on that axis
+  const published = packCurve(pack);
+  const curve = lesson ? packCurve(pack, lesson) : published;
+  const averageUa = packAverageUa(pack);
+  const peakUa = packPeakUa(pack);
+  const { fullMah, leakPerDay, drawPerDay } = charges(pack, averageUa);
   const terms: EndTerms = {
     pack,
-    curve,
+    curve: published,
     peakUa,
     cap: tableEndDepth(pack, averageUa, fullMah),
+    steady: isSteady(averageUa, peakUa),
     aged: grown(pack, 1 / Math.max(drawPerDay + leakPerDay, TINY)),
   };
+  const resistance = resistanceOf(pack, curve, lesson);
+  const endResistance = fleet?.endResistance ?? resistance;
+  const { spreadMv } = CURVES[pack.cell.chemistry];
   const startDepth = shelfLoss(pack, leakPerDay);
   return {
     pack,
@@ -111,11 +161,16 @@ export function packModel(pack: PackSpec, fleet: FleetPrior | null): PackModel {
     leakPerDay,
     ageing: ageing(pack.monthlyMeanDc),
     endTerms: terms,
-    end: endOfLife(terms, { mean: 1, sd: ASSUMED.resistanceSd }),
+    end: endOfLife(terms, endResistance),
+    endResistance,
     startDepth,
     startSd: Math.hypot(ASSUMED.startDepthSd, startDepth * 0.5),
-    offsetSdMv: pack.series * elementsOf(pack.cell) * CURVES[pack.cell.chemistry].spreadMv,
+    offsetSdMv: curve.restScale * (lesson?.spreadMv ?? spreadMv),
+    noiseMv: curve.restScale * (lesson?.noiseMv ?? UNTAUGHT_NOISE * spreadMv),
+    offsetDepth: lesson ? ASSUMED.taughtErrorDepth : ASSUMED.curveErrorDepth,
+    resistance,
     prior: ratePrior(pack, fleet),
+    calibration: fleet?.calibration ?? null,
   };
 }
 

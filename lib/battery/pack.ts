@@ -90,12 +90,42 @@ export interface PackEvent {
   readonly lastAliveAt?: EpochDays;
 }
 
+/**
+ * How the voltage of cells in one cohort departs from the published curve, by depth in equal
+ * steps from 0 to 1, learned from packs that ran out (`learnCurves`).
+ */
+export interface CurveLesson {
+  /** To be added to the resting voltage of one element, mV. */
+  readonly restShiftMv: readonly number[];
+  /** Factor on the resistance. */
+  readonly resistanceFactor: readonly number[];
+  /** Spread of single packs around that, mV of one element, and of readings around a pack. */
+  readonly spreadMv: number;
+  readonly noiseMv: number;
+  /** Spread of the resistance between packs, as a share. */
+  readonly resistanceSd: number;
+  readonly packs: number;
+}
+
+/**
+ * How forecasts of past packs turned out: with z the normal score of the probability that was
+ * given to the day a pack stopped, its mean and spread (0 and 1 for a perfect forecaster).
+ */
+export interface Calibration {
+  readonly shift: number;
+  readonly spread: number;
+}
+
 /** What the fleet taught about packs like this one; factors multiply the data-sheet values. */
 export interface FleetPrior {
   readonly capacityFactor: { readonly mean: number; readonly relativeSd: number };
   readonly drawFactor: { readonly mean: number; readonly relativeSd: number };
   /** How many finished packs the prior rests on. */
   readonly packs: number;
+  readonly curve?: CurveLesson | null;
+  /** Resistance that decides the end, relative to the sheet's. */
+  readonly endResistance?: { readonly mean: number; readonly sd: number } | null;
+  readonly calibration?: Calibration | null;
 }
 
 export interface ForecastInput {

@@ -10,10 +10,9 @@
  */
 import { ASSUMED } from "./assumptions";
 import { temperatureAt } from "./climate";
-import { CURVES } from "./curve-tables";
 import { CURVE_STEPS } from "./curves";
 import { freshDropMv } from "./cutoff";
-import { type Grid, depthMarginal, normalise } from "./grid";
+import { type Grid, normalise } from "./grid";
 import type { ResistanceBelief } from "./end-of-life";
 import type { PackReading, ReadingWeight } from "./pack";
 import { type PackModel, resistanceAge } from "./pack-model";
@@ -68,20 +67,22 @@ function expectAt(
 /** The part of a reading's variance that does not depend on depth, mV². */
 function fixedVariance(model: PackModel, grid: Grid, reading: Circumstances): number {
   const warmth = reading.temperatureDc === null ? ASSUMED.temperatureSdK : 1;
-  const cell = 0.25 * model.curve.restScale * CURVES[model.pack.cell.chemistry].spreadMv;
   const accuracy = reading.accuracyMv ?? ASSUMED.accuracyMv;
   return (
     accuracy ** 2 +
     grid.offsetStepMv ** 2 / 12 +
-    cell ** 2 +
+    model.noiseMv ** 2 +
     (model.curve.driftMvPerKelvin * warmth) ** 2 +
     1e-6
   );
 }
 
-/** 5th, 50th and 95th percentile of a voltage to be read, mV, after `expectAt`. */
+/**
+ * 5th, 50th and 95th percentile of a voltage to be read, mV, after `expectAt`; wants the depth
+ * marginal in `nodeC`.
+ */
 function expectedBand(grid: Grid): [number, number, number] {
-  const marginal = depthMarginal(grid, grid.nodeC);
+  const marginal = grid.nodeC;
   let total = 0;
   for (let i = 0; i < grid.nx; i++) total += marginal[i]!;
   const mean = grid.nodeA;
@@ -104,20 +105,22 @@ function expectedBand(grid: Grid): [number, number, number] {
   ];
 }
 
-/** Update the grid by one reading; says how much it counted and why. */
+/** Update the grid by one reading (depth marginal in `nodeC`); says how much it counted and why. */
 export function observe(
   model: PackModel,
   grid: Grid,
   reading: PackReading,
   resistance: ResistanceBelief,
-  passivated: boolean,
+  filmChance: number,
 ): ReadingWeight {
   expectAt(model, grid, reading, resistance);
   const [low, middle, high] = expectedBand(grid);
-  // the film's transient minimum says nothing about charge; a higher voltage would
-  const dip = passivated && reading.millivolts < middle;
-  const weight = dip ? 0 : multiply(grid, reading.millivolts, impossibleAboveMv(model));
-  const reason = dip ? "passivation" : weight >= 0.5 ? "fits" : "doubtful";
+  // the film only ever lowers a voltage: a higher one is the cell's own
+  const dip = reading.millivolts < middle ? filmChance : 0;
+  const slip = Math.max(ASSUMED.outlierShare, dip);
+  const weight = multiply(grid, reading.millivolts, impossibleAboveMv(model), slip);
+  const doubted = dip > ASSUMED.outlierShare ? "passivation" : "doubtful";
+  const reason = weight >= 0.5 ? "fits" : doubted;
   return {
     readingId: reading.id,
     weight,
@@ -129,10 +132,10 @@ export function observe(
 }
 
 /** Multiply by the mixture likelihood; returns the weight of its first term. */
-function multiply(grid: Grid, millivolts: number, rangeMv: number): number {
+function multiply(grid: Grid, millivolts: number, rangeMv: number, slip: number): number {
   const { p, nx, nr, no, nodeA: mean, nodeB: variance, nodeC: fit, rowMass } = grid;
-  const outlier = ASSUMED.outlierShare / rangeMv;
-  const share = (1 - ASSUMED.outlierShare) / Math.sqrt(2 * Math.PI);
+  const outlier = slip / rangeMv;
+  const share = (1 - slip) / Math.sqrt(2 * Math.PI);
   let fitting = 0;
   let total = 0;
   for (let o = 0; o < no; o++) {

@@ -6,27 +6,27 @@
 import type { EpochDays } from "../units";
 import { ASSUMED } from "./assumptions";
 import { temperatureAt } from "./climate";
-import { CURVES } from "./curve-tables";
 import { CURVE_STEPS, atDepth } from "./curves";
 import { freshDropMv } from "./cutoff";
 import type { ResistanceBelief } from "./end-of-life";
-import { type Grid, depthMarginal } from "./grid";
+import type { Grid } from "./grid";
 import type { PackReading } from "./pack";
 import { type PackModel, resistanceAge } from "./pack-model";
 
-/** The factor never leaves this range: a pack is not a tenth of its sheet, nor ten times. */
+/** The factor never leaves this range; only a steady load comes near its top. */
 const LOWEST = 0.2;
-const HIGHEST = 8;
+const HIGHEST = 60;
 const REACH = 5 / CURVE_STEPS;
 
-/** Belief before any loaded reading. */
-export const SHEET_RESISTANCE: ResistanceBelief = { mean: 1, sd: ASSUMED.resistanceSd };
-
 /** Let days pass: the belief loosens, up to what it was at first. */
-export function loosen(belief: ResistanceBelief, days: EpochDays): ResistanceBelief {
+export function loosen(
+  belief: ResistanceBelief,
+  firstSd: number,
+  days: EpochDays,
+): ResistanceBelief {
   const grown = ASSUMED.resistanceWalkPerYear ** 2 * (Math.max(0, days) / 365.2425);
   const sd = Math.sqrt(belief.sd ** 2 + grown * belief.mean ** 2);
-  return { mean: belief.mean, sd: Math.min(sd, ASSUMED.resistanceSd * Math.max(1, belief.mean)) };
+  return { mean: belief.mean, sd: Math.min(sd, firstSd * Math.max(1, belief.mean)) };
 }
 
 export interface RestGuess {
@@ -36,13 +36,16 @@ export interface RestGuess {
   readonly dropMv: number;
 }
 
-/** Resting voltage and fall under load that the grid expects at a loaded reading. */
+/**
+ * Resting voltage and fall under load that the grid expects at a loaded reading; wants the
+ * depth marginal in `nodeC`.
+ */
 export function guessRest(model: PackModel, grid: Grid, reading: PackReading): RestGuess {
   const { curve, pack } = model;
   const dc = reading.temperatureDc ?? temperatureAt(pack.monthlyMeanDc, reading.at);
   const ua = reading.loadUa ?? model.peakUa;
   const fall = freshDropMv(pack, curve, ua, dc) * resistanceAge(model, reading.at);
-  const marginal = depthMarginal(grid, grid.nodeC);
+  const marginal = grid.nodeC;
   let total = 0;
   let first = 0;
   let second = 0;
@@ -54,13 +57,14 @@ export function guessRest(model: PackModel, grid: Grid, reading: PackReading): R
   }
   const depth = first / total;
   const depthSd = Math.sqrt(Math.max(0, second / total - depth * depth));
-  const volts = (x: number): number => curve.restScale * atDepth(curve.restMv, x);
-  const slope = (volts(depth - REACH) - volts(depth + REACH)) / (2 * REACH);
-  const offset = curve.restScale * CURVES[pack.cell.chemistry].spreadMv;
+  const { restMv, restScale } = curve;
+  const fallen = atDepth(restMv, depth - REACH) - atDepth(restMv, depth + REACH);
+  const slope = (restScale * fallen) / (2 * REACH);
+  const offset = Math.hypot(model.offsetSdMv, model.noiseMv);
   const unsure = Math.hypot(depthSd, ASSUMED.curveDepthSd);
   const accuracy = reading.accuracyMv ?? ASSUMED.accuracyMv;
   return {
-    restMv: volts(depth) + curve.driftMvPerKelvin * (dc / 10 - 20),
+    restMv: restScale * atDepth(restMv, depth) + curve.driftMvPerKelvin * (dc / 10 - 20),
     variance: (slope * unsure) ** 2 + offset ** 2 + accuracy ** 2 + 1e-6,
     dropMv: fall * atDepth(curve.resistance, depth),
   };

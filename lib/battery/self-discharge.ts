@@ -40,8 +40,19 @@ export interface Ageing {
   between(from: EpochDays, to: EpochDays): number;
 }
 
-/** Prepare the integral of the ten-degree rule over monthly mean temperatures. */
+/** Sites share few climates: each is summed once. */
+const AGEINGS = new WeakMap<readonly Decicelsius[], Ageing>();
+
+/** The integral of the ten-degree rule over monthly mean temperatures. */
 export function ageing(monthlyMeanDc: readonly Decicelsius[]): Ageing {
+  const known = AGEINGS.get(monthlyMeanDc);
+  if (known) return known;
+  const summed = sumOver(monthlyMeanDc);
+  AGEINGS.set(monthlyMeanDc, summed);
+  return summed;
+}
+
+function sumOver(monthlyMeanDc: readonly Decicelsius[]): Ageing {
   const factors = new Float64Array(12);
   const sums = new Float64Array(13);
   for (let m = 0; m < 12; m++) {

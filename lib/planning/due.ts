@@ -6,14 +6,20 @@ import type { Minor } from "@/lib/units";
 import { daysBetween } from "./local-time";
 import type { PlannedTask, PlanningSite } from "./fleet";
 import { expectation } from "./life";
-import type { PackOutlook } from "./outlook";
+import type { OutlookContext, PackOutlook } from "./outlook";
 
 /** Later visits within so many days of each other would be one trip. Common practice, no source. */
 const ONE_TRIP_DAYS = 28;
 /** A voltage is worth taking where the pack is due within so many days ... */
 const READ_WITHIN_DAYS = 400;
-/** ... and its spread (p95 − p05) is at least this share of the time left. */
+/** ... and its spread (p95 − p05) is at least this share of the time left ... */
 const READ_SPREAD = 0.6;
+/**
+ * ... and half of what not knowing costs at the best moment pays for the minutes. About half of
+ * it goes when a window of 10 % of life becomes one of 4.5 %, as between forecasts of alkaline
+ * packs at mid-life and at nine tenths of it (lib/battery's table).
+ */
+const READ_TELLS = 0.5;
 
 export interface DueSite {
   readonly site: PlanningSite;
@@ -59,7 +65,10 @@ export function tripsSaved(swaps: readonly PackOutlook[]): number {
   return laterGroups(swaps).length;
 }
 
-function worthReading({ pack }: PackOutlook, now: number): boolean {
+function worthReading({ pack, later }: PackOutlook, context: OutlookContext): boolean {
+  const { now, prices } = context;
+  const minutesMinor = (pack.readS / 3600) * prices.crewMinorPerHour;
+  if (READ_TELLS * later.price.totalMinor < minutesMinor) return false;
   const left = expectation(pack.life, (t) => Math.max(0, t - now));
   const low = pack.life[Math.floor(pack.life.length * 0.05)]!;
   const high = pack.life[Math.floor(pack.life.length * 0.95)]!;
@@ -102,14 +111,18 @@ export interface SiteOutlooks {
  * The sites that may go into a plan, with the work that a visit would do there. Cells go to the
  * packs that lose most by waiting.
  */
-export function dueSites(sites: readonly SiteOutlooks[], onHand: CellsOnHand, now: number) {
+export function dueSites(
+  sites: readonly SiteOutlooks[],
+  onHand: CellsOnHand,
+  context: OutlookContext,
+): DueSite[] {
   const wanted = sites.map((s) => worthSwapping(s.outlooks, s.tripShareMinor));
   const without = rationCells(wanted.flat(), onHand);
   return sites.flatMap(({ site, outlooks }, i): DueSite[] => {
     if (wanted[i]!.length === 0) return [];
     const swaps = wanted[i]!.filter((outlook) => !without.has(outlook));
     const stays = outlooks.filter((outlook) => !swaps.includes(outlook));
-    const reads = swaps.length > 0 ? stays.filter((o) => worthReading(o, now)) : [];
+    const reads = swaps.length > 0 ? stays.filter((o) => worthReading(o, context)) : [];
     const due: DueSite = {
       site,
       outlooks,

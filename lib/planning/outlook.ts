@@ -22,12 +22,16 @@ import type {
 } from "./fleet";
 import { addDays, daysBetween, daysFrom, midday, weekdayOf } from "./local-time";
 import { closureOn } from "./site-days";
+import { longRunPremium } from "./long-run";
 import { greatCircleM, type RoadAssumption } from "./travel";
 import {
   cheapestVisit,
+  costOfFailure,
   keepCostPerDay,
   priceVisit,
+  sufferedSoFar,
   waitingCostPerWeek,
+  type SilencePrices,
   type VisitPrice,
   type WaitingPack,
 } from "./waiting-cost";
@@ -48,6 +52,8 @@ export interface PackOutlook {
   readonly gainMinor: Minor;
   readonly standing: Standing;
   readonly waitingMinorPerWeek: Minor;
+  /** Silence that a device known to be out has cost already; 0 for any other. */
+  readonly sufferedMinor: Minor;
 }
 
 /** What outlooks of one plan share. */
@@ -131,41 +137,21 @@ export function waitingPack(
   prices: PlanningPrices,
 ): WaitingPack {
   const workMinor = (pack.swapS / 3600) * prices.crewMinorPerHour;
-  return {
-    life: pack.life,
+  const cycleMinor = pack.cellsMinor + workMinor + trip.shareMinor;
+  const silence: SilencePrices = {
     silenceMinorPerHour: pack.silenceMinorPerHour,
-    urgentTripMinor: trip.urgentMinor + workMinor,
+    // The trip does the work of the planned swap and saves its share of a drive.
+    urgentTripMinor: Math.max(0, trip.urgentMinor - trip.shareMinor),
     urgentResponseH: URGENT_RESPONSE_H,
     nextRoundH: NEXT_ROUND_H,
-    keepMinorPerDay: keepCostPerDay(
-      pack.life,
-      pack.installedAt,
-      pack.cellsMinor + workMinor + trip.shareMinor,
-    ),
   };
-}
-
-interface LaterVisit {
-  readonly waiting: WaitingPack;
-  readonly index: number;
-  readonly price: VisitPrice;
-}
-
-/**
- * The best later visit. What is lost even at the best moment is lost once a cycle, so it belongs
- * to the cost of a cycle too (the long-run rate of age replacement holds both): g is raised by it
- * and the best moment looked up again.
- */
-function bestLater(
-  waiting: WaitingPack,
-  pack: PlanningPack,
-  context: OutlookContext,
-  moments: readonly EpochDays[],
-): LaterVisit {
-  const first = cheapestVisit(waiting, context.now, moments);
-  const lost = keepCostPerDay(pack.life, pack.installedAt, first.price.totalMinor);
-  const whole = { ...waiting, keepMinorPerDay: waiting.keepMinorPerDay + lost };
-  return { waiting: whole, ...cheapestVisit(whole, context.now, moments) };
+  return {
+    ...silence,
+    life: pack.life,
+    keepMinorPerDay:
+      keepCostPerDay(pack.life, pack.installedAt, cycleMinor) *
+      longRunPremium(costOfFailure(silence), cycleMinor),
+  };
 }
 
 function standingOf(
@@ -188,10 +174,10 @@ export function outlookOf(
   const trip = tripOf(site, context);
   const open = context.laterDays.flatMap((day, i) => (closureOn(site.closures, day) ? [] : [i]));
   const choices = open.length > 0 ? open : context.laterDays.map((_, i) => i);
-  const { waiting, index, price } = bestLater(
-    waitingPack(pack, trip, context.prices),
-    pack,
-    context,
+  const waiting = waitingPack(pack, trip, context.prices);
+  const { index, price } = cheapestVisit(
+    waiting,
+    context.now,
     choices.map((i) => context.laterMoments[i]!),
   );
   const visits = context.moments.map((moment) => priceVisit(waiting, context.now, moment));
@@ -205,5 +191,6 @@ export function outlookOf(
     gainMinor,
     standing: standingOf(gainMinor, trip.shareMinor, day, context),
     waitingMinorPerWeek: waitingCostPerWeek(waiting, context.now, context.moments.at(-1)!),
+    sufferedMinor: sufferedSoFar(waiting, context.now),
   };
 }

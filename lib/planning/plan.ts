@@ -73,7 +73,7 @@ export function preparePlan(input: PlanInput): PreparedPlan {
     ...site,
     outlooks: site.outlooks.filter((o) => !input.excludedAssets.has(o.pack.assetId)),
   }));
-  const due = dueSites(wanted, input.cellsOnHand, context.now);
+  const due = dueSites(wanted, input.cellsOnHand, context);
   const dueBySite = new Map(due.map((d) => [d.site.siteId, d]));
   const knownBySite = new Map(input.known.map((k) => [k.siteId, k]));
   const visits = outlooks.flatMap(({ site, outlooks: all }) => {

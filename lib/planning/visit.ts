@@ -60,6 +60,8 @@ export function visitOf(
   const perDay = (of: (outlook: PackOutlook, d: number) => number) =>
     context.days.map((_: IsoDay, d) => swaps.reduce((sum, o) => sum + of(o, d), 0));
   const trips = swaps.length > 0 ? tripsSaved(swaps) * tripOf(site, context).shareMinor : 0;
+  // A lonely site would be put off anew every week: what was suffered counts until it pays the trip.
+  const suffered = swaps.reduce((sum, o) => sum + o.sufferedMinor, 0);
   // The walk to the gate is part of a trip's share; reads alone wait for no trip of their own.
   const workMinor = ((serviceS - ARRIVAL_S) / 3600) * context.prices.crewMinorPerHour;
   return {
@@ -68,7 +70,10 @@ export function visitOf(
     outlooks,
     serviceS,
     dayMinor: perDay((outlook, d) => outlook.visits[d]!.totalMinor),
-    laterMinor: swaps.reduce((sum, o) => sum + o.later.price.totalMinor, trips + workMinor),
+    laterMinor: swaps.reduce(
+      (sum, o) => sum + o.later.price.totalMinor,
+      trips + workMinor + suffered,
+    ),
     expectedOut: perDay((outlook, d) => outlook.visits[d]!.chanceOut),
     cells: cellsOf(tasks),
   };

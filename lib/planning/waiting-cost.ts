@@ -16,7 +16,7 @@ import { chanceOutBy, countUpTo, meanLife, sumBetween, type LifeQuantiles } from
 
 export interface SilencePrices {
   readonly silenceMinorPerHour: Minor;
-  /** A trip for this pack alone, out of turn. */
+  /** A trip for this pack alone, out of turn, beyond the planned visit that it saves. */
   readonly urgentTripMinor: Minor;
   /** Hours until such a trip arrives, silence running. */
   readonly urgentResponseH: number;
@@ -41,6 +41,16 @@ export interface VisitPrice {
 }
 
 /**
+ * What a failure costs beyond the planned swap that it replaces: silence until the next round,
+ * or an urgent trip and the silence until it arrives.
+ */
+export function costOfFailure(prices: SilencePrices): Minor {
+  const { silenceMinorPerHour: hourly } = prices;
+  const urgent = prices.urgentTripMinor + prices.urgentResponseH * hourly;
+  return Math.min(prices.nextRoundH * hourly, urgent);
+}
+
+/**
  * Cost of a device that stops at `stopsAt` when its visit is due at `visitAt`: silence until then
  * or until the next round, or an urgent trip where that is cheaper. For a device that is out
  * already the visit itself is the answer, so its silence counts in full.
@@ -55,8 +65,7 @@ export function costOfStopping(
   const silentH = (visitAt - Math.max(stopsAt, now)) * 24;
   const waiting = Math.max(0, silentH) * prices.silenceMinorPerHour;
   if (stopsAt <= now) return waiting;
-  const urgent = prices.urgentTripMinor + prices.urgentResponseH * prices.silenceMinorPerHour;
-  return Math.min(waiting, prices.nextRoundH * prices.silenceMinorPerHour, urgent);
+  return Math.min(waiting, costOfFailure(prices));
 }
 
 /** Expected silence before a visit: quantiles by whether they are out, capped or running. */
@@ -64,8 +73,7 @@ function expectedSilence(pack: WaitingPack, now: EpochDays, visitAt: EpochDays):
   const { life, silenceMinorPerHour: hourly } = pack;
   if (hourly === 0) return 0;
   const perDay = hourly * 24;
-  const urgent = pack.urgentTripMinor + pack.urgentResponseH * hourly;
-  const most = Math.min(pack.nextRoundH * hourly, urgent);
+  const most = costOfFailure(pack);
   const before = countUpTo(life, Math.min(now, visitAt));
   // Between now and the visit silence runs; what stops long before it costs the cap.
   const capped = Math.max(before, countUpTo(life, visitAt - most / perDay));
@@ -113,6 +121,12 @@ export function keepCostPerDay(
 export function waitingCostPerWeek(pack: WaitingPack, now: EpochDays, at: EpochDays): Minor {
   const change = priceVisit(pack, now, at + 7).totalMinor - priceVisit(pack, now, at).totalMinor;
   return Math.max(0, change);
+}
+
+/** What the silence of a device that is out for certain has cost until now; 0 for any other. */
+export function sufferedSoFar(pack: WaitingPack, now: EpochDays): Minor {
+  if (countUpTo(pack.life, now) < pack.life.length) return 0;
+  return (now - meanLife(pack.life)) * 24 * pack.silenceMinorPerHour;
 }
 
 /** The cheapest of several moments, and its price. @throws RangeError when none is given */

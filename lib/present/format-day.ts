@@ -1,6 +1,6 @@
 import { MS_PER_DAY, type IsoDay } from "@/lib/units";
-import { dayNumber, dayOfInstant } from "./calendar-days";
-import { EN_DASH, NBSP, type Presentation } from "./locale";
+import { dayNumber } from "./calendar-days";
+import { EN_DASH, NBSP } from "./locale";
 import { dateFormatter } from "./formatters";
 
 export interface DayStyle {

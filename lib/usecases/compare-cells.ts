@@ -3,7 +3,7 @@ import { findAsset } from "@/db/queries/assets";
 import { type CellTypeRow, listCellTypes } from "@/db/queries/cell-types";
 import { findDeviceModel } from "@/db/queries/device-models";
 import { listDrawMeasurements } from "@/db/queries/draw-measurements";
-import { loadForecastCatalogue } from "@/db/queries/forecast-inputs";
+import { loadDeviceEvents, loadForecastCatalogue } from "@/db/queries/forecast-inputs";
 import { getOrganisation, type Organisation } from "@/db/queries/organisation";
 import { findInstalledPack } from "@/db/queries/packs";
 import { type ModelPlace, placesOfModel, siteOfAsset } from "@/db/queries/model-places";
@@ -42,7 +42,7 @@ export const compareCells = defineUseCase({
     const choice = chooseCells(candidates, {
       ...{ device, now: toEpochDays(deps.now()) },
       visitMinor: visitMinor(organisation, catalogue, place, model.swapMinutes),
-      priorOf: await priors(deps, subject, candidates),
+      priorOf: await priors(deps, catalogue, subject, candidates),
     });
     return { organisation, subject, device, choice };
   },
@@ -129,16 +129,21 @@ function visitMinor(
 }
 
 /** What finished packs of this device model in this climate taught, on each cell type. */
-async function priors(deps: Deps, subject: Subject, candidates: readonly CandidateCell[]) {
+async function priors(
+  deps: Deps,
+  catalogue: ForecastCatalogue,
+  subject: Subject,
+  candidates: readonly CandidateCell[],
+) {
   const member = (cellTypeId: string) => ({
     assetId: subject.assetId ?? "",
     deviceModelId: subject.model.id,
     cellTypeId,
     climateId: subject.place?.climateId ?? null,
+    installedAt: deps.now(),
   });
-  const priorOf = await fleetPriors(
-    deps.db,
-    candidates.map((cell) => member(cell.id)),
-  );
-  return (cellId: string) => priorOf(member(cellId));
+  const events = subject.assetId ? await loadDeviceEvents(deps.db, [subject.assetId]) : [];
+  const members = candidates.map((cell) => member(cell.id));
+  const priorOf = await fleetPriors(deps.db, catalogue, members);
+  return (cellId: string) => priorOf(member(cellId), events);
 }

@@ -1,9 +1,16 @@
 import type { Kysely } from "kysely";
 import type { Database } from "@/db/client";
-import { type FinishedRow, listFinishedPacks } from "@/db/queries/outcomes";
-import type { FleetPrior } from "@/lib/battery";
-import { cohortPrior, devicePrior, type FinishedPack, learnCohorts } from "@/lib/battery";
-import { groupBy } from "./forecast-input";
+import {
+  type DeviceEventRow,
+  loadPacksToForecast,
+  loadReadingsToForecast,
+  type PackToForecast,
+  type ReadingToForecast,
+} from "@/db/queries/forecast-inputs";
+import { finishedByChemistry, listFinishedPacks } from "@/db/queries/outcomes";
+import { type FinishedHistory, type FleetLesson, type FleetPrior, learnFleet } from "@/lib/battery";
+import { toEpochDays } from "@/lib/units";
+import { type ForecastCatalogue, forecastInputOf, groupBy } from "./forecast-input";
 
 interface Member {
   readonly assetId: string;
@@ -12,39 +19,102 @@ interface Member {
   readonly climateId: string | null;
 }
 
+interface Forecastable extends Member {
+  readonly installedAt: Date;
+}
+
+/** Enough to know a model's packs by; older ones tell of older cells. */
+const OF_EACH_MODEL = 200;
+/** Packs whose voltages are read at a time. */
+const BATCH = 500;
+
+interface Learned {
+  readonly version: string;
+  readonly lesson: FleetLesson;
+}
+
+/** What was learned from each database, by chemistry, until another pack comes out. */
+const LEARNED = new WeakMap<Kysely<Database>, Map<string, Learned>>();
+
 /** Packs alike: the same device model on the same cells in the same climate. */
 function cohortOf(member: Member): string {
   return `${member.deviceModelId} ${member.cellTypeId} ${member.climateId ?? ""}`;
 }
 
 /**
- * What finished packs teach about these: learned from every pack of their device models that
- * came out. A pack of a cohort nobody has seen the end of gets none.
+ * What finished packs teach about these, learned from the latest packs of their chemistries that
+ * came out: lives, voltage curves, ends. Learned anew when another pack has come out.
  */
 export async function fleetPriors(
   db: Kysely<Database>,
-  packs: readonly Member[],
-): Promise<(pack: Member) => FleetPrior | null> {
-  const models = [...new Set(packs.map((pack) => pack.deviceModelId))];
-  const finished = (await listFinishedPacks(db, models)).map(finishedOf);
-  const lives = new Map(learnCohorts(finished).map((life) => [life.cohort, life]));
-  const ofDevice = groupBy(finished, (pack) => `${pack.deviceKey} ${pack.cohort}`);
-  return (pack) => {
-    const cohort = cohortOf(pack);
-    const life = lives.get(cohort);
-    if (!life) return null;
-    const own = ofDevice.get(`${pack.assetId} ${cohort}`);
-    return own ? devicePrior(life, own) : cohortPrior(life);
+  catalogue: ForecastCatalogue,
+  packs: readonly Forecastable[],
+): Promise<(pack: Forecastable, events: readonly DeviceEventRow[]) => FleetPrior | null> {
+  const chemistryOf = (pack: Member) => catalogue.cells.get(pack.cellTypeId)?.chemistry;
+  const wanted = new Set(packs.map(chemistryOf));
+  const known = LEARNED.get(db) ?? new Map<string, Learned>();
+  LEARNED.set(db, known);
+  for (const { chemistry, version } of await finishedByChemistry(db)) {
+    const stands = known.get(chemistry)?.version === version;
+    if (stands || ![...wanted].some((one) => one === chemistry)) continue;
+    const lesson = learnFleet(await loadHistories(db, catalogue, chemistry));
+    known.set(chemistry, { version, lesson });
+  }
+  return (pack, events) => {
+    const chemistry = chemistryOf(pack);
+    if (!chemistry) return null;
+    const changedAt = changedBefore(pack, events);
+    const member = { deviceKey: pack.assetId, cohort: cohortOf(pack), chemistry, changedAt };
+    return known.get(chemistry)?.lesson.priorFor(member) ?? null;
   };
 }
 
-function finishedOf(row: FinishedRow): FinishedPack {
+/** The last change of the device before this pack went in; later ones are the filter's to hear. */
+function changedBefore(pack: Forecastable, events: readonly DeviceEventRow[]): number | null {
+  const changes = events.filter(
+    ({ kind, at }) =>
+      (kind === "firmware_changed" || kind === "device_replaced") && at <= pack.installedAt,
+  );
+  return changes.length > 0 ? Math.max(...changes.map(({ at }) => toEpochDays(at))) : null;
+}
+
+async function loadHistories(
+  db: Kysely<Database>,
+  catalogue: ForecastCatalogue,
+  chemistry: string,
+): Promise<FinishedHistory[]> {
+  const finished = await listFinishedPacks(db, chemistry, OF_EACH_MODEL);
+  const histories: FinishedHistory[] = [];
+  for (let from = 0; from < finished.length; from += BATCH) {
+    const page = finished.slice(from, from + BATCH);
+    const ids = page.map((row) => row.packId);
+    const packs = groupBy(await loadPacksToForecast(db, ids, "removed"), (row) => row.packId);
+    const readings = groupBy(await loadReadingsToForecast(db, ids), (row) => row.packId);
+    for (const row of page) {
+      const pack = packs.get(row.packId)?.[0];
+      if (pack) histories.push(historyOf(catalogue, pack, readings.get(row.packId) ?? [], row));
+    }
+  }
+  return histories;
+}
+
+function historyOf(
+  catalogue: ForecastCatalogue,
+  row: PackToForecast,
+  readings: readonly ReadingToForecast[],
+  { lotId, censored, endedAt }: { lotId: string | null; censored: boolean; endedAt: Date },
+): FinishedHistory {
+  // lives are told beside the duty cycle: a current measured since says nothing of them
+  const unmeasured = { ...row, measuredAverageUa: null, lastHeardAt: null };
+  const input = forecastInputOf(catalogue, unmeasured, readings, [], null, endedAt);
   return {
     packKey: row.packId,
     deviceKey: row.assetId,
     cohort: cohortOf(row),
-    lot: row.lotId,
-    lifeRatio: row.days / (row.promisedDays ?? row.days),
-    ranOut: !row.censored,
+    lot: lotId,
+    pack: input.pack,
+    readings: input.readings,
+    outAt: toEpochDays(endedAt),
+    ranOut: !censored,
   };
 }

@@ -34,7 +34,14 @@ export async function packForecast(
   if (!pack) return null;
   const catalogue = arrangeCatalogue(rows);
   const events = await loadDeviceEvents(deps.db, [pack.assetId]);
-  const priorOf = await fleetPriors(deps.db, [pack]);
-  const input = forecastInputOf(catalogue, pack, readings, events, priorOf(pack), deps.now());
+  const priorOf = await fleetPriors(deps.db, catalogue, [pack]);
+  const input = forecastInputOf(
+    catalogue,
+    pack,
+    readings,
+    events,
+    priorOf(pack, events),
+    deps.now(),
+  );
   return { catalogue, pack, input, forecast: forecastPack(input) };
 }

@@ -5,7 +5,7 @@ import {
   loadPacksToForecast,
   loadReadingsToForecast,
 } from "@/db/queries/forecast-inputs";
-import { type ForecastRow, installedPackIds, saveForecasts } from "@/db/queries/forecasts";
+import { type ForecastRow, installedPackPage, saveForecasts } from "@/db/queries/forecasts";
 import { findOrganisation } from "@/db/queries/organisation";
 import { type Forecast, forecastPack } from "@/lib/battery";
 import { fromEpochDays } from "@/lib/units";
@@ -31,24 +31,35 @@ export const refreshForecasts = defineUseCase({
     const organisation = await findOrganisation(deps.db);
     if (!organisation) return { refreshed: 0 };
     const catalogue = arrangeCatalogue(await loadForecastCatalogue(deps.db));
-    const wanted = packIds ?? (await installedPackIds(deps.db, null));
+    const terms = { catalogue, organisation };
     let refreshed = 0;
-    for (let from = 0; from < wanted.length; from += BATCH) {
-      refreshed += await refreshBatch(
-        deps,
-        catalogue,
-        organisation,
-        wanted.slice(from, from + BATCH),
-      );
-    }
+    for await (const page of packIds ? pagesOf(packIds) : installedPages(deps))
+      refreshed += await refreshBatch(deps, terms, page);
     return { refreshed };
   },
 });
 
+function* pagesOf(packIds: readonly string[]): Generator<readonly string[]> {
+  for (let from = 0; from < packIds.length; from += BATCH) yield packIds.slice(from, from + BATCH);
+}
+
+/** Every pack in service, page by page. */
+async function* installedPages({ db }: Deps): AsyncGenerator<readonly string[]> {
+  let page = await installedPackPage(db, null, BATCH);
+  while (page.length > 0) {
+    yield page;
+    page = await installedPackPage(db, page[page.length - 1] ?? null, BATCH);
+  }
+}
+
+interface Terms {
+  readonly catalogue: ForecastCatalogue;
+  readonly organisation: WaitingPrices;
+}
+
 async function refreshBatch(
   deps: Deps,
-  catalogue: ForecastCatalogue,
-  prices: WaitingPrices,
+  { catalogue, organisation }: Terms,
   packIds: readonly string[],
 ): Promise<number> {
   const knownAt = deps.now();
@@ -63,7 +74,7 @@ async function refreshBatch(
   ]);
   const readingsOf = groupBy(readings, (row) => row.packId);
   const eventsOf = groupBy(events, (row) => row.assetId);
-  const priorOf = await fleetPriors(deps.db, packs);
+  const priorOf = await fleetPriors(deps.db, catalogue, packs);
   const rows = packs.map((pack) => {
     const forecast = forecastPack(
       forecastInputOf(
@@ -71,11 +82,11 @@ async function refreshBatch(
         pack,
         readingsOf.get(pack.packId) ?? [],
         eventsOf.get(pack.assetId) ?? [],
-        priorOf(pack),
+        priorOf(pack, eventsOf.get(pack.assetId) ?? []),
         knownAt,
       ),
     );
-    const waiting = waitingMinorPerWeek(catalogue, prices, pack, forecast, knownAt);
+    const waiting = waitingMinorPerWeek(catalogue, organisation, pack, forecast, knownAt);
     return rowOf(pack.packId, forecast, waiting);
   });
   await saveForecasts(deps.db, rows, knownAt);

@@ -68,6 +68,8 @@ export function twin(state: AssetState): AssetState {
     ...state,
     device: { ...state.device },
     drawRng: state.drawRng.clone(),
+    meterRng: state.meterRng.clone(),
+    cellRng: state.cellRng.clone(),
     pack: state.pack ? cloneString(state.pack) : null,
   };
 }

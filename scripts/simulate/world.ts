@@ -61,6 +61,8 @@ export interface World {
   ): Measurement;
   /** When the device stopped on its present pack; null while it runs or has no pack. */
   stoppedAt(assetKey: string): number | null;
+  /** Another world that is in the same state and goes its own way from here on. */
+  copy(): World;
   /** Hidden truth: when the present pack will stop the device if left alone, within `days`. */
   lookAhead(assetKey: string, days: number): number | null;
   /** Hidden truth about the present pack. */
@@ -96,7 +98,7 @@ class Fleet implements World {
 
   constructor(
     private readonly rng: Rng,
-    config: WorldConfig,
+    private readonly config: WorldConfig,
   ) {
     this.today = config.firstDay;
     this.weather = createWeather(rng.fork("weather"), config.climate, config.firstDay);
@@ -165,6 +167,15 @@ class Fleet implements World {
 
   stoppedAt(assetKey: string): number | null {
     return this.stateOf(assetKey).stoppedAt;
+  }
+
+  copy(): World {
+    // The generators of weather and lots hang on keys alone, so the copy draws the same ones.
+    const other = new Fleet(this.rng, { ...this.config, lots: [], assets: [] });
+    other.today = this.today;
+    for (const [key, lot] of this.lots) other.lots.set(key, lot);
+    for (const [key, state] of this.assets) other.assets.set(key, twin(state));
+    return other;
   }
 
   lookAhead(assetKey: string, days: number): number | null {

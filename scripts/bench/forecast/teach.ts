@@ -2,44 +2,34 @@
  * What the fleet knows before the scored packs: every device's first pack, run to its end or
  * (every third) swapped early, taught by the product's own learning.
  */
-import {
-  cohortPrior,
-  devicePrior,
-  type FinishedPack,
-  forecastPack,
-  learnCohorts,
-} from "../../../lib/battery";
+import { learnFleet } from "../../../lib/battery";
 import type { Trial } from "./score";
 import type { TrialDevice } from "./trial";
 
 /** Early swaps come out at this share of their life. */
 const EARLY = 0.7;
 
-function finished(device: TrialDevice, index: number): FinishedPack {
-  const pack = device.packs[0]!;
-  const { spec } = pack;
-  const at = { pack: spec, readings: [], events: [], prior: null, now: spec.installedAt };
-  const promised = forecastPack(at).quantiles.p50 - spec.installedAt;
-  const ranOut = index % 3 !== 0;
-  const life = (pack.end - spec.installedAt) * (ranOut ? 1 : EARLY);
-  return {
-    packKey: `${device.key}/0`,
-    deviceKey: device.key,
-    cohort: device.cohort,
-    lot: null,
-    lifeRatio: life / Math.max(promised, 1),
-    ranOut,
-  };
-}
-
 /** Second packs with what the first ones taught. */
 export function taughtTrials(devices: readonly TrialDevice[]): Trial[] {
-  const past = devices.map(finished);
-  const cohorts = new Map(learnCohorts(past).map((life) => [life.cohort, life]));
-  return devices.map((device, i) => {
-    const life = cohorts.get(device.cohort);
-    const own = past[i]!;
-    const prior = life ? (own.ranOut ? devicePrior(life, [own]) : cohortPrior(life)) : null;
-    return { pack: device.packs[1]!, prior };
-  });
+  const lesson = learnFleet(
+    devices.map((device, index) => {
+      const { spec, readings, end } = device.packs[0]!;
+      const ranOut = index % 3 !== 0;
+      const outAt = ranOut ? end : spec.installedAt + (end - spec.installedAt) * EARLY;
+      return {
+        packKey: `${device.key}/0`,
+        deviceKey: device.key,
+        cohort: device.cohort,
+        lot: null,
+        pack: spec,
+        readings: readings.filter((r) => r.at <= outAt),
+        outAt,
+        ranOut,
+      };
+    }),
+  );
+  return devices.map(({ key, cohort, chemistry, packs }) => ({
+    pack: packs[1]!,
+    prior: lesson.priorFor({ deviceKey: key, cohort, chemistry }),
+  }));
 }

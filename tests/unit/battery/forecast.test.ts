@@ -2,7 +2,8 @@ import { describe, expect, test } from "vitest";
 import { packMv, packCurve } from "../../../lib/battery/cutoff";
 import { chanceOutBy, forecastPack } from "../../../lib/battery/forecast";
 import type { Forecast, PackReading, PackSpec } from "../../../lib/battery/pack";
-import { fullCapacity } from "../../../lib/battery/pack-model";
+import { fullCapacity, packModel } from "../../../lib/battery/pack-model";
+import { filmChance } from "../../../lib/battery/passivation";
 import { ER34615, LR6, input, pack } from "./cells";
 
 const START = 19_000;
@@ -147,11 +148,43 @@ describe("readings", () => {
     });
     const dip = reading(now, 2600, { kind: "loaded" });
     const f = forecastPack(input({ pack: p, readings: [dip], now }));
-    expect(f.weights[0]).toMatchObject({ reason: "passivation", weight: 0 });
-    expect(f.quantiles).toEqual(forecastPack(input({ pack: p, now })).quantiles);
+    expect(f.weights[0]!.reason).toBe("passivation");
+    expect(f.weights[0]!.weight).toBeLessThan(0.05);
+    const unread = forecastPack(input({ pack: p, now })).quantiles;
+    expect(Math.abs(f.quantiles.p50 - unread.p50)).toBeLessThan(0.02 * (unread.p50 - START));
     const repeat = reading(now, 3300, { kind: "loaded", id: "again" });
     const second = forecastPack(input({ pack: p, readings: [dip, repeat], now }));
     expect(second.weights[1]!.reason).not.toBe("passivation");
+  });
+});
+
+// Maxell ER data sheet: the film grows at rest and recovers under load; how fast is from memory.
+describe("the film of a Li-SOCl2 cell", () => {
+  const model = (chemistry: "li-socl2" | "alkaline", sleepUa: number) =>
+    packModel(
+      pack({
+        cell: chemistry === "alkaline" ? LR6 : ER34615,
+        duty: [
+          { name: "sleep", currentUa: sleepUa, durationMs: 59_900 },
+          { name: "send", currentUa: 20_000, durationMs: 100 },
+        ],
+      }),
+      null,
+    );
+
+  test("is likelier after a longer rest, and never of another chemistry", () => {
+    const cell = model("li-socl2", 60);
+    const chances = [0, 5, 30, 120, 365].map((days) => filmChance(cell, days));
+    expect(chances).toEqual([...chances].sort((a, b) => a - b));
+    expect(chances[0]).toBe(0);
+    expect(filmChance(model("alkaline", 60), 365)).toBe(0);
+  });
+
+  test("is kept thin by the device's own pulses, not on the shelf", () => {
+    expect(filmChance(model("li-socl2", 60), 120)).toBeLessThan(
+      filmChance(model("li-socl2", 19_000), 120),
+    );
+    expect(filmChance(model("li-socl2", 60), Infinity)).toBeGreaterThan(0.9);
   });
 });
 

@@ -3,7 +3,15 @@ import { describe, expect, it } from "vitest";
 import { bestAge } from "@/lib/planning/age-replacement";
 import { bestInterval, shiftPenalty, worthGrouping } from "@/lib/planning/grouping";
 import { chanceOutBy, meanLife } from "@/lib/planning/life";
-import { costOfStopping, priceVisit, waitingCostPerWeek } from "@/lib/planning/waiting-cost";
+import { longRunPremium } from "@/lib/planning/long-run";
+import { waitingPack } from "@/lib/planning/outlook";
+import {
+  costOfFailure,
+  costOfStopping,
+  priceVisit,
+  waitingCostPerWeek,
+} from "@/lib/planning/waiting-cost";
+import { PRICES } from "./district";
 
 describe("age replacement (Barlow & Proschan 1965)", () => {
   // Source: documentation of the Python package `reliability`, "Optimal replacement time", after a
@@ -52,6 +60,41 @@ describe("grouping (Wildeman, Dekker & Smit 1997)", () => {
   });
 });
 
+describe("what service costs in the long run", () => {
+  it("is what age replacement makes of log-normal lives", () => {
+    // Barlow & Proschan's rate times the mean life over the planned cost, for ln(life) of spread
+    // 0.17 and a failure that costs 0.5 to 10 cycles more: minimised independently in Python (trapezoid,
+    // 20,000 ages). Ratios are rounded to 5 %, which moves the figure by less than 1 %.
+    const recomputed = [
+      [0.5, 1.31006],
+      [1, 1.39808],
+      [2, 1.47932],
+      [5, 1.57844],
+      [10, 1.64872],
+    ] as const;
+    for (const [ratio, premium] of recomputed) {
+      expect(Math.abs(longRunPremium(100 * ratio, 100) / premium - 1)).toBeLessThan(0.01);
+    }
+  });
+
+  it("is the plain cost of a cycle over its life where a failure costs nothing more", () => {
+    expect(longRunPremium(0, 100)).toBe(1);
+    expect(longRunPremium(100, 0)).toBe(1);
+  });
+
+  it("never costs more than waiting for every failure", () => {
+    fc.assert(
+      fc.property(fc.double({ min: 0.01, max: 50, noNaN: true }), (ratio) => {
+        const premium = longRunPremium(ratio * 100, 100);
+        expect(premium).toBeGreaterThanOrEqual(1);
+        // Running to failure costs 1 + ratio a cycle; a little more for the rounding of ratios.
+        expect(premium).toBeLessThanOrEqual((1 + ratio) * 1.03);
+      }),
+      { seed: 20261205 },
+    );
+  });
+});
+
 describe("the life of a pack", () => {
   const uniform = Array.from({ length: 50 }, (_, i) => 100 + (i + 0.5) * 2);
 
@@ -74,6 +117,7 @@ describe("what waiting costs", () => {
   };
   const uniform = Array.from({ length: 50 }, (_, i) => 100 + (i + 0.5) * 2);
   const pack = { ...prices, life: uniform, keepMinorPerDay: 4 };
+  const of = { installedAt: 0, swapS: 900, cellsMinor: 500 };
 
   it("counts silence until the visit, or an urgent trip where that is cheaper", () => {
     // By hand: 3 days at 10 an hour = 720; after 30 days 7200 > 5000 + 240.
@@ -82,6 +126,21 @@ describe("what waiting costs", () => {
     expect(costOfStopping(prices, 0, 104, 103)).toBe(0);
     // A round that comes by after a week ends the silence: 168 h at 10.
     expect(costOfStopping({ ...prices, nextRoundH: 168 }, 0, 100, 130)).toBe(1680);
+  });
+
+  it("takes the cheaper way out of a failure", () => {
+    // By hand: 600 h at 10 = 6000 against a trip of 5000 and 24 h at 10; 168 h at 10 = 1680.
+    expect(costOfFailure(prices)).toBe(5240);
+    expect(costOfFailure({ ...prices, nextRoundH: 168 })).toBe(1680);
+    expect(costOfFailure({ ...prices, silenceMinorPerHour: 0 })).toBe(0);
+  });
+
+  it("asks no more of a failure than the urgent trip adds to the swap that it replaces", () => {
+    // By hand: a stop's share of a drive is paid either way, so the urgent trip costs what it
+    // exceeds that by; the work of the swap is in neither.
+    const trip = { shareMinor: 800, urgentMinor: 8_800 };
+    const urgent = waitingPack({ ...pack, ...of, silenceMinorPerHour: 1_000 }, trip, PRICES);
+    expect(costOfFailure(urgent)).toBe(8_000 + 24 * 1_000);
   });
 
   it("counts a device that is out already from now on, without a cheaper way out", () => {

@@ -49,6 +49,23 @@ describe("a world", () => {
     expect(lived(1)).not.toEqual(lived(2));
   });
 
+  it("can be copied: the copy goes on as the first would, and neither moves the other", () => {
+    const first = world(5);
+    first.swap("a", "good", FIRST_DAY);
+    first.step(FIRST_DAY + 90);
+    const copy = first.copy();
+    const ahead = (w: World): unknown[] => {
+      w.swap("b", "bad", FIRST_DAY + 100);
+      w.step(FIRST_DAY + 200);
+      const read = w.measure("a", FIRST_DAY + 200, "resting").millivolts;
+      return [read, w.truth("a"), w.truth("b"), w.weather.meanC(FIRST_DAY + 190)];
+    };
+    const gone = ahead(copy);
+    expect(first.truth("b")).toBeNull();
+    expect(first.day).toBe(FIRST_DAY + 90);
+    expect(ahead(first)).toEqual(gone);
+  });
+
   it("leaves one asset's fate alone when another is visited, read and swapped", () => {
     const quiet = world(7);
     const busy = world(7);

@@ -20,16 +20,6 @@ export async function findLot(db: Kysely<Database>, lotId: string) {
   return row ?? null;
 }
 
-/** A lot by its code, or null. */
-export async function findLotByCode(db: Kysely<Database>, code: string) {
-  const row = await db
-    .selectFrom("lot")
-    .select(["id", "cellTypeId"])
-    .where("code", "=", code)
-    .executeTakeFirst();
-  return row ?? null;
-}
-
 export interface NewLot {
   readonly id: string;
   readonly code: string;

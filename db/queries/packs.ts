@@ -61,16 +61,6 @@ export async function findPack(db: Kysely<Database>, packId: string) {
   return row ?? null;
 }
 
-/** The pack of an asset that came out at this moment: how a repeated swap is known. */
-export async function latestRemoval(db: Kysely<Database>, assetId: string): Promise<Date | null> {
-  const row = await db
-    .selectFrom("pack")
-    .select((eb) => eb.fn.max("removedAt").as("at"))
-    .where("assetId", "=", assetId)
-    .executeTakeFirst();
-  return row?.at ?? null;
-}
-
 /** Whether a device model takes this cell type. */
 export async function acceptsCellType(
   db: Kysely<Database>,

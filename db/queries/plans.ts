@@ -68,19 +68,6 @@ export async function plansWithin(
   return rows as PlanRow[];
 }
 
-/** The newest plans of any state but discarded. */
-export async function newestPlans(db: Kysely<Database>, limit: number): Promise<PlanRow[]> {
-  const rows = await db
-    .selectFrom("plan")
-    .select(COLUMNS)
-    .where("state", "!=", "discarded")
-    .orderBy("firstDay", "desc")
-    .orderBy("createdAt", "desc")
-    .limit(limit)
-    .execute();
-  return rows as PlanRow[];
-}
-
 export interface NewPlan {
   readonly id: string;
   readonly name: string;

@@ -90,12 +90,6 @@ export function readPlate(input: ForecastInput, measured: MeasuredVoltage): Plat
   };
 }
 
-/** The forecast on the phone, for a pack that the server's day has none of yet. */
-export function forecastHere(input: ForecastInput) {
-  const forecast = forecastPack(input);
-  return { window: windowOf(forecast), shareLeft: forecast.shareLeft.p50 };
-}
-
 function windowOf({ quantiles }: Forecast): CutoffWindow {
   return {
     p05: fromEpochDays(quantiles.p05),

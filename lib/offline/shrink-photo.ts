@@ -1,8 +1,9 @@
+import { PHOTO_EDGE_PX } from "@/lib/sync/photos";
+
 /**
  * Photos made small on the phone. Drawing a picture and packing it anew leaves everything behind that
  * was not picture: where it was taken, when, with what.
  */
-const EDGE_PX = 1600;
 const QUALITY = 0.82;
 /** No phone's camera makes more; unpacking it could bring the page down. */
 const MOST_BYTES = 40_000_000;
@@ -11,7 +12,7 @@ const MOST_BYTES = 40_000_000;
  * A photo as JPEG, its longer edge at most `edgePx`.
  * @throws Error with words for the person when the file is no photo
  */
-export async function shrinkPhoto(photo: Blob, edgePx = EDGE_PX): Promise<ArrayBuffer> {
+export async function shrinkPhoto(photo: Blob, edgePx = PHOTO_EDGE_PX): Promise<ArrayBuffer> {
   if (photo.size > MOST_BYTES) throw new Error("This file is too large for a photo.");
   const picture = await createImageBitmap(photo).catch(() => {
     throw new Error("This file is no photo that the phone can read.");

@@ -2,7 +2,7 @@
 import type { IsoDay } from "@/lib/units";
 import type { DayWindow } from "../routing/problem";
 import type { ClosedSeason, PlanningSite } from "./fleet";
-import { daysBetween, elapsedOfWall } from "./local-time";
+import { elapsedOfWall } from "./local-time";
 
 /** The closed season in which a day lies, or undefined. */
 export function closureOn(
@@ -15,11 +15,6 @@ export function closureOn(
       ? firstMonthDay <= monthDay && monthDay <= lastMonthDay
       : monthDay >= firstMonthDay || monthDay <= lastMonthDay,
   );
-}
-
-/** Days from today until the notice that the site asks for has run out. */
-export function noticeHasRun(site: PlanningSite, today: IsoDay, day: IsoDay): boolean {
-  return daysBetween(today, day) >= site.noticeDays;
 }
 
 /**

@@ -1,7 +1,6 @@
 import { z } from "zod";
 import { AppError, invalid, notFound } from "@/lib/errors";
 import { slotIndex, visitIndex } from "@/lib/planning/edits";
-import type { PlannedTask } from "@/lib/planning/fleet";
 import { notWorkingWords } from "@/lib/planning/refusal-words";
 import type { Edit } from "@/lib/routing/evaluate";
 import { formatDay } from "@/lib/present/format-day";
@@ -82,12 +81,4 @@ export function editOf(open: OpenPlan, act: PlanAct, siteOfAsset: string | null)
       return { kind: "move", site, slot, ...at };
     }
   }
-}
-
-/** The task that brings an asset into a plan: a swap of its installed pack. */
-export function swapOfAsset(open: OpenPlan, assetId: string): PlannedTask | null {
-  const pack = open.world.input.packs.find((p) => p.assetId === assetId);
-  if (!pack) return null;
-  const { packId, cellTypeId, cells } = pack;
-  return { kind: "swap", assetId, packId, cellTypeId, cells };
 }

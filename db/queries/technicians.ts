@@ -7,6 +7,9 @@ export interface Shift {
   /** Local times, "HH:MM" or "HH:MM:SS". */
   readonly starts: string;
   readonly ends: string;
+  /** Both or none. */
+  readonly breakStarts: string | null;
+  readonly breakEnds: string | null;
 }
 export interface Absence {
   readonly id: string;
@@ -58,7 +61,7 @@ export async function findTechnician(db: Kysely<Database>, id: string) {
   const [shifts, absences] = await Promise.all([
     db
       .selectFrom("shift")
-      .select(["weekday", "starts", "ends"])
+      .select(["weekday", "starts", "ends", "breakStarts", "breakEnds"])
       .where("technicianId", "=", id)
       .orderBy("weekday")
       .execute(),

@@ -522,6 +522,8 @@ export interface Round {
 }
 
 export interface Shift {
+  breakEnds: string | null;
+  breakStarts: string | null;
   ends: string;
   starts: string;
   technicianId: string;

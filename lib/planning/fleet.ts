@@ -76,6 +76,8 @@ export interface PlanningTechnician {
     readonly weekday: number;
     readonly startsS: Seconds;
     readonly endsS: Seconds;
+    /** Work and driving stand still between these; left out: no break. */
+    readonly pause?: { readonly startsS: Seconds; readonly endsS: Seconds } | null;
   }[];
   readonly absences: readonly Absence[];
   /** Cells that the van holds; null when nobody said. */

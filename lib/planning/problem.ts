@@ -1,6 +1,12 @@
 /** From technicians, visits and a travel table to the routing engine's problem. */
 import type { IsoDay } from "@/lib/units";
-import { LARGEST_INTEGER, type Problem, type Site, type Slot } from "../routing/problem";
+import {
+  type DayWindow,
+  LARGEST_INTEGER,
+  type Problem,
+  type Site,
+  type Slot,
+} from "../routing/problem";
 import { CHANGE_MINOR, COST_UNITS_A_MINOR, LOADING_S, OVERTIME_S } from "./assumptions";
 import {
   TICKETS,
@@ -76,6 +82,16 @@ function shiftOf({ technician, day }: SlotKey, frame: PlanningFrame) {
   return { startS: earliest + LOADING_S, endS: at(shift.endsS) };
 }
 
+/** The break of a slot's shift, on its axis; what is left of it where the slot begins late. */
+function breaksOf({ technician, day }: SlotKey, frame: PlanningFrame): DayWindow[] {
+  const pause = technician.shifts.find((s) => s.weekday === weekdayOf(day))?.pause;
+  if (!pause) return [];
+  const at = (wallS: number) => elapsedOfWall(day, wallS, frame.timeZone);
+  const openS = Math.max(at(pause.startsS), shiftOf({ technician, day }, frame).startS);
+  const closeS = at(pause.endsS);
+  return openS < closeS ? [{ openS, closeS }] : [];
+}
+
 /** Places of the travel table: every technician's depot, then every visit's site. */
 export function placesOf(
   technicians: readonly PlanningTechnician[],
@@ -117,7 +133,7 @@ function slotOf(key: SlotKey, parts: Parts, cellTypeIds: readonly string[]): Slo
     overtimePerS: perSecond(
       Math.max(0, parts.prices.overtimeMinorPerHour - parts.prices.crewMinorPerHour),
     ),
-    breaks: [],
+    breaks: breaksOf(key, parts.frame),
     capacity: cellTypeIds.map(() => vanCells),
     capacityTotal: vanCells,
     skills: ticketMask(technician.tickets),

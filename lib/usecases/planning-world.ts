@@ -135,6 +135,10 @@ function technicianOf(row: TechnicianRow, binding: readonly StoredRound[]): Plan
       weekday: shift.weekday,
       startsS: secondsOfClock(shift.starts),
       endsS: secondsOfClock(shift.ends),
+      pause:
+        shift.breakStarts && shift.breakEnds
+          ? { startsS: secondsOfClock(shift.breakStarts), endsS: secondsOfClock(shift.breakEnds) }
+          : null,
     })),
     absences: row.absences,
     vanCells: row.cellCapacity,

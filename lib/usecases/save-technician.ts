@@ -8,12 +8,40 @@ import { defineUseCase, personIdOf } from "./use-case";
 
 const clock = z.string().regex(/^([01]\d|2[0-3]):[0-5]\d(:00)?$/, "Enter a time as HH:MM.");
 
+/** A time, or nothing. */
+const optionalClock = z
+  .union([z.literal("").transform(() => null), clock])
+  .nullable()
+  .default(null);
+
 const shift = z
-  .object({ weekday: z.number().int().min(1).max(7), starts: clock, ends: clock })
+  .object({
+    ...{ weekday: z.number().int().min(1).max(7), starts: clock, ends: clock },
+    ...{ breakStarts: optionalClock, breakEnds: optionalClock },
+  })
   .refine(({ starts, ends }) => ends > starts, {
     path: ["ends"],
     message: "A shift ends after it starts, on the same day.",
+  })
+  .refine(({ breakStarts, breakEnds }) => (breakStarts === null) === (breakEnds === null), {
+    path: ["breakEnds"],
+    message: "A break has a beginning and an end; leave both empty for none.",
+  })
+  .refine(isBreakWithin, {
+    path: ["breakEnds"],
+    message: "A break ends after it starts, within the shift.",
   });
+
+function isBreakWithin(one: {
+  readonly starts: string;
+  readonly ends: string;
+  readonly breakStarts: string | null;
+  readonly breakEnds: string | null;
+}): boolean {
+  const { starts, ends, breakStarts, breakEnds } = one;
+  if (breakStarts === null || breakEnds === null) return true;
+  return starts <= breakStarts && breakStarts < breakEnds && breakEnds <= ends;
+}
 
 /** Makes a person a technician of a crew, or changes van, tickets and weekly shifts. */
 export const saveTechnician = defineUseCase({

@@ -78,6 +78,10 @@ export function technicianRows(s: Scenario): Rows<"technician"> {
   }));
 }
 
+/** Everybody's break, in minutes past local midnight. */
+const NOON = 12 * 60;
+const BREAK_MINUTES = 30;
+
 export function shiftRows(s: Scenario): Rows<"shift"> {
   return s.technicians.flatMap((t) =>
     Object.entries(t.shifts).map(([weekday, [starts, ends]]) => ({
@@ -85,6 +89,8 @@ export function shiftRows(s: Scenario): Rows<"shift"> {
       weekday: Number(weekday),
       starts: clock(starts),
       ends: clock(ends),
+      breakStarts: clock(NOON),
+      breakEnds: clock(NOON + BREAK_MINUTES),
     })),
   );
 }

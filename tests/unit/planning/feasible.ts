@@ -95,9 +95,21 @@ export function faultsOf(input: PlanInput, rounds: readonly PlannedRound[]): str
       if (seenSites.has(site.siteId)) faults.push(`${site.name} visited twice`);
       seenSites.add(site.siteId);
       const arrives = stop.arrivesAt.getTime() / 1000;
-      if (arrives - free < roadSeconds(at, site, input.road) - 2)
+      const { pause } = shift;
+      // Seconds of the wall clock between two instants that fall into the break.
+      const idle = (fromS: number, toS: number) => {
+        const wall = (s: number) => wallClock(new Date(s * 1000), frame.timeZone).seconds;
+        const [a, b] = [
+          Math.max(wall(fromS), pause?.startsS ?? 0),
+          Math.min(wall(toS), pause?.endsS ?? 0),
+        ];
+        return pause ? Math.max(0, b - a) : 0;
+      };
+      if (arrives - free - idle(free, arrives) < roadSeconds(at, site, input.road) - 2)
         faults.push(`${site.name} reached faster than the road allows`);
       const [from, to] = [stop.beginsAt, stop.departsAt].map((t) => wallClock(t, frame.timeZone));
+      if (pause && from!.seconds > pause.startsS && from!.seconds < pause.endsS)
+        faults.push(`${site.name} begun in the break`);
       const workS = stop.tasks.reduce((sum, task) => {
         const pack = input.packs.find((p) => p.assetId === task.assetId)!;
         if (task.kind === "swap") {
@@ -106,7 +118,8 @@ export function faultsOf(input: PlanInput, rounds: readonly PlannedRound[]): str
         }
         return sum + (task.kind === "swap" ? pack.swapS : pack.readS);
       }, 0);
-      if (stop.departsAt.getTime() - stop.beginsAt.getTime() < workS * 1000)
+      const [beginsS, departsS] = [stop.beginsAt, stop.departsAt].map((t) => t.getTime() / 1000);
+      if (departsS! - beginsS! - idle(beginsS!, departsS!) < workS)
         faults.push(`${site.name} has too little time for its work`);
       if (site.hours && (from!.seconds < site.hours.opensS || to!.seconds > site.hours.closesS))
         faults.push(`${site.name} outside its hours`);

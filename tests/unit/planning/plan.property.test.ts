@@ -68,7 +68,11 @@ const anyInput = fc
       technicians: technicians.map((more, i) =>
         technician(i, {
           ...more,
-          shifts: weekdays.map((weekday) => ({ weekday, startsS: 25_200, endsS: 54_000 })),
+          // Every other one has a break, from 11:30 to 12:15.
+          shifts: weekdays.map((weekday) => ({
+            ...{ weekday, startsS: 25_200, endsS: 54_000 },
+            pause: i % 2 === 0 ? { startsS: 41_400, endsS: 44_100 } : null,
+          })),
         }),
       ),
       packs: packs.map(([at, p], i) =>

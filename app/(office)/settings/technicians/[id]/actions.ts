@@ -24,6 +24,8 @@ export const saveTechnicianAction = defineAction(
       weekday,
       starts: text(form, `starts-${weekday}`),
       ends: text(form, `ends-${weekday}`),
+      breakStarts: text(form, `breakStarts-${weekday}`),
+      breakEnds: text(form, `breakEnds-${weekday}`),
     })),
   }),
   ({ technicianId }, form) => {

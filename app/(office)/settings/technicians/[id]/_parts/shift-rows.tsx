@@ -8,6 +8,8 @@ export interface Shift {
   /** "HH:MM" or "HH:MM:SS", local time. */
   starts: string;
   ends: string;
+  breakStarts: string | null;
+  breakEnds: string | null;
 }
 
 export interface ShiftRowsProps {
@@ -16,7 +18,7 @@ export interface ShiftRowsProps {
   locale: string;
 }
 
-/** Seven lines: works that day, from, to. */
+/** Seven lines: works that day, from, to, and a break. */
 export function ShiftRows({ entries, shifts, locale }: ShiftRowsProps) {
   return (
     <div className="divide-y divide-hair">
@@ -35,6 +37,18 @@ export function ShiftRows({ entries, shifts, locale }: ShiftRowsProps) {
             />
             <span className="text-soft">to</span>
             <Hour {...{ entries, day, edge: "ends", label: `${name} to` }} time={shift?.ends} />
+            <span className="flex flex-wrap items-center gap-x-3 gap-y-1">
+              <span className="text-soft">break</span>
+              <Hour
+                {...{ entries, day, edge: "breakStarts", label: `${name}, break from` }}
+                time={shift?.breakStarts ?? undefined}
+              />
+              <span className="text-soft">to</span>
+              <Hour
+                {...{ entries, day, edge: "breakEnds", label: `${name}, break to` }}
+                time={shift?.breakEnds ?? undefined}
+              />
+            </span>
           </div>
         );
       })}
@@ -46,14 +60,16 @@ export function ShiftRows({ entries, shifts, locale }: ShiftRowsProps) {
 interface HourProps {
   entries: Entries;
   day: number;
-  edge: "starts" | "ends";
+  edge: "starts" | "ends" | "breakStarts" | "breakEnds";
   label: string;
   time: string | undefined;
 }
 
+/** What a day that was free before starts with; nobody has a break unasked. */
+const USUAL = { starts: "08:00", ends: "16:00", breakStarts: "", breakEnds: "" };
+
 function Hour({ entries, day, edge, label, time }: HourProps) {
-  const fallback = edge === "starts" ? "08:00" : "16:00";
-  const { name, defaultValue } = entries.text(`${edge}-${day}`, time?.slice(0, 5) ?? fallback);
+  const { name, defaultValue } = entries.text(`${edge}-${day}`, time?.slice(0, 5) ?? USUAL[edge]);
   return (
     <input
       type="time"
@@ -67,7 +83,8 @@ function Hour({ entries, day, edge, label, time }: HourProps) {
 
 /** Faults come by place among the ticked days, "shifts.0.ends". */
 function ShiftFault({ entries }: { entries: Entries }) {
-  const places = [0, 1, 2, 3, 4, 5, 6].flatMap((i) => [`shifts.${i}.starts`, `shifts.${i}.ends`]);
+  const edges = ["starts", "ends", "breakStarts", "breakEnds"];
+  const places = [0, 1, 2, 3, 4, 5, 6].flatMap((i) => edges.map((edge) => `shifts.${i}.${edge}`));
   const fault = ["shifts", ...places].map((field) => entries.fault(field)).find(Boolean);
   return fault ? <p className="px-3 py-2 font-medium text-brick-ink">{fault}</p> : null;
 }

@@ -111,6 +111,9 @@ function CrewEntries(props: TechnicianFormProps & { entries: Entries }) {
 function shiftDefaults({ stored, workingDays }: TechnicianFormProps): { shifts: readonly Shift[] } {
   if (stored) return { shifts: stored.shifts };
   return {
-    shifts: workingDays.map((weekday) => ({ weekday, starts: "08:00", ends: "16:00" })),
+    shifts: workingDays.map((weekday) => ({
+      ...{ weekday, starts: "08:00", ends: "16:00" },
+      ...{ breakStarts: null, breakEnds: null },
+    })),
   };
 }

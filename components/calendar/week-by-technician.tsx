@@ -1,5 +1,6 @@
 "use client";
 
+import { useEffect, useRef } from "react";
 import type { DateLocalizer, ViewStatic } from "react-big-calendar";
 import DateContentRow from "react-big-calendar/lib/DateContentRow";
 import type { Shown, Technician } from "./shown-visit";
@@ -26,11 +27,9 @@ function WeekByTechnician(props: WeekProps) {
   const { date, localizer, events, resources } = props;
   const days = daysShown(weekOf(date, localizer), events);
   return (
-    <div className="rbc-month-view week-by-technician" role="table" aria-label="Visits of the week">
-      <div role="row" className="week-line week-head">
-        <span role="columnheader" className="week-name">
-          Technician
-        </span>
+    <div className="rbc-month-view week-by-technician" role="group" aria-label="Visits of the week">
+      <div className="week-line week-head">
+        <span className="week-name">Technician</span>
         <span className="week-days">
           {days.map((day) => (
             <DayHead key={day.toISOString()} day={day} {...props} />
@@ -66,7 +65,7 @@ function DayHead({ day, ...props }: WeekProps & { day: Date }) {
   const { localizer, getNow, onDrillDown } = props;
   const isToday = localizer.isSameDate(day, getNow());
   return (
-    <span role="columnheader" className={`week-day ${isToday ? "rbc-today" : ""}`}>
+    <span className={`week-day ${isToday ? "rbc-today" : ""}`}>
       <button type="button" onClick={() => onDrillDown(day, "day")}>
         {localizer.format(day, "dayFormat")}
       </button>
@@ -83,11 +82,15 @@ function TechnicianLine({
   const own = events
     .filter((visit) => visit.resourceId === technician.id && isOn(days, visit.start))
     .sort((a, b) => a.start.getTime() - b.start.getTime());
+  const line = useRef<HTMLDivElement>(null);
+  // The library calls these parts rows of a table, but puts buttons where cells would have to be.
+  useEffect(() => {
+    const parts = line.current?.querySelectorAll("[role=row], [role=rowgroup]") ?? [];
+    for (const part of parts) part.removeAttribute("role");
+  });
   return (
-    <div className="week-line">
-      <div className="week-name" aria-hidden="true">
-        {technician.name}
-      </div>
+    <div ref={line} className="week-line" role="group" aria-label={technician.name}>
+      <div className="week-name">{technician.name}</div>
       <DateContentRow
         {...{ localizer, accessors, getters, components, getNow }}
         className="rbc-month-row"
@@ -99,7 +102,7 @@ function TechnicianLine({
         resizable={false}
         onSelect={props.onSelectEvent}
         renderHeader={({ date, key }) => (
-          <span key={key} role="cell" className="sr-only">
+          <span key={key} className="sr-only">
             {technician.name}, {localizer.format(date, "dayFormat")}
           </span>
         )}

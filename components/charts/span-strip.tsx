@@ -16,9 +16,7 @@ export function SpanStrip({ model, decorative }: { model: SpanStripModel; decora
       decorative={decorative}
       className="block"
     >
-      {model.gridX.map((x) => (
-        <line key={x} x1={x} x2={x} y2={height} className="stroke-hair" />
-      ))}
+      <path d={model.gridX.map((x) => `M${x} 0V${height}`).join("")} className="stroke-hair" />
       {past && <line {...past} y1={mid} y2={mid} className={stroke} strokeWidth="3" />}
       {ahead && <line {...ahead} y1={mid} y2={mid} className={stroke} strokeWidth="1.5" />}
       {spindle && (

@@ -56,13 +56,13 @@ export function DataTable<Row>(props: DataTableProps<Row>) {
             ))}
           </tr>
         </thead>
-        <tbody>
+        <tbody className="[&>tr>*]:h-9.5 [&>tr>*]:font-normal [&>tr>*]:whitespace-nowrap">
           {rows.map((row) => (
             <Row key={props.rowKey(row)} row={row} {...props} />
           ))}
           {rows.length === 0 && (
             <tr>
-              <td colSpan={columns.length} className="px-4 py-8">
+              <td colSpan={columns.length} className="h-auto! px-4 py-8 whitespace-normal!">
                 {props.empty ?? "Nothing to show."}
               </td>
             </tr>
@@ -78,7 +78,9 @@ function cellClass<Row>(column: Column<Row>): string {
     column.fit === "flush" ? "p-0" : "px-2.5",
     column.align === "right" ? "text-right" : "text-left",
     column.wideOnly ? "max-xl:hidden" : "",
-  ].join(" ");
+  ]
+    .filter(Boolean)
+    .join(" ");
 }
 
 function Head<Row>({ column, sort }: { column: Column<Row>; sort: SortState | undefined }) {
@@ -112,7 +114,7 @@ function Row<R>({ row, columns, rowKey, selectedKey }: DataTableProps<R> & { row
   const selected = selectedKey !== undefined && selectedKey === rowKey(row);
   return (
     <tr
-      aria-current={selected ? "true" : undefined}
+      {...(selected && { "aria-current": "true" as const })}
       className="border-t border-hair first:border-t-0 hover:bg-picked aria-[current=true]:bg-picked"
     >
       {columns.map((column) => {
@@ -120,8 +122,8 @@ function Row<R>({ row, columns, rowKey, selectedKey }: DataTableProps<R> & { row
         return (
           <Cell
             key={column.key}
-            scope={column.rowHeader ? "row" : undefined}
-            className={`h-9.5 font-normal whitespace-nowrap ${cellClass(column)}`}
+            {...(column.rowHeader && { scope: "row" })}
+            className={cellClass(column)}
           >
             {column.cell(row)}
           </Cell>

@@ -73,7 +73,10 @@ function columns(
       head: "Name and site",
       sortKey: "site",
       cell: (row) => (
-        <span className="block max-w-60 truncate" title={`${row.asset}, ${row.site}`}>
+        <span
+          className="block max-w-60 truncate"
+          title={[row.asset, row.site].filter(Boolean).join(", ")}
+        >
           <FindingMark kinds={findings.get(row.key)} />
           {row.asset} <span className="text-soft">{row.site}</span>
         </span>

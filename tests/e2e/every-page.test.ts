@@ -27,6 +27,8 @@ const OFFICE = [
   "/fleet/models",
   "/stores",
   "/stores/demand",
+  "/stores/lots",
+  "/stores/return-box",
   "/record",
   "/record/findings",
   "/record/readings",

@@ -14,13 +14,13 @@ export default async function FindingsPage() {
   const actor = await requireActor();
   const view = await listFindings(deps(), actor, {});
   return (
-    <main id="main" className="page">
+    <>
       <PageHead
         title="Findings"
         lede="Each night the whole fleet is looked over for lots that die early and for device models whose draw changed."
       />
       <RecordTabs current="findings" />
       <FindingList view={view} maySettle={mayUse(dismissFinding, actor)} />
-    </main>
+    </>
   );
 }

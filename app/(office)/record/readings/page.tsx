@@ -15,7 +15,7 @@ export default async function ReadingsInDoubtPage() {
   const actor = await requireActor();
   const view = await listReadingsInDoubt(deps(), actor, {});
   return (
-    <main id="main" className="page">
+    <>
       <PageHead
         title="Readings in doubt"
         lede="Voltages of packs in service that the forecast hardly counts. None is thrown away: confirm it, correct it or set it aside. The original stays, and the forecast follows."
@@ -27,6 +27,6 @@ export default async function ReadingsInDoubtPage() {
       />
       <RecordTabs current="readings" />
       <DoubtTable view={view} mayJudge={mayUse(giveVerdict, actor)} />
-    </main>
+    </>
   );
 }

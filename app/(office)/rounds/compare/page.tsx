@@ -21,13 +21,13 @@ export default async function ComparePage(props: { searchParams: Promise<unknown
   });
   const [plan] = view.plans;
   return (
-    <main id="main" className="page">
+    <>
       <PageHead
         crumb={{ label: "Rounds", href: `/rounds?week=${plan.firstDay}&plan=${plan.id}` }}
         title="Two plans side by side"
         lede={view.words}
       />
       <ComparedTables view={view} />
-    </main>
+    </>
   );
 }

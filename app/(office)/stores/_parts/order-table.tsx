@@ -64,13 +64,12 @@ function columns({ organisation, now }: DemandView): Column<Row>[] {
         </>
       ),
     },
-    { key: "packs", head: "Packs in", align: "right", cell: (row) => count(row.packs) },
-    { key: "stock", head: "To hand", align: "right", cell: (row) => count(row.type.inStock) },
     {
-      key: "short",
-      head: "May run short",
+      key: "packs",
+      head: "Packs in",
       align: "right",
-      cell: ({ order }) => (order.shortFrom === null ? "not this year" : day(order.shortFrom)),
+      wideOnly: true,
+      cell: (row) => count(row.packs),
     },
     {
       key: "lead",
@@ -79,6 +78,7 @@ function columns({ organisation, now }: DemandView): Column<Row>[] {
       wideOnly: true,
       cell: ({ type }) => `${count(type.leadTimeDays)} d`,
     },
+    { key: "stock", head: "To hand", align: "right", cell: (row) => count(row.type.inStock) },
     {
       key: "by",
       head: "Order by",
@@ -91,6 +91,12 @@ function columns({ organisation, now }: DemandView): Column<Row>[] {
       head: "Order",
       align: "right",
       cell: ({ order }) => (order.orderSize > 0 ? count(order.orderSize) : NOTHING),
+    },
+    {
+      key: "short",
+      head: "May run short",
+      align: "right",
+      cell: ({ order }) => (order.shortFrom === null ? "not this year" : day(order.shortFrom)),
     },
     {
       key: "cost",

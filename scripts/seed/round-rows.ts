@@ -1,3 +1,4 @@
+import { weekName } from "@/lib/usecases/plan-week";
 import type { Insertable } from "kysely";
 import type { Database } from "@/db/client";
 import type { ScenarioRound } from "../simulate/scenario/field-log";
@@ -27,7 +28,7 @@ function planRow(monday: number, now: Date): Insertable<Database["plan"]> {
   const dispatcher = rowId("person", "dispatcher");
   return {
     id: rowId("plan", isoDay(monday)),
-    name: `Week of ${isoDay(monday)}`,
+    name: weekName(isoDay(monday), isoDay(monday)),
     firstDay: isoDay(monday),
     lastDay: isoDay(monday + 6),
     state: "published",

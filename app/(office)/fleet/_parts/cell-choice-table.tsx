@@ -36,7 +36,7 @@ export function CellChoiceTable({ view }: { view: CellComparison }) {
 }
 
 function Wrapped({ children, wide }: { children: ReactNode; wide?: boolean }) {
-  const width = wide ? "w-72" : "w-48";
+  const width = wide ? "w-68" : "w-44";
   return <span className={`block py-1.5 whitespace-normal ${width}`}>{children}</span>;
 }
 

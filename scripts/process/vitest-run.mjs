@@ -2,7 +2,7 @@ import { readFileSync, rmSync } from "node:fs";
 import { join, relative } from "node:path";
 import { run, tail } from "./command.mjs";
 
-const MINUTES = 12;
+const MINUTES = 15;
 
 /**
  * One project of vitest.config.ts.

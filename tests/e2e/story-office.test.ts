@@ -16,7 +16,7 @@ import {
   signIn,
   type Size,
 } from "../support/browser";
-import { mails, until } from "../support/mailbox";
+import { mails, settledMails, until } from "../support/mailbox";
 
 const SIZES: readonly Size[] = ["desktop", "phone"];
 const db = connect(process.env.DATABASE_URL ?? "", { max: 2 });
@@ -83,7 +83,7 @@ describe.each(SIZES)("a dispatcher at %s size", (size) => {
     await page.goto(productUrl("/rounds"));
     await page.getByRole("link", { name: /Week after/ }).click();
     await page.waitForURL(/week=/);
-    const sent = (await mails()).length;
+    const sent = (await settledMails()).length;
     await page.getByRole("button", { name: "Build rounds" }).click();
     const dialog = page.getByRole("dialog", { name: "Build rounds" });
     await dialog.getByRole("button", { name: "Build", exact: true }).click();

@@ -1,0 +1,141 @@
+"use client";
+
+import Link from "next/link";
+import { SpanStrip } from "@/components/charts/span-strip";
+import { StripHead } from "@/components/charts/strip-head";
+import { WaneDisc } from "@/components/charts/wane-disc";
+import { type Column, DataTable } from "@/components/ui/data-table";
+import type { HorizonRowModel } from "@/lib/present/horizon";
+import { hrefWith } from "@/lib/present/paging";
+import type { StripHeadModel } from "@/lib/present/strip-head";
+import type { HorizonView } from "@/lib/usecases/read-horizon";
+import { FindingMark } from "./finding-mark";
+import type { HorizonParams } from "./horizon-params";
+import { NothingDue } from "./nothing-due";
+
+export interface HorizonRowsProps {
+  head: StripHeadModel;
+  rows: readonly HorizonRowModel[];
+  findings: HorizonView["findings"];
+  order: string;
+  descending: boolean;
+  params: HorizonParams;
+}
+
+/**
+ * The rows of the Horizon. A client component, so that the page carries each row once as data:
+ * as a server component a row would go out twice, as markup and as the tree that it came from.
+ */
+export function HorizonRows({ head, rows, findings, order, descending, params }: HorizonRowsProps) {
+  return (
+    <DataTable
+      caption="Packs in service by when they reach cut-off"
+      columns={columns(head, findings)}
+      rows={rows}
+      rowKey={(row) => row.key}
+      sort={{
+        key: order,
+        direction: descending ? "descending" : "ascending",
+        hrefFor: (key, direction) =>
+          hrefWith("/horizon", params, {
+            order: key,
+            dir: direction === "ascending" ? "asc" : "desc",
+          }),
+      }}
+      empty={<NothingDue narrowed={Object.keys(params).length > 0} />}
+    />
+  );
+}
+
+function columns(
+  head: StripHeadModel,
+  findings: HorizonView["findings"],
+): Column<HorizonRowModel>[] {
+  return [
+    {
+      key: "tag",
+      head: "Asset",
+      sortKey: "tag",
+      rowHeader: true,
+      cell: (row) => (
+        <Link
+          href={`/fleet/${encodeURIComponent(row.tag)}`}
+          className="font-mono text-xs font-semibold hover:underline"
+        >
+          {row.tag}
+        </Link>
+      ),
+    },
+    {
+      key: "site",
+      head: "Name and site",
+      sortKey: "site",
+      cell: (row) => (
+        <span
+          className="block max-w-60 truncate"
+          title={[row.asset, row.site].filter(Boolean).join(", ")}
+        >
+          <FindingMark kinds={findings.get(row.key)} />
+          {row.asset} <span className="text-soft">{row.site}</span>
+        </span>
+      ),
+    },
+    {
+      key: "pack",
+      head: "Pack",
+      wideOnly: true,
+      cell: (row) => <span className="font-cond text-soft">{row.pack}</span>,
+    },
+    {
+      key: "left",
+      head: "Left",
+      sortKey: "left",
+      cell: (row) => (
+        <span className="inline-flex items-center gap-2">
+          <WaneDisc model={row.disc} decorative /> {row.left}
+        </span>
+      ),
+    },
+    {
+      key: "strip",
+      head: <StripHead model={head} />,
+      fit: "flush",
+      cell: (row) => <SpanStrip model={row.strip} />,
+    },
+    {
+      key: "window",
+      head: "Cut-off window",
+      sortKey: "cutoff",
+      cell: (row) => <CutoffWindow row={row} />,
+    },
+    {
+      key: "waiting",
+      head: "Waiting costs",
+      sortKey: "waiting",
+      align: "right",
+      cell: (row) => row.waiting,
+    },
+    {
+      key: "visit",
+      head: "Visit",
+      cell: ({ visit }) =>
+        visit.href ? (
+          <Link href={visit.href} className="text-dusk-ink hover:underline">
+            {visit.label}
+          </Link>
+        ) : (
+          <span className="text-soft">{visit.label}</span>
+        ),
+    },
+  ];
+}
+
+function CutoffWindow({ row }: { row: HorizonRowModel }) {
+  if (!row.window) return <span className="text-soft">being worked out</span>;
+  return (
+    <>
+      {row.window.from} – <b>{row.window.likely}</b> – {row.window.to}
+      {row.stale && <span className="ml-1.5 text-soft">· being renewed</span>}
+    </>
+  );
+}

@@ -1,4 +1,5 @@
 import { ChartFrame } from "@/components/charts/frame";
+import { TickLines } from "@/components/charts/tick-lines";
 import type { PredictionPlotModel } from "@/lib/present/prediction-plot";
 
 /** Days left as said across, as found upward; on the diagonal both agree. */
@@ -12,18 +13,7 @@ export function PredictionPlot({ model }: { model: PredictionPlotModel }) {
       className="block w-full max-w-sm font-cond text-2xs"
     >
       <path d={model.corridor} className="fill-spruce-tint" />
-      {model.ticks.map((tick) => (
-        <g key={tick.label}>
-          <line x1={plot.left} x2={plot.right} y1={tick.y} y2={tick.y} className="stroke-hair" />
-          <line x1={tick.x} x2={tick.x} y1={plot.top} y2={plot.bottom} className="stroke-hair" />
-          <text x={plot.left - 6} y={tick.y + 4} textAnchor="end" className="fill-soft">
-            {tick.label}
-          </text>
-          <text x={tick.x} y={plot.bottom + 16} textAnchor="middle" className="fill-soft">
-            {tick.label}
-          </text>
-        </g>
-      ))}
+      <TickLines plot={plot} ticks={model.ticks} />
       <path
         d={`M${plot.left} ${plot.bottom}L${plot.right} ${plot.top}`}
         className="stroke-soft"

@@ -1,4 +1,5 @@
 import { ChartFrame } from "@/components/charts/frame";
+import { TickLines } from "@/components/charts/tick-lines";
 import type { ReliabilityPlotModel } from "@/lib/present/reliability-plot";
 
 /** Chance forecast across, share that came true upward. */
@@ -60,18 +61,7 @@ function Grid({ model }: { model: ReliabilityPlotModel }) {
   const { plot } = model;
   return (
     <>
-      {model.ticks.map((tick) => (
-        <g key={tick.label}>
-          <line x1={plot.left} x2={plot.right} y1={tick.y} y2={tick.y} className="stroke-hair" />
-          <line x1={tick.x} x2={tick.x} y1={plot.top} y2={plot.bottom} className="stroke-hair" />
-          <text x={plot.left - 6} y={tick.y + 4} textAnchor="end" className="fill-soft">
-            {tick.label}
-          </text>
-          <text x={tick.x} y={plot.bottom + 16} textAnchor="middle" className="fill-soft">
-            {tick.label}
-          </text>
-        </g>
-      ))}
+      <TickLines plot={plot} ticks={model.ticks} />
       <path
         d={`M${plot.left} ${plot.top}V${plot.bottom}H${plot.right}`}
         className="fill-none stroke-ink"

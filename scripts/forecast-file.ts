@@ -213,7 +213,7 @@ const column = (text: string): string =>
 
 /** Rows of a CSV parted by commas, semicolons or tabs, whichever its table's header has most of. */
 function parseRows(text: string): string[][] {
-  const line = text.split(/\r?\n/).find((one) => /\bmillivolts\b/i.test(one)) ?? "";
+  const line = text.split(/\r?\n/).find((one) => /(^|[,;\t])\s*at\s*([,;\t]|$)/i.test(one)) ?? "";
   const count = (mark: string): number => line.split(mark).length;
   const delimiter = [",", ";", "\t"].reduce((a, b) => (count(b) > count(a) ? b : a));
   try {

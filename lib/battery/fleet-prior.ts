@@ -47,6 +47,11 @@ const SPREAD_WEIGHT = 6;
 /** At least this share of the spread of lives is the devices' own. */
 const LEAST_DEVICE = 0.25;
 
+/** No factor is believed beyond this: a pack that failed on its first day tells of a fault. */
+const FARTHEST = Math.log(20);
+
+const clamped = (ln: number): number => Math.min(FARTHEST, Math.max(-FARTHEST, ln));
+
 interface OwnFit extends GroupMean {
   readonly cohort: string;
   readonly spread: number;
@@ -119,10 +124,13 @@ function priorOf(life: CohortLife, mean: number, device: number, pack: number): 
   const drawMean = life.mean * DRAW_PART + (mean - life.mean);
   return {
     capacityFactor: {
-      mean: ASSUMED.capacityMean * Math.exp(life.mean * (1 - DRAW_PART)),
+      mean: ASSUMED.capacityMean * Math.exp(clamped(life.mean * (1 - DRAW_PART))),
       relativeSd: Math.sqrt(pack),
     },
-    drawFactor: { mean: Math.exp(-drawMean), relativeSd: Math.sqrt(device) },
+    drawFactor: {
+      mean: Math.exp(clamped(-drawMean)),
+      relativeSd: Math.sqrt(device),
+    },
     packs: life.packs,
   };
 }

@@ -43,13 +43,18 @@ async function main(): Promise<void> {
   if (!Number.isInteger(packs) || packs < 1)
     throw new Error("--packs: give a whole number of 1 or more.");
   const life = new Lifetime().listen();
+  const tell = (name: string, error: unknown): void => {
+    process.stderr.write(`${name}: ${String(error)}\n`);
+  };
+  // Ctrl-C leaves neither a server nor a database behind
+  void life.asked.then(() => life.end(tell)).then(() => process.exit(130));
   try {
     const server = process.env.DATABASE_URL ?? (await startTemporaryPostgres(life)).url("postgres");
     const database = await throwAwayDatabase(server);
     life.onEnd("throw-away database", database.drop);
     print(await measure(database.url, packs));
   } finally {
-    await life.end((name, error) => process.stderr.write(`${name}: ${String(error)}\n`));
+    await life.end(tell);
   }
 }
 

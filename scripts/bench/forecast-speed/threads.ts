@@ -58,7 +58,10 @@ async function serve(worker: Worker, run: Run, next: () => Promise<string[]>): P
 
 function answer(worker: Worker): Promise<unknown> {
   return new Promise((resolve, reject) => {
-    worker.once("message", resolve);
     worker.once("error", reject);
+    worker.once("message", (message) => {
+      worker.off("error", reject);
+      resolve(message);
+    });
   });
 }

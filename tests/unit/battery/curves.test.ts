@@ -1,4 +1,5 @@
 import { describe, expect, test } from "vitest";
+import { usableCapacity } from "../../../lib/battery/capacity";
 import { COLD_CELSIUS, CURVES } from "../../../lib/battery/curve-tables";
 import { resistanceMohm, restingMv } from "../../../lib/battery/curves";
 import { packEndDepth } from "../../../lib/battery/cutoff";
@@ -147,4 +148,19 @@ describe("end of life is where the loaded voltage meets the cut-off", () => {
   test("a cut-off above the fresh loaded voltage ends it at once", () => {
     expect(packEndDepth(pack({ cutoffMv: 5000 }), 30_000, 200)).toBe(0);
   });
+});
+
+// LR03 SUPER specification JSS142.2011: 1300 mAh at 10 mA to 0.8 V; open circuit at least 1.57 V;
+// at least 1.40 V on 3.9 ohm for 0.3 s.
+test("an LR03 keeps what its specification asks of a fresh cell", () => {
+  const rated = { currentUa: 10_000, cutoffMv: 800, temperatureDc: 200, capacityMah: 1300 };
+  const lr03 = {
+    ...{ chemistry: "alkaline" as const, nominalMv: 1500, rated, capacityTable: [] },
+    ...{ selfDischargePpmPerYear: 30_000, resistanceMohm: 300, maxPulseUa: null },
+  };
+  expect(usableCapacity(lr03, 10_000, 800, 200)).toBe(1300);
+  const open = restingMv(lr03, 0, 200);
+  expect(open).toBeGreaterThanOrEqual(1570);
+  const amperes = open / 1000 / (3.9 + resistanceMohm(lr03, 0, 200) / 1000);
+  expect(3900 * amperes).toBeGreaterThanOrEqual(1400);
 });

@@ -93,6 +93,18 @@ describe("a lesson", () => {
     expect(changed.drawFactor.relativeSd).toBeGreaterThan(0.35);
   });
 
+  test("packs that failed within days leave a prior that can be forecast with", () => {
+    const failed = paces.map((p, i) => ({
+      ...history(i, p, 0),
+      readings: [],
+      outAt: SPEC.installedAt + 1.1 + i / 10,
+    }));
+    const prior = learnFleet(failed).priorFor(member(0))!;
+    const now = SPEC.installedAt + 1;
+    const said = forecastPack({ pack: SPEC, readings: [], events: [], prior, now });
+    expect(said.cdfDays.every(Number.isFinite)).toBe(true);
+  });
+
   test("nothing finished, nothing taught; an unseen cohort gets what its chemistry taught", () => {
     expect(learnFleet([]).priorFor(member(0))).toBeNull();
     const lesson = learnFleet(paces.map((p, i) => history(i, p, 0)));

@@ -1,36 +1,55 @@
 import { ChartFrame } from "@/components/charts/frame";
 import { toneStroke, toneTint } from "@/components/charts/tone-class";
-import type { Pennant, SpanStripModel } from "@/lib/present/span-strip";
+import {
+  pennantPath,
+  SPINDLE_BOTTOM,
+  SPINDLE_TOP,
+  type SpanStripModel,
+  spindlePath,
+  STRIP_HEIGHT,
+  STRIP_MID,
+  type StripScale,
+} from "@/lib/present/span-strip";
+
+export interface SpanStripProps {
+  scale: StripScale;
+  model: SpanStripModel;
+  decorative?: boolean;
+  /** A `StripGround` of the same scale on the page, drawn again in place of one of its own. */
+  groundId?: string;
+}
 
 /** One pack on a shared time axis; strips stack under one StripHead of the same axis. */
-export function SpanStrip({ model, decorative }: { model: SpanStripModel; decorative?: boolean }) {
-  const { width, height, mid, past, ahead, endX, spindle } = model;
+export function SpanStrip({ scale, model, decorative, groundId }: SpanStripProps) {
+  const { past, ahead, endX, spindle } = model;
+  const { width } = scale;
+  const mid = STRIP_MID;
   const stroke = toneStroke[model.tone];
   return (
     <ChartFrame
       title={model.title}
       description={model.description}
-      viewBox={`0 0 ${width} ${height}`}
+      viewBox={`0 0 ${width} ${STRIP_HEIGHT}`}
       width={width}
-      height={height}
+      height={STRIP_HEIGHT}
       decorative={decorative}
       className="block"
     >
-      <path d={model.gridX.map((x) => `M${x} 0V${height}`).join("")} className="stroke-hair" />
+      {groundId ? <use href={`#${groundId}`} /> : <Ground scale={scale} />}
       {past && <line {...past} y1={mid} y2={mid} className={stroke} strokeWidth="3" />}
       {ahead && <line {...ahead} y1={mid} y2={mid} className={stroke} strokeWidth="1.5" />}
       {spindle && (
         <>
           <path
-            d={spindle.path}
+            d={spindlePath(spindle)}
             className={`${toneTint[model.tone]} ${stroke}`}
             strokeWidth="1.2"
           />
           <line
             x1={spindle.medianX}
             x2={spindle.medianX}
-            y1={spindle.top}
-            y2={spindle.bottom}
+            y1={SPINDLE_TOP}
+            y2={SPINDLE_BOTTOM}
             className={stroke}
             strokeWidth="2"
           />
@@ -45,19 +64,44 @@ export function SpanStrip({ model, decorative }: { model: SpanStripModel; decora
         />
       )}
       <Dots model={model} />
+      {model.pennants.map(({ x, published }) => (
+        <path
+          key={`${x}-${published}`}
+          d={pennantPath(x, width)}
+          className={`stroke-dusk-line ${published ? "fill-dusk" : "fill-sheet"}`}
+          strokeWidth="1.5"
+        />
+      ))}
+      <Beyond model={model} width={width} />
+    </ChartFrame>
+  );
+}
+
+/** The ground of a stack of strips, to be named by their `groundId`; takes no room itself. */
+export function StripGround({ id, scale }: { id: string; scale: StripScale }) {
+  return (
+    <svg className="absolute size-0" aria-hidden>
+      <g id={id}>
+        <Ground scale={scale} />
+      </g>
+    </svg>
+  );
+}
+
+/** The ticks of the axis, and today. */
+function Ground({ scale: { gridX, nowX } }: { scale: StripScale }) {
+  return (
+    <>
+      <path d={gridX.map((x) => `M${x} 0V${STRIP_HEIGHT}`).join("")} className="stroke-hair" />
       <line
-        x1={model.nowX}
-        x2={model.nowX}
-        y2={height}
+        x1={nowX}
+        x2={nowX}
+        y2={STRIP_HEIGHT}
         className="stroke-ink"
         strokeWidth="1.2"
         strokeDasharray="2 2"
       />
-      {model.pennants.map((pennant) => (
-        <PennantMark key={`${pennant.x}-${pennant.published}`} pennant={pennant} />
-      ))}
-      <Beyond model={model} />
-    </ChartFrame>
+    </>
   );
 }
 
@@ -66,7 +110,7 @@ function Dots({ model }: { model: SpanStripModel }) {
     <circle
       key={i}
       cx={x}
-      cy={model.mid}
+      cy={STRIP_MID}
       r="3.4"
       className="fill-sheet stroke-ink"
       strokeWidth="1.4"
@@ -74,20 +118,10 @@ function Dots({ model }: { model: SpanStripModel }) {
   ));
 }
 
-function PennantMark({ pennant }: { pennant: Pennant }) {
-  return (
-    <path
-      d={pennant.path}
-      className={`stroke-dusk-line ${pennant.published ? "fill-dusk" : "fill-sheet"}`}
-      strokeWidth="1.5"
-    />
-  );
-}
-
 /** An arrowhead at the edge where the likely cut-off lies outside the axis. */
-function Beyond({ model }: { model: SpanStripModel }) {
+function Beyond({ model, width }: { model: SpanStripModel; width: number }) {
   if (model.beyond === null) return null;
-  const { width, mid } = model;
+  const mid = STRIP_MID;
   const d =
     model.beyond === "after" ? `M${width - 8} ${mid - 5}l6 5l-6 5` : `M8 ${mid - 5}l-6 5l6 5`;
   return <path d={d} className={`fill-none ${toneStroke[model.tone]}`} strokeWidth="2" />;

@@ -2,12 +2,11 @@ import type { IsoDay } from "@/lib/units";
 import { dayFromNumber, dayNumber, dayOfInstant } from "./calendar-days";
 import { type CutoffDays, formatDay, formatWindow, type WindowLabel } from "./format-day";
 import { formatMoney } from "./format-quantity";
-import { shareLabel } from "./format-share";
 import { NOTHING, type Presentation } from "./locale";
 import { type SpanStripModel, spanStrip } from "./span-strip";
 import { type StripHeadModel, stripHead } from "./strip-head";
 import { type TimeAxis, timeAxis } from "./time-axis";
-import { packTone, SOON_DAYS, type Tone } from "./tone";
+import { packTone, SOON_DAYS } from "./tone";
 import { type WaneDiscModel, waneDisc } from "./wane-disc";
 
 /** A pack counts as out when it is more likely than not that its device has stopped. */
@@ -46,10 +45,8 @@ export interface HorizonRowModel {
   readonly site: string;
   readonly pack: string;
   readonly disc: WaneDiscModel;
-  readonly left: string;
-  readonly tone: Tone;
   readonly strip: SpanStripModel;
-  readonly window: WindowLabel | null;
+  readonly window: Omit<WindowLabel, "text"> | null;
   readonly stale: boolean;
   readonly waiting: string;
   readonly visit: { readonly label: string; readonly href: string | null };
@@ -116,17 +113,16 @@ export function horizonRow(
     site: row.assetName.includes(row.siteName) ? "" : row.siteName,
     pack: packLabel(row.series, row.parallel, row.designation),
     disc: waneDisc({ share, isOut, tone, locale }),
-    left: shareLabel({ share, isOut }, locale),
-    tone,
     strip: spanStrip({
       ...{ axis, today, cutoff, tone, locale },
       subject: row.tag,
+      datesBeside: true,
       installed: day(row.installedAt),
       ended: null,
       readings: (row.readAt ?? []).map(day),
       visits: row.visitDay ? [{ day: row.visitDay, published }] : [],
     }),
-    window: cutoff && formatWindow(cutoff, locale, today),
+    window: cutoff && windowWords(cutoff, locale, today),
     stale: row.staleSince !== null,
     waiting: waitingWords(row.waitingCostMinorPerWeek, presentation),
     visit: visitWords(row, published, today, locale),
@@ -136,6 +132,11 @@ export function horizonRow(
 function cutoffDays(row: HorizonRowInput, day: (at: Date) => IsoDay): CutoffDays | null {
   if (!row.p05 || !row.p50 || !row.p95) return null;
   return { p5: day(row.p05), p50: day(row.p50), p95: day(row.p95) };
+}
+
+function windowWords(cutoff: CutoffDays, locale: string, today: IsoDay) {
+  const { from, likely, to } = formatWindow(cutoff, locale, today);
+  return { from, likely, to };
 }
 
 function waitingWords(minor: number | null, presentation: Presentation): string {

@@ -23,6 +23,15 @@ export interface SpanStripInput {
   visits: readonly StripVisit[];
   tone: Tone;
   locale: string;
+  /** The cut-off and the visit stand in words beside the strip: they are not read out twice. */
+  datesBeside?: boolean;
+}
+
+/** What all strips of one axis share. */
+export interface StripScale {
+  readonly width: number;
+  readonly gridX: readonly number[];
+  readonly nowX: number;
 }
 
 /** From x1 to x2, in px along the axis. */
@@ -32,16 +41,12 @@ export interface Span {
 }
 
 export interface Spindle {
-  readonly path: string;
   readonly fromX: number;
   readonly medianX: number;
   readonly toX: number;
-  readonly top: number;
-  readonly bottom: number;
 }
 
 export interface Pennant {
-  readonly path: string;
   readonly x: number;
   readonly published: boolean;
 }
@@ -49,12 +54,7 @@ export interface Pennant {
 export interface SpanStripModel {
   readonly title: string;
   readonly description: string;
-  readonly width: number;
-  readonly height: number;
-  readonly mid: number;
   readonly tone: Tone;
-  readonly gridX: readonly number[];
-  readonly nowX: number;
   /** In service, known. */
   readonly past: Span | null;
   /** In service, expected: from today to the 5th percentile. */
@@ -68,26 +68,31 @@ export interface SpanStripModel {
 }
 
 export const STRIP_HEIGHT = 38;
-const MID = STRIP_HEIGHT / 2;
-const SPINDLE_HALF_HEIGHT = 11;
+export const STRIP_MID = STRIP_HEIGHT / 2;
+export const SPINDLE_TOP = STRIP_MID - 11;
+export const SPINDLE_BOTTOM = STRIP_MID + 11;
 /** Narrower than this a spindle could not be seen. */
 const SPINDLE_HALF_WIDTH_MIN = 2.5;
 
+/** The ground under a stack of strips: where the ticks of the axis and today stand. */
+export function stripScale(axis: TimeAxis, today: IsoDay): StripScale {
+  return {
+    width: axis.widthPx,
+    gridX: axis.ticks.map((tick) => tick.x),
+    nowX: xOf(axis, dayNumber(today)),
+  };
+}
+
 /** One pack on a shared time axis: service, readings, cut-off window and visits. */
 export function spanStrip(input: SpanStripInput): SpanStripModel {
-  const { axis, today, readings, visits, ended } = input;
+  const { axis, readings, visits, ended } = input;
   const at = (day: IsoDay) => xOf(axis, dayNumber(day));
   const inside = (x: number) => x >= 0 && x <= axis.widthPx;
   const spindle = input.cutoff && spindleOf(input.cutoff, at);
   return {
     title: input.subject,
     description: describe(input),
-    width: axis.widthPx,
-    height: STRIP_HEIGHT,
-    mid: MID,
     tone: input.tone,
-    gridX: axis.ticks.map((tick) => tick.x),
-    nowX: at(today),
     ...serviceSpans(input, at, spindle),
     endX: ended && inside(at(ended)) ? at(ended) : null,
     dots: readings.map(at).filter(inside),
@@ -95,7 +100,7 @@ export function spanStrip(input: SpanStripInput): SpanStripModel {
     beyond: beyondOf(spindle, axis.widthPx),
     pennants: visits
       .filter((visit) => inside(at(visit.day)))
-      .map((visit) => pennantOf(at(visit.day), visit.published, axis.widthPx)),
+      .map((visit) => ({ x: at(visit.day), published: visit.published })),
   };
 }
 
@@ -120,15 +125,16 @@ function serviceSpans(
 
 function spindleOf({ p5, p50, p95 }: CutoffDays, at: (day: IsoDay) => number): Spindle {
   const medianX = at(p50);
-  const fromX = Math.min(at(p5), medianX - SPINDLE_HALF_WIDTH_MIN);
-  const toX = Math.max(at(p95), medianX + SPINDLE_HALF_WIDTH_MIN);
-  const top = MID - SPINDLE_HALF_HEIGHT;
-  const bottom = MID + SPINDLE_HALF_HEIGHT;
-  return { path: spindlePath(fromX, medianX, toX, top, bottom), fromX, medianX, toX, top, bottom };
+  return {
+    fromX: Math.min(at(p5), medianX - SPINDLE_HALF_WIDTH_MIN),
+    medianX,
+    toX: Math.max(at(p95), medianX + SPINDLE_HALF_WIDTH_MIN),
+  };
 }
 
 /** Thin as a needle at both ends, full at the median. */
-function spindlePath(a: number, m: number, b: number, top: number, bottom: number): string {
+export function spindlePath({ fromX: a, medianX: m, toX: b }: Spindle): string {
+  const [mid, top, bottom] = [STRIP_MID, SPINDLE_TOP, SPINDLE_BOTTOM];
   const left = m - a;
   const right = b - m;
   const n = (value: number) => Math.round(value * 10) / 10;
@@ -137,8 +143,8 @@ function spindlePath(a: number, m: number, b: number, top: number, bottom: numbe
   const r1 = n(b - right * 0.6);
   const r2 = n(m + right * 0.25);
   return (
-    `M${a} ${MID}C${l1} ${MID} ${l2} ${top} ${m} ${top}C${r2} ${top} ${r1} ${MID} ${b} ${MID}` +
-    `C${r1} ${MID} ${r2} ${bottom} ${m} ${bottom}C${l2} ${bottom} ${l1} ${MID} ${a} ${MID}Z`
+    `M${a} ${mid}C${l1} ${mid} ${l2} ${top} ${m} ${top}C${r2} ${top} ${r1} ${mid} ${b} ${mid}` +
+    `C${r1} ${mid} ${r2} ${bottom} ${m} ${bottom}C${l2} ${bottom} ${l1} ${mid} ${a} ${mid}Z`
   );
 }
 
@@ -149,25 +155,31 @@ function beyondOf(spindle: Spindle | null, width: number): SpanStripModel["beyon
 }
 
 /** A pole with a swallow-tailed flag; near the right edge the flag flies to the left. */
-function pennantOf(x: number, published: boolean, width: number): Pennant {
+export function pennantPath(x: number, width: number): string {
   const way = x + 14 > width ? -1 : 1;
-  return { x, published, path: `M${x} 36V4h${13 * way}l${-4 * way} 5 ${4 * way} 5h${-13 * way}` };
+  return `M${x} 36V4h${13 * way}l${-4 * way} 5 ${4 * way} 5h${-13 * way}`;
 }
 
 function describe(input: SpanStripInput): string {
-  const { installed, ended, readings, cutoff, visits, today, locale } = input;
+  const { installed, ended, readings, today, locale } = input;
   const day = (value: IsoDay) => formatDay(value, locale, { today });
   return [
     installed ? `in service since ${day(installed)}` : "no pack installed",
     ended && `ended ${day(ended)}`,
     `${readings.length} ${readings.length === 1 ? "reading" : "readings"}`,
+    ...(input.datesBeside ? [] : datesInWords(input)),
+  ]
+    .filter(Boolean)
+    .join("; ");
+}
+
+function datesInWords({ cutoff, visits, today, locale }: SpanStripInput): string[] {
+  return [
     cutoff ? `cut-off ${formatWindow(cutoff, locale, today).text}` : "no forecast",
     ...visits.map(
       (visit) =>
         `visit ${visit.published ? "published" : "proposed"} for ` +
         formatDay(visit.day, locale, { today, weekday: true }),
     ),
-  ]
-    .filter(Boolean)
-    .join("; ");
+  ];
 }

@@ -5,7 +5,7 @@ import { type CutoffDays, formatDaysAway, formatWindow, type WindowLabel } from 
 import { formatCurrent } from "./format-quantity";
 import { shareLabel } from "./format-share";
 import type { Presentation } from "./locale";
-import { type SpanStripModel, spanStrip } from "./span-strip";
+import { type SpanStripModel, spanStrip, type StripScale, stripScale } from "./span-strip";
 import { type TimeAxis, timeAxis } from "./time-axis";
 import { packTone, type Tone } from "./tone";
 
@@ -32,6 +32,7 @@ export interface WhatIfRow {
 
 export interface WhatIfModel {
   readonly axis: TimeAxis;
+  readonly scale: StripScale;
   readonly rows: readonly WhatIfRow[];
   /** "9 days earlier". */
   readonly shift: string;
@@ -57,7 +58,12 @@ export function whatIfModel(input: WhatIfInput, presentation: Presentation): Wha
   const row = (key: "now" | "then", label: string) =>
     rowOf(input, { key, label, axis }, presentation);
   const days = (input.then.p50.getTime() - input.now.p50.getTime()) / 86_400_000;
-  return { axis, rows: [row("now", "As it is"), row("then", "What if")], shift: dayShift(days) };
+  return {
+    axis,
+    scale: stripScale(axis, input.today),
+    rows: [row("now", "As it is"), row("then", "What if")],
+    shift: dayShift(days),
+  };
 }
 
 /** From a little before today to past both windows, or to where their middles still show. */

@@ -115,6 +115,8 @@ async function drag(what: Locator, to: Locator): Promise<void> {
   await middleOf(to);
   const from = await middleOf(what);
   const target = await centreOf(to);
+  // A column of hours is dropped on at the hour at which the visit stands.
+  if (await to.evaluate((node) => node.classList.contains("rbc-day-slot"))) target.y = from.y;
   await page.mouse.move(from.x, from.y);
   await page.mouse.down();
   await page.mouse.move(from.x + 8, from.y + 4, { steps: 3 });
@@ -184,6 +186,23 @@ function weekDays(): string[] {
   const monday = noon.getTime() - ((noon.getUTCDay() + 6) % 7) * 86_400_000;
   return [0, 1, 2, 3, 4].map((n) => new Date(monday + n * 86_400_000).toISOString().slice(0, 10));
 }
+
+describe("a visit dragged between technicians side by side", () => {
+  it("goes to the other person's column", async () => {
+    const { visit } = choice;
+    const to = optionOf((o) => o.allowed && o.day === visit.day);
+    await page.goto(productUrl(`/calendar?view=day&date=${visit.day}`));
+    // The days, which the library repeats under each name, are not shown.
+    const heads = page.locator(".rbc-time-header .rbc-row-resource .rbc-header");
+    await heads.first().waitFor();
+    const column = (await heads.allInnerTexts()).findIndex((name) => name === to.technician);
+    const slots = page.locator(".rbc-day-slot");
+    await drag(visitIn(page.locator(".rbc-time-content")), slots.nth(column));
+    await moved().waitFor();
+    const place = await proposedPlace(visit.siteId);
+    expect(place).toEqual({ technicianId: to.technicianId, day: visit.day });
+  });
+});
 
 describe("without a mouse", () => {
   it("a visit is opened, its places are read out with prices, and it is moved", async () => {

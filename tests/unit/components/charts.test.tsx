@@ -3,7 +3,7 @@ import { renderToStaticMarkup } from "react-dom/server";
 import { describe, expect, it } from "vitest";
 import { DayBar } from "@/components/charts/day-bar";
 import { ReliabilityPlot } from "@/components/charts/reliability-plot";
-import { SpanStrip } from "@/components/charts/span-strip";
+import { SpanStrip, StripGround } from "@/components/charts/span-strip";
 import { SparkBars } from "@/components/charts/spark-bars";
 import { StripHead } from "@/components/charts/strip-head";
 import { VoltageChart } from "@/components/charts/voltage-chart";
@@ -11,7 +11,7 @@ import { VoltagePlate } from "@/components/charts/voltage-plate";
 import { WaneDisc, WaneLabel } from "@/components/charts/wane-disc";
 import { dayBar } from "@/lib/present/day-bar";
 import { reliabilityPlot } from "@/lib/present/reliability-plot";
-import { spanStrip } from "@/lib/present/span-strip";
+import { spanStrip, stripScale } from "@/lib/present/span-strip";
 import { sparkBars } from "@/lib/present/spark-bars";
 import { stripHead } from "@/lib/present/strip-head";
 import { timeAxis } from "@/lib/present/time-axis";
@@ -23,6 +23,7 @@ import { areaWithin, pointsAlong } from "../../support/svg-path";
 const locale = "en-GB";
 const today = "2026-12-01";
 const axis = timeAxis({ from: "2026-10-02", to: "2027-06-29", widthPx: 540, locale });
+const scale = stripScale(axis, today);
 const strip = spanStrip({
   axis,
   today,
@@ -45,7 +46,7 @@ const bin = { forecast: 0.5, observed: 0.5, low: 0.4, high: 0.6, count: 40 };
 
 const every: [string, ReactElement, RegExp][] = [
   ["WaneDisc", <WaneDisc key="a" model={disc} />, /^9\s%\sof charge left$/],
-  ["SpanStrip", <SpanStrip key="b" model={strip} />, /^QF-0981$/],
+  ["SpanStrip", <SpanStrip key="b" scale={scale} model={strip} />, /^QF-0981$/],
   [
     "StripHead",
     <StripHead
@@ -130,7 +131,7 @@ describe("WaneDisc", () => {
 });
 
 describe("SpanStrip", () => {
-  const html = renderToStaticMarkup(<SpanStrip model={strip} />);
+  const html = renderToStaticMarkup(<SpanStrip scale={scale} model={strip} />);
   it("notches the spindle at the median, over its full height", () => {
     expect(html).toMatch(/<line x1="148" x2="148" y1="8" y2="30"/);
   });
@@ -139,6 +140,15 @@ describe("SpanStrip", () => {
     expect(html).toMatch(/<line x1="120" x2="120"[^>]*stroke-dasharray/);
     expect(html.match(/stroke-dusk-line fill-dusk/g)).toHaveLength(1);
     expect(html.match(/stroke-dusk-line fill-sheet/g)).toHaveLength(1);
+  });
+  it("stands on a ground of its own or on the one of its stack", () => {
+    const element = <SpanStrip scale={scale} model={strip} groundId="ground" />;
+    const stacked = renderToStaticMarkup(element);
+    expect(stacked).toContain('<use href="#ground"></use>');
+    expect(stacked).not.toContain("stroke-dasharray");
+    const ground = renderToStaticMarkup(<StripGround id="ground" scale={scale} />);
+    const inner = /<g id="ground">(.*)<\/g>/.exec(ground)?.[1] ?? "nothing";
+    expect(html).toContain(inner);
   });
   it("draws known service thicker than expected service", () => {
     const width = (x1: number) =>

@@ -1,6 +1,6 @@
 import { describe, expect, it } from "vitest";
 import { dayFromNumber, dayNumber } from "@/lib/present/calendar-days";
-import { spanStrip, type SpanStripInput } from "@/lib/present/span-strip";
+import { spanStrip, type SpanStripInput, spindlePath, stripScale } from "@/lib/present/span-strip";
 import { stripHead } from "@/lib/present/strip-head";
 import { timeAxis, xOf } from "@/lib/present/time-axis";
 import { pointsAlong } from "../../support/svg-path";
@@ -50,7 +50,7 @@ describe("spanStrip", () => {
   const strip = spanStrip(input);
   it("draws a spindle from the 5th to the 95th percentile, fullest at the median", () => {
     expect(strip.spindle).toMatchObject({ fromX: 128, medianX: 148, toX: 182 });
-    const outline = pointsAlong(strip.spindle?.path ?? "", 400);
+    const outline = pointsAlong(strip.spindle ? spindlePath(strip.spindle) : "", 400);
     const heightAt = (x: number) => {
       const near = outline.filter((p) => Math.abs(p.x - x) < 0.6).map((p) => p.y);
       return Math.max(...near) - Math.min(...near);
@@ -66,7 +66,7 @@ describe("spanStrip", () => {
   it("tells service that was from service that is expected", () => {
     expect(strip.past).toEqual({ x1: 0, x2: 120 });
     expect(strip.ahead).toEqual({ x1: 120, x2: 128 });
-    expect(strip.nowX).toBe(120);
+    expect(stripScale(axis, today).nowX).toBe(120);
   });
   it("leaves out readings and visits outside the axis", () => {
     expect(strip.dots).toEqual([4, 110]);
@@ -104,6 +104,8 @@ describe("spanStrip", () => {
     expect(strip.description).toContain("visit published for Thu 3 Dec");
     expect(strip.description).toContain("visit proposed for Sat 19 Dec");
     expect(strip.description).toContain("3 readings");
+    const beside = spanStrip({ ...input, datesBeside: true }).description;
+    expect(beside).toMatch(/^in service since 27 Oct 2025; 3 readings$/);
   });
 });
 

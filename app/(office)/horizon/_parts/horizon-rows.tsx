@@ -1,19 +1,24 @@
 "use client";
 
 import Link from "next/link";
-import { SpanStrip } from "@/components/charts/span-strip";
+import { SpanStrip, StripGround } from "@/components/charts/span-strip";
 import { StripHead } from "@/components/charts/strip-head";
 import { WaneDisc } from "@/components/charts/wane-disc";
 import { type Column, DataTable } from "@/components/ui/data-table";
 import type { HorizonRowModel } from "@/lib/present/horizon";
 import { hrefWith } from "@/lib/present/paging";
+import type { StripScale } from "@/lib/present/span-strip";
 import type { StripHeadModel } from "@/lib/present/strip-head";
 import type { HorizonView } from "@/lib/usecases/read-horizon";
 import { FindingMark } from "./finding-mark";
 import type { HorizonParams } from "./horizon-params";
 import { NothingDue } from "./nothing-due";
 
+/** All strips of the table are drawn on one ground. */
+const GROUND = "horizon-ground";
+
 export interface HorizonRowsProps {
+  scale: StripScale;
   head: StripHeadModel;
   rows: readonly HorizonRowModel[];
   findings: HorizonView["findings"];
@@ -26,11 +31,12 @@ export interface HorizonRowsProps {
  * The rows of the Horizon. A client component, so that the page carries each row once as data:
  * as a server component a row would go out twice, as markup and as the tree that it came from.
  */
-export function HorizonRows({ head, rows, findings, order, descending, params }: HorizonRowsProps) {
+export function HorizonRows(props: HorizonRowsProps) {
+  const { rows, order, descending, params } = props;
   return (
     <DataTable
       caption="Packs in service by when they reach cut-off"
-      columns={columns(head, findings)}
+      columns={columns(props)}
       rows={rows}
       rowKey={(row) => row.key}
       sort={{
@@ -47,10 +53,7 @@ export function HorizonRows({ head, rows, findings, order, descending, params }:
   );
 }
 
-function columns(
-  head: StripHeadModel,
-  findings: HorizonView["findings"],
-): Column<HorizonRowModel>[] {
+function columns({ scale, head, findings }: HorizonRowsProps): Column<HorizonRowModel>[] {
   return [
     {
       key: "tag",
@@ -76,7 +79,8 @@ function columns(
           title={[row.asset, row.site].filter(Boolean).join(", ")}
         >
           <FindingMark kinds={findings.get(row.key)} />
-          {row.asset} <span className="text-soft">{row.site}</span>
+          {row.asset}
+          {row.site && <span className="text-soft"> {row.site}</span>}
         </span>
       ),
     },
@@ -92,15 +96,21 @@ function columns(
       sortKey: "left",
       cell: (row) => (
         <span className="inline-flex items-center gap-2">
-          <WaneDisc model={row.disc} decorative /> {row.left}
+          <WaneDisc model={row.disc} decorative />
+          {row.disc.label}
         </span>
       ),
     },
     {
       key: "strip",
-      head: <StripHead model={head} />,
+      head: (
+        <>
+          <StripGround id={GROUND} scale={scale} />
+          <StripHead model={head} />
+        </>
+      ),
       fit: "flush",
-      cell: (row) => <SpanStrip model={row.strip} />,
+      cell: (row) => <SpanStrip scale={scale} model={row.strip} groundId={GROUND} />,
     },
     {
       key: "window",
@@ -134,7 +144,9 @@ function CutoffWindow({ row }: { row: HorizonRowModel }) {
   if (!row.window) return <span className="text-soft">being worked out</span>;
   return (
     <>
-      {row.window.from} – <b>{row.window.likely}</b> – {row.window.to}
+      {`${row.window.from} – `}
+      <b>{row.window.likely}</b>
+      {` – ${row.window.to}`}
       {row.stale && <span className="ml-1.5 text-soft">· being renewed</span>}
     </>
   );

@@ -1,6 +1,7 @@
 import { Pager } from "@/components/ui/pager";
 import { horizonAxis, horizonHead, horizonRow } from "@/lib/present/horizon";
 import { hrefWith, pageSummary } from "@/lib/present/paging";
+import { stripScale } from "@/lib/present/span-strip";
 import type { HorizonView } from "@/lib/usecases/read-horizon";
 import type { HorizonParams } from "./horizon-params";
 import { HorizonRows } from "./horizon-rows";
@@ -15,6 +16,7 @@ export function HorizonTable({ view, params }: { view: HorizonView; params: Hori
   return (
     <>
       <HorizonRows
+        scale={stripScale(axis, today)}
         head={horizonHead(axis, today, organisation.locale, view.weeks)}
         rows={rows.map((row) => horizonRow(row, axis, today, organisation))}
         findings={view.findings}

@@ -3,7 +3,7 @@ import { formatDay, formatDaysAway, formatWindow } from "@/lib/present/format-da
 import { formatVolts } from "@/lib/present/format-quantity";
 import { formatPercentRange } from "@/lib/present/format-share";
 import { OUT_PERMILLE, packLabel } from "@/lib/present/horizon";
-import { spanStrip } from "@/lib/present/span-strip";
+import { spanStrip, stripScale } from "@/lib/present/span-strip";
 import { timeAxis } from "@/lib/present/time-axis";
 import { packTone, type Tone } from "@/lib/present/tone";
 import { voltageChart } from "@/lib/present/voltage-chart";
@@ -93,5 +93,5 @@ function timeMarks(
       day: axisDay(at, timeZone),
     })),
   });
-  return { strip, chart };
+  return { scale: stripScale(axis, today), strip, chart };
 }

@@ -61,7 +61,7 @@ export function AssetPack(props: { view: AssetView; explanation: Explanation | n
           {/* As wide as it is drawn: the strip and the voltages share one axis. */}
           <div style={{ width: marks.chart.width }}>
             <div style={{ paddingLeft: marks.chart.plot.left }}>
-              <SpanStrip model={marks.strip} />
+              <SpanStrip scale={marks.scale} model={marks.strip} />
             </div>
             <VoltageChart model={marks.chart} />
           </div>

@@ -12,7 +12,7 @@ export function WhatIfNarrow({ model }: { model: WhatIfModel }) {
       <StripAxis axis={model.axis} />
       {model.rows.map((row) => (
         <div key={row.key} className="border-t border-hair py-2">
-          <SpanStrip model={row.strip} />
+          <SpanStrip scale={model.scale} model={row.strip} />
           <p>
             <b>{row.label}</b>:{" "}
             <span className={`font-semibold ${toneText[row.tone]}`}>{row.window.likely}</span>,{" "}

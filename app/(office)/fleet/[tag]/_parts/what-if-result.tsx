@@ -55,7 +55,7 @@ export function WhatIfResult({ answer, subject, today, presentation }: Props) {
                   {row.label}
                 </th>
                 <td className="p-0">
-                  <SpanStrip model={row.strip} />
+                  <SpanStrip scale={model.scale} model={row.strip} />
                 </td>
                 <td className="px-2.5">
                   {row.window.from} – {row.window.to}

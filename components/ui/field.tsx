@@ -21,7 +21,10 @@ export interface FieldProps {
   children: (wiring: ControlWiring) => ReactNode;
 }
 
-/** Label, hint and error around one control; the control keeps what was typed. */
+/**
+ * Label, error and hint around one control, which keeps what was typed. Label and control come first:
+ * side by side, fields with and without a hint stand on one line.
+ */
 export function Field({ name, label, hint, error, optional, id, children }: FieldProps) {
   const controlId = id ?? `field-${name}`;
   const described = [hint && `${controlId}-hint`, error && `${controlId}-error`]
@@ -33,11 +36,6 @@ export function Field({ name, label, hint, error, optional, id, children }: Fiel
         {label}
         {optional && <span className="font-normal text-soft"> (optional)</span>}
       </label>
-      {hint && (
-        <div id={`${controlId}-hint`} className="text-sm text-soft">
-          {hint}
-        </div>
-      )}
       {children({
         id: controlId,
         "aria-describedby": described || undefined,
@@ -46,6 +44,11 @@ export function Field({ name, label, hint, error, optional, id, children }: Fiel
       {error && (
         <div id={`${controlId}-error`} className="text-sm font-medium text-brick-ink">
           {error}
+        </div>
+      )}
+      {hint && (
+        <div id={`${controlId}-hint`} className="text-sm text-soft">
+          {hint}
         </div>
       )}
     </div>

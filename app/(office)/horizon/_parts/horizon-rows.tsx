@@ -95,7 +95,7 @@ function columns({ scale, head, findings }: HorizonRowsProps): Column<HorizonRow
       head: "Left",
       sortKey: "left",
       cell: (row) => (
-        <span className="inline-flex items-center gap-2">
+        <span className="flex items-center gap-2">
           <WaneDisc model={row.disc} decorative />
           {row.disc.label}
         </span>

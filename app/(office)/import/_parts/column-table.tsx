@@ -17,7 +17,7 @@ export function ColumnTable({ view, entries }: ColumnTableProps) {
         <caption className="sr-only">Which column is which</caption>
         <thead>
           <tr className="border-b border-ink text-left">
-            {["Field", "Column of the file", "Unit", "First rows"].map((head) => (
+            {["Field", "Column of the file", "First rows"].map((head) => (
               <th key={head} scope="col" className="caps py-1.5 pr-4">
                 {head}
               </th>
@@ -36,54 +36,61 @@ export function ColumnTable({ view, entries }: ColumnTableProps) {
 
 type LineProps = ColumnTableProps & { field: ImportView["fields"][number] };
 
-function FieldLine({ field, view, entries: { text, fault } }: LineProps) {
+function FieldLine({ field, view, entries }: LineProps) {
   const match = view.run.settings.columns[field.key];
-  const { defaultValue } = text(`column.${field.key}`, match?.column);
-  const wrong = fault(field.key);
+  const { defaultValue } = entries.text(`column.${field.key}`, match?.column);
+  const wrong = entries.fault(field.key);
   const samples = match ? view.samples.map((cells) => cells[match.column] ?? "") : [];
   return (
-    <tr className="border-t border-hair align-top first:border-t-0">
-      <th scope="row" className="py-1.5 pr-4 text-left font-medium whitespace-nowrap">
+    <tr className="border-t border-hair first:border-t-0">
+      <th scope="row" className="py-1.5 pr-4 text-left font-medium sm:whitespace-nowrap">
         {field.label}
         {field.required && <span className="font-normal text-soft"> needed</span>}
       </th>
       <td className="py-1 pr-4">
-        <select
-          key={defaultValue}
-          name={`column.${field.key}`}
-          aria-label={`Column with ${field.label}`}
-          aria-invalid={wrong ? true : undefined}
-          defaultValue={defaultValue}
-          className={`${controlClass} min-w-48`}
-        >
-          <option value="">not in the file</option>
-          {view.head.map((name, n) => (
-            <option key={n} value={n}>
-              {name || `column ${n + 1}`}
-            </option>
-          ))}
-        </select>
-        {wrong && <div className="text-sm font-medium text-brick-ink">{wrong}</div>}
-      </td>
-      <td className="py-1 pr-4">
-        {field.units.length > 1 ? (
+        <div className="flex flex-wrap items-center gap-x-3 gap-y-1">
           <select
-            name={`unit.${field.key}`}
-            aria-label={`Unit of ${field.label}`}
-            defaultValue={text(`unit.${field.key}`, match?.unit).defaultValue}
-            className={controlClass}
+            key={defaultValue}
+            name={`column.${field.key}`}
+            aria-label={`Column with ${field.label}`}
+            aria-invalid={wrong ? true : undefined}
+            defaultValue={defaultValue}
+            className={`${controlClass} max-w-48`}
           >
-            {field.units.map((unit) => (
-              <option key={unit}>{unit}</option>
+            <option value="">not in the file</option>
+            {view.head.map((name, n) => (
+              <option key={n} value={n}>
+                {name || `column ${n + 1}`}
+              </option>
             ))}
           </select>
-        ) : (
-          <span className="block py-1.5 text-soft">{field.units[0]}</span>
-        )}
+          <Unit field={field} entries={entries} unit={match?.unit} />
+        </div>
+        {wrong && <div className="text-sm font-medium text-brick-ink">{wrong}</div>}
       </td>
       <td className="max-w-96 truncate py-2.5 font-cond text-soft">
         {samples.filter(Boolean).join(" · ")}
       </td>
     </tr>
+  );
+}
+
+function Unit({
+  field,
+  entries,
+  unit,
+}: Omit<LineProps, "view"> & { unit: string | null | undefined }) {
+  if (field.units.length <= 1) return <span className="text-soft">{field.units[0]}</span>;
+  return (
+    <select
+      name={`unit.${field.key}`}
+      aria-label={`Unit of ${field.label}`}
+      defaultValue={entries.text(`unit.${field.key}`, unit).defaultValue}
+      className={`${controlClass} max-w-20`}
+    >
+      {field.units.map((unit) => (
+        <option key={unit}>{unit}</option>
+      ))}
+    </select>
   );
 }

@@ -10,9 +10,9 @@ import { saveCellTypeAction } from "../actions";
 const FIGURES = [
   ["nominalVolts", "Nominal voltage of a cell", "V", false],
   ["ratedCapacityAh", "Rated capacity", "Ah", false],
-  ["ratedMilliamps", "at a current of", "mA", false],
-  ["ratedCutoffVolts", "down to", "V", false],
-  ["ratedTemperatureC", "at", "°C", false],
+  ["ratedMilliamps", "Rated at a current of", "mA", false],
+  ["ratedCutoffVolts", "Rated down to", "V", false],
+  ["ratedTemperatureC", "Rated at a temperature of", "°C", false],
   ["selfDischargePercent", "Self-discharge a year", "%", false],
   ["resistanceOhms", "Resistance, fresh", "Ω", false],
   ["maxPulseMilliamps", "Largest pulse", "mA", true],

@@ -23,14 +23,14 @@ export function WhatIfFields({ periodMinutes, states, otherCells, fault }: Props
     <div className="grid gap-x-8 gap-y-5 xl:grid-cols-[4fr_7fr_3fr]">
       <fieldset className="min-w-0">
         <legend className="caps mb-2">A voltage read today</legend>
-        <div className="grid items-end gap-4 sm:grid-cols-2">
+        <div className="grid gap-4 sm:grid-cols-2">
           <NumberInput {...field("volts")} label="Voltage of the pack" unit="V" />
           <Select {...field("kind")} label="How" options={KINDS} defaultValue="resting" />
         </div>
       </fieldset>
       <fieldset className="min-w-0">
         <legend className="caps mb-2">The device working otherwise</legend>
-        <div className="grid items-end gap-4 sm:grid-cols-[2fr_3fr_2fr]">
+        <div className="grid gap-4 sm:grid-cols-[2fr_3fr_2fr]">
           <NumberInput
             {...field("periodMinutes")}
             label={`Period, now ${periodMinutes} min`}

@@ -40,7 +40,7 @@ interface PartProps {
   entries: Entries;
 }
 
-const grid = "grid items-end gap-4 px-3 py-4 sm:grid-cols-2";
+const grid = "grid gap-4 px-3 py-4 sm:grid-cols-2";
 
 function Hand({ organisation, entries, zones }: PartProps & { zones: readonly string[] }) {
   return (

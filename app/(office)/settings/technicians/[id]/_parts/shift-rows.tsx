@@ -27,17 +27,20 @@ export function ShiftRows({ entries, shifts, locale }: ShiftRowsProps) {
         const { key, ...tick } = entries.tick(`day-${day}`, shift !== undefined);
         const name = weekdayName(day, locale);
         return (
-          <div key={day} className="flex flex-wrap items-center gap-x-6 gap-y-1 px-3 py-1.5">
-            <div className="w-36">
+          <div key={day} className="grid items-center gap-x-6 gap-y-1.5 px-3 py-1.5 sm:flex">
+            <div className="sm:w-36">
               <Checkbox key={key} {...tick} label={name} />
             </div>
-            <Hour
-              {...{ entries, day, edge: "starts", label: `${name} from` }}
-              time={shift?.starts}
-            />
-            <span className="text-soft">to</span>
-            <Hour {...{ entries, day, edge: "ends", label: `${name} to` }} time={shift?.ends} />
-            <span className="flex flex-wrap items-center gap-x-3 gap-y-1">
+            <div className={hours}>
+              <span className="text-soft sm:hidden">works</span>
+              <Hour
+                {...{ entries, day, edge: "starts", label: `${name} from` }}
+                time={shift?.starts}
+              />
+              <span className="text-soft">to</span>
+              <Hour {...{ entries, day, edge: "ends", label: `${name} to` }} time={shift?.ends} />
+            </div>
+            <div className={hours}>
               <span className="text-soft">break</span>
               <Hour
                 {...{ entries, day, edge: "breakStarts", label: `${name}, break from` }}
@@ -48,7 +51,7 @@ export function ShiftRows({ entries, shifts, locale }: ShiftRowsProps) {
                 {...{ entries, day, edge: "breakEnds", label: `${name}, break to` }}
                 time={shift?.breakEnds ?? undefined}
               />
-            </span>
+            </div>
           </div>
         );
       })}
@@ -56,6 +59,9 @@ export function ShiftRows({ entries, shifts, locale }: ShiftRowsProps) {
     </div>
   );
 }
+
+/** On a phone the hours of a day stand under its name, each pair on one line. */
+const hours = "grid grid-cols-[3rem_1fr_auto_1fr] items-center gap-2 sm:flex sm:gap-3";
 
 interface HourProps {
   entries: Entries;
@@ -76,7 +82,7 @@ function Hour({ entries, day, edge, label, time }: HourProps) {
       aria-label={label}
       name={name}
       defaultValue={defaultValue}
-      className={`${controlClass} max-w-32`}
+      className={`${controlClass} sm:w-32`}
     />
   );
 }

@@ -12,9 +12,10 @@ export interface ApplyFormProps {
 export function ApplyForm({ importId, counts }: ApplyFormProps) {
   const rows = counts.new + counts.changed;
   if (rows === 0) return <p className="pb-2 text-soft">There is nothing to import.</p>;
+  const what = rows === 1 ? "1 row" : `${rows} rows`;
   const left = counts.refused > 0 ? `, leave ${counts.refused} out` : "";
   return (
-    <ActionForm action={applyImportAction} submit={`Import ${rows} rows${left}`} busy="Asking…">
+    <ActionForm action={applyImportAction} submit={`Import ${what}${left}`} busy="Asking…">
       <input type="hidden" name="importId" value={importId} />
     </ActionForm>
   );

@@ -48,7 +48,7 @@ function FieldLine({ field, view, entries }: LineProps) {
         {field.required && <span className="font-normal text-soft"> needed</span>}
       </th>
       <td className="py-1 pr-4">
-        <div className="flex flex-wrap items-center gap-x-3 gap-y-1">
+        <div className="flex w-44 flex-wrap items-center gap-x-3 gap-y-1 sm:w-72 sm:flex-nowrap">
           <select
             key={defaultValue}
             name={`column.${field.key}`}

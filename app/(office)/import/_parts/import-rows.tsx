@@ -60,7 +60,7 @@ function columns({ head, run }: ImportView): Column<Row>[] {
       key: "note",
       head: "How",
       cell: (row) => (
-        <span className="block max-w-96 truncate text-soft" title={notes[row.row]}>
+        <span className="block max-w-96 min-w-40 py-1 whitespace-normal text-soft">
           {notes[row.row]}
         </span>
       ),

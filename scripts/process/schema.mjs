@@ -56,6 +56,8 @@ export async function seed(root, env, log) {
   if (done.code === 0) return done.output;
   throw new Trouble(
     `Filling the database with the demonstration failed:\n${tail(done.output, 12)}`,
-    "Start again to try once more, or set WANEWRIGHT_SCENARIO=none to begin with an empty one.",
+    /No space left|Disk quota exceeded/.test(done.output)
+      ? "The disk is full: free some space (`df -h`), then start again; it begins anew."
+      : "Start again to try once more, or set WANEWRIGHT_SCENARIO=none to begin with an empty one.",
   );
 }

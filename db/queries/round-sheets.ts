@@ -1,5 +1,6 @@
 import { type Kysely, sql } from "kysely";
 import type { Database } from "../client";
+import type { SiteAccess } from "./sites";
 
 /** A task with the words and the forecast that go with it. */
 export interface SheetTask {
@@ -19,7 +20,7 @@ export interface SheetTask {
   readonly p50: Date | null;
 }
 
-export interface SheetStop {
+export interface SheetStop extends SiteAccess {
   readonly stopId: string;
   readonly roundId: string;
   readonly position: number;
@@ -33,16 +34,6 @@ export interface SheetStop {
   readonly siteName: string;
   readonly latitude: number;
   readonly longitude: number;
-  readonly noticeDays: number;
-  readonly opens: string | null;
-  readonly closes: string | null;
-  readonly keyCode: string | null;
-  readonly contactName: string | null;
-  readonly contactEmail: string | null;
-  readonly contactPhone: string | null;
-  readonly hazards: string[];
-  readonly tickets: string[];
-  readonly driveUpNotes: string;
   readonly tasks: readonly SheetTask[];
 }
 

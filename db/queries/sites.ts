@@ -14,14 +14,8 @@ export interface SiteListing {
   readonly offset: number;
 }
 
-export interface SiteRow {
-  readonly id: string;
-  readonly code: string;
-  readonly name: string;
-  readonly latitude: number;
-  readonly longitude: number;
-  readonly crewName: string | null;
-  readonly climateName: string | null;
+/** When a site can be entered, by whom, and what must be known before. */
+export interface SiteAccess {
   readonly noticeDays: number;
   readonly opens: string | null;
   readonly closes: string | null;
@@ -32,6 +26,16 @@ export interface SiteRow {
   readonly hazards: string[];
   readonly tickets: string[];
   readonly driveUpNotes: string;
+}
+
+export interface SiteRow extends SiteAccess {
+  readonly id: string;
+  readonly code: string;
+  readonly name: string;
+  readonly latitude: number;
+  readonly longitude: number;
+  readonly crewName: string | null;
+  readonly climateName: string | null;
   readonly closures: number;
   readonly assets: number;
 }
@@ -90,7 +94,7 @@ export async function findSite(db: Kysely<Database>, code: string) {
   return { ...site, closures };
 }
 
-export interface SiteRecord {
+export interface SiteRecord extends SiteAccess {
   readonly id: string;
   readonly code: string;
   readonly name: string;
@@ -98,16 +102,6 @@ export interface SiteRecord {
   readonly longitude: number;
   readonly crewId: string | null;
   readonly climateId: string | null;
-  readonly noticeDays: number;
-  readonly opens: string | null;
-  readonly closes: string | null;
-  readonly keyCode: string | null;
-  readonly contactName: string | null;
-  readonly contactEmail: string | null;
-  readonly contactPhone: string | null;
-  readonly hazards: string[];
-  readonly tickets: string[];
-  readonly driveUpNotes: string;
   readonly updatedAt: Date;
 }
 

@@ -4,6 +4,7 @@ import { LinkButton } from "@/components/ui/button";
 import { type Column, DataTable } from "@/components/ui/data-table";
 import { Pager } from "@/components/ui/pager";
 import { EmptyState } from "@/components/ui/states";
+import { TagLink } from "@/components/ui/tag-link";
 import { NOTHING } from "@/lib/present/locale";
 import { hrefWith, pageSummary } from "@/lib/present/paging";
 import type { AssetListView } from "@/lib/usecases/list-assets";
@@ -67,15 +68,7 @@ const COLUMNS: readonly Column<FleetRow>[] = [
     head: "Asset",
     sortKey: "tag",
     rowHeader: true,
-    cell: (row) => (
-      <Link
-        href={`/fleet/${encodeURIComponent(row.tag)}`}
-        prefetch={false}
-        className="font-mono text-xs font-semibold hover:underline"
-      >
-        {row.tag}
-      </Link>
-    ),
+    cell: (row) => <TagLink tag={row.tag} />,
   },
   {
     key: "name",

@@ -5,6 +5,7 @@ import { SpanStrip, StripGround } from "@/components/charts/span-strip";
 import { StripHead } from "@/components/charts/strip-head";
 import { WaneDisc } from "@/components/charts/wane-disc";
 import { type Column, DataTable } from "@/components/ui/data-table";
+import { TagLink } from "@/components/ui/tag-link";
 import type { HorizonRowModel } from "@/lib/present/horizon";
 import { hrefWith } from "@/lib/present/paging";
 import type { StripScale } from "@/lib/present/span-strip";
@@ -60,14 +61,7 @@ function columns({ scale, head, findings }: HorizonRowsProps): Column<HorizonRow
       head: "Asset",
       sortKey: "tag",
       rowHeader: true,
-      cell: (row) => (
-        <Link
-          href={`/fleet/${encodeURIComponent(row.tag)}`}
-          className="font-mono text-xs font-semibold hover:underline"
-        >
-          {row.tag}
-        </Link>
-      ),
+      cell: (row) => <TagLink tag={row.tag} />,
     },
     {
       key: "site",
@@ -130,7 +124,11 @@ function columns({ scale, head, findings }: HorizonRowsProps): Column<HorizonRow
       head: "Visit",
       cell: ({ visit }) =>
         visit.href ? (
-          <Link href={visit.href} className="text-dusk-ink hover:underline">
+          <Link
+            href={visit.href}
+            prefetch={false}
+            className="text-dusk-ink hover:underline"
+          >
             {visit.label}
           </Link>
         ) : (

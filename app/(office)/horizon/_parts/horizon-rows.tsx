@@ -124,11 +124,7 @@ function columns({ scale, head, findings }: HorizonRowsProps): Column<HorizonRow
       head: "Visit",
       cell: ({ visit }) =>
         visit.href ? (
-          <Link
-            href={visit.href}
-            prefetch={false}
-            className="text-dusk-ink hover:underline"
-          >
+          <Link href={visit.href} prefetch={false} className="text-dusk-ink hover:underline">
             {visit.label}
           </Link>
         ) : (

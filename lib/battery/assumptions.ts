@@ -14,6 +14,8 @@ export const ASSUMED = {
   packLifeSd: 0.06,
   /** Device draw against its duty cycle. */
   drawSd: 0.15,
+  /** Draw of a load that never pauses, against what is stated of it. */
+  constantDrawSd: 0.07,
   /** Wander of ln(draw) in a year, as a random walk. */
   drawWalkPerYear: 0.05,
   /** A season's draw against the year's mean (cold, daylight, wet-weather reporting). */

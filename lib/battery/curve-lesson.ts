@@ -82,7 +82,7 @@ export function learnCurves(
     .filter(({ history }) => history.ranOut)
     .map((pack, index) => place(pack, index, endOf(pack.history.cohort)));
   if (placed.length < LEAST_PACKS) return new Map();
-  const { spreadMv } = CURVES[placed[0]!.model.pack.cell.chemistry];
+  const { ownSpreadMv: spreadMv } = CURVES[placed[0]!.model.pack.cell.chemistry];
   const days = placed.reduce((s, p) => s + p.stoppedAt - p.model.pack.installedAt, 0);
   const share = leastShare(days / placed.length / DAYS_PER_YEAR);
   const rest = layered(placed.flatMap(restResiduals), spreadMv, share);

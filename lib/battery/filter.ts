@@ -12,11 +12,11 @@ import { drift, openRate } from "./draw-walk";
 import { type EndOfLife, type ResistanceBelief, endOfLife } from "./end-of-life";
 import { type Grid, depthMarginal, newGrid, normalise, retire, weighDepth } from "./grid";
 import type { ForecastInput, PackEvent, PackReading, ReadingWeight } from "./pack";
-import { type PackModel, leakBetween, packModel } from "./pack-model";
+import { type PackModel, distrusted, leakBetween, packModel } from "./pack-model";
 import { impossibleAboveMv, observe } from "./reading";
 import { filmChance } from "./passivation";
 import { guessRest, learnResistance, loosen } from "./resistance";
-import { type Bounds, aliveBounds, passedOver, timeline } from "./timeline";
+import { type Bounds, type Item, aliveBounds, passedOver, timeline } from "./timeline";
 
 const LONGEST_STEP_DAYS = 120;
 const MOST_STEPS = 24;
@@ -36,18 +36,32 @@ export interface Filtered extends Bounds {
   readonly end: EndOfLife;
 }
 
-/** Run the filter over everything known up to `now`. */
+/**
+ * Run the filter over everything known up to `now`. Where a good part of the readings is in doubt
+ * it is the curve that does not fit these cells: then once more, with less trust in it.
+ */
 export function filterPack(input: ForecastInput): Filtered {
   const model = packModel(input.pack, input.prior);
+  const filtered = filterUnder(model, input);
+  return misfit(filtered.weights) ? filterUnder(distrusted(model), input) : filtered;
+}
+
+/** So many readings, and this share of them, in doubt: slips do not come so often. */
+const MISFIT = { least: 3, share: 0.34 };
+
+function misfit(weights: readonly ReadingWeight[]): boolean {
+  const doubtful = weights.filter((w) => w.reason === "doubtful").length;
+  const fitting = weights.filter((w) => w.reason === "fits").length;
+  return doubtful >= MISFIT.least && doubtful > MISFIT.share * (doubtful + fitting);
+}
+
+function filterUnder(model: PackModel, input: ForecastInput): Filtered {
   const from = input.pack.installedAt;
   const until = Math.max(input.now, from);
   const bounds = aliveBounds(input, from, until);
   const highestMv = impossibleAboveMv(model);
   const items = timeline(input, { from, until, aliveAt: bounds.aliveAt, highestMv });
-  const changed = items.some((i) => "event" in i && i.event.kind === "draw-changed");
-  const sd = changed ? Math.max(model.prior.sd, ASSUMED.changedDrawSd) : model.prior.sd;
-  const grid = newGrid(model, (until - from) / DAYS_PER_YEAR, sd);
-  if (changed && input.pack.measuredDraw) openRate(grid, model.prior.mean, sd);
+  const grid = gridFor(model, input, items, (until - from) / DAYS_PER_YEAR);
   const run = new Run(model, grid, from);
   // a stopped device draws no more: the grid stays at the day it was found
   const last = bounds.stoppedAt ?? until;
@@ -62,6 +76,19 @@ export function filterPack(input: ForecastInput): Filtered {
   retire(grid);
   const weights = input.readings.map((r) => run.weights.get(r.id) ?? passedOver(r, input));
   return { model, grid, at: stands, weights, end: run.end(), ...bounds };
+}
+
+function gridFor(
+  model: PackModel,
+  input: ForecastInput,
+  items: readonly Item[],
+  years: number,
+): Grid {
+  const changed = items.some((i) => "event" in i && i.event.kind === "draw-changed");
+  const sd = changed ? Math.max(model.prior.sd, ASSUMED.changedDrawSd) : model.prior.sd;
+  const grid = newGrid(model, years, sd);
+  if (changed && input.pack.measuredDraw) openRate(grid, model.prior.mean, sd);
+  return grid;
 }
 
 /** One pass over one pack's history. */

@@ -8,7 +8,7 @@ import { baseCutoffMv, grossCapacity, overload } from "./capacity";
 import { DAYS_PER_YEAR } from "./climate";
 import { CURVES } from "./curve-tables";
 import { type PackCurve, packCurve, packEndDepth } from "./cutoff";
-import { packAverageUa, packPeakUa } from "./duty";
+import { isConstant, isSteady, packAverageUa, packPeakUa } from "./duty";
 import {
   type EndOfLife,
   type EndTerms,
@@ -22,6 +22,8 @@ import { type Ageing, ageing } from "./self-discharge";
 const MIN_FULL_SHARE = 0.5;
 const MAX_SHELF_LOSS = 0.9;
 const TINY = 1e-9;
+/** How much further off the curve may be where readings show that it does not fit. */
+const MISFIT = 3;
 /** Share of a table's spread that differs from one reading to the next. */
 const UNTAUGHT_NOISE = 0.25;
 const LONGEST_AGE_YEARS = 15;
@@ -79,7 +81,8 @@ function ratePrior(pack: PackSpec, fleet: FleetPrior | null): RatePrior {
     mean: ASSUMED.capacityMean * Math.exp(beyond.mean),
     relativeSd: Math.hypot(ASSUMED.capacitySd, beyond.sd),
   };
-  const learned = fleet?.drawFactor ?? { mean: 1, relativeSd: ASSUMED.drawSd };
+  const assumed = isConstant(pack) ? ASSUMED.constantDrawSd : ASSUMED.drawSd;
+  const learned = fleet?.drawFactor ?? { mean: 1, relativeSd: assumed };
   const draw = pack.measuredDraw ? { mean: 1, relativeSd: pack.measuredDraw.relativeSd } : learned;
   const drawMean = Math.log(draw.mean);
   const drawSd = Math.min(Math.max(draw.relativeSd, 0.01), 1.5);
@@ -101,9 +104,6 @@ function shelfLoss(pack: PackSpec, leakPerDay: number): number {
   return Math.min(MAX_SHELF_LOSS, -Math.expm1(-leakPerDay * (pack.installedAt - pack.madeAt)));
 }
 
-/** A load that hardly ever pauses: its mean is a good part of its peak. */
-const isSteady = (averageUa: number, peakUa: number): boolean => averageUa > 0.3 * peakUa;
-
 /**
  * Resistance before any loaded reading. A sheet states what a short pulse meets; a load that
  * hardly ever pauses meets the cell's slow polarisation as well: taken as 40 mV an element at
@@ -113,11 +113,11 @@ const isSteady = (averageUa: number, peakUa: number): boolean => averageUa > 0.3
 function resistanceOf(pack: PackSpec, curve: PackCurve, lesson: CurveLesson | null) {
   if (lesson) return { mean: 1, sd: lesson.resistanceSd };
   const ua = packAverageUa(pack);
-  if (!isSteady(ua, packPeakUa(pack))) return { mean: 1, sd: ASSUMED.resistanceSd };
+  if (!isSteady(pack)) return { mean: 1, sd: ASSUMED.resistanceSd };
   const twentyHourUa = (pack.cell.rated.capacityMah * 1000 * pack.parallel) / 20;
   const slowMv = 40 * curve.restScale * Math.sqrt(ua / twentyHourUa);
   const mean = 1 + Math.min(40, slowMv / Math.max(1e-3, (ua * curve.freshMohm) / 1e6));
-  return { mean, sd: 0.4 * mean };
+  return { mean, sd: Math.hypot(0.4 * mean, mean - 1) };
 }
 
 /** A full cell's charge, and the shares of it that a day takes by leak and by draw. */
@@ -145,7 +145,7 @@ export function packModel(pack: PackSpec, fleet: FleetPrior | null): PackModel {
     curve: published,
     peakUa,
     cap: tableEndDepth(pack, averageUa, fullMah),
-    steady: isSteady(averageUa, peakUa),
+    steady: isSteady(pack),
     aged: grown(pack, 1 / Math.max(drawPerDay + leakPerDay, TINY)),
   };
   const resistance = resistanceOf(pack, curve, lesson);
@@ -171,6 +171,17 @@ export function packModel(pack: PackSpec, fleet: FleetPrior | null): PackModel {
     resistance,
     prior: ratePrior(pack, fleet),
     calibration: fleet?.calibration ?? null,
+  };
+}
+
+/** The same pack where its readings show that the curve is not that of its cells. */
+export function distrusted(model: PackModel): PackModel {
+  const { mean, sd } = model.resistance;
+  return {
+    ...model,
+    offsetSdMv: MISFIT * model.offsetSdMv,
+    noiseMv: MISFIT * model.noiseMv,
+    resistance: { mean, sd: MISFIT * sd },
   };
 }
 

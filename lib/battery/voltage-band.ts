@@ -6,7 +6,6 @@ import { gridQuantile } from "../stats/grid-quantile";
 import type { Decicelsius, EpochDays, Microamps, Millivolts } from "../units";
 import { ASSUMED } from "./assumptions";
 import { DAYS_PER_YEAR, temperatureAt } from "./climate";
-import { CURVES } from "./curve-tables";
 import { packMv } from "./cutoff";
 import { type Filtered, filterPack } from "./filter";
 import { depthMarginal, rateMarginal } from "./grid";
@@ -74,7 +73,7 @@ function bandAt(
   const mv = (x: number): number => packMv(model.pack, model.curve, x, ua, dc);
   const mid = mv(depth);
   const resistive = (mid - packMv(model.pack, model.curve, depth, 0, dc)) * ASSUMED.resistanceSd;
-  const own = model.curve.restScale * CURVES[model.pack.cell.chemistry].spreadMv;
+  const own = Math.hypot(model.offsetSdMv, model.noiseMv);
   const noise = Z90 * Math.hypot(ASSUMED.accuracyMv, own, resistive);
   return {
     at,

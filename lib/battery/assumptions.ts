@@ -28,6 +28,8 @@ export const ASSUMED = {
   curveErrorDepth: 0.3,
   /** The same once the curve was learned from finished packs: what is left is the pack's own. */
   taughtErrorDepth: 1,
+  /** Readings closer together than this share of the charge share their errors. */
+  sharedErrorDepth: 0.04,
   /** Where on the depth axis the curve of this very pack lies. */
   curveDepthSd: 0.012,
   /** Cells of one lot differ; a string ends a little before its mean cell does. */

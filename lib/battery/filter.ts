@@ -8,6 +8,7 @@ import type { EpochDays } from "../units";
 import { ASSUMED } from "./assumptions";
 import { DAYS_PER_YEAR, monthOf } from "./climate";
 import { consume } from "./consume";
+import { crowds, isStill } from "./crowding";
 import { drift, openRate } from "./draw-walk";
 import { type EndOfLife, type ResistanceBelief, endOfLife } from "./end-of-life";
 import { type Grid, depthMarginal, newGrid, normalise, retire, weighDepth } from "./grid";
@@ -62,13 +63,18 @@ function filterUnder(model: PackModel, input: ForecastInput): Filtered {
   const highestMv = impossibleAboveMv(model);
   const items = timeline(input, { from, until, aliveAt: bounds.aliveAt, highestMv });
   const grid = gridFor(model, input, items, (until - from) / DAYS_PER_YEAR);
-  const run = new Run(model, grid, from);
+  const run = new Run(model, grid, from, crowds(model, items));
   // a stopped device draws no more: the grid stays at the day it was found
   const last = bounds.stoppedAt ?? until;
   for (const item of items) {
-    run.to(Math.min(item.at, last));
-    if ("reading" in item) run.read(item.reading);
-    else if ("event" in item) run.hear(item.event);
+    const at = Math.min(item.at, last);
+    if ("reading" in item) {
+      run.towards(at);
+      run.read(item.reading);
+      continue;
+    }
+    run.to(at);
+    if ("event" in item) run.hear(item.event);
     else run.live(item.at);
   }
   const stands = run.follow(last);
@@ -102,8 +108,14 @@ class Run {
     private readonly model: PackModel,
     private readonly grid: Grid,
     private at: EpochDays,
+    private readonly sharedBy: ReadonlyMap<PackReading, number>,
   ) {
     this.resistance = model.resistance;
+  }
+
+  /** To a reading's time, unless hardly anything is gone by then. */
+  towards(day: EpochDays): void {
+    if (!isStill(this.model, day - this.at)) this.to(day);
   }
 
   to(day: EpochDays): void {
@@ -135,12 +147,18 @@ class Run {
     depthMarginal(this.grid, this.grid.nodeC);
     const guess = loaded ? guessRest(this.model, this.grid, reading) : null;
     const film = loaded ? filmChance(this.model, this.at - this.lastLoaded) : 0;
-    const said = observe(this.model, this.grid, reading, this.resistance, film);
+    const shared = this.sharedBy.get(reading) ?? 1;
+    const said = observe(this.model, this.grid, reading, this.resistance, { film, shared });
     this.weights.set(reading.id, said);
     if (!guess) return;
     this.lastLoaded = this.at;
     if (said.reason === "passivation") return;
-    this.resistance = learnResistance(this.resistance, guess, reading.millivolts, said.weight);
+    this.resistance = learnResistance(
+      this.resistance,
+      guess,
+      reading.millivolts,
+      said.weight / shared,
+    );
     this.learned = true;
   }
 

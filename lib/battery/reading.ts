@@ -105,20 +105,29 @@ function expectedBand(grid: Grid): [number, number, number] {
   ];
 }
 
+/** What is known of a reading beforehand. */
+export interface Standing {
+  /** Chance that it is the film's, if it is low. */
+  readonly film: number;
+  /** By how many readings its errors are shared, itself counted in. */
+  readonly shared: number;
+}
+
 /** Update the grid by one reading (depth marginal in `nodeC`); says how much it counted and why. */
 export function observe(
   model: PackModel,
   grid: Grid,
   reading: PackReading,
   resistance: ResistanceBelief,
-  filmChance: number,
+  { film, shared }: Standing,
 ): ReadingWeight {
   expectAt(model, grid, reading, resistance);
   const [low, middle, high] = expectedBand(grid);
   // the film only ever lowers a voltage: a higher one is the cell's own
-  const dip = reading.millivolts < middle ? filmChance : 0;
+  const dip = reading.millivolts < middle ? film : 0;
   const slip = Math.max(ASSUMED.outlierShare, dip);
-  const weight = multiply(grid, reading.millivolts, impossibleAboveMv(model), slip);
+  const outlier = slip / impossibleAboveMv(model);
+  const weight = multiply(grid, reading.millivolts, { slip, outlier, power: 1 / shared });
   const doubted = dip > ASSUMED.outlierShare ? "passivation" : "doubtful";
   const reason = weight >= 0.5 ? "fits" : doubted;
   return {
@@ -131,10 +140,18 @@ export function observe(
   };
 }
 
+interface Mixture {
+  readonly slip: number;
+  /** Density of a slip, per mV. */
+  readonly outlier: number;
+  /** Exponent of the likelihood: 1 for a witness of its own. */
+  readonly power: number;
+}
+
 /** Multiply by the mixture likelihood; returns the weight of its first term. */
-function multiply(grid: Grid, millivolts: number, rangeMv: number, slip: number): number {
+function multiply(grid: Grid, millivolts: number, by: Mixture): number {
   const { p, nx, nr, no, nodeA: mean, nodeB: variance, nodeC: fit, rowMass } = grid;
-  const outlier = slip / rangeMv;
+  const { slip, outlier, power } = by;
   const share = (1 - slip) / Math.sqrt(2 * Math.PI);
   let fitting = 0;
   let total = 0;
@@ -156,7 +173,16 @@ function multiply(grid: Grid, millivolts: number, rangeMv: number, slip: number)
         p[k] = all;
       }
     }
+    if (power < 1) temper(grid, o, outlier, power);
   }
-  if (total < FAINT) normalise(grid);
+  if (total < FAINT || power < 1) normalise(grid);
   return total > 0 ? Math.min(1, fitting / total) : 0;
+}
+
+/** Takes the likelihood of one offset, its densities in `nodeC`, to a power, having been multiplied. */
+function temper({ p, nx, nr, nodeC: fit }: Grid, o: number, outlier: number, power: number): void {
+  for (let i = 0; i < nx; i++) fit[i] = (fit[i]! + outlier) ** (power - 1);
+  for (let row = o * nr; row < (o + 1) * nr; row++) {
+    for (let i = 0, k = row * nx; i < nx; i++, k++) p[k]! *= fit[i]!;
+  }
 }

@@ -23,10 +23,7 @@ export function isStill(model: PackModel, days: number): boolean {
  * For each reading by how many it is shared, itself counted in: 1 where it stands alone. Others
  * count the less the further off they are, in a straight line to nothing.
  */
-export function crowds(
-  model: PackModel,
-  items: readonly Item[],
-): ReadonlyMap<PackReading, number> {
+export function crowds(model: PackModel, items: readonly Item[]): ReadonlyMap<PackReading, number> {
   const reach = ASSUMED.sharedErrorDepth / Math.max(perDay(model), 1e-9);
   const found = new Map<PackReading, number>();
   for (const kind of ["resting", "loaded"] as const) {

@@ -107,6 +107,7 @@ const file = z.object(
     pack,
     readings: z.array(reading).nullish(),
     events: z.array(event).nullish(),
+    temperatures: z.array(z.object({ at: day, temperatureDc: amount })).nullish(),
     now: day.nullish(),
   },
   { error: 'Give an object: {"pack": {...}, "readings": [...]}.' },
@@ -128,13 +129,15 @@ export function readForecastFile(text: string, name: string): ForecastInput {
   return { ...input, events: [...input.events, ...lifeSigns(input)] };
 }
 
-function inputOf({ pack, readings, events, now }: z.infer<typeof file>): ForecastInput {
+function inputOf(given: z.infer<typeof file>): ForecastInput {
+  const { pack, readings, events, temperatures, now } = given;
   const dated = withIds(readings ?? []);
   const told = (events ?? []).map(({ lastAliveAt, ...e }): PackEvent =>
     typeof lastAliveAt === "number" ? { ...e, lastAliveAt } : e,
   );
   const last = [...dated, ...told].reduce((at, r) => Math.max(at, r.at), pack.installedAt);
-  return { pack, readings: dated, events: told, prior: null, now: now ?? last };
+  const logged = temperatures ? { temperatures } : {};
+  return { pack, readings: dated, events: told, prior: null, now: now ?? last, ...logged };
 }
 
 /** Readings without an id are called by their time, told apart where two share it. */

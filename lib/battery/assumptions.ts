@@ -54,6 +54,8 @@ export const ASSUMED = {
   accuracyMv: 10,
   /** Temperature of a reading when only the month's mean is known, K. */
   temperatureSdK: 5,
+  /** The same when the site's temperature was logged. */
+  loggedTemperatureSdK: 2,
   /**
    * A low loaded reading of Li-SOCl2 is the film's with this chance at the most, rested or kept
    * thin by the device's own pulses, and grows towards it in about so many days (from memory).

@@ -4,7 +4,7 @@
  * this very pack, which loaded readings teach.
  */
 import { normalQuantile } from "../stats/normal";
-import type { Microamps } from "../units";
+import type { Decicelsius, Microamps } from "../units";
 import { ASSUMED } from "./assumptions";
 import { baseCutoffMv, grossCapacity, usableCapacity } from "./capacity";
 import { CURVES } from "./curve-tables";
@@ -39,6 +39,8 @@ export interface EndOfLife {
   readonly warm: number;
   /** One standard deviation of all of them. */
   readonly sd: number;
+  /** The depth at which it would stop at a temperature. */
+  at(temperatureDc: Decicelsius): number;
 }
 
 /** End depths given what is believed of the resistance. */
@@ -46,11 +48,12 @@ export function endOfLife(terms: EndTerms, resistance: ResistanceBelief): EndOfL
   const { pack } = terms;
   const weakest =
     1 - (ASSUMED.weakestCellShare * weakestOf(pack.series)) / Math.sqrt(pack.parallel);
-  const byMonth = Float64Array.from({ length: 12 }, (_, m) => {
-    const dc = (pack.monthlyMeanDc[m] ?? 200) - coldHourDc(pack);
-    return weakest * Math.min(terms.cap, depthAt(terms, dc, resistance.mean));
-  });
-  return { byMonth, warm: Math.max(TINY, ...byMonth), sd: spread(terms, resistance) };
+  const at = (dc: Decicelsius): number =>
+    weakest * Math.min(terms.cap, depthAt(terms, dc, resistance.mean));
+  const byMonth = Float64Array.from({ length: 12 }, (_, m) =>
+    at((pack.monthlyMeanDc[m] ?? 200) - coldHourDc(pack)),
+  );
+  return { byMonth, warm: Math.max(TINY, ...byMonth), sd: spread(terms, resistance), at };
 }
 
 /**

@@ -42,7 +42,7 @@ export interface Filtered extends Bounds {
  * it is the curve that does not fit these cells: then once more, with less trust in it.
  */
 export function filterPack(input: ForecastInput): Filtered {
-  const model = packModel(input.pack, input.prior);
+  const model = packModel(input.pack, input.prior, input.temperatures);
   const filtered = filterUnder(model, input);
   return misfit(filtered.weights) ? filterUnder(distrusted(model), input) : filtered;
 }
@@ -165,14 +165,17 @@ class Run {
   /** It ran on a day: judged by the end as this pack's own resistance sets it. */
   live(at: EpochDays): void {
     const end = this.end();
-    weighDepth(this.grid, (depth) => aliveChance(end, depth, at));
+    // not longer ago: a pack that stopped in the cold may have come back since
+    const met = this.endMet(end, at - 1, at);
+    weighDepth(this.grid, (depth) => aliveChance(end.sd, met, depth));
   }
 
   hear(event: PackEvent): void {
     const { model, grid } = this;
     if (event.kind === "stopped") {
       const end = this.end();
-      weighDepth(grid, (depth) => 1 - aliveChance(end, depth, event.at));
+      const met = this.endMet(end, event.lastAliveAt ?? event.at - 1, event.at);
+      weighDepth(grid, (depth) => 1 - aliveChance(end.sd, met, depth));
     } else if (event.kind === "draw-changed") {
       openRate(
         grid,
@@ -180,6 +183,12 @@ class Run {
         model.pack.measuredDraw ? model.prior.sd : ASSUMED.changedDrawSd,
       );
     }
+  }
+
+  /** The end depth in a stretch: in the coldest that was logged, else as the month sets it. */
+  private endMet(end: EndOfLife, from: EpochDays, to: EpochDays): number {
+    const coldest = this.model.site.lowest(from, to);
+    return coldest === null ? end.byMonth[monthOf(to)]! : end.at(coldest);
   }
 
   end(): EndOfLife {
@@ -195,9 +204,9 @@ class Run {
   }
 }
 
-/** Chance that the device runs at a depth in the month of a day. */
-function aliveChance(end: EndOfLife, depth: number, at: EpochDays): number {
-  return normalCdf((end.byMonth[monthOf(at)]! - depth) / end.sd);
+/** Chance that the device runs at a depth where it stops at about `end`. */
+function aliveChance(sd: number, end: number, depth: number): number {
+  return normalCdf((end - depth) / sd);
 }
 
 /** Steps into which a stretch of days is cut. */

@@ -9,6 +9,7 @@ export type {
   FleetPrior,
   Forecast,
   ForecastInput,
+  LoggedTemperature,
   PackEvent,
   PackReading,
   PackSpec,

@@ -124,7 +124,7 @@ function massBelow(left: TimeLeft, days: number): number {
 
 /** Days left of every grid cell, (end - depth) / rate, as a histogram. */
 function collect({ model, grid, end }: Filtered): TimeLeft {
-  const leak = model.leakPerDay * model.ageing.meanFactor;
+  const leak = model.leakPerDay * model.site.ageing.meanFactor;
   const draws = grid.rate.map((rate) => Math.max(SLOWEST_PER_DAY, model.drawPerDay * rate));
   const joint = new Float64Array(grid.nr * grid.nx);
   for (let from = 0; from < grid.p.length; from += joint.length) {

@@ -16,8 +16,15 @@ import {
   endOfLife,
   tableEndDepth,
 } from "./end-of-life";
-import type { Calibration, Chemistry, CurveLesson, FleetPrior, PackSpec } from "./pack";
-import { type Ageing, ageing } from "./self-discharge";
+import type {
+  Calibration,
+  Chemistry,
+  CurveLesson,
+  FleetPrior,
+  LoggedTemperature,
+  PackSpec,
+} from "./pack";
+import { type SiteTemperatures, siteTemperatures } from "./site-temperature";
 
 const MIN_FULL_SHARE = 0.5;
 const MAX_SHELF_LOSS = 0.9;
@@ -46,7 +53,8 @@ export interface PackModel {
   readonly drawPerDay: number;
   /** Share of the charge left that is lost per day at 20 °C by self-discharge. */
   readonly leakPerDay: number;
-  readonly ageing: Ageing;
+  /** How warm it was and will be at its site. */
+  readonly site: SiteTemperatures;
   readonly endTerms: EndTerms;
   /** Where it stops, before any loaded reading has told of the resistance. */
   readonly end: EndOfLife;
@@ -131,8 +139,28 @@ function charges(pack: PackSpec, averageUa: Microamps) {
   };
 }
 
+/** Depth at which a pack starts, and how well that is known. */
+function startOf(pack: PackSpec, leakPerDay: number) {
+  const startDepth = shelfLoss(pack, leakPerDay);
+  return { startDepth, startSd: Math.hypot(ASSUMED.startDepthSd, startDepth * 0.5) };
+}
+
+/** How far the pack's voltages may lie off its curve. */
+function curveErrors(pack: PackSpec, { restScale }: PackCurve, lesson: CurveLesson | null) {
+  const { spreadMv } = CURVES[pack.cell.chemistry];
+  return {
+    offsetSdMv: restScale * (lesson?.spreadMv ?? spreadMv),
+    noiseMv: restScale * (lesson?.noiseMv ?? UNTAUGHT_NOISE * spreadMv),
+    offsetDepth: lesson ? ASSUMED.taughtErrorDepth : ASSUMED.curveErrorDepth,
+  };
+}
+
 /** Prepare a pack for the filter. */
-export function packModel(pack: PackSpec, fleet: FleetPrior | null): PackModel {
+export function packModel(
+  pack: PackSpec,
+  fleet: FleetPrior | null,
+  temperatures: readonly LoggedTemperature[] = [],
+): PackModel {
   const lesson = fleet?.curve ?? null;
   // the depth axis ends where the published curve does; what was learned lies on that axis
   const published = packCurve(pack);
@@ -150,8 +178,6 @@ export function packModel(pack: PackSpec, fleet: FleetPrior | null): PackModel {
   };
   const resistance = resistanceOf(pack, curve, lesson);
   const endResistance = fleet?.endResistance ?? resistance;
-  const { spreadMv } = CURVES[pack.cell.chemistry];
-  const startDepth = shelfLoss(pack, leakPerDay);
   return {
     pack,
     curve,
@@ -159,15 +185,12 @@ export function packModel(pack: PackSpec, fleet: FleetPrior | null): PackModel {
     peakUa,
     drawPerDay,
     leakPerDay,
-    ageing: ageing(pack.monthlyMeanDc),
+    site: siteTemperatures(pack.monthlyMeanDc, temperatures),
     endTerms: terms,
     end: endOfLife(terms, endResistance),
     endResistance,
-    startDepth,
-    startSd: Math.hypot(ASSUMED.startDepthSd, startDepth * 0.5),
-    offsetSdMv: curve.restScale * (lesson?.spreadMv ?? spreadMv),
-    noiseMv: curve.restScale * (lesson?.noiseMv ?? UNTAUGHT_NOISE * spreadMv),
-    offsetDepth: lesson ? ASSUMED.taughtErrorDepth : ASSUMED.curveErrorDepth,
+    ...startOf(pack, leakPerDay),
+    ...curveErrors(pack, curve, lesson),
     resistance,
     prior: ratePrior(pack, fleet),
     calibration: fleet?.calibration ?? null,
@@ -187,7 +210,7 @@ export function distrusted(model: PackModel): PackModel {
 
 /** Exponent of self-discharge between two days: the share kept is e to its negative. */
 export function leakBetween(model: PackModel, from: EpochDays, to: EpochDays): number {
-  return model.leakPerDay * model.ageing.between(from, to);
+  return model.leakPerDay * model.site.ageing.between(from, to);
 }
 
 /** Resistance after some days in service relative to new, at equal depth and temperature. */

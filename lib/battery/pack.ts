@@ -128,12 +128,25 @@ export interface FleetPrior {
   readonly calibration?: Calibration | null;
 }
 
+/** A temperature logged at the pack's site: of a moment, or a day's mean. */
+export interface LoggedTemperature {
+  readonly at: EpochDays;
+  readonly temperatureDc: Decicelsius;
+}
+
 export interface ForecastInput {
   readonly pack: PackSpec;
   readonly readings: readonly PackReading[];
   readonly events: readonly PackEvent[];
   readonly prior: FleetPrior | null;
   readonly now: EpochDays;
+  /**
+   * Temperatures logged at the site, in any order. They hold for the past: self-discharge, the
+   * resistance at readings without a temperature of their own, and how cold it was when the
+   * device ran or stopped. Between two more than three days apart, and for the future, the
+   * climate holds.
+   */
+  readonly temperatures?: readonly LoggedTemperature[];
 }
 
 /** How much one reading counted, and why, in the words of `reason`. */

@@ -9,7 +9,6 @@
  * the first term.
  */
 import { ASSUMED } from "./assumptions";
-import { temperatureAt } from "./climate";
 import { CURVE_STEPS } from "./curves";
 import { freshDropMv } from "./cutoff";
 import { type Grid, normalise } from "./grid";
@@ -39,7 +38,7 @@ function expectAt(
 ): void {
   const { curve, pack } = model;
   const { nodeA: mean, nodeB: variance } = grid;
-  const dc = reading.temperatureDc ?? temperatureAt(pack.monthlyMeanDc, reading.at);
+  const dc = reading.temperatureDc ?? model.site.at(reading.at);
   const ua = reading.kind === "loaded" ? (reading.loadUa ?? model.peakUa) : 0;
   const aged = resistanceAge(model, reading.at) * belief.mean;
   const drop = freshDropMv(pack, curve, ua, dc) * aged;
@@ -64,9 +63,15 @@ function expectAt(
   }
 }
 
+/** How well the temperature of a reading is known, K. */
+function warmthSdK({ site }: PackModel, { temperatureDc, at }: Circumstances): number {
+  if (temperatureDc !== null) return 1;
+  return site.logged(at) === null ? ASSUMED.temperatureSdK : ASSUMED.loggedTemperatureSdK;
+}
+
 /** The part of a reading's variance that does not depend on depth, mV². */
 function fixedVariance(model: PackModel, grid: Grid, reading: Circumstances): number {
-  const warmth = reading.temperatureDc === null ? ASSUMED.temperatureSdK : 1;
+  const warmth = warmthSdK(model, reading);
   const accuracy = reading.accuracyMv ?? ASSUMED.accuracyMv;
   return (
     accuracy ** 2 +

@@ -25,9 +25,9 @@ export interface MeanRate {
 export function seasonalClock(filtered: Filtered, mean: MeanRate): SeasonalClock {
   const { model, end, at } = filtered;
   const { ratePerDay, drawPerDay } = mean;
-  const leak = (ratePerDay - drawPerDay) / model.ageing.meanFactor;
+  const leak = (ratePerDay - drawPerDay) / model.site.ageing.meanFactor;
   const progress = (date: EpochDays): number =>
-    (drawPerDay * (date - at) + leak * model.ageing.between(at, date)) / ratePerDay;
+    (drawPerDay * (date - at) + leak * model.site.ageing.between(at, date)) / ratePerDay;
   const cold = (month: number): number => (end.warm - end.byMonth[month]!) / ratePerDay;
   const months: Month[] = [];
   const limit = at + ASSUMED.horizonDays * 1.05;

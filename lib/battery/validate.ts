@@ -115,6 +115,15 @@ function checkHistory(input: ForecastInput, need: Need): void {
       i + 1,
     );
   });
+  input.temperatures?.forEach((t, i) => {
+    need(isDay(t.at), "temperatures.at", "Give the day of the temperature.", i + 1);
+    need(
+      within(t.temperatureDc, -1000, 1000),
+      "temperatures.temperatureDc",
+      "Give tenths of a degree between -1000 and 1000.",
+      i + 1,
+    );
+  });
   checkEvents(input, need);
 }
 

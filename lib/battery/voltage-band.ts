@@ -5,7 +5,7 @@
 import { gridQuantile } from "../stats/grid-quantile";
 import type { Decicelsius, EpochDays, Microamps, Millivolts } from "../units";
 import { ASSUMED } from "./assumptions";
-import { DAYS_PER_YEAR, temperatureAt } from "./climate";
+import { DAYS_PER_YEAR } from "./climate";
 import { packMv } from "./cutoff";
 import { type Filtered, filterPack } from "./filter";
 import { depthMarginal, rateMarginal } from "./grid";
@@ -67,7 +67,7 @@ function bandAt(
   query: VoltageQuery,
 ): ExpectedVoltage {
   const { model } = filtered;
-  const dc = query.temperatureDc ?? temperatureAt(model.pack.monthlyMeanDc, at);
+  const dc = query.temperatureDc ?? model.site.at(at);
   const ua = query.kind === "loaded" ? (query.loadUa ?? model.peakUa) : 0;
   const [depth, half] = depthAt(filtered, now, at);
   const mv = (x: number): number => packMv(model.pack, model.curve, x, ua, dc);

@@ -22,6 +22,8 @@ export const ASSUMED = {
   seasonalDrawSd: 0.08,
   /** Draw after a firmware or device change, against the duty cycle. */
   changedDrawSd: 0.35,
+  /** How differently the devices of a model take a shift of their draw. */
+  deviceShiftSd: 0.1,
   /** Depth at which a new pack starts, beside shelf ageing. */
   startDepthSd: 0.01,
   /** Depth over which a curve's error stays the same, roughly. */

@@ -10,6 +10,7 @@ import { DAYS_PER_YEAR, monthOf } from "./climate";
 import { consume } from "./consume";
 import { crowds, isStill } from "./crowding";
 import { drift, openRate } from "./draw-walk";
+import { shiftRates, shiftReach } from "./draw-shift";
 import { type EndOfLife, type ResistanceBelief, endOfLife } from "./end-of-life";
 import { type Grid, depthMarginal, newGrid, normalise, retire, weighDepth } from "./grid";
 import type { ForecastInput, PackEvent, PackReading, ReadingWeight } from "./pack";
@@ -75,6 +76,7 @@ function filterUnder(model: PackModel, input: ForecastInput): Filtered {
     }
     run.to(at);
     if ("event" in item) run.hear(item.event);
+    else if ("shift" in item) shiftRates(grid, item.shift);
     else run.live(item.at);
   }
   const stands = run.follow(last);
@@ -92,7 +94,7 @@ function gridFor(
 ): Grid {
   const changed = items.some((i) => "event" in i && i.event.kind === "draw-changed");
   const sd = changed ? Math.max(model.prior.sd, ASSUMED.changedDrawSd) : model.prior.sd;
-  const grid = newGrid(model, years, sd);
+  const grid = newGrid(model, years, sd + shiftReach(input.drawShifts ?? []));
   if (changed && input.pack.measuredDraw) openRate(grid, model.prior.mean, sd);
   return grid;
 }

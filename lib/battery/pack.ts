@@ -134,6 +134,14 @@ export interface LoggedTemperature {
   readonly temperatureDc: Decicelsius;
 }
 
+/** A shift of the draw found for the pack's device model; made by `withDrawShift`. */
+export interface FoundDrawShift {
+  readonly at: EpochDays;
+  /** Draw after over draw before, and its spread for one device, as a share. */
+  readonly factor: number;
+  readonly relativeSd: number;
+}
+
 export interface ForecastInput {
   readonly pack: PackSpec;
   readonly readings: readonly PackReading[];
@@ -147,6 +155,8 @@ export interface ForecastInput {
    * climate holds.
    */
   readonly temperatures?: readonly LoggedTemperature[];
+  /** Shifts of its model's draw that the fleet's readings showed. */
+  readonly drawShifts?: readonly FoundDrawShift[];
 }
 
 /** How much one reading counted, and why, in the words of `reason`. */

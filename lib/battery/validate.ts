@@ -124,6 +124,11 @@ function checkHistory(input: ForecastInput, need: Need): void {
       i + 1,
     );
   });
+  input.drawShifts?.forEach((s, i) => {
+    need(isDay(s.at), "drawShifts.at", "Give the day of the shift.", i + 1);
+    need(within(s.factor, 0.05, 20), "drawShifts.factor", "Give 0.05 to 20.", i + 1);
+    need(within(s.relativeSd, 0, 2), "drawShifts.relativeSd", "Give 0 to 2.", i + 1);
+  });
   checkEvents(input, need);
 }
 

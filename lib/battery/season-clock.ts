@@ -10,6 +10,8 @@ import { DAYS_PER_YEAR, MONTH_STARTS, dayOfYear, monthOf } from "./climate";
 import type { Filtered } from "./filter";
 
 export interface SeasonalClock {
+  /** Even days used up by a date, what the cold takes away left out. */
+  progress(date: EpochDays): number;
   /** Date on which a pack with this many even days left stops. */
   dateOf(daysLeft: number): EpochDays;
   /** Even days left that are used up on a date. */
@@ -33,6 +35,7 @@ export function seasonalClock(filtered: Filtered, mean: MeanRate): SeasonalClock
   const limit = at + ASSUMED.horizonDays * 1.05;
   const grow = (): Month => addMonth(months, at, progress, cold);
   return {
+    progress,
     dateOf(daysLeft) {
       if (daysLeft <= 0) return at + daysLeft;
       let k = 0;

@@ -107,7 +107,7 @@ function byWeather(filtered: Filtered, clock: SeasonalClock, now: EpochDays): Fo
   });
   const all = stoppedAt === null ? 1 : chances.at(-1)!;
   return {
-    known: all > 1e-9,
+    known: chances.at(-1)! > 1e-9,
     dateOf: (probability) => interpolate(chances, days, probability * all),
     chanceBy: (date) => Math.min(1, interpolate(days, chances, date) / all),
   };

@@ -9,7 +9,7 @@ import { ASSUMED } from "./assumptions";
 import { DAYS_PER_YEAR } from "./climate";
 import { calibrate, endScores } from "./calibration";
 import { learnCurves } from "./curve-lesson";
-import { endSdAt, endUnder, learnEnds, paceTo, type Spent, spent } from "./end-lesson";
+import { endUnder, learnEnds, paceTo, paceTold, type Spent, spent } from "./end-lesson";
 import { expectedLife } from "./expected-life";
 import {
   type CohortLife,
@@ -19,11 +19,17 @@ import {
   learnCohorts,
   pooledLife,
 } from "./fleet-prior";
-import type { Calibration, Chemistry, FleetPrior, PackReading, PackSpec } from "./pack";
+import type {
+  Calibration,
+  Chemistry,
+  FleetPrior,
+  LoggedTemperature,
+  PackReading,
+  PackSpec,
+} from "./pack";
 
 /** Forecasts of this many packs are judged: enough to know a spread to a few percent. */
 const MOST_JUDGED = 200;
-const MOST_END_SD = 0.4;
 
 export interface FinishedHistory {
   readonly packKey: string;
@@ -35,6 +41,8 @@ export interface FinishedHistory {
   /** The day it stopped its device, or was swapped before that. */
   readonly outAt: EpochDays;
   readonly ranOut: boolean;
+  /** Temperatures logged at its site, if any. */
+  readonly temperatures?: readonly LoggedTemperature[];
 }
 
 export interface FleetMember {
@@ -78,7 +86,10 @@ interface Told {
 function prepared(histories: readonly FinishedHistory[]): Told[] {
   return histories
     .filter((h) => h.outAt - h.pack.installedAt > 1)
-    .map((history) => ({ history, spent: spent(history.pack, history.outAt) }));
+    .map((history) => ({
+      history,
+      spent: spent(history.pack, history.outAt, history.temperatures),
+    }));
 }
 
 /** What was learned of one chemistry, its windows not yet calibrated. */
@@ -201,12 +212,23 @@ function judge({ told, lifeOf, endOf, withLesson }: Raw): Calibration | null {
   return scores.length > 0 ? calibrate(scores, days / told.length / DAYS_PER_YEAR) : null;
 }
 
-/** Its life beside the sheet's, at the depth where such a pack stops in that month. */
+/** Its life beside the sheet's; of one swapped early at least what it had lived. */
 function finishedPack({ history, spent: one }: Told, endFactor: number): FinishedPack {
   const { packKey, deviceKey, cohort, lot, ranOut } = history;
-  const pace = paceTo(one, endUnder(one, endFactor), history.outAt);
-  const endSd = Math.min(MOST_END_SD, endSdAt(one, endFactor));
-  return { packKey, deviceKey, cohort, lot, lifeRatio: lifeRatio(pace), ranOut, endSd };
+  if (!ranOut) {
+    const pace = paceTo(one, endUnder(one, endFactor), history.outAt);
+    return { packKey, deviceKey, cohort, lot, lifeRatio: lifeRatio(pace), ranOut };
+  }
+  const { lnPace, sd } = paceTold(one, endFactor);
+  return {
+    packKey,
+    deviceKey,
+    cohort,
+    lot,
+    lifeRatio: lifeRatio(Math.exp(lnPace)),
+    ranOut,
+    endSd: sd,
+  };
 }
 
 /** Life relative to a pack of the assumed capacity and the sheet's draw. */
@@ -220,6 +242,7 @@ function promised(history: FinishedHistory, pack: FinishedPack, prior: FleetPrio
     events: [{ kind: "reporting", at: history.outAt }],
     prior,
     now: history.outAt,
+    ...(history.temperatures ? { temperatures: history.temperatures } : {}),
   });
   return { ...pack, expected: { lnRatio: -lnPace - Math.log(ASSUMED.capacityMean), sd } };
 }

@@ -28,5 +28,8 @@ export const NEAR_DAYS = 56;
 export const LATER_DAYS = 15 * 365;
 /** Visit, drive and overtime are priced in thousandths of a minor unit: rounding stays unseen. */
 export const COST_UNITS_A_MINOR = 1000;
-/** A changed day or technician of a published visit: a message, a phone call. */
-export const CHANGE_MINOR = { day: 600, technician: 300, drop: 600 } as const;
+/**
+ * A changed day or technician of a published visit: a message, a phone call, somebody's diary.
+ * Common practice, no source.
+ */
+export const CHANGE_MINOR = { day: 1200, technician: 600, drop: 1200 } as const;

@@ -4,11 +4,12 @@ import { type LeftOutReasons, whyLeftOut } from "../routing/evaluate";
 import type { Routes } from "../routing/problem";
 import type { RefusalCode } from "../routing/schedule";
 import type { DueSite } from "./due";
+import type { ReturnDay } from "./fleet";
 import { addDays, daysBetween, localDay } from "./local-time";
 import type { PackOutlook } from "./outlook";
 import type { RoundsProblem } from "./problem";
-import { ticketWords } from "./refusal-words";
-import { closureOn } from "./site-days";
+import { foundWords, ticketWords } from "./refusal-words";
+import { closureOn, isClosed } from "./site-days";
 import { greatCircleM } from "./travel";
 import type { Visit } from "./visit";
 
@@ -45,7 +46,7 @@ interface Why {
 function firstOpenDay(visit: Visit, after: IsoDay): IsoDay | null {
   for (let ahead = 1; ahead <= 366; ahead++) {
     const day = addDays(after, ahead);
-    if (!closureOn(visit.site.closures, day)) return day;
+    if (!isClosed(visit.site, day)) return day;
   }
   return null;
 }
@@ -60,7 +61,19 @@ function ofNotice(visit: Visit, today: IsoDay): Why {
   };
 }
 
+/** The day that a technician named, or the first open one after it. */
+function ofReturn(visit: Visit, returnOn: ReturnDay): Why {
+  const earliestDay = firstOpenDay(visit, addDays(returnOn.day, -1));
+  return {
+    reason: "closed",
+    detail: `${foundWords(returnOn)}, not to be tried before`,
+    earliestDay,
+  };
+}
+
 function ofClosure(visit: Visit, rounds: RoundsProblem): Why {
+  const { returnOn } = visit.site;
+  if (returnOn && returnOn.day > rounds.frame.firstDay) return ofReturn(visit, returnOn);
   const season = closureOn(visit.site.closures, rounds.frame.firstDay);
   const because = season?.reason ? `: ${season.reason}` : "";
   return {
@@ -125,7 +138,9 @@ function ofRefusals(
 }
 
 function ofNoDay(visit: Visit, today: IsoDay): Why {
-  const earliestDay = addDays(today, visit.site.noticeDays);
+  const noticeEnds = addDays(today, visit.site.noticeDays);
+  const returnDay = visit.site.returnOn?.day ?? noticeEnds;
+  const earliestDay = returnDay > noticeEnds ? returnDay : noticeEnds;
   const reason = visit.site.noticeDays > 0 ? "notice" : "closed";
   return {
     reason,

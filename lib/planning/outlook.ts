@@ -21,7 +21,7 @@ import type {
   PointOnEarth,
 } from "./fleet";
 import { addDays, daysBetween, daysFrom, midday, weekdayOf } from "./local-time";
-import { closureOn } from "./site-days";
+import { isClosed } from "./site-days";
 import { longRunPremium } from "./long-run";
 import { greatCircleM, type RoadAssumption } from "./travel";
 import {
@@ -172,7 +172,7 @@ export function outlookOf(
   context: OutlookContext,
 ): PackOutlook {
   const trip = tripOf(site, context);
-  const open = context.laterDays.flatMap((day, i) => (closureOn(site.closures, day) ? [] : [i]));
+  const open = context.laterDays.flatMap((day, i) => (isClosed(site, day) ? [] : [i]));
   const choices = open.length > 0 ? open : context.laterDays.map((_, i) => i);
   const waiting = waitingPack(pack, trip, context.prices);
   const { index, price } = cheapestVisit(

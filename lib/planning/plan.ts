@@ -3,6 +3,7 @@ import { solve, type OnProgress, type Options, type Stop } from "../routing/solv
 import type { Routes } from "../routing/problem";
 import type { Rng } from "../routing/rng";
 import { dueSites, type CellsOnHand, type DueSite, type SiteOutlooks } from "./due";
+import { effortFor } from "./effort";
 import type {
   KnownVisit,
   PlannedTask,
@@ -140,8 +141,8 @@ export function makePlan(
   search: Search,
 ): FinishedPlan {
   const problem = problemOf(prepared, travel);
-  const start = knownRoutes(problem, prepared.input.known);
-  const options = { ...search.options, ...(start.some((r) => r.length > 0) && { start }) };
+  const known = knownRoutes(problem, prepared.input.known);
+  const options = { ...effortFor(prepared.visits.length, known).options, ...search.options };
   const { routes } = solve(problem.problem, search.stop, search.rng, options, search.onProgress);
   return finishPlan(prepared, problem, routes);
 }

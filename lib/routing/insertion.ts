@@ -73,6 +73,14 @@ export class Inserter {
     return this.route >= 0;
   }
 
+  /** Finds the cheapest place in one route, whatever leaving the site out costs. */
+  searchIn(site: number, r: number): boolean {
+    this.best = Infinity;
+    this.route = -1;
+    this.consider(site, r);
+    return this.route >= 0;
+  }
+
   /** Looks at the routes of the nearest sites, and at empty slots. */
   private searchNearby(site: number): void {
     const { model, state, turn } = this;

@@ -2,6 +2,7 @@
 import { exportRoutes, importRoutes } from "./elite";
 import { fits } from "./fit";
 import { Inserter } from "./insertion";
+import { LastTouch } from "./last-touch";
 import { FORBIDDEN, type Model } from "./model";
 import type { Params } from "./params";
 import type { Routes } from "./problem";
@@ -21,6 +22,7 @@ export class Search {
   private readonly inserter: Inserter;
   private readonly ruin: Ruin;
   private readonly recreate: Recreate;
+  private readonly lastTouch: LastTouch;
   private typicalLeg = 1;
   private startHeat = 1;
   private bestRoutes: Routes;
@@ -36,46 +38,19 @@ export class Search {
     this.inserter = new Inserter(model, this.state, rng, params.blinkShare, params.nearby);
     this.ruin = new Ruin(model, this.state, rng, params);
     this.recreate = new Recreate(model, this.state, this.inserter, rng);
+    this.lastTouch = new LastTouch(model, this.state, this.inserter, this.recreate);
     if (start) importRoutes(this.state, start);
-    this.construct();
+    this.lastTouch.fill(params.startWorth);
     this.bestRoutes = exportRoutes(this.state);
     this.bestTotal = this.state.total;
     this.setHeat();
   }
 
-  /** Cheapest insertion of everything that is out. */
-  private construct(worth = this.params.startWorth): void {
-    this.state.mark();
-    this.recreate.clear();
-    for (let i = this.state.absentCount - 1; i >= 0; i--) this.recreate.list(this.state.absent[i]!);
-    this.recreate.run(worth);
-    this.state.mark();
-    this.trim();
-  }
-
-  /** Takes out every stop that costs more than its absence. */
-  private trim(): void {
-    const { state, model } = this;
-    for (let r = 0; r < model.slots; r++) {
-      for (let k = state.length[r]!; k > model.frozen[r]!; k--) {
-        const before = state.total;
-        state.mark();
-        state.remove(r, k, 1);
-        if (state.total >= before) state.rollBack();
-      }
-    }
-    state.mark();
-  }
-
-  /** Last touch: nothing is left in or out of the best plan that would pay to change alone. */
+  /** Leaves no stop in, out or elsewhere that would pay to change alone. */
   finish(): void {
     importRoutes(this.state, this.bestRoutes);
     this.inserter.blinks = false;
-    let before = Infinity;
-    while (this.state.total < before) {
-      before = this.state.total;
-      this.construct(1);
-    }
+    this.lastTouch.run();
     this.inserter.blinks = true;
     this.keepIfBest();
   }
@@ -181,7 +156,7 @@ export class Search {
   /** Takes a better plan over as the current and best one. */
   take(routes: Routes): void {
     importRoutes(this.state, routes);
-    this.construct();
+    this.lastTouch.fill(this.params.startWorth);
     this.keepIfBest();
     if (this.state.total > this.bestTotal) importRoutes(this.state, this.bestRoutes);
   }

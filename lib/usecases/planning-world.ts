@@ -6,6 +6,7 @@ import {
   loadAcceptedCells,
   loadLotsOnHand,
   loadPacksToPlan,
+  loadReturnDays,
   loadSitesToPlan,
   loadTechniciansToPlan,
 } from "@/db/queries/planning-fleet";
@@ -14,6 +15,7 @@ import type {
   PlanningPack,
   PlanningSite,
   PlanningTechnician,
+  ReturnDay,
   Ticket,
 } from "@/lib/planning/fleet";
 import { localDay, secondsOfClock } from "@/lib/planning/local-time";
@@ -67,14 +69,16 @@ export async function loadWorld(
 ): Promise<PlanningWorld> {
   const organisation = await getOrganisation(db);
   const today = localDay(now, organisation.timeZone);
-  const [technicians, sites, packs, accepted, lots, booked] = await Promise.all([
+  const [technicians, sites, packs, accepted, lots, booked, returns] = await Promise.all([
     loadTechniciansToPlan(db, cover.crewIds),
     loadSitesToPlan(db, { crewIds: cover.crewIds, siteIds: options.siteIds }),
     loadPacksToPlan(db, options.siteIds),
     loadAcceptedCells(db),
     loadLotsOnHand(db),
     bookedSwaps(db, today),
+    loadReturnDays(db, today),
   ]);
+  const returnOf = new Map(returns.map((row) => [row.siteId, row]));
   const covered = new Set(technicians.map((technician) => technician.id));
   const elsewhere = booked.filter((swap) => !isCovered(swap, cover, covered));
   const onHand = cellsOnHand(lots, elsewhere);
@@ -83,7 +87,7 @@ export async function loadWorld(
   const input: PlanInput = {
     ...reckoning(organisation, now, cover),
     technicians: technicians.map((row) => technicianOf(row, binding)),
-    sites: sites.map(siteOf),
+    sites: sites.map((row) => siteOf(row, returnOf.get(row.id))),
     packs: packs
       .filter((pack) => !bookedAssets.has(pack.assetId))
       .map((pack) => packOf(pack, accepted, onHand)),
@@ -148,7 +152,10 @@ function technicianOf(row: TechnicianRow, binding: readonly StoredRound[]): Plan
   };
 }
 
-function siteOf(row: Awaited<ReturnType<typeof loadSitesToPlan>>[number]): PlanningSite {
+function siteOf(
+  row: Awaited<ReturnType<typeof loadSitesToPlan>>[number],
+  back: Awaited<ReturnType<typeof loadReturnDays>>[number] | undefined,
+): PlanningSite {
   const { id, opens, closes, tickets, ...rest } = row;
   return {
     ...rest,
@@ -156,6 +163,7 @@ function siteOf(row: Awaited<ReturnType<typeof loadSitesToPlan>>[number]): Plann
     tickets: tickets as Ticket[],
     hours:
       opens && closes ? { opensS: secondsOfClock(opens), closesS: secondsOfClock(closes) } : null,
+    returnOn: back ? { day: back.day, reason: back.reason as ReturnDay["reason"] } : null,
   };
 }
 

@@ -3,6 +3,7 @@ import { appendAudit } from "@/db/queries/audit";
 import { loadBindingRounds, loadPlanRounds } from "@/db/queries/plan-rounds";
 import { changePlan, findPlan, lockPlan, noteProgress, type PlanRow } from "@/db/queries/plans";
 import { loadTechniciansToPlan } from "@/db/queries/planning-fleet";
+import { effortFor, type Effort } from "@/lib/planning/effort";
 import { habitCost } from "@/lib/planning/habit";
 import {
   finishPlan,
@@ -25,8 +26,7 @@ import { isCovered, knownVisits, loadWorld } from "./planning-world";
 import { travelTimes } from "./travel-times";
 import { type Deps, defineUseCase } from "./use-case";
 
-/** Turns of the search in one go, and how often its progress is shown meanwhile. */
-export const PLAN_ITERATIONS = 48_000;
+/** How often the search's progress is shown. */
 const CHUNKS = 12;
 const SEED = 20_261_201;
 
@@ -85,7 +85,8 @@ async function build(
   const places = placesOf(world.input.technicians, prepared.visits);
   const travel = await travelTimes(deps, world.organisation, places);
   const problem = problemOf(prepared, travel.table);
-  const routes = await search(deps, plan.id, problem.problem, knownRoutes(problem, known));
+  const effort = effortFor(prepared.visits.length, knownRoutes(problem, known), mode === "improve");
+  const routes = await search(deps, plan.id, problem.problem, effort);
   if (!routes) return null;
   const finished = finishPlan(prepared, problem, routes);
   const habit = habitCost(prepared.outlooks, prepared.context);
@@ -104,15 +105,15 @@ async function search(
   deps: Deps,
   planId: string,
   problem: Problem,
-  known: Routes,
+  { turns, options }: Effort,
 ): Promise<Routes | null> {
   const rng = seededRng(SEED);
-  const chunk = PLAN_ITERATIONS / CHUNKS;
-  let start = known;
+  const chunk = turns / CHUNKS;
+  let start: Routes = options.start ?? problem.slots.map(() => []);
   const costs: number[] = [];
   for (let k = 0; k < CHUNKS; k++) {
-    const share = (turns: number) => (turns >= chunk ? 1 : (k + turns / chunk) / CHUNKS);
-    const { routes, cost } = solve(problem, share, rng, { start });
+    const share = (done: number) => (done >= chunk ? 1 : (k + done / chunk) / CHUNKS);
+    const { routes, cost } = solve(problem, share, rng, { ...options, start });
     start = routes;
     costs.push(Math.round(toMinor(cost.total)));
     const progress: BuildProgress = { share: (k + 1) / CHUNKS, costs };

@@ -79,6 +79,13 @@ export function notWorkingWords(technician: PlanningTechnician, day: IsoDay): st
   return `${technician.name} is away${why.reason ? `: ${why.reason}` : ""}`;
 }
 
+/** The cell type that is short, as people call it. */
+function designationOf({ cellTypeIds, visits }: RoundsProblem, { type }: Refusal): string {
+  const packs = visits.flatMap((visit) => visit.outlooks.map((outlook) => outlook.pack));
+  const short = packs.find((pack) => pack.cellTypeId === cellTypeIds[type ?? -1]);
+  return short?.designation || "cells";
+}
+
 /** One refusal of the routing engine in words. */
 export function refusalWords(rounds: RoundsProblem, refusal: Refusal, write: WriteDay): string {
   const { technician, day } = rounds.slots[refusal.slot]!;
@@ -101,6 +108,8 @@ export function refusalWords(rounds: RoundsProblem, refusal: Refusal, write: Wri
       }`;
     case "outside_shift":
       return `the round would end ${minutes(excess)} beyond ${technician.name}'s shift and the overtime allowed`;
+    case "stock_short":
+      return `stores and vans lack ${excess} ${designationOf(rounds, refusal)} for the rounds up to that day`;
     case "van_full":
       return `the van would need to hold ${excess} more cells than it can`;
   }

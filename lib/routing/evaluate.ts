@@ -5,6 +5,7 @@
 import { addCosts, isMust, NO_COST, skipPrice, type CostParts } from "./price";
 import type { Problem, Routes } from "./problem";
 import { scheduleRoute, slotRefusals, type Refusal, type RouteSchedule } from "./schedule";
+import { holdsCells, stockLeft, stockRefusals } from "./stock";
 
 /** `position` counts stops from 0; without it the cheapest place that can be driven is taken. */
 export type Edit =
@@ -123,6 +124,7 @@ export function priceEdit(problem: Problem, routes: Routes, edit: Edit): PricedE
     refusals: [
       ...lockRefusals(problem, routes, next, edit),
       ...refusals.filter((refusal) => isNew(refusal, before)),
+      ...stockRefusals(problem, routes, next),
     ],
   };
 }
@@ -151,18 +153,24 @@ export interface LeftOutReasons {
   readonly fixed: readonly (readonly Refusal[])[];
   /** Some route could take the site: then it costs more than it saves. */
   readonly fits: boolean;
+  /** Stores hold its cells on some day on which a slot could take it. */
+  readonly inStock: boolean;
 }
 
 /** Why a site is in no route, as seen beside `routes`. Stops looking at the first route that fits. */
 export function whyLeftOut(problem: Problem, routes: Routes, site: number): LeftOutReasons {
   const fixed = problem.slots.map((_, r) => slotRefusals(problem, site, r));
+  const left = stockLeft(problem, routes);
+  const inStock = problem.slots.some(
+    (_, r) => fixed[r]!.length === 0 && holdsCells(problem, left, site, r),
+  );
   const fits = fixed.some((refusals, r) => {
-    if (refusals.length > 0) return false;
+    if (refusals.length > 0 || !holdsCells(problem, left, site, r)) return false;
     const route = routes[r] ?? [];
     const before = scheduleRoute(problem, r, route);
     const position = bestPosition(problem, r, route, site);
     const { refusals: after } = scheduleRoute(problem, r, withStop(route, site, position));
     return !after.some((refusal) => isNew(refusal, [before]));
   });
-  return { fixed, fits };
+  return { fixed, fits, inStock };
 }

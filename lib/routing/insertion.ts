@@ -6,7 +6,7 @@
  * The best place of a site in a route stays true until the route changes. It is kept with the
  * route's version; a rejected change brings the old version back, and with it all that is kept.
  */
-import { fitsVan } from "./fit";
+import { fitsStock, fitsVan } from "./fit";
 import { FORBIDDEN, MUST_PENALTY, type Model } from "./model";
 import type { Rng } from "./rng";
 import { FIELDS, LATEST, LEAVE, NODE, PRICE, TAIL, type RouteState } from "./state";
@@ -102,6 +102,8 @@ export class Inserter {
     const at = site * this.model.slots + r;
     if (this.keptVersion[at] !== this.state.version[r]) this.keep(site, r);
     if (this.keptPrice[at]! >= this.best) return;
+    // Not kept: what stores hold changes with every other route.
+    if (this.model.stocks > 0 && !fitsStock(this.state, site, r)) return;
     if (this.blinks && this.toBlink-- === 0) return this.rearm();
     this.best = this.keptPrice[at]!;
     this.route = r;

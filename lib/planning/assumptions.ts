@@ -26,6 +26,11 @@ export const URGENT_DISRUPTION_H = 1;
 export const NEAR_DAYS = 56;
 /** How far ahead a later visit is looked for: beyond the life of the longest-lived packs. */
 export const LATER_DAYS = 15 * 365;
+/**
+ * A plan also looks at the days after its own: what is better done there, with company, waits.
+ * Only its own days become rounds. Measured; see README.md.
+ */
+export const LOOK_AHEAD_DAYS = 7;
 /** Visit, drive and overtime are priced in thousandths of a minor unit: rounding stays unseen. */
 export const COST_UNITS_A_MINOR = 1000;
 /**

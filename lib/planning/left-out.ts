@@ -92,8 +92,7 @@ function neighboursOf(visit: Visit, day: IsoDay, others: readonly Visit[]): numb
   ).length;
 }
 
-function ofCost(visit: Visit, outlook: PackOutlook, others: readonly Visit[]): Why {
-  const { day } = outlook.later;
+function ofCost(visit: Visit, day: IsoDay, others: readonly Visit[]): Why {
   const count = neighboursOf(visit, day, others);
   const company =
     count === 0 ? "" : count === 1 ? " with its neighbour" : ` with its ${count} neighbours`;
@@ -111,6 +110,7 @@ function ofRefusals(
   outlook: PackOutlook,
   why: LeftOutReasons,
   others: readonly Visit[],
+  intended: IsoDay | null,
 ): Why {
   const today = localDay(rounds.frame.now, rounds.frame.timeZone);
   const tickets = visit.site.tickets.map(ticketWords).join(" and a ");
@@ -127,14 +127,26 @@ function ofRefusals(
     };
   }
   if (everywhere(why, "notice", "site_closed", "skill_missing")) return ofNoDay(visit, today);
+  if (why.shortTypes.length > 0) return ofStock(rounds, visit, why);
   if (!why.fits) {
     return {
       reason: "no_time",
       detail: "every round that may go there is full",
-      earliestDay: addDays(rounds.frame.lastDay, 1),
+      earliestDay: intended ?? addDays(rounds.frame.lastDay, 1),
     };
   }
-  return ofCost(visit, outlook, others);
+  return ofCost(visit, intended ?? outlook.later.day, others);
+}
+
+function ofStock(rounds: RoundsProblem, { outlooks }: Visit, { shortTypes }: LeftOutReasons): Why {
+  const ids = shortTypes.map((type) => rounds.cellTypeIds[type]);
+  const short = outlooks.map(({ pack }) => pack).filter((pack) => ids.includes(pack.cellTypeId));
+  return noCells(short.map((pack) => pack.designation));
+}
+
+function noCells(designations: readonly string[]): Why {
+  const names = [...new Set(designations)].join(" and ");
+  return { reason: "no_cells", detail: `not enough ${names} on hand`, earliestDay: null };
 }
 
 function ofNoDay(visit: Visit, today: IsoDay): Why {
@@ -158,27 +170,33 @@ function row(outlook: PackOutlook, why: Why): LeftOut {
   };
 }
 
-/** Due and near-due packs in no round of the plan, the dearest to wait for first. */
+/**
+ * Due and near-due packs in no round of the plan, the dearest to wait for first.
+ * @param lastDay of the plan's rounds; routes on later days are only an intention
+ */
 export function leftOut(
   rounds: RoundsProblem,
   routes: Routes,
+  lastDay: IsoDay,
   due: readonly DueSite[],
   excludedAssets: ReadonlySet<string>,
 ): LeftOut[] {
-  const visited = new Set(routes.flat());
-  const absent = rounds.visits.filter((_, i) => !visited.has(i));
+  const dayOf = new Map(routes.flatMap((route, r) => route.map((s) => [s, rounds.slots[r]!.day])));
+  const inPlan = (s: number) => (dayOf.get(s) ?? "9999") <= lastDay;
+  const absent = rounds.visits.filter((_, s) => !inPlan(s));
+  const lastIndex = daysBetween(rounds.frame.firstDay, lastDay);
   const rows: LeftOut[] = [];
   rounds.visits.forEach((visit, s) => {
-    if (visited.has(s)) return;
-    const why = whyLeftOut(rounds.problem, routes, s);
+    if (inPlan(s)) return;
+    const why = whyLeftOut(rounds.problem, routes, s, lastIndex);
+    const intended = dayOf.get(s) ?? null;
     const swaps = new Set(visit.tasks.flatMap((t) => (t.kind === "swap" ? [t.assetId] : [])));
     for (const outlook of visit.outlooks.filter((o) => swaps.has(o.pack.assetId))) {
-      rows.push(row(outlook, ofRefusals(rounds, visit, outlook, why, absent)));
+      rows.push(row(outlook, ofRefusals(rounds, visit, outlook, why, absent, intended)));
     }
   });
   for (const outlook of due.flatMap((site) => site.withoutCells)) {
-    const detail = `not enough ${outlook.pack.designation} on hand`;
-    rows.push(row(outlook, { reason: "no_cells", detail, earliestDay: null }));
+    rows.push(row(outlook, noCells([outlook.pack.designation])));
   }
   return rows
     .map((r) =>

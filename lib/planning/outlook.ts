@@ -61,6 +61,8 @@ export interface OutlookContext {
   readonly now: EpochDays;
   readonly days: readonly IsoDay[];
   readonly moments: readonly EpochDays[];
+  /** The last of those days on which the plan makes rounds; it only looks at those after it. */
+  readonly lastMoment: EpochDays;
   /** Days after the plan on which a later visit is looked for, nearest first. */
   readonly laterDays: readonly IsoDay[];
   readonly laterMoments: readonly EpochDays[];
@@ -83,12 +85,16 @@ function laterDaysOf(frame: PlanningFrame): IsoDay[] {
   return days;
 }
 
-/** Prepares what the outlooks of one plan share. */
+/**
+ * Prepares what the outlooks of one plan share.
+ * @param lastDay the last day of rounds, where the frame looks further
+ */
 export function outlookContext(
   frame: PlanningFrame,
   prices: PlanningPrices,
   depots: readonly PointOnEarth[],
   road: RoadAssumption,
+  lastDay = frame.lastDay,
 ): OutlookContext {
   const days = daysFrom(frame.firstDay, frame.lastDay);
   const laterDays = laterDaysOf(frame);
@@ -97,6 +103,7 @@ export function outlookContext(
     now: frame.now.getTime() / 86_400_000,
     days,
     moments: days.map(at),
+    lastMoment: at(lastDay),
     laterDays,
     laterMoments: laterDays.map(at),
     prices,
@@ -190,7 +197,7 @@ export function outlookOf(
     later: { day, price },
     gainMinor,
     standing: standingOf(gainMinor, trip.shareMinor, day, context),
-    waitingMinorPerWeek: waitingCostPerWeek(waiting, context.now, context.moments.at(-1)!),
+    waitingMinorPerWeek: waitingCostPerWeek(waiting, context.now, context.lastMoment),
     sufferedMinor: sufferedSoFar(waiting, context.now),
   };
 }

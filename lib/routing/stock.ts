@@ -27,6 +27,13 @@ export function holdsCells(problem: Problem, left: StockLeft, site: number, slot
   );
 }
 
+/** Types of which the site wants more than stores hold by the last day. */
+export function shortTypes(problem: Problem, left: StockLeft, site: number): number[] {
+  return problem.sites[site]!.demand.flatMap((cells, type) =>
+    left && cells > (left[type]!.at(-1) ?? 0) ? [type] : [],
+  );
+}
+
 /** The last slot of a day whose free stops take cells of a type, or -1. */
 function lastTaker({ slots, sites }: Problem, routes: Routes, day: number, type: number): number {
   return slots.findLastIndex(

@@ -18,7 +18,7 @@ import type {
   ReturnDay,
   Ticket,
 } from "@/lib/planning/fleet";
-import { localDay, secondsOfClock } from "@/lib/planning/local-time";
+import { addDays, localDay, secondsOfClock } from "@/lib/planning/local-time";
 import type { PlanInput } from "@/lib/planning/plan";
 import { toEpochDays } from "@/lib/units";
 
@@ -44,6 +44,8 @@ export interface WorldOptions {
   readonly siteIds: readonly string[] | null;
   readonly known: readonly KnownVisit[];
   readonly excludedAssets: ReadonlySet<string>;
+  /** Days after the covered ones that a new plan looks at; left out: none. */
+  readonly lookAheadDays?: number;
 }
 
 /** Whether a plan may change a round: published and not begun, of a covered technician and day. */
@@ -83,10 +85,14 @@ export async function loadWorld(
   const elsewhere = booked.filter((swap) => !isCovered(swap, cover, covered));
   const onHand = cellsOnHand(lots, elsewhere);
   const bookedAssets = new Set(elsewhere.map((swap) => swap.assetId));
-  const binding = await loadBindingRounds(db, [...covered], cover.firstDay, cover.lastDay);
+  const { lookAheadDays = 0 } = options;
+  const lookedAt = addDays(cover.lastDay, lookAheadDays);
+  const bound = await loadBindingRounds(db, [...covered], cover.firstDay, lookedAt);
+  const binding = bound.filter((round) => round.day <= cover.lastDay);
   const input: PlanInput = {
     ...reckoning(organisation, now, cover),
-    technicians: technicians.map((row) => technicianOf(row, binding)),
+    lookAheadDays,
+    technicians: technicians.map((row) => technicianOf(row, bound, cover)),
     sites: sites.map((row) => siteOf(row, returnOf.get(row.id))),
     packs: packs
       .filter((pack) => !bookedAssets.has(pack.assetId))
@@ -128,7 +134,11 @@ function cellsOnHand(
   return onHand;
 }
 
-function technicianOf(row: TechnicianRow, binding: readonly StoredRound[]): PlanningTechnician {
+function technicianOf(
+  row: TechnicianRow,
+  bound: readonly StoredRound[],
+  { lastDay }: PlanCover,
+): PlanningTechnician {
   return {
     technicianId: row.id,
     name: row.name,
@@ -146,8 +156,9 @@ function technicianOf(row: TechnicianRow, binding: readonly StoredRound[]): Plan
     })),
     absences: row.absences,
     vanCells: row.cellCapacity,
-    takenDays: binding
-      .filter((round) => round.technicianId === row.id && round.state !== "published")
+    takenDays: bound
+      .filter((round) => round.technicianId === row.id)
+      .filter((round) => round.state !== "published" || round.day > lastDay)
       .map((round) => round.day),
   };
 }

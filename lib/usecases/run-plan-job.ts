@@ -3,6 +3,7 @@ import { appendAudit } from "@/db/queries/audit";
 import { loadBindingRounds, loadPlanRounds } from "@/db/queries/plan-rounds";
 import { changePlan, findPlan, lockPlan, noteProgress, type PlanRow } from "@/db/queries/plans";
 import { loadTechniciansToPlan } from "@/db/queries/planning-fleet";
+import { LOOK_AHEAD_DAYS } from "@/lib/planning/assumptions";
 import { effortFor, type Effort } from "@/lib/planning/effort";
 import { habitCost } from "@/lib/planning/habit";
 import {
@@ -13,6 +14,7 @@ import {
   type FinishedPlan,
 } from "@/lib/planning/plan";
 import type { KnownVisit } from "@/lib/planning/fleet";
+import { daysBetween } from "@/lib/planning/local-time";
 import { knownRoutes, placesOf } from "@/lib/planning/problem";
 import { toMinor } from "@/lib/planning/rounds";
 import { solve } from "@/lib/routing/solve";
@@ -79,6 +81,7 @@ async function build(
   const world = await loadWorld(deps.db, deps.now(), plan, {
     siteIds: mode === "repair" ? known.map((visit) => visit.siteId) : null,
     known,
+    lookAheadDays: mode === "repair" ? 0 : LOOK_AHEAD_DAYS,
     excludedAssets: await excludedAssets(deps.db, plan.id),
   });
   const prepared = mode === "repair" ? prepareKnown(world.input, []) : preparePlan(world.input);
@@ -90,7 +93,7 @@ async function build(
   if (!routes) return null;
   const finished = finishPlan(prepared, problem, routes);
   const habit = habitCost(prepared.outlooks, prepared.context);
-  const minor = habit.minorPerWeek * (prepared.context.days.length / 7);
+  const minor = habit.minorPerWeek * (planDays(plan) / 7);
   const cost: StoredPlanCost = {
     figures: finished.figures,
     // A repair looks at its own visits only; the whole fleet's habit is not theirs.
@@ -98,6 +101,10 @@ async function build(
     travel: travel.source,
   };
   return { plan: finished, cost };
+}
+
+function planDays({ firstDay, lastDay }: PlanRow): number {
+  return daysBetween(firstDay, lastDay) + 1;
 }
 
 /** Searches in chunks, noting the falling cost between them. Null: the plan was discarded. */

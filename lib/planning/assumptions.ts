@@ -17,6 +17,12 @@ export const NEXT_ROUND_H = 7 * 24;
  * 8 % of capacity and 15 % of draw together, as a forecast assumes them before anything is read.
  */
 export const FUTURE_LIFE_SD = 0.17;
+/**
+ * How many times its reckoned long-run cost a day of service is held to cost. Measured in simulated
+ * years (README.md), no theory: more than 1, because what a swap brings forward is reckoned from
+ * its own expected life, and the packs to come will be taken out early again.
+ */
+export const KEEP_FACTOR = 1.25;
 /** What an urgent trip costs beside its own drive and work: a planned round is torn up. */
 export const URGENT_DISRUPTION_H = 1;
 /**

@@ -6,6 +6,7 @@
 import type { EpochDays, IsoDay, Minor } from "@/lib/units";
 import {
   ARRIVAL_S,
+  KEEP_FACTOR,
   LATER_DAYS,
   NEAR_DAYS,
   NEXT_ROUND_H,
@@ -157,7 +158,8 @@ export function waitingPack(
     life: pack.life,
     keepMinorPerDay:
       keepCostPerDay(pack.life, pack.installedAt, cycleMinor) *
-      longRunPremium(costOfFailure(silence), cycleMinor),
+      longRunPremium(costOfFailure(silence), cycleMinor) *
+      KEEP_FACTOR,
   };
 }
 

@@ -11,8 +11,6 @@ import type { Rng } from "./rng";
 import { Ruin } from "./ruin";
 import { RouteState } from "./state";
 
-/** Neighbours that a newly opened slot is offered. */
-const OPEN_OFFER = 40;
 /** Long routes need more heat to be reshaped: so far the start temperature grows with length. */
 const LEAST_TENS = 0.7;
 const MOST_TENS = 4;
@@ -25,6 +23,8 @@ export class Search {
   private readonly lastTouch: LastTouch;
   private typicalLeg = 1;
   private startHeat = 1;
+  private absentTried = 0;
+  private openOffer = 0;
   private bestRoutes: Routes;
   bestTotal: number;
 
@@ -43,7 +43,7 @@ export class Search {
     this.lastTouch.fill(params.startWorth);
     this.bestRoutes = exportRoutes(this.state);
     this.bestTotal = this.state.total;
-    this.setHeat();
+    this.setScale();
   }
 
   /** Leaves no stop in, out or elsewhere that would pay to change alone. */
@@ -61,8 +61,8 @@ export class Search {
     this.bestRoutes = exportRoutes(this.state);
   }
 
-  /** Sets the scale of the temperature by the start plan: mean price of a leg, mean length. */
-  private setHeat(): void {
+  /** Sets temperature and reach by the start plan: mean price of a leg, mean length of a route. */
+  private setScale(): void {
     let price = 0;
     let stops = 0;
     let open = 0;
@@ -73,7 +73,10 @@ export class Search {
       open += 1;
     }
     this.typicalLeg = Math.max(1, price / Math.max(1, stops + open));
-    const tens = Math.min(MOST_TENS, Math.max(LEAST_TENS, stops / Math.max(1, open) / 10));
+    const length = stops / Math.max(1, open);
+    this.absentTried = Math.max(this.params.absentTried, Math.round(length));
+    this.openOffer = Math.max(this.params.openOffer, Math.round(4 * length));
+    const tens = Math.min(MOST_TENS, Math.max(LEAST_TENS, length / 10));
     this.startHeat = Math.max(this.params.endHeat, this.params.startHeat * tens);
   }
 
@@ -118,7 +121,7 @@ export class Search {
     else ruin.strings(seed);
     if (draw > 1 - params.openShare) this.openSlot();
     for (let i = 0; i < ruin.removedCount; i++) recreate.list(ruin.removed[i]!);
-    if (state.absentCount > ruin.removedCount) recreate.listAbsent(seed, params.absentTried);
+    if (state.absentCount > ruin.removedCount) recreate.listAbsent(seed, this.absentTried);
     recreate.run();
   }
 
@@ -132,7 +135,7 @@ export class Search {
     state.insert(site, r, 0);
     const row = site * model.near;
     let offered = 0;
-    for (let i = 1; i < model.near && offered < OPEN_OFFER; i++) {
+    for (let i = 1; i < model.near && offered < this.openOffer; i++) {
       const other = model.neighbours[row + i]!;
       if (state.routeOf[other]! >= 0) continue;
       recreate.list(other);

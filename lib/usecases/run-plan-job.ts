@@ -17,19 +17,16 @@ import type { KnownVisit } from "@/lib/planning/fleet";
 import { daysBetween } from "@/lib/planning/local-time";
 import { knownRoutes, placesOf } from "@/lib/planning/problem";
 import { toMinor } from "@/lib/planning/rounds";
-import { solve } from "@/lib/routing/solve";
-import { seededRng } from "@/lib/routing/rng";
 import type { Problem, Routes } from "@/lib/routing/problem";
 import { excludedAssets } from "./open-plan";
 import type { StoredPlanCost } from "./plan-cost";
 import type { BuildProgress } from "./plan-progress";
+import { searchWithin } from "./search-within";
 import { storeBuiltPlan } from "./store-built-plan";
 import { isCovered, knownVisits, loadWorld } from "./planning-world";
 import { travelTimes } from "./travel-times";
 import { type Deps, defineUseCase } from "./use-case";
 
-/** How often the search's progress is shown. */
-const CHUNKS = 12;
 const SEED = 20_261_201;
 
 const MODES = ["build", "improve", "repair"] as const;
@@ -107,27 +104,21 @@ function planDays({ firstDay, lastDay }: PlanRow): number {
   return daysBetween(firstDay, lastDay) + 1;
 }
 
-/** Searches in chunks, noting the falling cost between them. Null: the plan was discarded. */
+/** Seeks the rounds, noting the falling cost meanwhile. Null: the plan was discarded. */
 async function search(
   deps: Deps,
   planId: string,
   problem: Problem,
-  { turns, options }: Effort,
+  effort: Effort,
 ): Promise<Routes | null> {
-  const rng = seededRng(SEED);
-  const chunk = turns / CHUNKS;
-  let start: Routes = options.start ?? problem.slots.map(() => []);
   const costs: number[] = [];
-  for (let k = 0; k < CHUNKS; k++) {
-    const share = (done: number) => (done >= chunk ? 1 : (k + done / chunk) / CHUNKS);
-    const { routes, cost } = solve(problem, share, rng, { ...options, start });
-    start = routes;
-    costs.push(Math.round(toMinor(cost.total)));
-    const progress: BuildProgress = { share: (k + 1) / CHUNKS, costs };
+  const seek = deps.searchRounds ?? searchWithin;
+  return seek({ problem, ...effort, seed: SEED }, async ({ share, cost }) => {
+    costs.push(Math.round(toMinor(cost)));
+    const progress: BuildProgress = { share: Math.min(1, share), costs: [...costs] };
     await noteProgress(deps.db, planId, progress);
-    if ((await findPlan(deps.db, planId))?.state !== "building") return null;
-  }
-  return start;
+    return (await findPlan(deps.db, planId))?.state === "building";
+  });
 }
 
 async function giveUp(deps: Deps, planId: string): Promise<void> {

@@ -185,6 +185,7 @@ export function leftOut(
   const inPlan = (s: number) => (dayOf.get(s) ?? "9999") <= lastDay;
   const absent = rounds.visits.filter((_, s) => !inPlan(s));
   const lastIndex = daysBetween(rounds.frame.firstDay, lastDay);
+  const own = { ...rounds, frame: { ...rounds.frame, lastDay } };
   const rows: LeftOut[] = [];
   rounds.visits.forEach((visit, s) => {
     if (inPlan(s)) return;
@@ -192,7 +193,7 @@ export function leftOut(
     const intended = dayOf.get(s) ?? null;
     const swaps = new Set(visit.tasks.flatMap((t) => (t.kind === "swap" ? [t.assetId] : [])));
     for (const outlook of visit.outlooks.filter((o) => swaps.has(o.pack.assetId))) {
-      rows.push(row(outlook, ofRefusals(rounds, visit, outlook, why, absent, intended)));
+      rows.push(row(outlook, ofRefusals(own, visit, outlook, why, absent, intended)));
     }
   });
   for (const outlook of due.flatMap((site) => site.withoutCells)) {

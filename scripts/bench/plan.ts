@@ -3,8 +3,8 @@
  * a published plan stays when one pack in a hundred changes. No database: what the worker does
  * between reading and writing. --still leaves the growing fleets out.
  */
-import { disturbanceRow } from "./plan/disturbance";
-import { scaleRow } from "./plan/scale";
+import { disturbanceRow, type DisturbanceRow } from "./plan/disturbance";
+import { scaleRow, type ScaleRow } from "./plan/scale";
 
 const SIZES = [1_250, 2_500, 5_000, 10_000];
 const WEEKS = 4;
@@ -13,10 +13,12 @@ const SEEDS = [1, 2, 3, 4, 5, 6];
 const CHANGED = 0.01;
 const DISTURBED_ASSETS = 2_500;
 
-function main(): void {
+async function main(): Promise<void> {
   const sizes = process.argv.includes("--still") ? [] : SIZES;
-  const scale = sizes.map((assets) => scaleRow(assets, WEEKS));
-  const disturbance = SEEDS.map((seed) => disturbanceRow(seed, DISTURBED_ASSETS, CHANGED));
+  const scale: ScaleRow[] = [];
+  for (const assets of sizes) scale.push(await scaleRow(assets, WEEKS));
+  const disturbance: DisturbanceRow[] = [];
+  for (const seed of SEEDS) disturbance.push(await disturbanceRow(seed, DISTURBED_ASSETS, CHANGED));
   if (process.argv.includes("--json")) {
     console.log(JSON.stringify({ scale, disturbance }));
     return;
@@ -44,4 +46,4 @@ function main(): void {
   }
 }
 
-main();
+await main();

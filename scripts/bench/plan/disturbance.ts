@@ -37,12 +37,17 @@ const placed = (rounds: readonly PlannedRound[]) =>
   );
 
 /** Plans, changes one pack in `1 / share`, plans again from the published rounds. */
-export function disturbanceRow(seed: number, assets: number, share: number): DisturbanceRow {
+export async function disturbanceRow(
+  seed: number,
+  assets: number,
+  share: number,
+): Promise<DisturbanceRow> {
   const input = fleetInput(assets, 2, seededRng(seed));
-  const before = planFleet(input).plan.rounds;
+  const before = (await planFleet(input)).plan.rounds;
   const [news, changedPacks] = withNews(input, share, seededRng(seed + 1000));
   const informed = { ...news, known: knownOf(before) };
-  const mended = planFleet(informed);
+  const mended = await planFleet(informed);
+  const free = await planFleet(informed, true);
   const after = mended.plan.rounds;
   const { moved, added, dropped } = planDifference(placed(before), placed(after));
   const visits = placed(before).length;
@@ -50,6 +55,6 @@ export function disturbanceRow(seed: number, assets: number, share: number): Dis
     ...{ seed, changedPacks, visits },
     ...{ moved: moved.length, added: added.length, dropped: dropped.length },
     movedShare: (moved.length + dropped.length) / visits,
-    overFreePlan: mended.bareCost / planFleet(informed, true).bareCost - 1,
+    overFreePlan: mended.bareCost / free.bareCost - 1,
   };
 }

@@ -15,7 +15,7 @@ import { greatCircleTable } from "@/lib/planning/travel";
 import { checkPlan } from "@/lib/routing/check";
 import type { Problem } from "@/lib/routing/problem";
 import { seededRng } from "@/lib/routing/rng";
-import { afterIterations, solve } from "@/lib/routing/solve";
+import { searchBeside } from "@/lib/server/search-threads/search-beside";
 import { median } from "../timing";
 import { fleetInput } from "./fleet";
 
@@ -51,10 +51,10 @@ function unknown(problem: Problem): Problem {
 }
 
 /**
- * Plans as the worker does: great circle, the same number of turns, one seed.
+ * Plans as the worker does: great circle, the same turns in the same two threads, one seed.
  * @param free sought anew, as if nobody knew of any round
  */
-export function planFleet(input: PlanInput, free = false) {
+export async function planFleet(input: PlanInput, free = false) {
   const began = performance.now();
   const prepared = preparePlan(input);
   const travel = greatCircleTable(placesOf(input.technicians, prepared.visits), input.road);
@@ -63,8 +63,8 @@ export function planFleet(input: PlanInput, free = false) {
   const bare = unknown(problem.problem);
   const known = free ? [] : knownRoutes(problem, input.known);
   const { turns, options } = effortFor(prepared.visits.length, known);
-  const sought = free ? bare : problem.problem;
-  const { routes } = solve(sought, afterIterations(turns), seededRng(1), options);
+  const sought = { problem: free ? bare : problem.problem, turns, options, seed: 1 };
+  const routes = (await searchBeside(sought, async () => true))!;
   const finished = performance.now();
   const plan = finishPlan(prepared, problem, routes);
   return {
@@ -103,9 +103,9 @@ function actTimes(input: PlanInput, rounds: readonly PlannedRound[], times: numb
 }
 
 /** One size of fleet, planned for so many weeks. */
-export function scaleRow(assets: number, weeks: number): ScaleRow {
+export async function scaleRow(assets: number, weeks: number): Promise<ScaleRow> {
   const input = fleetInput(assets, weeks, seededRng(assets));
-  const { plan, bareCost: _, ...times } = planFleet(input);
+  const { plan, bareCost: _, ...times } = await planFleet(input);
   return {
     assets,
     technicians: input.technicians.length,

@@ -48,6 +48,8 @@ export interface Finish {
   /** Cost in the problem's units; a must site missed counts a million million. */
   readonly rank: number;
   readonly iterations: number;
+  /** Wall time of the search. */
+  readonly seconds: number;
 }
 
 export class Race {

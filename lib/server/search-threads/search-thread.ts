@@ -81,10 +81,12 @@ function exchange(order: Order, place: Place): OnProgress {
 
 function run(order: Order, place: Place): Finish {
   const { problem, options, seed, limit } = order;
+  const began = performance.now();
   const stop = stopAt(limit, place.threads);
   const end = solve(problem, stop, seededRng(seed), options, exchange(order, place));
   const rank = end.cost.total + MISSED_RANK * end.missedMust.length;
-  return { kind: "finish", routes: end.routes, rank, iterations: end.iterations };
+  const seconds = (performance.now() - began) / 1000;
+  return { kind: "finish", routes: end.routes, rank, iterations: end.iterations, seconds };
 }
 
 parentPort?.once("message", (place: Place) => {

@@ -34,7 +34,8 @@ function setOf(path: string): string | undefined {
   if (kind === ".json") return text.includes('"technicians"') ? "field" : undefined;
   if (kind === ".vrp") return text.includes("PRIZE_SECTION") ? "pcvrptw" : "vrplib";
   if (!/READY TIME/.test(text)) return undefined;
-  return readSolomon(text).sites.length > 100 ? "homberger" : "solomon";
+  const customers = text.match(/^\s*\d+(\s+-?[\d.]+){6}\s*$/gm)?.length ?? 0;
+  return customers > 101 ? "homberger" : "solomon";
 }
 
 export function listInstances(folder: string, only: RegExp): Listed[] {

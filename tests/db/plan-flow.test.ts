@@ -3,6 +3,7 @@ import { expect, it } from "vitest";
 import { comparePlans } from "@/lib/usecases/compare-plans";
 import { discardPlan } from "@/lib/usecases/discard-plan";
 import { editPlan } from "@/lib/usecases/edit-plan";
+import { improvePlan } from "@/lib/usecases/improve-plan";
 import { markAbsent } from "@/lib/usecases/mark-absent";
 import { planWeek } from "@/lib/usecases/plan-week";
 import { pricePlanAct } from "@/lib/usecases/price-plan-act";
@@ -113,6 +114,25 @@ it("prices an act, does exactly that, and takes it back", async () => {
   expect(after.rounds.map((r) => [r.technicianId, r.day])).toEqual([[act.technicianId, act.day]]);
   await undoPlanEdit(deps, dispatcher, { planId, version: done.version });
   expect((await board(planId)).rounds).toEqual(before.rounds);
+  await discardPlan(deps, dispatcher, { planId });
+});
+
+it("improves a draft from where it stands, also by moves that nobody has been told of", async () => {
+  const planId = await builtPlan();
+  const first = await board(planId);
+  await editPlan(deps, dispatcher, {
+    planId,
+    version: first.version,
+    act: await otherPlace(planId),
+  });
+  const { version } = await board(planId);
+  await improvePlan(deps, dispatcher, { planId, version });
+  expect(await runPlanJob(deps, systemActor, { planId, mode: "improve" })).toEqual({ built: true });
+  const { rounds, plan } = await board(planId);
+  expect(rounds.flatMap((r) => r.stops.flatMap((s) => s.tasks))).toHaveLength(3);
+  // By hand it went to a dearer day; back on its own the plan costs what it did.
+  expect(rounds.map((r) => r.day)).toEqual(first.rounds.map((r) => r.day));
+  expect(plan?.state).toBe("draft");
   await discardPlan(deps, dispatcher, { planId });
 });
 

@@ -3,6 +3,7 @@ import { expect, it } from "vitest";
 import { comparePlans } from "@/lib/usecases/compare-plans";
 import { discardPlan } from "@/lib/usecases/discard-plan";
 import { editPlan } from "@/lib/usecases/edit-plan";
+import { improvePlan } from "@/lib/usecases/improve-plan";
 import { markAbsent } from "@/lib/usecases/mark-absent";
 import { planWeek } from "@/lib/usecases/plan-week";
 import { pricePlanAct } from "@/lib/usecases/price-plan-act";
@@ -116,6 +117,25 @@ it("prices an act, does exactly that, and takes it back", async () => {
   await discardPlan(deps, dispatcher, { planId });
 });
 
+it("improves a draft from where it stands, also by moves that nobody has been told of", async () => {
+  const planId = await builtPlan();
+  const first = await board(planId);
+  await editPlan(deps, dispatcher, {
+    planId,
+    version: first.version,
+    act: await otherPlace(planId),
+  });
+  const { version } = await board(planId);
+  await improvePlan(deps, dispatcher, { planId, version });
+  expect(await runPlanJob(deps, systemActor, { planId, mode: "improve" })).toEqual({ built: true });
+  const { rounds, plan } = await board(planId);
+  expect(rounds.flatMap((r) => r.stops.flatMap((s) => s.tasks))).toHaveLength(3);
+  // By hand it went to a dearer day; back on its own the plan costs what it did.
+  expect(rounds.map((r) => r.day)).toEqual(first.rounds.map((r) => r.day));
+  expect(plan?.state).toBe("draft");
+  await discardPlan(deps, dispatcher, { planId });
+});
+
 it("lets only one of two dispatchers win, and names the reason of a refusal", async () => {
   const planId = await builtPlan();
   const { version } = await board(planId);
@@ -162,6 +182,71 @@ it("lays two drafts side by side: figures, and the visit that stands elsewhere",
   ]);
   expect(apart.figures.find((f) => f.label === "Swaps")?.values).toEqual(["3", "3"]);
   for (const planId of [first, second]) await discardPlan(deps, dispatcher, { planId });
+});
+
+/** A done round of last week whose stop at the site could not be done. */
+async function couldNotBeDone(day: string, returnOn: string | null) {
+  const [planId, roundId] = [randomUUID(), randomUUID()];
+  const at = new Date(`${day}T10:00:00Z`);
+  const days = { firstDay: day, lastDay: day };
+  const plan = {
+    id: planId,
+    name: "Before",
+    ...days,
+    state: "published",
+    createdAt: at,
+    publishedAt: at,
+  };
+  await db.insertInto("plan").values(plan).execute();
+  await db
+    .insertInto("round")
+    .values({
+      ...{ id: roundId, planId, technicianId: crew.ada, day, state: "done", icalUid: roundId },
+      ...{ startsAt: at, endsAt: at, driveS: 0, workS: 0, distanceM: 0, overtimeS: 0 },
+    })
+    .execute();
+  await db
+    .insertInto("stop")
+    .values({
+      ...{ id: randomUUID(), roundId, siteId: register.siteId, position: 1, arrivesAt: at },
+      ...{ departsAt: at, state: "cannot_do", cannotReason: "flooded", returnOn },
+    })
+    .execute();
+}
+
+it("does not go before the day a technician named, and says so where that leaves no day", async () => {
+  await couldNotBeDone("2026-11-26", "2026-12-10");
+  const within = await builtPlan();
+  const days = (await board(within)).rounds.map((round) => round.day);
+  expect(days.length).toBeGreaterThan(0);
+  expect(days.every((day) => day >= "2026-12-10")).toBe(true);
+  const early = { kind: "move" as const, siteId: register.siteId, day: "2026-12-08" };
+  const { refusals } = await pricePlanAct(deps, dispatcher, {
+    planId: within,
+    act: { ...early, technicianId: crew.ada },
+  });
+  expect(refusals).toEqual([
+    expect.stringMatching(/flooded at the last visit, not before .*10 Dec/),
+  ]);
+  await discardPlan(deps, dispatcher, { planId: within });
+
+  await couldNotBeDone("2026-11-27", "2026-12-21");
+  const beyond = await builtPlan();
+  const { rounds, leftOut } = await board(beyond);
+  expect(rounds).toEqual([]);
+  expect(leftOut.map(({ tag, why }) => [tag, why])).toEqual(
+    ["QF-0001", "QF-0002", "QF-0003"].map((tag) => [
+      tag,
+      expect.stringMatching(/^flooded at the last visit, .*: earliest .*21 Dec/),
+    ]),
+  );
+  await discardPlan(deps, dispatcher, { planId: beyond });
+
+  // A later "can't do it" without a day: the next plan may go at once.
+  await couldNotBeDone("2026-11-30", null);
+  const again = await builtPlan();
+  expect((await board(again)).rounds).not.toEqual([]);
+  await discardPlan(deps, dispatcher, { planId: again });
 });
 
 it("publishes, then changes, then repairs: one mail to each whose day changed, RFC 5545 rules", async () => {

@@ -6,6 +6,9 @@ export interface StopPlace {
   readonly position: number;
   readonly arrivesAt: string;
   readonly departsAt: string;
+  /** Where its site is, WGS 84 degrees. */
+  readonly latitude: number;
+  readonly longitude: number;
 }
 
 /** A round's stops as they stand, in order, locked. */
@@ -15,10 +18,12 @@ export async function lockStopOrder(
 ): Promise<StopPlace[]> {
   const rows = await trx
     .selectFrom("stop")
-    .select(["id", "position", "arrivesAt", "departsAt"])
-    .where("roundId", "=", roundId)
-    .orderBy("position")
-    .forUpdate()
+    .innerJoin("site", "site.id", "stop.siteId")
+    .select(["stop.id", "stop.position", "stop.arrivesAt", "stop.departsAt"])
+    .select(["site.latitude", "site.longitude"])
+    .where("stop.roundId", "=", roundId)
+    .orderBy("stop.position")
+    .forUpdate("stop")
     .execute();
   return rows.map((row) => ({
     ...row,

@@ -44,7 +44,8 @@ export async function applyOrder(
   { body, happenedAt }: Entry<"reorder">,
   round: { readonly id: string },
 ): Promise<void> {
-  const stops = reordered(await lockStopOrder(trx, round.id), body.stopIds);
+  const placed = await lockStopOrder(trx, round.id);
+  const stops = reordered(placed, body.stopIds, (stop) => stop);
   await saveStopOrder(trx, round.id, stops, happenedAt);
   await appendAudit(trx, {
     ...{ at: deps.now(), personId: actor.personId, act: "reorder-stops" },

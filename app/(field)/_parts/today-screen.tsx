@@ -82,7 +82,7 @@ function Round(props: { day: DayPack; round: DayRound; isToday: boolean; onOrder
         </h1>
         <p className="text-soft">{loadLine(day, round)}</p>
         {round.reorderedAt && (
-          <p className="text-soft">In your own order: times are about right.</p>
+          <p className="text-soft">In your own order: its times are reckoned, about right.</p>
         )}
       </div>
       {round.state === "done" && (

@@ -39,6 +39,8 @@ export interface DayRound {
   readonly distanceM: number;
   /** When the technician gave the stops an order of their own. A day from before has none. */
   readonly reorderedAt?: string | null;
+  /** When the office replaced that order by its own. A day from before has none. */
+  readonly orderReplacedAt?: string | null;
   readonly stops: readonly DayStop[];
 }
 

@@ -54,7 +54,8 @@ function lay(day: DayPack, entry: OutboxEntry): DayPack {
 }
 
 function inOrder(day: DayPack, round: DayRound, stopIds: readonly string[], at: string): DayRound {
-  return { ...round, stops: stopsInOrder(day, round, stopIds), reorderedAt: at };
+  const stops = stopsInOrder(day, round, stopIds);
+  return { ...round, stops, reorderedAt: at, orderReplacedAt: null };
 }
 
 /** A round's stops in another order, their times reckoned anew. */

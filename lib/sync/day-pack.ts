@@ -182,6 +182,8 @@ export interface DayPack {
     readonly locale: string;
     readonly timeZone: string;
     readonly currency: string;
+    /** Whether photos keep where they were taken; a day from before does not say: no. */
+    readonly keepPhotoPosition?: boolean;
   };
   readonly van: {
     readonly placeId: string;

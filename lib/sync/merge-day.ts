@@ -163,7 +163,7 @@ function withSwap(day: DayPack, id: string, at: string, body: Body<"swap">): Day
     forecast: null,
   };
   return takeFromVan(
-    onAsset(day, body.assetId, (found) => ({ ...found, pack })),
+    onAsset(day, body.assetId, (found) => ({ ...found, pack, worth: null })),
     body,
     series * parallel,
   );

@@ -47,7 +47,7 @@ it("swaps the neighbour of a planned asset in aeroplane mode", async () => {
   for (const box of await page.getByRole("checkbox").all()) await box.check();
   await page.getByRole("button", { name: "Keep this swap" }).click();
   // Back at the stop: the neighbour has fresh cells, the planned work is still to do.
-  await beside.getByText("fresh").waitFor();
+  await beside.getByText("fresh cells").waitFor();
   expect(await page.getByRole("button", { name: "Leave: done here" }).count()).toBe(1);
   await expectAccessible(page);
 }, 180_000);

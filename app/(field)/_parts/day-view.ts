@@ -47,6 +47,14 @@ export function stopWork(day: DayPack, stop: DayStop): string {
   return parts.filter(Boolean).join(" · ") || "nothing planned";
 }
 
+const FRESH_DAYS = 3;
+
+/** A pack put in so lately that no forecast of it can have come yet. */
+export function isFresh(day: DayPack, pack: DayAsset["pack"]): boolean {
+  const madeDay = Date.parse(day.madeAt) / 86_400_000;
+  return pack !== null && !pack.forecast && madeDay - pack.installedDay < FRESH_DAYS;
+}
+
 /** The disc of the pack in an asset; null where nothing is known of it. */
 export function assetDisc(day: DayPack, assetId: string | undefined): WaneDiscModel | null {
   const asset = assetId ? findAsset(day, assetId) : null;

@@ -241,10 +241,14 @@ async function sendPhotos(db, personId, applied) {
   const photos = (await read(db, "photos", (store) => store.getAll()))
     .filter((photo) => photo.personId === personId && photo.refusal === null)
     .filter((photo) => applied.has(photo.entryId) || !kept.has(photo.entryId));
-  for (const { id, entryId, takenAt } of photos) {
+  for (const { id, entryId, takenAt, position } of photos) {
     const body = await read(db, "pictures", (store) => store.get(id));
     const sent = new Date().toISOString();
     const query = new URLSearchParams({ entry: entryId, person: personId, taken: takenAt, sent });
+    if (position) {
+      query.set("lat", position.latitude);
+      query.set("lon", position.longitude);
+    }
     const headers = { "content-type": "image/jpeg" };
     const url = `/api/sync/photos/${id}?${query}`;
     const response = await call(url, { method: "PUT", headers, body }, [400, 413, 422]);

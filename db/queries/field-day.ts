@@ -13,7 +13,7 @@ export async function loadFieldRounds(
   const rounds = await db
     .selectFrom("round")
     .select(["id", "day", "state", "startsAt", "endsAt", "driveS", "workS", "distanceM"])
-    .select("reorderedAt")
+    .select(["reorderedAt", "orderReplacedAt"])
     .where("technicianId", "=", technicianId)
     .where("state", "in", BINDING)
     .where("day", ">=", firstDay)

@@ -17,6 +17,8 @@ export interface Organisation {
   /** When the organisation's own roads were set; null: it has none. */
   readonly roadsSetAt: Date | null;
   readonly mapTileUrl: string | null;
+  /** Whether photos from phones keep where they were taken. */
+  readonly keepPhotoPosition: boolean;
   readonly isDemonstration: boolean;
 }
 

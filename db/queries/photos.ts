@@ -15,6 +15,9 @@ export interface NewPhoto {
   readonly width: number;
   readonly height: number;
   readonly bytes: number;
+  /** WGS 84 degrees; null: not known, or not to be kept. */
+  readonly latitude: number | null;
+  readonly longitude: number | null;
 }
 
 /**
@@ -80,6 +83,7 @@ export async function listAssetPhotos(
     .innerJoin("person", "person.id", "photo.personId")
     .innerJoin("syncEntry", "syncEntry.id", "photo.entryId")
     .select(["photo.id", "photo.takenAt", "photo.width", "photo.height", "photo.assetId"])
+    .select(["photo.latitude", "photo.longitude"])
     .select(["photo.entryId", "person.name as personName", "syncEntry.kind", "syncEntry.body"])
     .where((eb) =>
       eb.or([

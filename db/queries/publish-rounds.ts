@@ -58,7 +58,8 @@ export async function changeBindingRound(
   for (const stop of draft.stops) {
     const was = old.get(stop.siteId);
     if (!was) {
-      const moved = { roundId: before.id, position: stop.position };
+      const { position, arrivesAt, departsAt } = stop;
+      const moved = { roundId: before.id, position, arrivesAt, departsAt };
       await trx.updateTable("stop").set(moved).where("id", "=", stop.id).execute();
       continue;
     }

@@ -313,6 +313,10 @@ export interface Organisation {
   detourFactor: Generated<Numeric>;
   id: Generated<number>;
   isDemonstration: Generated<boolean>;
+  /**
+   * Whether photos from phones keep where they were taken; off, neither phone nor server keeps it.
+   */
+  keepPhotoPosition: Generated<boolean>;
   locale: string;
   mapTileUrl: string | null;
   name: string;
@@ -386,6 +390,11 @@ export interface Photo {
   entryId: string;
   height: number;
   id: string;
+  /**
+   * WGS 84, as the camera wrote it; null: not known or not to be kept.
+   */
+  latitude: number | null;
+  longitude: number | null;
   objectKey: string;
   personId: string;
   receivedAt: Timestamp;
@@ -507,6 +516,14 @@ export interface Round {
   icalSequence: Generated<number>;
   icalUid: string;
   id: string;
+  /**
+   * When the technician's own order reached us, which may be long after it was given.
+   */
+  orderReceivedAt: Timestamp | null;
+  /**
+   * When the office put the stops in another order than the technician had given them.
+   */
+  orderReplacedAt: Timestamp | null;
   overtimeS: Generated<number>;
   planId: string;
   publishedAt: Timestamp | null;

@@ -1,3 +1,4 @@
+import type { PhotoPosition } from "@/lib/sync/photos";
 import { type FieldDatabase, isFull } from "./database";
 import { keepEntries, type NewEntry } from "./outbox-store";
 
@@ -5,6 +6,7 @@ import { keepEntries, type NewEntry } from "./outbox-store";
 export interface Picture {
   readonly id: string;
   readonly takenAt: string;
+  readonly position?: PhotoPosition | null;
   readonly bytes: ArrayBuffer;
 }
 

@@ -1,5 +1,6 @@
 import type { Refusal } from "@/lib/sync/entries";
 import type { KeptPhoto } from "@/lib/sync/outbox-photos";
+import type { PhotoPosition } from "@/lib/sync/photos";
 import type { FieldDatabase } from "./database";
 
 export interface NewPhoto {
@@ -7,6 +8,7 @@ export interface NewPhoto {
   readonly entryId: string;
   readonly personId: string;
   readonly takenAt: string;
+  readonly position?: PhotoPosition | null;
   readonly bytes: ArrayBuffer;
 }
 

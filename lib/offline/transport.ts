@@ -43,9 +43,10 @@ export function browserTransport(): Transport {
       const headers = { "content-type": "application/json" };
       return ask<SyncResponse>("/api/sync", { method: "POST", headers, body }, SEND_TIMEOUT_MS);
     },
-    sendPhoto: ({ id, entryId, personId, takenAt }, body) => {
+    sendPhoto: ({ id, entryId, personId, takenAt, position }, body) => {
       const query = new URLSearchParams({
         ...{ entry: entryId, person: personId, taken: takenAt },
+        ...(position && { lat: String(position.latitude), lon: String(position.longitude) }),
         sent: new Date().toISOString(),
       });
       const headers = { "content-type": "image/jpeg" };

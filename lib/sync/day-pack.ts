@@ -39,6 +39,8 @@ export interface DayRound {
   readonly distanceM: number;
   /** When the technician gave the stops an order of their own. A day from before has none. */
   readonly reorderedAt?: string | null;
+  /** When the office replaced that order by its own. A day from before has none. */
+  readonly orderReplacedAt?: string | null;
   readonly stops: readonly DayStop[];
 }
 
@@ -180,6 +182,8 @@ export interface DayPack {
     readonly locale: string;
     readonly timeZone: string;
     readonly currency: string;
+    /** Whether photos keep where they were taken; a day from before does not say: no. */
+    readonly keepPhotoPosition?: boolean;
   };
   readonly van: {
     readonly placeId: string;

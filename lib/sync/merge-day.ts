@@ -17,7 +17,17 @@ export function mergeDay(day: DayPack, entries: readonly OutboxEntry[]): DayPack
   return entries
     .filter((entry) => entry.personId === day.person.id && entry.state !== "refused")
     .sort((a, b) => a.seq - b.seq)
+    .filter(isLastOrder)
     .reduce(lay, day);
+}
+
+/** Of several orders of one round only the last counts: it names every stop. */
+function isLastOrder({ body }: OutboxEntry, n: number, entries: readonly OutboxEntry[]): boolean {
+  if (body.kind !== "reorder") return true;
+  const { roundId } = body;
+  return !entries
+    .slice(n + 1)
+    .some((later) => later.body.kind === "reorder" && later.body.roundId === roundId);
 }
 
 function lay(day: DayPack, entry: OutboxEntry): DayPack {
@@ -34,7 +44,7 @@ function lay(day: DayPack, entry: OutboxEntry): DayPack {
     case "stop-done":
       return onStop(day, body.stopId, at, (stop) => done(stop, at));
     case "reorder":
-      return onRound(day, body.roundId, (round) => inOrder(round, body.stopIds, at));
+      return onRound(day, body.roundId, (round) => inOrder(day, round, body.stopIds, at));
     case "round":
       return onRound(day, body.roundId, (round) => actOn(round, body.act));
     case "note":
@@ -43,8 +53,19 @@ function lay(day: DayPack, entry: OutboxEntry): DayPack {
   }
 }
 
-function inOrder(round: DayRound, stopIds: readonly string[], at: string): DayRound {
-  return { ...round, stops: reordered(round.stops, stopIds), reorderedAt: at };
+function inOrder(day: DayPack, round: DayRound, stopIds: readonly string[], at: string): DayRound {
+  const stops = stopsInOrder(day, round, stopIds);
+  return { ...round, stops, reorderedAt: at, orderReplacedAt: null };
+}
+
+/** A round's stops in another order, their times reckoned anew. */
+export function stopsInOrder(
+  day: DayPack,
+  round: DayRound,
+  stopIds: readonly string[],
+): readonly DayStop[] {
+  const sites = new Map(day.sites.map((site) => [site.id, site]));
+  return reordered(round.stops, stopIds, (stop) => sites.get(stop.siteId) ?? null);
 }
 
 function actOn(round: DayRound, act: "started" | "done"): DayRound {
@@ -142,7 +163,7 @@ function withSwap(day: DayPack, id: string, at: string, body: Body<"swap">): Day
     forecast: null,
   };
   return takeFromVan(
-    onAsset(day, body.assetId, (found) => ({ ...found, pack })),
+    onAsset(day, body.assetId, (found) => ({ ...found, pack, worth: null })),
     body,
     series * parallel,
   );

@@ -4,6 +4,7 @@
  */
 import type { Refusal } from "./entries";
 import type { OutboxEntry } from "./outbox";
+import type { PhotoPosition } from "./photos";
 
 export interface KeptPhoto {
   readonly id: string;
@@ -11,6 +12,8 @@ export interface KeptPhoto {
   readonly personId: string;
   /** By the phone's own clock. */
   readonly takenAt: string;
+  /** Only where the organisation's photos keep it. */
+  readonly position?: PhotoPosition | null;
   readonly attempts: number;
   /** Why the server will never have it; null while it may still go. */
   readonly refusal: Refusal | null;

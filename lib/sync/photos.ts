@@ -10,6 +10,12 @@ export const PHOTO_EDGE_PX = 1600;
 export const MAX_PHOTO_BYTES = 8_000_000;
 export const MAX_PHOTOS_AN_ENTRY = 12;
 
+/** Where a photo was taken, WGS 84 degrees. */
+export interface PhotoPosition {
+  readonly latitude: number;
+  readonly longitude: number;
+}
+
 export const photoRequest = z.object({
   id: z.uuid(),
   entryId: z.uuid(),
@@ -18,6 +24,11 @@ export const photoRequest = z.object({
   takenAt: z.iso.datetime(),
   /** The phone's clock when it sent. */
   sentAt: z.iso.datetime(),
+  /** Left out unless the organisation's photos keep their position. */
+  position: z
+    .object({ latitude: z.number().min(-90).max(90), longitude: z.number().min(-180).max(180) })
+    .nullable()
+    .default(null),
   bytes: z.instanceof(Uint8Array),
 });
 export type PhotoRequest = z.output<typeof photoRequest>;

@@ -2,14 +2,7 @@
  * The technician's own order of a round. Pure and idempotent: phone and server come to the same
  * order and the same times from the same stops.
  */
-
-/** As much of a stop as its place in the round depends on. */
-export interface PlacedStop {
-  readonly id: string;
-  readonly position: number;
-  readonly arrivesAt: string;
-  readonly departsAt: string;
-}
+import { legTimes, type PlacedStop, type StopPoint } from "./leg-times";
 
 /**
  * The ids of a round in the order wanted. Stops that are gone are left out; one that was added
@@ -27,37 +20,36 @@ export function orderedAs(current: readonly string[], wanted: readonly string[])
 }
 
 /**
- * The stops in another order, with new positions and times: each keeps the length of its visit, and
- * the n-th drive takes as long as the n-th drive of the plan did. So the times are about right
- * and never run backwards; nobody has asked the roads again.
+ * The stops in another order, with new positions and times: the round begins when it did, each visit
+ * keeps its length, and the drives between are reckoned anew (`legTimes`; where that knows
+ * nothing, the n-th drive takes as long as the n-th of the plan). Times never run backwards.
  */
 export function reordered<Stop extends PlacedStop>(
   stops: readonly Stop[],
   wanted: readonly string[],
+  pointOf: (stop: Stop) => StopPoint | null = () => null,
 ): Stop[] {
   const placed = [...stops].sort((a, b) => a.position - b.position);
-  const order = orderedAs(
-    placed.map((stop) => stop.id),
-    wanted,
-  );
-  if (order.every((id, n) => placed[n]?.id === id)) return placed;
-  const gaps = placed.map((stop, n) => Math.max(0, arrival(stop) - departure(placed[n - 1], stop)));
-  let clock = placed[0] ? arrival(placed[0]) : 0;
-  return order.flatMap((id, n) => {
-    const stop = placed.find((candidate) => candidate.id === id);
-    if (!stop) return [];
-    const arrives = clock + (n === 0 ? 0 : (gaps[n] ?? 0));
-    clock = arrives + Math.max(0, Date.parse(stop.departsAt) - arrival(stop));
+  const byId = new Map(placed.map((stop) => [stop.id, stop]));
+  const order = orderedAs([...byId.keys()], wanted).flatMap((id) => byId.get(id) ?? []);
+  if (order.every((stop, n) => placed[n] === stop)) return placed;
+  const leg = legTimes(placed, pointOf);
+  let clock = placed[0] ? Date.parse(placed[0].arrivesAt) : 0;
+  return order.map((stop, n) => {
+    const before = order[n - 1];
+    const arrives = clock + (before ? (leg(before, stop) ?? nthLeg(placed, n)) : 0);
+    clock = arrives + Math.max(0, Date.parse(stop.departsAt) - Date.parse(stop.arrivesAt));
     const times = {
       arrivesAt: new Date(arrives).toISOString(),
       departsAt: new Date(clock).toISOString(),
     };
-    return [{ ...stop, position: n + 1, ...times }];
+    return { ...stop, position: n + 1, ...times };
   });
 }
 
-const arrival = (stop: PlacedStop): number => Date.parse(stop.arrivesAt);
-
-function departure(before: PlacedStop | undefined, stop: PlacedStop): number {
-  return before ? Date.parse(before.departsAt) : arrival(stop);
+function nthLeg(placed: readonly PlacedStop[], n: number): number {
+  const [before, stop] = [placed[n - 1], placed[n]];
+  return before && stop
+    ? Math.max(0, Date.parse(stop.arrivesAt) - Date.parse(before.departsAt))
+    : 0;
 }

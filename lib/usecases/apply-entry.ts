@@ -11,6 +11,7 @@ import {
 } from "@/db/queries/field-work";
 import { closeMattersOfStop, raiseMatter } from "@/db/queries/field-matters";
 import { getOrganisation } from "@/db/queries/organisation";
+import { lockStopOrder } from "@/db/queries/stop-order";
 import { AppError, forbidden, notFound } from "@/lib/errors";
 import { dayOfInstant } from "@/lib/present/calendar-days";
 import type { EntryBody } from "@/lib/sync/entries";
@@ -58,8 +59,11 @@ export async function applyEntry(
       return void (await ownStop(trx, actor, body.stopId));
     case "load-check":
       return applyLoadCheck(trx, deps, actor, { ...entry, body }, await ownRound(trx, actor, body));
-    case "reorder":
-      return applyOrder(trx, deps, actor, { ...entry, body }, await ownRound(trx, actor, body));
+    case "reorder": {
+      const placed = await lockStopOrder(trx, body.roundId);
+      const { id } = await ownRound(trx, actor, body);
+      return applyOrder(trx, deps, actor, { ...entry, body }, { id, placed });
+    }
     case "round": {
       const round = await ownRound(trx, actor, body);
       return markRound(trx, round.id, body.act, happenedAt);

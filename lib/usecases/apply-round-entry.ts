@@ -2,7 +2,7 @@ import type { Transaction } from "kysely";
 import type { Database } from "@/db/client";
 import { appendAudit } from "@/db/queries/audit";
 import { raiseMatter } from "@/db/queries/field-matters";
-import { lockStopOrder, saveStopOrder } from "@/db/queries/stop-order";
+import { saveStopOrder, type StopPlace } from "@/db/queries/stop-order";
 import type { EntryBody } from "@/lib/sync/entries";
 import { reordered } from "@/lib/sync/round-order";
 import type { Deps, PersonActor } from "./use-case";
@@ -42,10 +42,10 @@ export async function applyOrder(
   deps: Deps,
   actor: PersonActor,
   { body, happenedAt }: Entry<"reorder">,
-  round: { readonly id: string },
+  round: { readonly id: string; readonly placed: readonly StopPlace[] },
 ): Promise<void> {
-  const stops = reordered(await lockStopOrder(trx, round.id), body.stopIds);
-  await saveStopOrder(trx, round.id, stops, happenedAt);
+  const stops = reordered(round.placed, body.stopIds, (stop) => stop);
+  await saveStopOrder(trx, round.id, stops, { given: happenedAt, received: deps.now() });
   await appendAudit(trx, {
     ...{ at: deps.now(), personId: actor.personId, act: "reorder-stops" },
     ...{ subjectKind: "round", subjectId: round.id },

@@ -23,6 +23,7 @@ const input = z
     roadSpeedKmh: scaledEntry(0, { min: 5, max: 130, wanted: "a speed" }),
     travelTableUrl: fields.serviceUrlEntry,
     mapTileUrl: fields.tileUrlEntry,
+    keepPhotoPosition: z.boolean(),
   })
   .transform(({ crewCostPerHour, overtimeCostPerHour, travelCostPerKm, ...rest }, context) => {
     const digits = fields.minorDigits(rest.currency);

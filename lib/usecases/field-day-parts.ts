@@ -18,6 +18,7 @@ export function assembleRounds({ rounds, stops, tasks }: FieldRoundRows): DayRou
     startsAt: round.startsAt.toISOString(),
     endsAt: round.endsAt.toISOString(),
     reorderedAt: round.reorderedAt?.toISOString() ?? null,
+    orderReplacedAt: round.orderReplacedAt?.toISOString() ?? null,
     stops: (stopsOf.get(round.id) ?? []).map(({ roundId: _, ...stop }) => ({
       ...stop,
       state: stop.state as DayStop["state"],

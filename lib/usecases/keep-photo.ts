@@ -1,3 +1,4 @@
+import { getOrganisation } from "@/db/queries/organisation";
 import { countPhotos, findPhoto, insertPhoto, placeOfEntry } from "@/db/queries/photos";
 import { findSyncEntry } from "@/db/queries/sync-entries";
 import { AppError, forbidden, invalid } from "@/lib/errors";
@@ -82,12 +83,15 @@ async function store(deps: Deps, actor: PersonActor, { request, about, image }: 
   const skewMs = clockSkewMs(new Date(request.sentAt), receivedAt);
   const objectKey = `photos/${id.slice(0, 2)}/${id}.jpg`;
   const { width, height, bytes } = image;
+  const { keepPhotoPosition } = await getOrganisation(deps.db);
+  const position = keepPhotoPosition ? request.position : null;
   const fresh = await deps.db.transaction().execute(async (trx) => {
     const claimed = await insertPhoto(trx, {
       ...{ id, entryId, ...about, personId: actor.personId, receivedAt, objectKey },
       takenAt: correctedInstant(new Date(request.takenAt), skewMs, receivedAt),
       clockSkewMs: recordedSkewMs(skewMs),
       ...{ width, height, bytes: bytes.length },
+      ...{ latitude: position?.latitude ?? null, longitude: position?.longitude ?? null },
     });
     if (claimed) await storage.put(objectKey, bytes, "image/jpeg");
     return claimed;

@@ -1,4 +1,5 @@
 import type { StoredRound, StoredStop } from "@/db/queries/plan-rounds";
+import { type OwnOrder, type OwnOrders, settleOwnOrder } from "./own-order";
 import { dayKey } from "./stored-rounds";
 
 /** What publishing a draft does to one technician's day. */
@@ -10,6 +11,7 @@ export interface DayChange {
   readonly draft: StoredRound | null;
   /** The round that bound until now; null when there was none. */
   readonly before: StoredRound | null;
+  readonly ownOrder: OwnOrder;
 }
 
 /** A round whose times move by less keeps its place in people's minds: no mail for it. */
@@ -19,19 +21,25 @@ const SAME_WITHIN_MS = 5 * 60_000;
 export function dayChanges(
   draft: readonly StoredRound[],
   binding: readonly StoredRound[],
+  orders: OwnOrders,
 ): DayChange[] {
   const before = new Map(binding.map((round) => [dayKey(round), round]));
   const kept = draft.map((round): DayChange => {
+    const { technicianId, day } = round;
     const was = before.get(dayKey(round)) ?? null;
-    const news = !was ? "published" : sameRound(was, round) ? "unchanged" : "changed";
-    return { news, technicianId: round.technicianId, day: round.day, draft: round, before: was };
+    const none = { news: "published", draft: round, before: null, ownOrder: "none" } as const;
+    if (!was) return { ...none, technicianId, day };
+    const settled = settleOwnOrder(round, was, orders);
+    const news = sameRound(was, settled.draft) ? "unchanged" : "changed";
+    return { ...settled, news, technicianId, day, before: was };
   });
   const drafted = new Set(draft.map(dayKey));
   const gone = binding
     .filter((round) => !drafted.has(dayKey(round)))
     .map((round): DayChange => {
       const { technicianId, day } = round;
-      return { news: "cancelled", technicianId, day, draft: null, before: round };
+      const gone = { news: "cancelled", draft: null, ownOrder: "none" } as const;
+      return { ...gone, technicianId, day, before: round };
     });
   return [...kept, ...gone].sort((a, b) => (a.day < b.day ? -1 : a.day > b.day ? 1 : 0));
 }
@@ -57,9 +65,15 @@ function near(a: Date, b: Date): boolean {
   return Math.abs(a.getTime() - b.getTime()) < SAME_WITHIN_MS;
 }
 
+const OWN_ORDER_WORDS = {
+  none: "",
+  kept: "Your own order of the stops is kept.",
+  replaced: "The office put the stops in another order: your own no longer holds.",
+} as const;
+
 /** What changed in a round, in words for its technician. */
 export function changeWords(
-  { draft, before }: DayChange,
+  { draft, before, ownOrder }: DayChange,
   siteNames: ReadonlyMap<string, string>,
 ): string[] {
   if (!draft || !before) return [];
@@ -73,7 +87,9 @@ export function changeWords(
   const words: string[] = [];
   if (added.length > 0) words.push(`New: ${added.join(", ")}.`);
   if (gone.length > 0) words.push(`No longer: ${gone.join(", ")}.`);
-  if (stayed(was, is) !== stayed(is, was)) words.push("The order changed.");
-  if (words.length === 0) words.push("Times or tasks changed.");
-  return words;
+  if (stayed(was, is) !== stayed(is, was) && ownOrder !== "replaced") {
+    words.push("The order changed.");
+  }
+  if (words.length === 0 && ownOrder !== "replaced") words.push("Times or tasks changed.");
+  return ownOrder === "none" ? words : [...words, OWN_ORDER_WORDS[ownOrder]];
 }

@@ -13,6 +13,7 @@ import {
   swappedMeanwhile,
 } from "@/db/queries/publish-rounds";
 import { loadRoundSheets } from "@/db/queries/round-sheets";
+import { lockStopsOfDays, noteOrderReplaced } from "@/db/queries/stop-order";
 import { conflict, notFound } from "@/lib/errors";
 import { assertDraft } from "./open-plan";
 import { changeWords, type DayChange } from "./publication";
@@ -40,6 +41,8 @@ export const publishPlan = defineUseCase({
       const plan = await lockPlan(trx, planId);
       if (!plan) throw notFound("This plan");
       assertDraft(plan, version);
+      // A technician's own order that is on its way waits here, or has been seen.
+      await lockStopsOfDays(trx, plan.firstDay, plan.lastDay);
       const publication = await readPublication(trx, deps.now(), plan);
       await refuseUnsound(trx, publication);
       const sent = await apply(trx, deps, publication);
@@ -106,7 +109,7 @@ async function apply(
 
 async function applyDay(
   trx: Transaction<Database>,
-  { news, draft, before }: DayChange,
+  { news, draft, before, ownOrder }: DayChange,
   at: Date,
 ): Promise<{ readonly roundId: string; readonly sequence: number }> {
   if (news === "cancelled" && before) {
@@ -118,6 +121,7 @@ async function applyDay(
     return { roundId: draft.id, sequence: draft.icalSequence };
   }
   if (news === "changed") {
+    if (ownOrder === "replaced") await noteOrderReplaced(trx, before.id, at);
     return { roundId: before.id, sequence: await changeBindingRound(trx, before, draft, at) };
   }
   await adoptRound(trx, before, draft);

@@ -55,7 +55,7 @@ export const readFieldDay = defineUseCase({
           dayFromNumber(today + DAYS_AHEAD),
         )
       : { rounds: [], stops: [], tasks: [] };
-    const { name, locale, timeZone, currency } = organisation;
+    const { name, locale, timeZone, currency, keepPhotoPosition } = organisation;
     const siteIds = [...new Set(rounds.stops.map((stop) => stop.siteId))];
     const [{ assets, ...things }, van, worth] = await Promise.all([
       loadThings(deps, rounds, madeAt),
@@ -66,7 +66,7 @@ export const readFieldDay = defineUseCase({
       version: DAY_PACK_VERSION,
       madeAt: madeAt.toISOString(),
       person: { id: actor.personId, name: actor.name },
-      organisation: { name, locale, timeZone, currency },
+      organisation: { name, locale, timeZone, currency, keepPhotoPosition },
       van,
       rounds: assembleRounds(rounds),
       assets: assets.map((asset) => ({ ...asset, worth: worth.get(asset.id) ?? null })),

@@ -2,10 +2,11 @@ import type { Kysely } from "kysely";
 import { z } from "zod";
 import type { Database } from "@/db/client";
 import { getOrganisation, type Organisation } from "@/db/queries/organisation";
-import { loadBindingRounds, loadPlanRounds } from "@/db/queries/plan-rounds";
+import { loadBindingRounds, loadPlanRounds, type StoredRound } from "@/db/queries/plan-rounds";
 import type { PlanRow } from "@/db/queries/plans";
 import { loadTechniciansToPlan } from "@/db/queries/planning-fleet";
 import { type SheetStop, loadRoundSheets } from "@/db/queries/round-sheets";
+import { loadOwnOrders } from "@/db/queries/stop-order";
 import { localDay } from "@/lib/planning/local-time";
 import { planDifference } from "@/lib/planning/plan-difference";
 import { formatDay } from "@/lib/present/format-day";
@@ -47,30 +48,45 @@ export async function readPublication(
     db,
     [...draft, ...binding].map((round) => round.id),
   );
-  const names = new Map(technicians.map((t) => [t.id, t.name]));
-  const day = (at: string) => formatDay(at, organisation.locale, { weekday: true, today: at });
-  const stranded = draft.flatMap((round) => {
-    const technician = technicians.find((t) => t.id === round.technicianId);
-    const name = names.get(round.technicianId) ?? "somebody";
-    if (!technician) return [`${name} is no longer in the crews of this plan`];
-    if (round.endsAt <= now) return [`${name}'s ${day(round.day)} is over`];
-    const begun = all.some(
-      (r) => r.technicianId === technician.id && r.day === round.day && r.state !== "published",
-    );
-    if (begun) return [`${name} has begun a round on ${day(round.day)}`];
-    const away = technician.absences.some((a) => a.firstDay <= round.day && round.day <= a.lastDay);
-    return away ? [`${name} is away on ${day(round.day)}`] : [];
-  });
+  const orders = await loadOwnOrders(
+    db,
+    binding.map((round) => round.id),
+  );
   return {
     plan,
     organisation,
     technicians,
     technicianIds,
-    changes: dayChanges(draft, binding),
+    changes: dayChanges(draft, binding, {
+      heardAt: orders,
+      draftMadeAt: plan.createdAt,
+      pointOf: (siteId) => stops.find((stop) => stop.siteId === siteId) ?? null,
+    }),
     stops,
     siteNames: new Map(stops.map((stop) => [stop.siteId, stop.siteName])),
-    stranded,
+    stranded: draft.flatMap((round) => whyStranded(round, all, technicians, now, organisation)),
   };
+}
+
+/** Why nobody can drive a round of the draft any more, in words; empty when it can be driven. */
+function whyStranded(
+  round: StoredRound,
+  binding: readonly StoredRound[],
+  technicians: readonly TechnicianRow[],
+  now: Date,
+  { locale }: Organisation,
+): string[] {
+  const technician = technicians.find((t) => t.id === round.technicianId);
+  if (!technician) return ["somebody is no longer in the crews of this plan"];
+  const { name } = technician;
+  const day = formatDay(round.day, locale, { weekday: true, today: round.day });
+  if (round.endsAt <= now) return [`${name}'s ${day} is over`];
+  const begun = binding.some(
+    (r) => r.technicianId === technician.id && r.day === round.day && r.state !== "published",
+  );
+  if (begun) return [`${name} has begun a round on ${day}`];
+  const away = technician.absences.some((a) => a.firstDay <= round.day && round.day <= a.lastDay);
+  return away ? [`${name} is away on ${day}`] : [];
 }
 
 /** What the draft does to visits that people know of; empty where nothing binds yet. */
@@ -106,8 +122,8 @@ export const previewPublication = defineUseCase({
       shortages,
       difference: changesInWords(publication),
       unchanged: changes.length - news.length,
-      mails: news.map(({ news: kind, technicianId, day, draft }) => ({
-        kind,
+      mails: news.map(({ news: kind, technicianId, day, draft, ownOrder }) => ({
+        ...{ kind, ownOrder },
         name: names.get(technicianId)?.name ?? "",
         email: names.get(technicianId)?.email ?? "",
         day: formatDay(day, organisation.locale, { weekday: true, today: plan.firstDay }),

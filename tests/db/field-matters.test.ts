@@ -168,6 +168,32 @@ describe("photos", () => {
     await readPhoto(deps, phone.technician, { id: one.id });
   });
 
+  it("keep where they were taken only when the organisation wants it, and the picture never does", async () => {
+    const entry = await send(swap());
+    const position = { latitude: 52.501, longitude: -0.102 };
+    const places = async () => {
+      const one = { ...(await photo(entry.id)), position };
+      await keepPhoto(deps, phone.technician, one);
+      return db
+        .selectFrom("photo")
+        .select(["latitude", "longitude"])
+        .where("id", "=", one.id)
+        .executeTakeFirstOrThrow();
+    };
+    expect(await places()).toEqual({ latitude: null, longitude: null });
+    await db.updateTable("organisation").set({ keepPhotoPosition: true }).execute();
+    expect((await readFieldDay(deps, phone.technician, {})).organisation.keepPhotoPosition).toBe(
+      true,
+    );
+    expect(await places()).toEqual(position);
+    for (const bytes of kept.values()) expect(Buffer.from(bytes).includes("Exif")).toBe(false);
+    const wrong = { ...(await photo(entry.id)), position: { latitude: 91, longitude: Number.NaN } };
+    await expect(keepPhoto(deps, phone.technician, wrong as never)).rejects.toMatchObject({
+      code: "invalid",
+    });
+    await db.updateTable("organisation").set({ keepPhotoPosition: false }).execute();
+  });
+
   it("say when they were taken by our clock though the phone's is a day off", async () => {
     const entry = await send(swap());
     const day = 86_400_000;

@@ -150,6 +150,43 @@ describe("refusals", () => {
   });
 });
 
+describe("a request", () => {
+  const whole = async (change: object) =>
+    syncEntries(deps, phone.technician, {
+      ...{ deviceId: "phone-one", sentAt: NOW.toISOString(), entries: [made(reading())] },
+      ...change,
+    } as never);
+
+  it("of another shape is refused as a whole, and nothing of it is recorded", async () => {
+    const { personId } = phone.technician;
+    const hostile: object[] = [
+      { entries: [] },
+      { entries: "all" },
+      { entries: Array.from({ length: 101 }, () => made(reading())) },
+      { entries: [made(reading()), { id: "1; drop table reading", personId, body: {} }] },
+      { entries: [made(reading(), { happenedAt: "tomorrow" })] },
+      { entries: [made(reading(), { happenedAt: "+275760-09-13T00:00:00.001Z" })] },
+      { sentAt: "1e99" },
+      { deviceId: "x" },
+      { deviceId: { $gt: "" } },
+    ];
+    for (const change of hostile) {
+      await expect(whole(change), JSON.stringify(change).slice(0, 80)).rejects.toMatchObject({
+        code: "invalid",
+      });
+    }
+    expect(await db.selectFrom("syncEntry").select("id").execute()).toEqual([]);
+    expect(await readingsOf(phone.packs[0] ?? "")).toEqual([]);
+  });
+
+  it("that names an entry twice applies it once; a body that changed on the way changes nothing", async () => {
+    const entry = made(reading());
+    const other = { ...entry, body: reading({ millivolts: 2500 }) };
+    expect(words(await send([entry, entry, other]))).toEqual(["applied", "applied", "applied"]);
+    expect(await readingsOf(phone.packs[0] ?? "")).toMatchObject([{ millivolts: 2700 }]);
+  });
+});
+
 describe("whose entry it is", () => {
   it("is never sent as somebody else's, and stays sendable by its owner", async () => {
     const other = await register.actor(["technician"]);
@@ -265,6 +302,22 @@ describe("the phone's clock", () => {
     expect(readings.map((r) => r.at.toISOString())).toEqual([
       ...["2026-12-01T11:00:00.000Z", "2026-12-01T11:00:00.000Z"],
     ]);
+  });
+});
+
+describe("a clock that jumps", () => {
+  it("between two entries of one phone leaves their order and never dates them ahead of us", async () => {
+    // The phone was switched on a year ahead, put right, and then sent: its stamps contradict.
+    const order = swap();
+    const ahead = made(order, { happenedAt: "2027-12-01T11:00:00.000Z" });
+    const after = made(reading({ packId: order.newPackId, millivolts: 3050 }));
+    expect(words(await send([ahead, after]))).toEqual(["applied", "applied"]);
+    const [packs, readings] = [await packsOf(0), await readingsOf(order.newPackId)];
+    expect(packs).toHaveLength(2);
+    expect(readings).toHaveLength(2);
+    for (const at of [...packs.map((p) => p.installedAt), ...readings.map((r) => r.at)]) {
+      expect(at.getTime()).toBeLessThanOrEqual(NOW.getTime());
+    }
   });
 });
 

@@ -5,7 +5,7 @@ import { dayOfInstant } from "@/lib/present/calendar-days";
 import { formatDay, formatWindow } from "@/lib/present/format-day";
 import { formatVolts } from "@/lib/present/format-quantity";
 import type { DayAsset, DayPack, DayTask } from "@/lib/sync/day-pack";
-import { discOf } from "./day-view";
+import { discOf, isFresh } from "./day-view";
 import { chemistryCaution } from "./field-words";
 
 const MS_PER_DAY = 86_400_000;
@@ -88,7 +88,11 @@ function cutoffWords(day: DayPack, asset: DayAsset): string {
     return `stopped ${formatDay(since, locale, { weekday: true, today })}`;
   }
   const forecast = asset.pack?.forecast;
-  if (!forecast) return "fresh: its forecast comes when it has been sent";
+  if (!forecast) {
+    return isFresh(day, asset.pack)
+      ? "fresh: its forecast comes when it has been sent"
+      : "no forecast yet: a voltage says more";
+  }
   const [p5, p50, p95] = [forecast.p05, forecast.p50, forecast.p95].map((at) => new Date(at));
   if (!p5 || !p50 || !p95) return "";
   const window = formatWindow({ p5: dayOf(p5), p50: dayOf(p50), p95: dayOf(p95) }, locale, today);

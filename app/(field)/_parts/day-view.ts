@@ -1,5 +1,6 @@
 import { findAsset } from "@/lib/offline/day";
 import { dayNumber, dayOfInstant } from "@/lib/present/calendar-days";
+import { formatTime } from "@/lib/present/format-time";
 import { packTone } from "@/lib/present/tone";
 import { waneDisc, type WaneDiscModel } from "@/lib/present/wane-disc";
 import type { DayAsset, DayPack, DayRound, DayStop } from "@/lib/sync/day-pack";
@@ -16,6 +17,15 @@ export function stopTitle(day: DayPack, stop: DayStop): string {
   const asset = task && !more ? findAsset(day, task.assetId) : null;
   const site = day.sites.find((candidate) => candidate.id === stop.siteId);
   return asset?.name ?? site?.name ?? "Stop";
+}
+
+/** Why a stop's site lets nobody in at the time it stands at: "closes 15:00"; null when it does. */
+export function closedThen(day: DayPack, stop: DayStop): string | null {
+  const site = day.sites.find((candidate) => candidate.id === stop.siteId);
+  const clock = (at: string) => formatTime(new Date(at), day.organisation).slice(0, 5);
+  if (site?.opens && clock(stop.arrivesAt) < site.opens) return `opens ${site.opens}`;
+  if (site?.closes && clock(stop.departsAt) > site.closes) return `closes ${site.closes}`;
+  return null;
 }
 
 /** "1 × ER34615", "2 swaps · 4 × LR20, 2 × LR6", "1 to read". */
@@ -35,6 +45,14 @@ export function stopWork(day: DayPack, stop: DayStop): string {
     others > 0 ? `${others} to ${others === 1 ? TASK_WORDS.read : "look at"}` : "",
   ];
   return parts.filter(Boolean).join(" · ") || "nothing planned";
+}
+
+const FRESH_DAYS = 3;
+
+/** A pack put in so lately that no forecast of it can have come yet. */
+export function isFresh(day: DayPack, pack: DayAsset["pack"]): boolean {
+  const madeDay = Date.parse(day.madeAt) / 86_400_000;
+  return pack !== null && !pack.forecast && madeDay - pack.installedDay < FRESH_DAYS;
 }
 
 /** The disc of the pack in an asset; null where nothing is known of it. */

@@ -6,8 +6,10 @@ import { FieldBar } from "@/components/ui/field-bar";
 import { FieldPage } from "@/components/ui/field-page";
 import { Notice } from "@/components/ui/notice";
 import { fieldStore } from "@/lib/offline/browser-store";
+import { formatTime } from "@/lib/present/format-time";
 import type { DayPack, DayRound } from "@/lib/sync/day-pack";
-import { stopTitle } from "./day-view";
+import { stopsInOrder } from "@/lib/sync/merge-day";
+import { closedThen, stopTitle } from "./day-view";
 
 const arrow =
   "flex size-12 items-center justify-center rounded border-[1.5px] border-ink bg-sheet text-xl active:bg-hair disabled:border-rule disabled:text-soft";
@@ -18,7 +20,7 @@ export function OrderScreen(props: { day: DayPack; round: DayRound; onClose: () 
   const [order, setOrder] = useState(() => round.stops.map((stop) => stop.id));
   const [trouble, setTrouble] = useState<string | null>(null);
   const [moved, setMoved] = useState("");
-  const stops = order.flatMap((id) => round.stops.find((stop) => stop.id === id) ?? []);
+  const stops = stopsInOrder(day, round, order);
   const open = stops.filter((stop) => stop.state === "planned");
   const move = (id: string, by: -1 | 1) => {
     const place = open.findIndex((stop) => stop.id === id);
@@ -55,20 +57,29 @@ export function OrderScreen(props: { day: DayPack; round: DayRound; onClose: () 
         }
       >
         {trouble && <Notice kind="trouble">{trouble}</Notice>}
-        <p className="text-soft">The office sees your order. Times are then about right only.</p>
+        <p className="text-soft">
+          The office sees your order. Its times are reckoned from the plan’s drives: about right.
+        </p>
         <p role="status" className="sr-only">
           {moved}
         </p>
         <ol aria-label="Open stops" className="-mx-4 border-y border-rule bg-sheet">
           {open.map((stop, n) => {
             const name = stopTitle(day, stop);
+            const shut = closedThen(day, stop);
             return (
               <li
                 key={stop.id}
                 className="flex min-h-17 items-center gap-2.5 border-t border-rule px-4 py-2 first:border-t-0"
               >
                 <span className="w-7 text-right font-semibold">{n + 1}</span>
-                <span className="min-w-0 flex-1 font-semibold">{name}</span>
+                <span className="min-w-0 flex-1">
+                  <span className="block font-semibold">{name}</span>
+                  <span className="block text-soft">
+                    {formatTime(new Date(stop.arrivesAt), day.organisation)}
+                    {shut && <span className="font-semibold text-brick-ink"> · site {shut}</span>}
+                  </span>
+                </span>
                 <button
                   type="button"
                   className={arrow}

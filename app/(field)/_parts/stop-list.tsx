@@ -2,7 +2,7 @@ import { FieldLink } from "@/components/ui/field-link";
 import { WaneDisc } from "@/components/charts/wane-disc";
 import { formatTime } from "@/lib/present/format-time";
 import type { DayPack, DayRound, DayStop } from "@/lib/sync/day-pack";
-import { assetDisc, nextStop, stopTitle, stopWork } from "./day-view";
+import { assetDisc, closedThen, nextStop, stopTitle, stopWork } from "./day-view";
 import { CANNOT_WORDS } from "./field-words";
 
 /** The stops in order, each with its state; the next one is marked. */
@@ -23,6 +23,7 @@ export function StopList({ day, round }: { day: DayPack; round: DayRound }) {
             <span className="min-w-0 flex-1">
               <span className="block font-semibold">{stopTitle(day, stop)}</span>
               <span className="block text-soft">{aboutStop(day, stop)}</span>
+              <Shut day={day} round={round} stop={stop} />
             </span>
             <Due day={day} stop={stop} />
           </FieldLink>
@@ -60,6 +61,12 @@ function aboutStop(day: DayPack, stop: DayStop): string {
     return `not done: ${(word ?? "no reason given").toLowerCase()}`;
   }
   return `${formatTime(new Date(stop.arrivesAt), organisation)} · ${stopWork(day, stop)}`;
+}
+
+/** A stop that the technician's own order brings to a closed gate. */
+function Shut({ day, round, stop }: { day: DayPack; round: DayRound; stop: DayStop }) {
+  const shut = round.reorderedAt && stop.state === "planned" ? closedThen(day, stop) : null;
+  return shut && <span className="block font-semibold text-brick-ink">site {shut}</span>;
 }
 
 function Due({ day, stop }: { day: DayPack; stop: DayStop }) {

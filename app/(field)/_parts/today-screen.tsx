@@ -9,6 +9,7 @@ import { EmptyState } from "@/components/ui/states";
 import { dayOfInstant } from "@/lib/present/calendar-days";
 import { formatDay } from "@/lib/present/format-day";
 import { formatDistance } from "@/lib/present/format-quantity";
+import { formatTime } from "@/lib/present/format-time";
 import type { DayPack, DayRound } from "@/lib/sync/day-pack";
 import { fieldStatus } from "./field-status";
 import { loadLine } from "./load-line";
@@ -82,9 +83,15 @@ function Round(props: { day: DayPack; round: DayRound; isToday: boolean; onOrder
         </h1>
         <p className="text-soft">{loadLine(day, round)}</p>
         {round.reorderedAt && (
-          <p className="text-soft">In your own order: times are about right.</p>
+          <p className="text-soft">In your own order: its times are reckoned, about right.</p>
         )}
       </div>
+      {round.orderReplacedAt && (
+        <Notice kind="warn">
+          The office put your stops in another order at{" "}
+          {formatTime(new Date(round.orderReplacedAt), day.organisation)}: your own no longer holds.
+        </Notice>
+      )}
       {round.state === "done" && (
         <Notice kind="done">
           This round is finished: {over} of {stops} stops.

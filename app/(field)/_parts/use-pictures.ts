@@ -2,6 +2,8 @@
 
 import { useEffect, useRef, useState } from "react";
 import type { Picture } from "@/lib/offline/keep-with-photos";
+import { fieldStore } from "@/lib/offline/browser-store";
+import { positionOf } from "@/lib/offline/photo-position";
 import { shrinkPhoto } from "@/lib/offline/shrink-photo";
 
 /** A picture with an address to show it by. */
@@ -20,7 +22,8 @@ export interface Pictures {
   readonly clear: () => void;
 }
 
-/** The photos of the entry being made: small and without position as soon as they are taken. */
+/** The photos of the entry being made: small, and without position unless the
+ * organisation keeps it, as soon as they are taken. */
 export function usePictures(): Pictures {
   const [list, setList] = useState<readonly ShownPicture[]>([]);
   const [busy, setBusy] = useState(false);
@@ -51,6 +54,8 @@ export function usePictures(): Pictures {
 
 async function pictureOf(file: File): Promise<ShownPicture> {
   const bytes = await shrinkPhoto(file);
+  const { day } = fieldStore().getSnapshot();
+  const position = day?.organisation.keepPhotoPosition ? await positionOf(file) : null;
   const url = URL.createObjectURL(new Blob([bytes], { type: "image/jpeg" }));
-  return { id: crypto.randomUUID(), takenAt: new Date().toISOString(), bytes, url };
+  return { id: crypto.randomUUID(), takenAt: new Date().toISOString(), position, bytes, url };
 }

@@ -93,7 +93,7 @@ describe("the organisation", () => {
     ...{ name: "Quillmere Drainage Board", timeZone: "Europe/Berlin", locale: "de-DE" },
     ...{ currency: "eur", workingDays: [5, 1, 1], crewCostPerHour: "41,50" },
     ...{ overtimeCostPerHour: "60", travelCostPerKm: "0.455", detourFactor: "1,35" },
-    ...{ roadSpeedKmh: "50", travelTableUrl: "", mapTileUrl: "" },
+    ...{ roadSpeedKmh: "50", travelTableUrl: "", mapTileUrl: "", keepPhotoPosition: false },
   };
 
   it("keeps money in the currency's minor unit, however the decimal was typed", async () => {

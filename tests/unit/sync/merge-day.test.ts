@@ -30,6 +30,21 @@ describe("laying entries over the day", () => {
     expect(merged.van?.lots[0]?.cells).toBe(8);
   });
 
+  it("a swap ends what was said of the old pack: nobody is told to swap it again", () => {
+    const worth = { standing: "due", savesMinor: 900, laterDay: "2027-01-10" } as const;
+    const assets = day.assets.map((asset) => ({ ...asset, worth }));
+    const merged = mergeDay({ ...day, assets }, [outboxEntry(1, BODY.swap)]);
+    expect(merged.assets.map((asset) => asset.worth)).toEqual([null, worth]);
+  });
+
+  it("only the last of several orders of a round is laid over it", () => {
+    const order = (seq: number, stopIds: string[]) =>
+      outboxEntry(seq, { kind: "reorder", roundId: "round", stopIds });
+    const last = order(2, ["stop-2", "stop-1"]);
+    const both = mergeDay(day, [order(1, ["stop-1", "stop-2"]), last]);
+    expect(both).toEqual(mergeDay(day, [last]));
+  });
+
   it("a reading is added once, in order, and leaves a planned swap open", () => {
     const late = outboxEntry(1, BODY.reading, "2026-12-01T12:00:00Z");
     const early = outboxEntry(2, BODY.reading, "2026-12-01T10:00:00Z");

@@ -10,29 +10,18 @@ import { Notice } from "@/components/ui/notice";
 import { Skeleton } from "@/components/ui/states";
 import { toast } from "@/components/ui/toast";
 import { fetchJson } from "../../_parts/fetch-json";
+import { type MailsPreview, PublishMails } from "./publish-mails";
 import type { BoardActs } from "./use-board";
 
-interface Preview {
+interface Preview extends MailsPreview {
   readonly shortages: readonly {
     readonly designation: string;
     readonly cells: number;
     readonly tags: readonly string[];
   }[];
   readonly stranded: readonly string[];
-  /** "3 visits moved, 1 new"; empty where nothing binds yet. */
-  readonly difference: string;
-  readonly unchanged: number;
-  readonly mails: readonly {
-    readonly kind: "published" | "changed" | "cancelled";
-    readonly name: string;
-    readonly email: string;
-    readonly day: string;
-    readonly stops: number;
-  }[];
   readonly contacts: readonly { readonly name: string; readonly siteName: string }[];
 }
-
-const NEWS = { published: "new", changed: "changed", cancelled: "cancelled" } as const;
 
 /** Names everybody who will get a mail, before any is sent. */
 export function PublishDialog({ acts, onClose }: { acts: BoardActs; onClose: () => void }) {
@@ -94,7 +83,7 @@ export function PublishDialog({ acts, onClose }: { acts: BoardActs; onClose: () 
           Stores and vans lack cells: {data.shortages.map(shortageWords).join("; ")}.
         </Notice>
       )}
-      {data && <Mails preview={data} />}
+      {data && <PublishMails preview={data} />}
       {data && data.contacts.length > 0 && (
         <div className="mt-3">
           <Checkbox
@@ -119,36 +108,4 @@ function shortageWords({ designation, cells, tags }: Preview["shortages"][number
   const shown = tags.slice(0, 6).join(", ");
   const more = tags.length > 6 ? ` and ${tags.length - 6} more` : "";
   return `${cells} × ${designation} in one lot, for ${shown}${more}`;
-}
-
-function Mails({ preview }: { preview: Preview }) {
-  const { mails, unchanged, difference } = preview;
-  if (mails.length === 0) return <p>Nothing in this plan is new to anybody.</p>;
-  return (
-    <>
-      {difference && <p className="mb-2">{difference}</p>}
-      <p className="mb-2">
-        {mails.length === 1 ? "One mail goes" : `${mails.length} mails go`} out, each with its
-        calendar entry.{" "}
-        {unchanged > 0 && `${unchanged} published rounds stay as they are; nobody is written to.`}
-      </p>
-      <ul className="max-h-72 overflow-y-auto border-y border-rule">
-        {mails.map((mail) => (
-          <li
-            key={`${mail.email} ${mail.day}`}
-            className="grid grid-cols-[minmax(0,1fr)_7rem_6rem] gap-2 border-t border-hair py-1 first:border-t-0"
-          >
-            <span className="min-w-0 truncate">
-              {mail.name} <span className="text-soft">{mail.email}</span>
-            </span>
-            <span>{mail.day}</span>
-            <span className={mail.kind === "cancelled" ? "text-brick-ink" : "text-soft"}>
-              {NEWS[mail.kind]}
-              {mail.stops > 0 && `, ${mail.stops} stops`}
-            </span>
-          </li>
-        ))}
-      </ul>
-    </>
-  );
 }

@@ -21,6 +21,7 @@ export const changeOrganisationAction = defineAction(
     roadSpeedKmh: text(form, "roadSpeedKmh"),
     travelTableUrl: text(form, "travelTableUrl"),
     mapTileUrl: text(form, "mapTileUrl"),
+    keepPhotoPosition: form.has("keepPhotoPosition"),
   }),
   () => {
     forgetTileOrigin();

@@ -1,5 +1,6 @@
 import { Section } from "@/components/ui/page-head";
 import { PhotoStrip } from "@/components/ui/photo-strip";
+import { formatNumber } from "@/lib/present/locale";
 import { formatInstant } from "@/lib/present/format-time";
 import type { AssetView } from "@/lib/usecases/read-asset";
 
@@ -29,6 +30,7 @@ export function AssetPhotos({ view }: { view: AssetView }) {
             <li key={entryId} className="border-t border-rule px-3 py-2 first:border-t-0">
               <p>
                 {when} · {first.personName} ·{ABOUT[first.kind] ?? first.kind}
+                {positionWords(first, organisation.locale)}
                 {saidWith(first) && <span className="text-soft"> · “{saidWith(first)}”</span>}
               </p>
               <PhotoStrip
@@ -47,4 +49,12 @@ export function AssetPhotos({ view }: { view: AssetView }) {
 function saidWith({ body }: Row): string {
   const { text, note } = (body ?? {}) as { text?: string; note?: string };
   return text || note || "";
+}
+
+/** " · 52.50010° N, 0.10020° E": five decimals are about a metre. */
+function positionWords({ latitude, longitude }: Row, locale: string): string {
+  if (latitude === null || longitude === null) return "";
+  const degrees = (value: number, [plus, minus]: readonly [string, string]) =>
+    `${formatNumber(Math.abs(value), locale, 5)}° ${value < 0 ? minus : plus}`;
+  return ` · ${degrees(latitude, ["N", "S"])}, ${degrees(longitude, ["E", "W"])}`;
 }

@@ -6,6 +6,7 @@ import { Section } from "@/components/ui/page-head";
 import type { OrganisationView as Organisation } from "@/lib/usecases/read-organisation";
 import { WeekdayTicks } from "../../_parts/weekday-ticks";
 import { changeOrganisationAction } from "../actions";
+import { PhotoChoice } from "./photo-choice";
 
 export interface OrganisationFormProps {
   organisation: Organisation;
@@ -28,6 +29,7 @@ export function OrganisationForm({ organisation, digits, zones }: OrganisationFo
             <Hand {...{ organisation, entries, zones }} />
             <Prices {...{ organisation, entries, digits }} />
             <Travel {...{ organisation, entries }} />
+            <PhotoChoice {...{ organisation, entries }} />
           </>
         )}
       </ActionForm>

@@ -14,6 +14,9 @@ export const PUT = defineRoute(keepPhoto, {
       personId: given("person"),
       takenAt: given("taken"),
       sentAt: given("sent"),
+      position: query.has("lat")
+        ? { latitude: Number(given("lat") || NaN), longitude: Number(given("lon") || NaN) }
+        : null,
       bytes: await bytesBody(request, MAX_PHOTO_BYTES),
     };
   },

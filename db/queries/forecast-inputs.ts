@@ -35,6 +35,7 @@ const BEARS_ON_LIFE = [
   "site.latitude",
   "site.longitude",
   "measured.averageUa as measuredAverageUa",
+  "measured.at as measuredAt",
 ] as const;
 
 /**

@@ -238,10 +238,24 @@ export interface Forecast {
   weights: Generated<Json>;
 }
 
+export interface ForecastClaim {
+  cdfDays: number[];
+  /**
+   * When it was worked out; long after made_at: from imported history.
+   */
+  keptAt: Timestamp;
+  /**
+   * Start of the quarter in the organisation's time zone.
+   */
+  madeAt: Timestamp;
+  packId: string;
+  quarter: string;
+}
+
 export interface ForecastOutcome {
   censored: boolean;
   /**
-   * Chance, by that forecast, of stopping by ended_at: uniform from 0 to 1000 over many packs if the forecasts are sound, censored ones counted as such.
+   * Chance, by that forecast, of stopping by ended_at. Not uniform over removals even where forecasts are sound: whether a pack is among them depends on how it ended.
    */
   chanceStoppedPermille: Generated<number>;
   endedAt: Timestamp;
@@ -663,6 +677,7 @@ export interface DB {
   fieldMatter: FieldMatter;
   finding: Finding;
   forecast: Forecast;
+  forecastClaim: ForecastClaim;
   forecastOutcome: ForecastOutcome;
   importRun: ImportRun;
   lot: Lot;

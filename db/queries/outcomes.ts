@@ -1,5 +1,4 @@
-import { type Kysely, sql, type SqlBool } from "kysely";
-import type { Insertable } from "kysely";
+import { type Insertable, type Kysely, sql } from "kysely";
 import type { Database } from "../client";
 
 export type OutcomeRow = Insertable<Database["forecastOutcome"]>;
@@ -58,10 +57,7 @@ export async function finishedByChemistry(db: Kysely<Database>) {
   return db
     .selectFrom("pack")
     .innerJoin("cellType", "cellType.id", "pack.cellTypeId")
-    .select([
-      "cellType.chemistry",
-      sql<string>`count(*) || ' ' || max(removed_at)`.as("version"),
-    ])
+    .select(["cellType.chemistry", sql<string>`count(*) || ' ' || max(removed_at)`.as("version")])
     .where("pack.removedAt", "is not", null)
     .groupBy("cellType.chemistry")
     .execute();
@@ -100,59 +96,21 @@ export async function listFinishedPacks(
     .execute();
 }
 
-export interface OutcomeFilter {
-  /** Removals since then. */
-  readonly since: Date;
-  readonly chemistry: string | null;
-  readonly deviceModelId: string | null;
-  readonly crewId: string | null;
-}
-
-const JUDGED = [
-  "outcome.packId",
-  "asset.tag",
-  "asset.name as assetName",
-  "deviceModel.name as modelName",
-  "crew.name as crewName",
-  "cellType.designation",
-  "cellType.chemistry",
-  "pack.installedAt",
-  "pack.removedAt",
-  "pack.stoppedAt",
-  "pack.reasonOut",
-  "outcome.forecastAt",
-  "outcome.endedAt",
-  "outcome.p05",
-  "outcome.p20",
-  "outcome.p50",
-  "outcome.p80",
-  "outcome.p95",
-  "outcome.shareLeftPermille",
-  "outcome.chanceStoppedPermille",
-  "outcome.censored",
-  "outcome.inHindsight",
-] as const;
-
-/** Removals with the forecast that stood at the visit before, newest first. */
-export async function listOutcomes(db: Kysely<Database>, filter: OutcomeFilter) {
-  return db
+/** Mean share of charge that packs had left, by forecast, when they came out alive; null: none. */
+export async function meanShareLeft(
+  db: Kysely<Database>,
+  since: Date,
+  crewId: string | null,
+): Promise<number | null> {
+  const row = await db
     .selectFrom("forecastOutcome as outcome")
     .innerJoin("pack", "pack.id", "outcome.packId")
     .innerJoin("asset", "asset.id", "pack.assetId")
-    .innerJoin("deviceModel", "deviceModel.id", "asset.deviceModelId")
     .innerJoin("site", "site.id", "asset.siteId")
-    .leftJoin("crew", "crew.id", "site.crewId")
-    .innerJoin("cellType", "cellType.id", "pack.cellTypeId")
-    .select(JUDGED)
-    .where(sql<SqlBool>`pack.removed_at >= ${filter.since}`)
-    .$if(filter.chemistry !== null, (q) =>
-      q.where("cellType.chemistry", "=", filter.chemistry ?? ""),
-    )
-    .$if(filter.deviceModelId !== null, (q) =>
-      q.where("asset.deviceModelId", "=", filter.deviceModelId ?? ""),
-    )
-    .$if(filter.crewId !== null, (q) => q.where("site.crewId", "=", filter.crewId ?? ""))
-    .orderBy("pack.removedAt", "desc")
-    .execute();
+    .select(sql<number | null>`(avg(share_left_permille) / 1000)::float8`.as("share"))
+    .where("outcome.censored", "=", true)
+    .where("pack.removedAt", ">=", since)
+    .$if(crewId !== null, (q) => q.where("site.crewId", "=", crewId ?? ""))
+    .executeTakeFirstOrThrow();
+  return row.share;
 }
-export type OutcomeLine = Awaited<ReturnType<typeof listOutcomes>>[number];

@@ -43,10 +43,7 @@ interface Learned {
 const LEARNED = new WeakMap<Kysely<Database>, Map<string, Learned>>();
 
 /** What is known beforehand of a pack, given what happened to its device; null: nothing. */
-export type PriorOf = (
-  pack: Forecastable,
-  events: readonly DeviceEventRow[],
-) => FleetPrior | null;
+export type PriorOf = (pack: Forecastable, events: readonly DeviceEventRow[]) => FleetPrior | null;
 
 /** Packs alike: the same device model on the same cells in the same climate. */
 function cohortOf(member: Member): string {

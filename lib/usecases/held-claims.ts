@@ -1,7 +1,7 @@
 import type { ClaimLine } from "@/db/queries/forecast-claims";
 import { chanceOutBy } from "@/lib/battery";
 import type { StatedEnd } from "@/lib/stats/reliability";
-import { MS_PER_DAY, toEpochDays } from "@/lib/units";
+import { fromEpochDays, MS_PER_DAY, toEpochDays } from "@/lib/units";
 
 /** A claim held against what has come since. */
 export interface HeldClaim extends ClaimLine {
@@ -11,6 +11,8 @@ export interface HeldClaim extends ClaimLine {
   readonly life: StatedEnd;
   /** The first of this pack here. */
   readonly first: boolean;
+  /** Dates said: 5th percentile, median, 95th. */
+  readonly window: { readonly p05: Date; readonly p50: Date; readonly p95: Date };
   /** Median of the days left, as said. */
   readonly saidDays: number;
   /** Days that it lasted, so far where it still runs. */
@@ -50,9 +52,16 @@ function statedBy(line: ClaimLine, until: Date): StatedEnd {
 }
 
 function daysOf({ cdfDays, madeAt, endedAt }: ClaimLine, now: Date) {
-  const middle = ((cdfDays[24] ?? 0) + (cdfDays[25] ?? 0)) / 2;
+  // the distribution's points lie at 1 %, 3 %, ... 99 %
+  const at = (index: number) => cdfDays[index] ?? 0;
+  const middle = (at(24) + at(25)) / 2;
   const found = (endedAt ?? now).getTime() - madeAt.getTime();
   return {
+    window: {
+      p05: fromEpochDays(at(2)),
+      p50: fromEpochDays(middle),
+      p95: fromEpochDays(at(47)),
+    },
     saidDays: Math.max(0, middle - toEpochDays(madeAt)),
     foundDays: Math.max(0, found / MS_PER_DAY),
   };

@@ -68,7 +68,7 @@ export const MATRIX: Readonly<Record<string, string>> = {
   "read-trust": "ADS",
   "read-costs": "ADS",
   "read-demand": "ADS",
-  "export-removals": "ADS",
+  "export-claims": "ADS",
   "export-costs": "ADS",
   "export-demand": "ADS",
   "export-people": "A",

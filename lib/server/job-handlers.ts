@@ -6,6 +6,8 @@ import { refreshForecasts } from "@/lib/usecases/refresh-forecasts";
 import { runImportApply, runImportCheck } from "@/lib/usecases/run-import";
 import { sendDigests } from "@/lib/usecases/send-digests";
 import type { Actor, Deps, JobName } from "@/lib/usecases/use-case";
+import { env } from "./deps";
+import { renewForecasts } from "./threads/renew-forecasts";
 
 const system: Actor = { kind: "system" };
 
@@ -15,7 +17,7 @@ export const HANDLERS: Record<JobName, (deps: Deps, data: never) => Promise<unkn
   // Judging comes first: packs that came out teach the forecasts of those still in.
   "forecast-all": async (deps) => ({
     ...(await judgeHistory(deps, system, {})),
-    ...(await refreshForecasts(deps, system, { packIds: null })),
+    ...(await renewForecasts(deps, env().DATABASE_URL)),
     ...(await lookForFindings(deps, system, {})),
   }),
   plan: (deps, data) => runPlanJob(deps, system, data),

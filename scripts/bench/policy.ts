@@ -1,15 +1,17 @@
 /**
- * npm run bench:policy [-- --assets 300 --seeds a,b,c --years 3 --train d --json]
+ * npm run bench:policy [-- --assets 300 --seeds a,b,c --years 3 --train d --json --write]
  * npm run bench:policy -- --first-plan
  *
  * Simulated years of the demonstration's fleet under four policies, each from the same start and
  * with the same crews, prices, roads and books. The simple ones are set on training seeds of
- * their own; the product knows only what its records would hold. Nothing is stored.
+ * their own; the product knows only what its records would hold. --write keeps the results where
+ * the Record page reads them.
  */
 import { parseArgs } from "node:util";
 import { firstPlanReport } from "./policy/first-plan";
 import type { Result } from "./policy/ledger";
 import { live } from "./policy/live";
+import { writeRecord } from "./policy/record";
 import { fixedInterval, inspectionThreshold, runToFailure } from "./policy/simple-policies";
 import { type Start, startOf } from "./policy/start";
 import { causeTable, mainTable, means, rowOf } from "./policy/table";
@@ -26,6 +28,7 @@ const { values } = parseArgs({
     years: { type: "string", default: "3" },
     "first-plan": { type: "boolean", default: false },
     json: { type: "boolean", default: false },
+    write: { type: "boolean", default: false },
   },
 });
 
@@ -68,7 +71,7 @@ function policies(): (() => Policy)[] {
   ];
 }
 
-function run(): void {
+async function run(): Promise<void> {
   const shared = names("seeds").filter((seed) => names("train").includes(seed));
   if (shared.length > 0) throw new Error(`--train: ${shared.join(", ")} is a test seed too.`);
   say(`${size.assets} assets, ${size.years} years; seeds ${values.seeds}; set on ${values.train}`);
@@ -86,7 +89,13 @@ function run(): void {
   const rows = [...results, ...means(results)];
   say(`\n${mainTable(rows)}\n\nPounds a device-year by cause\n\n${causeTable(rows)}`);
   if (values.json) process.stdout.write(`${JSON.stringify({ rows: results.map(rowOf) })}\n`);
+  if (values.write) {
+    const [seeds, setOn] = [names("seeds"), names("train")];
+    const options = `--assets ${size.assets} --years ${size.years} --seeds ${values.seeds}`;
+    const command = `npm run bench:policy -- ${options} --train ${values.train} --write`;
+    await writeRecord({ command, ...size, seeds, setOn }, results);
+  }
 }
 
 if (values["first-plan"]) say(firstPlanReport());
-else run();
+else await run();

@@ -1,6 +1,6 @@
 import L from "leaflet";
 import type { WaneDiscModel } from "@/lib/present/wane-disc";
-import { clusterMarkup, depotMarkup, discMarkup, stopMarkup } from "./disc-icon";
+import { clusterMarkup, depotMarkup, discMarkup, dotMarkup, stopMarkup } from "./disc-icon";
 
 export interface MapPoint {
   readonly latitude: number;
@@ -77,11 +77,11 @@ export function clusterMarker(at: MapPoint, count: number, onOpen: () => void): 
   return marker.on("click", onOpen);
 }
 
-/** A round: its line from depot to depot, its depot and its numbered stops. */
-export function roundLayer(
+/** A round's line from depot to depot, and its depot. */
+export function roundLine(
   round: MapRound,
-  numbered: boolean,
-  onSelect: (id: string) => void,
+  chosen: boolean,
+  onRound: (roundId: string) => void,
 ): L.LayerGroup {
   const path = [round.depot, ...round.stops, round.depot].map((p): L.LatLngTuple => [
     p.latitude,
@@ -89,26 +89,41 @@ export function roundLayer(
   ]);
   const line = L.polyline(path, {
     color: token("dusk"),
-    weight: numbered ? 2.5 : 1.5,
-    opacity: numbered ? 1 : 0.55,
+    weight: chosen ? 2.5 : 1.5,
+    opacity: chosen ? 1 : 0.55,
   });
-  line.on("click", () => onSelect(round.id));
+  line.on("click", () => onRound(round.id));
   const depot = L.marker([round.depot.latitude, round.depot.longitude], {
     icon: icon(depotMarkup, 16),
     title: "Depot",
     alt: "Depot",
     keyboard: false,
   });
-  const stops = numbered
-    ? round.stops.map((stop, i) =>
-        L.marker([stop.latitude, stop.longitude], {
-          icon: icon(stopMarkup(i + 1), 22),
-          title: `${i + 1}. ${stop.label}`,
-          alt: `${i + 1}. ${stop.label}`,
-          keyboard: false,
-          zIndexOffset: 500,
-        }).on("click", () => onSelect(stop.id)),
-      )
-    : [];
-  return L.layerGroup([line, depot, ...stops]);
+  return L.layerGroup([line, depot]);
+}
+
+export interface StopSelection {
+  readonly chosenStop: string | null;
+  readonly onStop: (stopId: string, roundId: string) => void;
+}
+
+/** A round's stops: numbered and reached by the keyboard where it is the chosen one, else dots. */
+export function stopMarkers(
+  round: MapRound,
+  numbered: boolean,
+  { chosenStop, onStop }: StopSelection,
+): L.LayerGroup {
+  const markers = round.stops.map((stop, i) => {
+    const chosen = numbered && stop.id === chosenStop;
+    const size = chosen ? 30 : numbered ? 22 : 12;
+    const name = numbered ? `${i + 1}. ${stop.label}` : `${stop.label}, ${round.label}`;
+    return L.marker([stop.latitude, stop.longitude], {
+      icon: icon(numbered ? stopMarkup(i + 1, chosen) : dotMarkup, size),
+      title: name,
+      alt: chosen ? `${name}, chosen` : name,
+      keyboard: numbered,
+      zIndexOffset: chosen ? 800 : numbered ? 500 : 200,
+    }).on("click", () => onStop(stop.id, round.id));
+  });
+  return L.layerGroup(markers);
 }

@@ -430,6 +430,10 @@ export interface Plan {
   publishedBy: string | null;
   state: Generated<string>;
   /**
+   * Somebody asked the search under way to stop and keep the best so far; null: nobody did.
+   */
+  stopAskedAt: Timestamp | null;
+  /**
    * Counts edits; an edit names the version it saw, so two dispatchers cannot overwrite each other.
    */
   version: Generated<number>;

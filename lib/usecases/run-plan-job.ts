@@ -51,7 +51,7 @@ export const runPlanJob = defineUseCase({
       const known = await knownFor(deps, plan, mode);
       const built = await build(deps, plan, known, mode);
       if (!built) return { built: false };
-      return { built: await storeBuiltPlan(deps, planId, built.plan, built.cost) };
+      return { built: await storeBuiltPlan(deps, planId, built, mode === "improve") };
     } catch (error) {
       await giveUp(deps, planId);
       throw error;
@@ -99,7 +99,10 @@ async function build(
   return { plan: finished, cost };
 }
 
-/** Searches in chunks, noting the falling cost between them. Null: the plan was discarded. */
+/**
+ * Searches in chunks, noting the falling cost between them, until somebody asks it to stop.
+ * Null: the plan was discarded.
+ */
 async function search(
   deps: Deps,
   planId: string,
@@ -117,7 +120,9 @@ async function search(
     costs.push(Math.round(toMinor(cost.total)));
     const progress: BuildProgress = { share: (k + 1) / CHUNKS, costs };
     await noteProgress(deps.db, planId, progress);
-    if ((await findPlan(deps.db, planId))?.state !== "building") return null;
+    const plan = await findPlan(deps.db, planId);
+    if (plan?.state !== "building") return null;
+    if (plan.stopAskedAt) break;
   }
   return start;
 }

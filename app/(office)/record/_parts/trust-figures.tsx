@@ -1,7 +1,7 @@
 import { Figure, FigureRow } from "@/components/ui/figure";
 import { formatDay } from "@/lib/present/format-day";
 import { formatPercent } from "@/lib/present/format-share";
-import { formatNumber, NOTHING } from "@/lib/present/locale";
+import { formatNumber, NBSP, NOTHING } from "@/lib/present/locale";
 import type { TrustView } from "@/lib/usecases/read-trust";
 
 /** Packs watched, stops against those expected, lives against those said, surprises. */
@@ -25,8 +25,8 @@ export function TrustFigures({ view }: { view: TrustView }) {
         tone={sound ? "order" : "soon"}
       />
       <Figure
-        label="Lasted, of the days said"
-        value={whole.lasted === null ? NOTHING : formatPercent(whole.lasted, locale)}
+        label="Days found over days said"
+        value={whole.lasted === null ? NOTHING : timesSaid(whole.lasted, locale)}
         range="median"
       />
       <Figure
@@ -41,4 +41,9 @@ export function TrustFigures({ view }: { view: TrustView }) {
       />
     </FigureRow>
   );
+}
+
+/** "0.94 ×": it lasted 94 days for each 100 said. */
+export function timesSaid(ratio: number, locale: string): string {
+  return `${formatNumber(ratio, locale, 2)}${NBSP}×`;
 }

@@ -5,6 +5,7 @@ import { CHEMISTRY_WORDS } from "@/lib/present/chemistry-words";
 import { formatPercent } from "@/lib/present/format-share";
 import { formatNumber, NOTHING } from "@/lib/present/locale";
 import type { TrustView } from "@/lib/usecases/read-trust";
+import { timesSaid } from "./trust-figures";
 
 type GroupRow = TrustView["groups"][number];
 
@@ -63,9 +64,9 @@ function columns(locale: string): Column<GroupRow>[] {
     },
     {
       key: "lasted",
-      head: "Lasted, of the days said",
+      head: "Days found over said",
       align: "right",
-      cell: (row) => (row.lasted === null ? NOTHING : formatPercent(row.lasted, locale)),
+      cell: (row) => (row.lasted === null ? NOTHING : timesSaid(row.lasted, locale)),
     },
     { key: "surprises", head: "Surprises", align: "right", cell: (row) => number(row.surprises) },
   ];

@@ -14,18 +14,24 @@ export const ASSUMED = {
   packLifeSd: 0.06,
   /** Device draw against its duty cycle. */
   drawSd: 0.15,
+  /** Draw of a load that never pauses, against what is stated of it. */
+  constantDrawSd: 0.07,
   /** Wander of ln(draw) in a year, as a random walk. */
   drawWalkPerYear: 0.05,
   /** A season's draw against the year's mean (cold, daylight, wet-weather reporting). */
   seasonalDrawSd: 0.08,
   /** Draw after a firmware or device change, against the duty cycle. */
   changedDrawSd: 0.35,
+  /** How differently the devices of a model take a shift of their draw. */
+  deviceShiftSd: 0.1,
   /** Depth at which a new pack starts, beside shelf ageing. */
   startDepthSd: 0.01,
   /** Depth over which a curve's error stays the same, roughly. */
   curveErrorDepth: 0.3,
   /** The same once the curve was learned from finished packs: what is left is the pack's own. */
   taughtErrorDepth: 1,
+  /** Readings closer together than this share of the charge share their errors. */
+  sharedErrorDepth: 0.04,
   /** Where on the depth axis the curve of this very pack lies. */
   curveDepthSd: 0.012,
   /** Cells of one lot differ; a string ends a little before its mean cell does. */
@@ -50,6 +56,8 @@ export const ASSUMED = {
   accuracyMv: 10,
   /** Temperature of a reading when only the month's mean is known, K. */
   temperatureSdK: 5,
+  /** The same when the site's temperature was logged. */
+  loggedTemperatureSdK: 2,
   /**
    * A low loaded reading of Li-SOCl2 is the film's with this chance at the most, rested or kept
    * thin by the device's own pulses, and grows towards it in about so many days (from memory).

@@ -15,7 +15,7 @@ import { ASSUMED } from "./assumptions";
 import { CURVES } from "./curve-tables";
 import { atDepth } from "./curves";
 import { freshDropMv } from "./cutoff";
-import { DAYS_PER_YEAR, temperatureAt } from "./climate";
+import { DAYS_PER_YEAR } from "./climate";
 import { type Spent, depthAfter, endUnder, paceTo } from "./end-lesson";
 import type { CurveLesson, PackReading } from "./pack";
 import { type PackModel, resistanceAge } from "./pack-model";
@@ -82,7 +82,7 @@ export function learnCurves(
     .filter(({ history }) => history.ranOut)
     .map((pack, index) => place(pack, index, endOf(pack.history.cohort)));
   if (placed.length < LEAST_PACKS) return new Map();
-  const { spreadMv } = CURVES[placed[0]!.model.pack.cell.chemistry];
+  const { ownSpreadMv: spreadMv } = CURVES[placed[0]!.model.pack.cell.chemistry];
   const days = placed.reduce((s, p) => s + p.stoppedAt - p.model.pack.installedAt, 0);
   const share = leastShare(days / placed.length / DAYS_PER_YEAR);
   const rest = layered(placed.flatMap(restResiduals), spreadMv, share);
@@ -141,7 +141,7 @@ function restVariance({ stoppedAt, model }: Placed, reading: PackReading, depth:
 }
 
 function temperatureOf(model: PackModel, reading: PackReading): number {
-  return reading.temperatureDc ?? temperatureAt(model.pack.monthlyMeanDc, reading.at);
+  return reading.temperatureDc ?? model.site.at(reading.at);
 }
 
 function restResiduals(placed: Placed): Residual[] {

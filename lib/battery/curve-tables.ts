@@ -24,8 +24,10 @@ export interface ChemistryCurves {
   readonly endDepthSd: number;
   /** Growth of the resistance with age, share a year; from memory, rough. */
   readonly resistanceGrowthPerYear: number;
-  /** How far the table may be off a cell at any depth, one standard deviation, mV. */
+  /** How far the table may be off any maker's cell at any depth, one standard deviation, mV. */
   readonly spreadMv: number;
+  /** The same for cells of one type around their own curve. */
+  readonly ownSpreadMv: number;
 }
 
 /** Temperatures of the cold tables, ascending, °C. */
@@ -46,7 +48,8 @@ export const CURVES: Readonly<Record<Chemistry, ChemistryCurves>> = {
     restMvPerKelvin: 0.3,
     endDepthSd: 0.012,
     resistanceGrowthPerYear: 0.05,
-    spreadMv: 11,
+    spreadMv: 20,
+    ownSpreadMv: 11,
   },
   // From memory: sloping discharge of Leclanché and zinc chloride cells.
   "zinc-carbon": {
@@ -59,7 +62,8 @@ export const CURVES: Readonly<Record<Chemistry, ChemistryCurves>> = {
     restMvPerKelvin: 0.3,
     endDepthSd: 0.04,
     resistanceGrowthPerYear: 0.1,
-    spreadMv: 32,
+    spreadMv: 40,
+    ownSpreadMv: 32,
   },
   // Rest: 15 ohm log of an FR6 plus current times (V15 - V3)/(I3 - I15), Newton1026/
   // BatteryProject, on 3050 mAh. A hardly used cell rests near 1.75 V (Linden 4e p. 14.76).
@@ -76,6 +80,7 @@ export const CURVES: Readonly<Record<Chemistry, ChemistryCurves>> = {
     endDepthSd: 0.012,
     resistanceGrowthPerYear: 0.03,
     spreadMv: 17,
+    ownSpreadMv: 17,
   },
   // From memory (plateau 3.6 V to about 95 %, fresh 3.67 V); plateau against temperature from
   // the span of Linden 4e Fig. 14.17b.
@@ -89,7 +94,8 @@ export const CURVES: Readonly<Record<Chemistry, ChemistryCurves>> = {
     restMvPerKelvin: 0.25,
     endDepthSd: 0.025,
     resistanceGrowthPerYear: 0.1,
-    spreadMv: 11,
+    spreadMv: 18,
+    ownSpreadMv: 11,
   },
   // Rest: CR14250SE as read off its data sheet in Zephyr's battery.h, made monotone (the two
   // readings at 80 and 90 % charge are pooled). Resistance: CR2032 10 to 40 ohm over life.
@@ -103,7 +109,8 @@ export const CURVES: Readonly<Record<Chemistry, ChemistryCurves>> = {
     restMvPerKelvin: 0.3,
     endDepthSd: 0.012,
     resistanceGrowthPerYear: 0.03,
-    spreadMv: 13,
+    spreadMv: 26,
+    ownSpreadMv: 13,
   },
   // From memory: 1.55 V plateau of a zinc-silver oxide button.
   "silver-oxide": {
@@ -116,7 +123,8 @@ export const CURVES: Readonly<Record<Chemistry, ChemistryCurves>> = {
     restMvPerKelvin: 0.2,
     endDepthSd: 0.015,
     resistanceGrowthPerYear: 0.05,
-    spreadMv: 8,
+    spreadMv: 14,
+    ownSpreadMv: 8,
   },
   // From memory: 12.8/12.5/12.2/12.0/11.8 V at 100/75/50/25/0 % of a 12 V block, six elements.
   vrla: {
@@ -129,7 +137,8 @@ export const CURVES: Readonly<Record<Chemistry, ChemistryCurves>> = {
     restMvPerKelvin: 0.2,
     endDepthSd: 0.025,
     resistanceGrowthPerYear: 0.1,
-    spreadMv: 13,
+    spreadMv: 20,
+    ownSpreadMv: 13,
   },
   // Rest: IFR18650 E1600 as read off its data sheet in Zephyr's battery.h.
   lifepo4: {
@@ -142,6 +151,7 @@ export const CURVES: Readonly<Record<Chemistry, ChemistryCurves>> = {
     restMvPerKelvin: 0.1,
     endDepthSd: 0.015,
     resistanceGrowthPerYear: 0.05,
-    spreadMv: 9,
+    spreadMv: 24,
+    ownSpreadMv: 9,
   },
 };

@@ -5,9 +5,13 @@
  */
 import type { Decicelsius, Microamps, Millivolts } from "../units";
 import { CURVE_STEPS, atDepth, elementsOf, resistanceFactor, sampledCurves } from "./curves";
+import { isSteady } from "./duty";
 import { taughtCurves } from "./taught-curves";
 import { CURVES } from "./curve-tables";
 import type { CurveLesson, PackSpec } from "./pack";
+
+/** A steady load's resistance grows by no more than this factor over a life (from memory). */
+const STEADY_GROWTH = 3;
 
 /** Voltage of a whole pack: k rest(x) + drift(T) - I R(x) factor(T). */
 export interface PackCurve {
@@ -22,12 +26,31 @@ export interface PackCurve {
 
 export function packCurve(pack: PackSpec, lesson: CurveLesson | null = null): PackCurve {
   const restScale = pack.series * elementsOf(pack.cell);
+  const { chemistry } = pack.cell;
+  const { restMv, resistance } = lesson
+    ? taughtCurves(chemistry, lesson)
+    : sampledCurves(chemistry);
   return {
-    ...(lesson ? taughtCurves(pack.cell.chemistry, lesson) : sampledCurves(pack.cell.chemistry)),
+    restMv,
+    resistance: isSteady(pack) ? heldDown(resistance) : resistance,
     restScale,
     driftMvPerKelvin: restScale * CURVES[pack.cell.chemistry].restMvPerKelvin,
     freshMohm: (pack.cell.resistanceMohm * pack.series) / pack.parallel,
   };
+}
+
+/** Many packs share few curves: each is held down once. */
+const HELD_DOWN = new WeakMap<Float64Array, Float64Array>();
+
+/**
+ * Growth of the resistance as a load meets it that hardly ever pauses. A pulse near the end meets
+ * many times the fresh resistance because charge runs out; a steady load has had that counted in
+ * its capacity at that current (an LR6 on 250 mA still gives 0.95 V at nine tenths of its charge).
+ */
+function heldDown(resistance: Float64Array): Float64Array {
+  const known = HELD_DOWN.get(resistance) ?? resistance.map((r) => Math.min(r, STEADY_GROWTH));
+  HELD_DOWN.set(resistance, known);
+  return known;
 }
 
 /** Fall of the fresh pack's voltage under a current at a temperature, mV. */

@@ -93,7 +93,7 @@ function pointOf(pack: PackSpec, reading: PackReading): Point | null {
   const warmth = reading.temperatureDc === null ? ASSUMED.temperatureSdK : 0;
   const elements = elementsOf(cell);
   const curve = CURVES[cell.chemistry];
-  const own = Math.hypot(curve.spreadMv, curve.restMvPerKelvin * warmth) * elements;
+  const own = Math.hypot(curve.ownSpreadMv, curve.restMvPerKelvin * warmth) * elements;
   return { at: reading.at, depth: low, sd: Math.hypot(meter, own) / slope };
 }
 

@@ -34,6 +34,16 @@ export function packPeakUa(pack: PackSpec): Microamps {
   return Math.max(peakUa(pack.duty), packAverageUa(pack));
 }
 
+/** A load that hardly ever pauses: its mean is a good part of its peak. */
+export function isSteady(pack: PackSpec): boolean {
+  return packAverageUa(pack) > 0.3 * packPeakUa(pack);
+}
+
+/** A load that does not pulse at all: no duty cycle that could be otherwise than stated. */
+export function isConstant(pack: PackSpec): boolean {
+  return packAverageUa(pack) > 0.9 * packPeakUa(pack);
+}
+
 /** Charge of one period in microamp-hours. */
 export function periodChargeUah(duty: readonly DutyState[]): number {
   return duty.reduce((sum, s) => sum + (s.currentUa * s.durationMs) / 3_600_000, 0);

@@ -8,7 +8,7 @@ import type { EpochDays } from "../units";
 import { ASSUMED } from "./assumptions";
 import { monthOf } from "./climate";
 import { type EndOfLife, endOfLife } from "./end-of-life";
-import type { PackSpec } from "./pack";
+import type { LoggedTemperature, PackSpec } from "./pack";
 import { type PackModel, leakBetween, packModel } from "./pack-model";
 
 /** Factors on the resistance that are tried: evenly over the logarithm. */
@@ -34,8 +34,12 @@ export interface Spent {
   readonly outAt: EpochDays;
 }
 
-export function spent(pack: PackSpec, outAt: EpochDays): Spent {
-  return { model: packModel(pack, null), outAt };
+export function spent(
+  pack: PackSpec,
+  outAt: EpochDays,
+  temperatures: readonly LoggedTemperature[] = [],
+): Spent {
+  return { model: packModel(pack, null, temperatures), outAt };
 }
 
 /** End depths of a pack whose resistance at the end is `factor` times the sheet's. */

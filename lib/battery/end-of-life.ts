@@ -4,7 +4,7 @@
  * this very pack, which loaded readings teach.
  */
 import { normalQuantile } from "../stats/normal";
-import type { Microamps } from "../units";
+import type { Decicelsius, Microamps } from "../units";
 import { ASSUMED } from "./assumptions";
 import { baseCutoffMv, grossCapacity, usableCapacity } from "./capacity";
 import { CURVES } from "./curve-tables";
@@ -12,6 +12,12 @@ import { type PackCurve, endDepth, freshDropMv } from "./cutoff";
 import type { PackSpec } from "./pack";
 
 const TINY = 1e-9;
+/** Three resistances for a normal one: Gauss-Hermite, moments 0 to 5 exact. */
+const RESISTANCE_Z = [-Math.sqrt(3), 0, Math.sqrt(3)] as const;
+const RESISTANCE_W = [1 / 6, 2 / 3, 1 / 6] as const;
+/** Seven severities of a month's coldest hour, mild to cold. */
+const SPREAD_Z = [-2.4, -1.6, -0.8, 0, 0.8, 1.6, 2.4] as const;
+const SPREAD_W = [0.018, 0.0892, 0.2328, 0.32, 0.2328, 0.0892, 0.018] as const;
 
 /** Resistance of this pack relative to its sheet: mean and one standard deviation. */
 export interface ResistanceBelief {
@@ -39,18 +45,54 @@ export interface EndOfLife {
   readonly warm: number;
   /** One standard deviation of all of them. */
   readonly sd: number;
+  /** The part of it that neither the resistance nor the weather explains. */
+  readonly ownSd: number;
+  /** How far a colder or a milder night moves the end in the coldest month, share of the charge. */
+  readonly weather: number;
+  /** The depth at which it would stop at a temperature. */
+  at(temperatureDc: Decicelsius): number;
+  /** End depths over what is unknown: the pack's resistance and each month's coldest hour. */
+  nodes(): EndNodes;
+}
+
+export interface EndNodes {
+  /** Weights of the severities of a month's coldest hour, mild to cold. */
+  readonly severities: readonly number[];
+  /** For each resistance the end depth by month and severity. */
+  readonly resistances: readonly {
+    readonly weight: number;
+    readonly months: readonly (readonly number[])[];
+  }[];
 }
 
 /** End depths given what is believed of the resistance. */
 export function endOfLife(terms: EndTerms, resistance: ResistanceBelief): EndOfLife {
+  const at = (dc: Decicelsius): number => endAt(terms, dc, resistance.mean);
+  const byMonth = Float64Array.from({ length: 12 }, (_, m) =>
+    at((terms.pack.monthlyMeanDc[m] ?? 200) - coldHourDc(terms.pack)),
+  );
+  const warm = Math.max(TINY, ...byMonth);
+  const nodes = (): EndNodes => endNodes(terms, resistance);
+  return { byMonth, warm, ...spreads(terms, resistance), at, nodes };
+}
+
+function endAt(terms: EndTerms, dc: Decicelsius, resistance: number): number {
+  const { series, parallel } = terms.pack;
+  const weakest = 1 - (ASSUMED.weakestCellShare * weakestOf(series)) / Math.sqrt(parallel);
+  return weakest * Math.min(terms.cap, depthAt(terms, dc, resistance));
+}
+
+function endNodes(terms: EndTerms, { mean, sd }: ResistanceBelief): EndNodes {
   const { pack } = terms;
-  const weakest =
-    1 - (ASSUMED.weakestCellShare * weakestOf(pack.series)) / Math.sqrt(pack.parallel);
-  const byMonth = Float64Array.from({ length: 12 }, (_, m) => {
-    const dc = (pack.monthlyMeanDc[m] ?? 200) - coldHourDc(pack);
-    return weakest * Math.min(terms.cap, depthAt(terms, dc, resistance.mean));
-  });
-  return { byMonth, warm: Math.max(TINY, ...byMonth), sd: spread(terms, resistance) };
+  const below = coldHourDc(pack);
+  const swing = 10 * ASSUMED.coldHourSdK * (below / (10 * ASSUMED.coldHourK));
+  const resistances = RESISTANCE_Z.map((z, k) => ({
+    weight: RESISTANCE_W[k]!,
+    months: pack.monthlyMeanDc.map((dc) =>
+      SPREAD_Z.map((cold) => endAt(terms, dc - below - cold * swing, Math.max(0, mean + z * sd))),
+    ),
+  }));
+  return { severities: SPREAD_W, resistances };
 }
 
 /**
@@ -68,7 +110,7 @@ function depthAt({ pack, curve, peakUa, aged }: EndTerms, dc: number, resistance
 }
 
 /** How far the end moves by one spread of the resistance, and by a colder or milder night. */
-function spread(terms: EndTerms, { mean, sd }: ResistanceBelief): number {
+function spreads(terms: EndTerms, { mean, sd }: ResistanceBelief) {
   const below = coldHourDc(terms.pack);
   const coldest = Math.min(...terms.pack.monthlyMeanDc) - below;
   const swing = (below / ASSUMED.coldHourK) * ASSUMED.coldHourSdK;
@@ -76,8 +118,8 @@ function spread(terms: EndTerms, { mean, sd }: ResistanceBelief): number {
   const byResistance = depthAt(terms, coldest, low) - depthAt(terms, coldest, mean + sd);
   const byCold = depthAt(terms, coldest + swing, mean) - depthAt(terms, coldest - swing, mean);
   const table = CURVES[terms.pack.cell.chemistry].endDepthSd;
-  const own = terms.steady ? Math.hypot(table, ASSUMED.steadyEndSd) : table;
-  return Math.hypot(own, byResistance / 2, byCold / 2);
+  const ownSd = terms.steady ? Math.hypot(table, ASSUMED.steadyEndSd) : table;
+  return { ownSd, weather: byCold / 2, sd: Math.hypot(ownSd, byResistance / 2, byCold / 2) };
 }
 
 /** How many spreads the weakest of n cells lies below their mean (Blom's approximation). */

@@ -8,15 +8,17 @@ import type { EpochDays } from "../units";
 import { ASSUMED } from "./assumptions";
 import { DAYS_PER_YEAR, monthOf } from "./climate";
 import { consume } from "./consume";
+import { crowds, isStill } from "./crowding";
 import { drift, openRate } from "./draw-walk";
+import { shiftRates, shiftReach } from "./draw-shift";
 import { type EndOfLife, type ResistanceBelief, endOfLife } from "./end-of-life";
 import { type Grid, depthMarginal, newGrid, normalise, retire, weighDepth } from "./grid";
 import type { ForecastInput, PackEvent, PackReading, ReadingWeight } from "./pack";
-import { type PackModel, leakBetween, packModel } from "./pack-model";
+import { type PackModel, distrusted, leakBetween, packModel } from "./pack-model";
 import { impossibleAboveMv, observe } from "./reading";
 import { filmChance } from "./passivation";
 import { guessRest, learnResistance, loosen } from "./resistance";
-import { type Bounds, aliveBounds, passedOver, timeline } from "./timeline";
+import { type Bounds, type Item, aliveBounds, passedOver, timeline } from "./timeline";
 
 const LONGEST_STEP_DAYS = 120;
 const MOST_STEPS = 24;
@@ -36,25 +38,45 @@ export interface Filtered extends Bounds {
   readonly end: EndOfLife;
 }
 
-/** Run the filter over everything known up to `now`. */
+/**
+ * Run the filter over everything known up to `now`. Where a good part of the readings is in doubt
+ * it is the curve that does not fit these cells: then once more, with less trust in it.
+ */
 export function filterPack(input: ForecastInput): Filtered {
-  const model = packModel(input.pack, input.prior);
+  const model = packModel(input.pack, input.prior, input.temperatures);
+  const filtered = filterUnder(model, input);
+  return misfit(filtered.weights) ? filterUnder(distrusted(model), input) : filtered;
+}
+
+/** So many readings, and this share of them, in doubt: slips do not come so often. */
+const MISFIT = { least: 3, share: 0.34 };
+
+function misfit(weights: readonly ReadingWeight[]): boolean {
+  const doubtful = weights.filter((w) => w.reason === "doubtful").length;
+  const fitting = weights.filter((w) => w.reason === "fits").length;
+  return doubtful >= MISFIT.least && doubtful > MISFIT.share * (doubtful + fitting);
+}
+
+function filterUnder(model: PackModel, input: ForecastInput): Filtered {
   const from = input.pack.installedAt;
   const until = Math.max(input.now, from);
   const bounds = aliveBounds(input, from, until);
   const highestMv = impossibleAboveMv(model);
   const items = timeline(input, { from, until, aliveAt: bounds.aliveAt, highestMv });
-  const changed = items.some((i) => "event" in i && i.event.kind === "draw-changed");
-  const sd = changed ? Math.max(model.prior.sd, ASSUMED.changedDrawSd) : model.prior.sd;
-  const grid = newGrid(model, (until - from) / DAYS_PER_YEAR, sd);
-  if (changed && input.pack.measuredDraw) openRate(grid, model.prior.mean, sd);
-  const run = new Run(model, grid, from);
+  const grid = gridFor(model, input, items, (until - from) / DAYS_PER_YEAR);
+  const run = new Run(model, grid, from, crowds(model, items));
   // a stopped device draws no more: the grid stays at the day it was found
   const last = bounds.stoppedAt ?? until;
   for (const item of items) {
-    run.to(Math.min(item.at, last));
-    if ("reading" in item) run.read(item.reading);
-    else if ("event" in item) run.hear(item.event);
+    const at = Math.min(item.at, last);
+    if ("reading" in item) {
+      run.towards(at);
+      run.read(item.reading);
+      continue;
+    }
+    run.to(at);
+    if ("event" in item) run.hear(item.event);
+    else if ("shift" in item) shiftRates(grid, item.shift);
     else run.live(item.at);
   }
   const stands = run.follow(last);
@@ -62,6 +84,19 @@ export function filterPack(input: ForecastInput): Filtered {
   retire(grid);
   const weights = input.readings.map((r) => run.weights.get(r.id) ?? passedOver(r, input));
   return { model, grid, at: stands, weights, end: run.end(), ...bounds };
+}
+
+function gridFor(
+  model: PackModel,
+  input: ForecastInput,
+  items: readonly Item[],
+  years: number,
+): Grid {
+  const changed = items.some((i) => "event" in i && i.event.kind === "draw-changed");
+  const sd = changed ? Math.max(model.prior.sd, ASSUMED.changedDrawSd) : model.prior.sd;
+  const grid = newGrid(model, years, sd + shiftReach(input.drawShifts ?? []));
+  if (changed && input.pack.measuredDraw) openRate(grid, model.prior.mean, sd);
+  return grid;
 }
 
 /** One pass over one pack's history. */
@@ -75,8 +110,14 @@ class Run {
     private readonly model: PackModel,
     private readonly grid: Grid,
     private at: EpochDays,
+    private readonly sharedBy: ReadonlyMap<PackReading, number>,
   ) {
     this.resistance = model.resistance;
+  }
+
+  /** To a reading's time, unless hardly anything is gone by then. */
+  towards(day: EpochDays): void {
+    if (!isStill(this.model, day - this.at)) this.to(day);
   }
 
   to(day: EpochDays): void {
@@ -108,26 +149,35 @@ class Run {
     depthMarginal(this.grid, this.grid.nodeC);
     const guess = loaded ? guessRest(this.model, this.grid, reading) : null;
     const film = loaded ? filmChance(this.model, this.at - this.lastLoaded) : 0;
-    const said = observe(this.model, this.grid, reading, this.resistance, film);
+    const shared = this.sharedBy.get(reading) ?? 1;
+    const said = observe(this.model, this.grid, reading, this.resistance, { film, shared });
     this.weights.set(reading.id, said);
     if (!guess) return;
     this.lastLoaded = this.at;
     if (said.reason === "passivation") return;
-    this.resistance = learnResistance(this.resistance, guess, reading.millivolts, said.weight);
+    this.resistance = learnResistance(
+      this.resistance,
+      guess,
+      reading.millivolts,
+      said.weight / shared,
+    );
     this.learned = true;
   }
 
   /** It ran on a day: judged by the end as this pack's own resistance sets it. */
   live(at: EpochDays): void {
     const end = this.end();
-    weighDepth(this.grid, (depth) => aliveChance(end, depth, at));
+    // not longer ago: a pack that stopped in the cold may have come back since
+    const met = this.endMet(end, at - 1, at);
+    weighDepth(this.grid, (depth) => aliveChance(end.sd, met, depth));
   }
 
   hear(event: PackEvent): void {
     const { model, grid } = this;
     if (event.kind === "stopped") {
       const end = this.end();
-      weighDepth(grid, (depth) => 1 - aliveChance(end, depth, event.at));
+      const met = this.endMet(end, event.lastAliveAt ?? event.at - 1, event.at);
+      weighDepth(grid, (depth) => 1 - aliveChance(end.sd, met, depth));
     } else if (event.kind === "draw-changed") {
       openRate(
         grid,
@@ -135,6 +185,12 @@ class Run {
         model.pack.measuredDraw ? model.prior.sd : ASSUMED.changedDrawSd,
       );
     }
+  }
+
+  /** The end depth in a stretch: in the coldest that was logged, else as the month sets it. */
+  private endMet(end: EndOfLife, from: EpochDays, to: EpochDays): number {
+    const coldest = this.model.site.lowest(from, to);
+    return coldest === null ? end.byMonth[monthOf(to)]! : end.at(coldest);
   }
 
   end(): EndOfLife {
@@ -150,9 +206,9 @@ class Run {
   }
 }
 
-/** Chance that the device runs at a depth in the month of a day. */
-function aliveChance(end: EndOfLife, depth: number, at: EpochDays): number {
-  return normalCdf((end.byMonth[monthOf(at)]! - depth) / end.sd);
+/** Chance that the device runs at a depth where it stops at about `end`. */
+function aliveChance(sd: number, end: number, depth: number): number {
+  return normalCdf((end - depth) / sd);
 }
 
 /** Steps into which a stretch of days is cut. */

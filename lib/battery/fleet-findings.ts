@@ -80,6 +80,8 @@ export interface DrawShift {
   readonly at: EpochDays;
   /** Draw after over draw before. */
   readonly factor: number;
+  /** How well the models' mean factor is known, one standard deviation, as a share. */
+  readonly relativeSd: number;
   readonly chance: number;
   /** Packs observed after it. */
   readonly packKeys: readonly string[];
@@ -125,6 +127,7 @@ function clearestStep(
       model,
       at: sorted[k]!.at,
       factor: Math.exp(step),
+      relativeSd: Math.sqrt(before.variance + after.variance),
       chance: Math.min(1, chance),
       packKeys: after.packs,
     };

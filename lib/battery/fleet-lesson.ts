@@ -19,7 +19,14 @@ import {
   learnCohorts,
   pooledLife,
 } from "./fleet-prior";
-import type { Calibration, Chemistry, FleetPrior, PackReading, PackSpec } from "./pack";
+import type {
+  Calibration,
+  Chemistry,
+  FleetPrior,
+  LoggedTemperature,
+  PackReading,
+  PackSpec,
+} from "./pack";
 
 /** Forecasts of this many packs are judged: enough to know a spread to a few percent. */
 const MOST_JUDGED = 200;
@@ -35,6 +42,8 @@ export interface FinishedHistory {
   /** The day it stopped its device, or was swapped before that. */
   readonly outAt: EpochDays;
   readonly ranOut: boolean;
+  /** Temperatures logged at its site, if any. */
+  readonly temperatures?: readonly LoggedTemperature[];
 }
 
 export interface FleetMember {
@@ -78,7 +87,10 @@ interface Told {
 function prepared(histories: readonly FinishedHistory[]): Told[] {
   return histories
     .filter((h) => h.outAt - h.pack.installedAt > 1)
-    .map((history) => ({ history, spent: spent(history.pack, history.outAt) }));
+    .map((history) => ({
+      history,
+      spent: spent(history.pack, history.outAt, history.temperatures),
+    }));
 }
 
 /** What was learned of one chemistry, its windows not yet calibrated. */
@@ -220,6 +232,7 @@ function promised(history: FinishedHistory, pack: FinishedPack, prior: FleetPrio
     events: [{ kind: "reporting", at: history.outAt }],
     prior,
     now: history.outAt,
+    ...(history.temperatures ? { temperatures: history.temperatures } : {}),
   });
   return { ...pack, expected: { lnRatio: -lnPace - Math.log(ASSUMED.capacityMean), sd } };
 }

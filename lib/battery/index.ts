@@ -9,6 +9,8 @@ export type {
   FleetPrior,
   Forecast,
   ForecastInput,
+  FoundDrawShift,
+  LoggedTemperature,
   PackEvent,
   PackReading,
   PackSpec,
@@ -37,6 +39,7 @@ export {
   type FleetMember,
   learnFleet,
 } from "./fleet-lesson";
+export { withDrawShift } from "./draw-shift";
 export {
   type BadLot,
   type DrawObservation,

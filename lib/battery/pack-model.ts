@@ -8,7 +8,7 @@ import { baseCutoffMv, grossCapacity, overload } from "./capacity";
 import { DAYS_PER_YEAR } from "./climate";
 import { CURVES } from "./curve-tables";
 import { type PackCurve, packCurve, packEndDepth } from "./cutoff";
-import { packAverageUa, packPeakUa } from "./duty";
+import { isConstant, isSteady, packAverageUa, packPeakUa } from "./duty";
 import {
   type EndOfLife,
   type EndTerms,
@@ -16,12 +16,21 @@ import {
   endOfLife,
   tableEndDepth,
 } from "./end-of-life";
-import type { Calibration, Chemistry, CurveLesson, FleetPrior, PackSpec } from "./pack";
-import { type Ageing, ageing } from "./self-discharge";
+import type {
+  Calibration,
+  Chemistry,
+  CurveLesson,
+  FleetPrior,
+  LoggedTemperature,
+  PackSpec,
+} from "./pack";
+import { type SiteTemperatures, siteTemperatures } from "./site-temperature";
 
 const MIN_FULL_SHARE = 0.5;
 const MAX_SHELF_LOSS = 0.9;
 const TINY = 1e-9;
+/** How much further off the curve may be where readings show that it does not fit. */
+const MISFIT = 3;
 /** Share of a table's spread that differs from one reading to the next. */
 const UNTAUGHT_NOISE = 0.25;
 const LONGEST_AGE_YEARS = 15;
@@ -44,7 +53,8 @@ export interface PackModel {
   readonly drawPerDay: number;
   /** Share of the charge left that is lost per day at 20 °C by self-discharge. */
   readonly leakPerDay: number;
-  readonly ageing: Ageing;
+  /** How warm it was and will be at its site. */
+  readonly site: SiteTemperatures;
   readonly endTerms: EndTerms;
   /** Where it stops, before any loaded reading has told of the resistance. */
   readonly end: EndOfLife;
@@ -79,7 +89,8 @@ function ratePrior(pack: PackSpec, fleet: FleetPrior | null): RatePrior {
     mean: ASSUMED.capacityMean * Math.exp(beyond.mean),
     relativeSd: Math.hypot(ASSUMED.capacitySd, beyond.sd),
   };
-  const learned = fleet?.drawFactor ?? { mean: 1, relativeSd: ASSUMED.drawSd };
+  const assumed = isConstant(pack) ? ASSUMED.constantDrawSd : ASSUMED.drawSd;
+  const learned = fleet?.drawFactor ?? { mean: 1, relativeSd: assumed };
   const draw = pack.measuredDraw ? { mean: 1, relativeSd: pack.measuredDraw.relativeSd } : learned;
   const drawMean = Math.log(draw.mean);
   const drawSd = Math.min(Math.max(draw.relativeSd, 0.01), 1.5);
@@ -101,9 +112,6 @@ function shelfLoss(pack: PackSpec, leakPerDay: number): number {
   return Math.min(MAX_SHELF_LOSS, -Math.expm1(-leakPerDay * (pack.installedAt - pack.madeAt)));
 }
 
-/** A load that hardly ever pauses: its mean is a good part of its peak. */
-const isSteady = (averageUa: number, peakUa: number): boolean => averageUa > 0.3 * peakUa;
-
 /**
  * Resistance before any loaded reading. A sheet states what a short pulse meets; a load that
  * hardly ever pauses meets the cell's slow polarisation as well: taken as 40 mV an element at
@@ -113,11 +121,11 @@ const isSteady = (averageUa: number, peakUa: number): boolean => averageUa > 0.3
 function resistanceOf(pack: PackSpec, curve: PackCurve, lesson: CurveLesson | null) {
   if (lesson) return { mean: 1, sd: lesson.resistanceSd };
   const ua = packAverageUa(pack);
-  if (!isSteady(ua, packPeakUa(pack))) return { mean: 1, sd: ASSUMED.resistanceSd };
+  if (!isSteady(pack)) return { mean: 1, sd: ASSUMED.resistanceSd };
   const twentyHourUa = (pack.cell.rated.capacityMah * 1000 * pack.parallel) / 20;
   const slowMv = 40 * curve.restScale * Math.sqrt(ua / twentyHourUa);
   const mean = 1 + Math.min(40, slowMv / Math.max(1e-3, (ua * curve.freshMohm) / 1e6));
-  return { mean, sd: 0.4 * mean };
+  return { mean, sd: Math.hypot(0.4 * mean, mean - 1) };
 }
 
 /** A full cell's charge, and the shares of it that a day takes by leak and by draw. */
@@ -131,8 +139,28 @@ function charges(pack: PackSpec, averageUa: Microamps) {
   };
 }
 
+/** Depth at which a pack starts, and how well that is known. */
+function startOf(pack: PackSpec, leakPerDay: number) {
+  const startDepth = shelfLoss(pack, leakPerDay);
+  return { startDepth, startSd: Math.hypot(ASSUMED.startDepthSd, startDepth * 0.5) };
+}
+
+/** How far the pack's voltages may lie off its curve. */
+function curveErrors(pack: PackSpec, { restScale }: PackCurve, lesson: CurveLesson | null) {
+  const { spreadMv } = CURVES[pack.cell.chemistry];
+  return {
+    offsetSdMv: restScale * (lesson?.spreadMv ?? spreadMv),
+    noiseMv: restScale * (lesson?.noiseMv ?? UNTAUGHT_NOISE * spreadMv),
+    offsetDepth: lesson ? ASSUMED.taughtErrorDepth : ASSUMED.curveErrorDepth,
+  };
+}
+
 /** Prepare a pack for the filter. */
-export function packModel(pack: PackSpec, fleet: FleetPrior | null): PackModel {
+export function packModel(
+  pack: PackSpec,
+  fleet: FleetPrior | null,
+  temperatures: readonly LoggedTemperature[] = [],
+): PackModel {
   const lesson = fleet?.curve ?? null;
   // the depth axis ends where the published curve does; what was learned lies on that axis
   const published = packCurve(pack);
@@ -145,13 +173,11 @@ export function packModel(pack: PackSpec, fleet: FleetPrior | null): PackModel {
     curve: published,
     peakUa,
     cap: tableEndDepth(pack, averageUa, fullMah),
-    steady: isSteady(averageUa, peakUa),
+    steady: isSteady(pack),
     aged: grown(pack, 1 / Math.max(drawPerDay + leakPerDay, TINY)),
   };
   const resistance = resistanceOf(pack, curve, lesson);
   const endResistance = fleet?.endResistance ?? resistance;
-  const { spreadMv } = CURVES[pack.cell.chemistry];
-  const startDepth = shelfLoss(pack, leakPerDay);
   return {
     pack,
     curve,
@@ -159,24 +185,32 @@ export function packModel(pack: PackSpec, fleet: FleetPrior | null): PackModel {
     peakUa,
     drawPerDay,
     leakPerDay,
-    ageing: ageing(pack.monthlyMeanDc),
+    site: siteTemperatures(pack.monthlyMeanDc, temperatures),
     endTerms: terms,
     end: endOfLife(terms, endResistance),
     endResistance,
-    startDepth,
-    startSd: Math.hypot(ASSUMED.startDepthSd, startDepth * 0.5),
-    offsetSdMv: curve.restScale * (lesson?.spreadMv ?? spreadMv),
-    noiseMv: curve.restScale * (lesson?.noiseMv ?? UNTAUGHT_NOISE * spreadMv),
-    offsetDepth: lesson ? ASSUMED.taughtErrorDepth : ASSUMED.curveErrorDepth,
+    ...startOf(pack, leakPerDay),
+    ...curveErrors(pack, curve, lesson),
     resistance,
     prior: ratePrior(pack, fleet),
     calibration: fleet?.calibration ?? null,
   };
 }
 
+/** The same pack where its readings show that the curve is not that of its cells. */
+export function distrusted(model: PackModel): PackModel {
+  const { mean, sd } = model.resistance;
+  return {
+    ...model,
+    offsetSdMv: MISFIT * model.offsetSdMv,
+    noiseMv: MISFIT * model.noiseMv,
+    resistance: { mean, sd: MISFIT * sd },
+  };
+}
+
 /** Exponent of self-discharge between two days: the share kept is e to its negative. */
 export function leakBetween(model: PackModel, from: EpochDays, to: EpochDays): number {
-  return model.leakPerDay * model.ageing.between(from, to);
+  return model.leakPerDay * model.site.ageing.between(from, to);
 }
 
 /** Resistance after some days in service relative to new, at equal depth and temperature. */

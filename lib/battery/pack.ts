@@ -128,12 +128,35 @@ export interface FleetPrior {
   readonly calibration?: Calibration | null;
 }
 
+/** A temperature logged at the pack's site: of a moment, or a day's mean. */
+export interface LoggedTemperature {
+  readonly at: EpochDays;
+  readonly temperatureDc: Decicelsius;
+}
+
+/** A shift of the draw found for the pack's device model; made by `withDrawShift`. */
+export interface FoundDrawShift {
+  readonly at: EpochDays;
+  /** Draw after over draw before, and its spread for one device, as a share. */
+  readonly factor: number;
+  readonly relativeSd: number;
+}
+
 export interface ForecastInput {
   readonly pack: PackSpec;
   readonly readings: readonly PackReading[];
   readonly events: readonly PackEvent[];
   readonly prior: FleetPrior | null;
   readonly now: EpochDays;
+  /**
+   * Temperatures logged at the site, in any order. They hold for the past: self-discharge, the
+   * resistance at readings without a temperature of their own, and how cold it was when the
+   * device ran or stopped. Between two more than three days apart, and for the future, the
+   * climate holds.
+   */
+  readonly temperatures?: readonly LoggedTemperature[];
+  /** Shifts of its model's draw that the fleet's readings showed. */
+  readonly drawShifts?: readonly FoundDrawShift[];
 }
 
 /** How much one reading counted, and why, in the words of `reason`. */

@@ -9,7 +9,6 @@
  * the first term.
  */
 import { ASSUMED } from "./assumptions";
-import { temperatureAt } from "./climate";
 import { CURVE_STEPS } from "./curves";
 import { freshDropMv } from "./cutoff";
 import { type Grid, normalise } from "./grid";
@@ -39,7 +38,7 @@ function expectAt(
 ): void {
   const { curve, pack } = model;
   const { nodeA: mean, nodeB: variance } = grid;
-  const dc = reading.temperatureDc ?? temperatureAt(pack.monthlyMeanDc, reading.at);
+  const dc = reading.temperatureDc ?? model.site.at(reading.at);
   const ua = reading.kind === "loaded" ? (reading.loadUa ?? model.peakUa) : 0;
   const aged = resistanceAge(model, reading.at) * belief.mean;
   const drop = freshDropMv(pack, curve, ua, dc) * aged;
@@ -64,9 +63,15 @@ function expectAt(
   }
 }
 
+/** How well the temperature of a reading is known, K. */
+function warmthSdK({ site }: PackModel, { temperatureDc, at }: Circumstances): number {
+  if (temperatureDc !== null) return 1;
+  return site.logged(at) === null ? ASSUMED.temperatureSdK : ASSUMED.loggedTemperatureSdK;
+}
+
 /** The part of a reading's variance that does not depend on depth, mV². */
 function fixedVariance(model: PackModel, grid: Grid, reading: Circumstances): number {
-  const warmth = reading.temperatureDc === null ? ASSUMED.temperatureSdK : 1;
+  const warmth = warmthSdK(model, reading);
   const accuracy = reading.accuracyMv ?? ASSUMED.accuracyMv;
   return (
     accuracy ** 2 +
@@ -105,20 +110,29 @@ function expectedBand(grid: Grid): [number, number, number] {
   ];
 }
 
+/** What is known of a reading beforehand. */
+export interface Standing {
+  /** Chance that it is the film's, if it is low. */
+  readonly film: number;
+  /** By how many readings its errors are shared, itself counted in. */
+  readonly shared: number;
+}
+
 /** Update the grid by one reading (depth marginal in `nodeC`); says how much it counted and why. */
 export function observe(
   model: PackModel,
   grid: Grid,
   reading: PackReading,
   resistance: ResistanceBelief,
-  filmChance: number,
+  { film, shared }: Standing,
 ): ReadingWeight {
   expectAt(model, grid, reading, resistance);
   const [low, middle, high] = expectedBand(grid);
   // the film only ever lowers a voltage: a higher one is the cell's own
-  const dip = reading.millivolts < middle ? filmChance : 0;
+  const dip = reading.millivolts < middle ? film : 0;
   const slip = Math.max(ASSUMED.outlierShare, dip);
-  const weight = multiply(grid, reading.millivolts, impossibleAboveMv(model), slip);
+  const outlier = slip / impossibleAboveMv(model);
+  const weight = multiply(grid, reading.millivolts, { slip, outlier, power: 1 / shared });
   const doubted = dip > ASSUMED.outlierShare ? "passivation" : "doubtful";
   const reason = weight >= 0.5 ? "fits" : doubted;
   return {
@@ -131,10 +145,18 @@ export function observe(
   };
 }
 
+interface Mixture {
+  readonly slip: number;
+  /** Density of a slip, per mV. */
+  readonly outlier: number;
+  /** Exponent of the likelihood: 1 for a witness of its own. */
+  readonly power: number;
+}
+
 /** Multiply by the mixture likelihood; returns the weight of its first term. */
-function multiply(grid: Grid, millivolts: number, rangeMv: number, slip: number): number {
+function multiply(grid: Grid, millivolts: number, by: Mixture): number {
   const { p, nx, nr, no, nodeA: mean, nodeB: variance, nodeC: fit, rowMass } = grid;
-  const outlier = slip / rangeMv;
+  const { slip, outlier, power } = by;
   const share = (1 - slip) / Math.sqrt(2 * Math.PI);
   let fitting = 0;
   let total = 0;
@@ -156,7 +178,16 @@ function multiply(grid: Grid, millivolts: number, rangeMv: number, slip: number)
         p[k] = all;
       }
     }
+    if (power < 1) temper(grid, o, outlier, power);
   }
-  if (total < FAINT) normalise(grid);
+  if (total < FAINT || power < 1) normalise(grid);
   return total > 0 ? Math.min(1, fitting / total) : 0;
+}
+
+/** Takes the likelihood of one offset, its densities in `nodeC`, to a power, having been multiplied. */
+function temper({ p, nx, nr, nodeC: fit }: Grid, o: number, outlier: number, power: number): void {
+  for (let i = 0; i < nx; i++) fit[i] = (fit[i]! + outlier) ** (power - 1);
+  for (let row = o * nr; row < (o + 1) * nr; row++) {
+    for (let i = 0, k = row * nx; i < nx; i++, k++) p[k]! *= fit[i]!;
+  }
 }

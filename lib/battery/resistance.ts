@@ -5,7 +5,6 @@
  */
 import type { EpochDays } from "../units";
 import { ASSUMED } from "./assumptions";
-import { temperatureAt } from "./climate";
 import { CURVE_STEPS, atDepth } from "./curves";
 import { freshDropMv } from "./cutoff";
 import type { ResistanceBelief } from "./end-of-life";
@@ -42,7 +41,7 @@ export interface RestGuess {
  */
 export function guessRest(model: PackModel, grid: Grid, reading: PackReading): RestGuess {
   const { curve, pack } = model;
-  const dc = reading.temperatureDc ?? temperatureAt(pack.monthlyMeanDc, reading.at);
+  const dc = reading.temperatureDc ?? model.site.at(reading.at);
   const ua = reading.loadUa ?? model.peakUa;
   const fall = freshDropMv(pack, curve, ua, dc) * resistanceAge(model, reading.at);
   const marginal = grid.nodeC;

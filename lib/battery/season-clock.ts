@@ -10,6 +10,8 @@ import { DAYS_PER_YEAR, MONTH_STARTS, dayOfYear, monthOf } from "./climate";
 import type { Filtered } from "./filter";
 
 export interface SeasonalClock {
+  /** Even days used up by a date, what the cold takes away left out. */
+  progress(date: EpochDays): number;
   /** Date on which a pack with this many even days left stops. */
   dateOf(daysLeft: number): EpochDays;
   /** Even days left that are used up on a date. */
@@ -25,14 +27,15 @@ export interface MeanRate {
 export function seasonalClock(filtered: Filtered, mean: MeanRate): SeasonalClock {
   const { model, end, at } = filtered;
   const { ratePerDay, drawPerDay } = mean;
-  const leak = (ratePerDay - drawPerDay) / model.ageing.meanFactor;
+  const leak = (ratePerDay - drawPerDay) / model.site.ageing.meanFactor;
   const progress = (date: EpochDays): number =>
-    (drawPerDay * (date - at) + leak * model.ageing.between(at, date)) / ratePerDay;
+    (drawPerDay * (date - at) + leak * model.site.ageing.between(at, date)) / ratePerDay;
   const cold = (month: number): number => (end.warm - end.byMonth[month]!) / ratePerDay;
   const months: Month[] = [];
   const limit = at + ASSUMED.horizonDays * 1.05;
   const grow = (): Month => addMonth(months, at, progress, cold);
   return {
+    progress,
     dateOf(daysLeft) {
       if (daysLeft <= 0) return at + daysLeft;
       let k = 0;

@@ -3,7 +3,7 @@
  * device's life, and what is said of readings that cannot be of this pack.
  */
 import type { EpochDays } from "../units";
-import type { ForecastInput, PackEvent, PackReading, ReadingWeight } from "./pack";
+import type { ForecastInput, FoundDrawShift, PackEvent, PackReading, ReadingWeight } from "./pack";
 
 /** A reading stamped a little after `now` (clocks differ) still counts. */
 const CLOCK_SLACK_DAYS = 1;
@@ -11,6 +11,7 @@ const CLOCK_SLACK_DAYS = 1;
 export type Item =
   | { readonly at: EpochDays; readonly reading: PackReading }
   | { readonly at: EpochDays; readonly event: PackEvent }
+  | { readonly at: EpochDays; readonly shift: FoundDrawShift }
   | { readonly at: EpochDays; readonly alive: true };
 
 export interface Bounds {
@@ -63,6 +64,10 @@ export function timeline(input: ForecastInput, span: Span): Item[] {
     if (known(event.at) && event.kind !== "reporting") {
       items.push({ at: Math.min(event.at, until), event });
     }
+  }
+  for (const shift of input.drawShifts ?? []) {
+    // a pack put in since starts with it
+    if (shift.at <= until) items.push({ at: Math.max(shift.at, from), shift });
   }
   if (aliveAt !== null) items.push({ at: aliveAt, alive: true });
   return items.sort((a, b) => a.at - b.at);

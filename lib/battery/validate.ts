@@ -115,6 +115,20 @@ function checkHistory(input: ForecastInput, need: Need): void {
       i + 1,
     );
   });
+  input.temperatures?.forEach((t, i) => {
+    need(isDay(t.at), "temperatures.at", "Give the day of the temperature.", i + 1);
+    need(
+      within(t.temperatureDc, -1000, 1000),
+      "temperatures.temperatureDc",
+      "Give tenths of a degree between -1000 and 1000.",
+      i + 1,
+    );
+  });
+  input.drawShifts?.forEach((s, i) => {
+    need(isDay(s.at), "drawShifts.at", "Give the day of the shift.", i + 1);
+    need(within(s.factor, 0.05, 20), "drawShifts.factor", "Give 0.05 to 20.", i + 1);
+    need(within(s.relativeSd, 0, 2), "drawShifts.relativeSd", "Give 0 to 2.", i + 1);
+  });
   checkEvents(input, need);
 }
 

@@ -5,8 +5,7 @@
 import { gridQuantile } from "../stats/grid-quantile";
 import type { Decicelsius, EpochDays, Microamps, Millivolts } from "../units";
 import { ASSUMED } from "./assumptions";
-import { DAYS_PER_YEAR, temperatureAt } from "./climate";
-import { CURVES } from "./curve-tables";
+import { DAYS_PER_YEAR } from "./climate";
 import { packMv } from "./cutoff";
 import { type Filtered, filterPack } from "./filter";
 import { depthMarginal, rateMarginal } from "./grid";
@@ -68,13 +67,13 @@ function bandAt(
   query: VoltageQuery,
 ): ExpectedVoltage {
   const { model } = filtered;
-  const dc = query.temperatureDc ?? temperatureAt(model.pack.monthlyMeanDc, at);
+  const dc = query.temperatureDc ?? model.site.at(at);
   const ua = query.kind === "loaded" ? (query.loadUa ?? model.peakUa) : 0;
   const [depth, half] = depthAt(filtered, now, at);
   const mv = (x: number): number => packMv(model.pack, model.curve, x, ua, dc);
   const mid = mv(depth);
   const resistive = (mid - packMv(model.pack, model.curve, depth, 0, dc)) * ASSUMED.resistanceSd;
-  const own = model.curve.restScale * CURVES[model.pack.cell.chemistry].spreadMv;
+  const own = Math.hypot(model.offsetSdMv, model.noiseMv);
   const noise = Z90 * Math.hypot(ASSUMED.accuracyMv, own, resistive);
   return {
     at,

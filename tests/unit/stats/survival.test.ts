@@ -4,6 +4,7 @@ import {
   fitAcceleratedLife,
   lifeQuantile,
 } from "../../../lib/stats/accelerated-life";
+import { normalCdf } from "../../../lib/stats/normal";
 import {
   type Life,
   logLogInterval,
@@ -72,6 +73,7 @@ describe("Kaplan-Meier and Nelson-Aalen, R 4.2.2 survival 3.5-3", () => {
   test("log-rank of the two arms", () => {
     const { chiSquared, expected } = logRank(MAINTAINED, NOT_MAINTAINED);
     expect(chiSquared).toBeCloseTo(3.396389, 4);
+    expect(2 * normalCdf(-Math.sqrt(chiSquared))).toBeCloseTo(0.06534, 4);
     expect(expected[0]).toBeCloseTo(10.68934, 4);
     expect(expected[1]).toBeCloseTo(7.31066, 4);
   });

@@ -102,28 +102,33 @@ export function roundLine(
   return L.layerGroup([line, depot]);
 }
 
-export interface StopSelection {
-  readonly chosenStop: string | null;
-  readonly onStop: (stopId: string, roundId: string) => void;
+export interface StopMark {
+  readonly id: string;
+  readonly marker: L.Marker;
+  /** Makes it stand out, or no longer; the focus stays where it is. */
+  readonly light: (chosen: boolean) => void;
 }
 
 /** A round's stops: numbered and reached by the keyboard where it is the chosen one, else dots. */
-export function stopMarkers(
+export function stopMarks(
   round: MapRound,
   numbered: boolean,
-  { chosenStop, onStop }: StopSelection,
-): L.LayerGroup {
-  const markers = round.stops.map((stop, i) => {
-    const chosen = numbered && stop.id === chosenStop;
-    const size = chosen ? 30 : numbered ? 22 : 12;
+  onStop: (stopId: string, roundId: string) => void,
+): StopMark[] {
+  return round.stops.map((stop, i) => {
     const name = numbered ? `${i + 1}. ${stop.label}` : `${stop.label}, ${round.label}`;
-    return L.marker([stop.latitude, stop.longitude], {
-      icon: icon(numbered ? stopMarkup(i + 1, chosen) : dotMarkup, size),
+    const look = (chosen: boolean) =>
+      numbered ? icon(stopMarkup(i + 1, chosen), chosen ? 30 : 22) : icon(dotMarkup, 12);
+    const marker = L.marker([stop.latitude, stop.longitude], {
+      icon: look(false),
       title: name,
-      alt: chosen ? `${name}, chosen` : name,
       keyboard: numbered,
-      zIndexOffset: chosen ? 800 : numbered ? 500 : 200,
     }).on("click", () => onStop(stop.id, round.id));
+    const light = (chosen: boolean) => {
+      const stands = numbered && chosen;
+      marker.options.title = stands ? `${name}, chosen` : name;
+      marker.setIcon(look(stands)).setZIndexOffset(stands ? 800 : numbered ? 500 : 200);
+    };
+    return { id: stop.id, marker, light };
   });
-  return L.layerGroup(markers);
 }

@@ -1,8 +1,8 @@
 "use client";
 
 import type L from "leaflet";
-import { type RefObject, useEffect } from "react";
-import { type MapRound, roundLine, stopMarkers } from "./map-layers";
+import { type RefObject, useEffect, useRef } from "react";
+import { type MapRound, roundLine, type StopMark, stopMarks } from "./map-layers";
 
 export interface RoundMarks {
   readonly rounds: readonly MapRound[];
@@ -17,8 +17,8 @@ export interface RoundMarks {
 const nobody = () => undefined;
 
 /** Draws rounds and their stops on a map, and brings the chosen stop into sight. */
-export function useRounds(map: RefObject<L.Map | null>, marks: RoundMarks): void {
-  const { rounds, chosenRound, chosenStop, onRound = nobody, onStop = nobody } = marks;
+export function useRounds(map: RefObject<L.Map | null>, shown: RoundMarks): void {
+  const { rounds, chosenRound, chosenStop, onRound = nobody, onStop = nobody } = shown;
 
   useEffect(() => {
     const on = map.current;
@@ -27,13 +27,19 @@ export function useRounds(map: RefObject<L.Map | null>, marks: RoundMarks): void
     return () => lines.forEach((line) => void line.remove());
   }, [map, rounds, chosenRound, onRound]);
 
+  const marks = useRef<readonly StopMark[]>([]);
   useEffect(() => {
     const on = map.current;
     if (!on) return;
-    const select = { chosenStop: chosenStop ?? null, onStop };
-    const layers = rounds.map((r) => stopMarkers(r, r.id === chosenRound, select).addTo(on));
-    return () => layers.forEach((layer) => void layer.remove());
-  }, [map, rounds, chosenRound, chosenStop, onStop]);
+    const made = rounds.flatMap((r) => stopMarks(r, r.id === chosenRound, onStop));
+    made.forEach(({ marker }) => void marker.addTo(on));
+    marks.current = made;
+    return () => made.forEach(({ marker }) => void marker.remove());
+  }, [map, rounds, chosenRound, onStop]);
+
+  useEffect(() => {
+    for (const { id, light } of marks.current) light(id === chosenStop);
+  }, [rounds, chosenRound, chosenStop, onStop]);
 
   useEffect(() => {
     const stop = rounds.flatMap((r) => r.stops).find(({ id }) => id === chosenStop);

@@ -214,6 +214,10 @@ export interface Finding {
    * Packs whose evidence it rests on.
    */
   packsBehind: number;
+  /**
+   * Draw shifts: one standard deviation of the factor, as a share; null: from before it was kept.
+   */
+  relativeSd: number | null;
   seenAt: Timestamp;
   since: string | null;
 }

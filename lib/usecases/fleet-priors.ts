@@ -16,7 +16,12 @@ import {
   learnFleet,
 } from "@/lib/battery";
 import { toEpochDays } from "@/lib/units";
-import { type ForecastCatalogue, forecastInputOf, groupBy } from "./forecast-input";
+import {
+  type ForecastCatalogue,
+  forecastInputOf,
+  groupBy,
+  withoutFindings,
+} from "./forecast-input";
 
 interface Member {
   readonly assetId: string;
@@ -140,7 +145,8 @@ function historyOf(
 ): FinishedHistory {
   // lives are told beside the duty cycle: a current measured since says nothing of them
   const unmeasured = { ...row, measuredAverageUa: null, lastHeardAt: null };
-  const input = forecastInputOf(catalogue, unmeasured, readings, [], null, endedAt);
+  const sheets = withoutFindings(catalogue);
+  const input = forecastInputOf(sheets, unmeasured, readings, [], null, endedAt);
   return {
     packKey: row.packId,
     deviceKey: row.assetId,

@@ -8,7 +8,7 @@ import {
 } from "@/db/queries/outcomes";
 import { chanceOutBy, forecastPack } from "@/lib/battery";
 import { fromEpochDays, MS_PER_DAY, toEpochDays } from "@/lib/units";
-import { type ForecastCatalogue, forecastInputOf } from "./forecast-input";
+import { type ForecastCatalogue, forecastInputOf, withoutFindings } from "./forecast-input";
 import type { JudgingGround } from "./lessons-by-quarter";
 import { loadLogged, type Logged, pastForecast } from "./past-forecast";
 import type { Deps } from "./use-case";
@@ -89,7 +89,8 @@ async function outcomeOf(
 /** Median life by the data sheet and the duty cycle alone, from the day the pack went in. */
 function promiseOf(catalogue: ForecastCatalogue, pack: PackToForecast): PackPromise {
   const unread = { ...pack, lastHeardAt: null, measuredAverageUa: null };
-  const input = forecastInputOf(catalogue, unread, [], [], null, pack.installedAt);
+  const sheets = withoutFindings(catalogue);
+  const input = forecastInputOf(sheets, unread, [], [], null, pack.installedAt);
   const days = forecastPack(input).quantiles.p50 - input.pack.installedAt;
   return { packId: pack.packId, promisedDays: Math.max(1, days) };
 }

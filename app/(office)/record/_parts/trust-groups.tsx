@@ -24,7 +24,7 @@ export function TrustGroups({ view }: { view: TrustView }) {
           </EmptyState>
         }
       />
-      <p className="max-w-prose py-2 text-soft">
+      <p className="max-w-prose px-3 py-2.5 text-soft">
         Every pack in service counts, not only those that came out: one that stops always comes out,
         one that runs on does not. The range allows for chance between packs, not for a cold winter
         that meets all of them at once.

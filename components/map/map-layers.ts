@@ -123,11 +123,17 @@ export function stopMarks(
       icon: look(false),
       title: name,
       keyboard: numbered,
-    }).on("click", () => onStop(stop.id, round.id));
+    });
+    const choose = () => onStop(stop.id, round.id);
+    marker.on("click", choose);
+    // Leaflet lets a marker have the focus, but Enter clicks none
+    marker.on("keypress", ({ originalEvent }: L.LeafletKeyboardEvent) => {
+      if (originalEvent.key === "Enter") choose();
+    });
     const light = (chosen: boolean) => {
       const stands = numbered && chosen;
-      marker.options.title = stands ? `${name}, chosen` : name;
       marker.setIcon(look(stands)).setZIndexOffset(stands ? 800 : numbered ? 500 : 200);
+      marker.getElement()?.setAttribute("title", stands ? `${name}, chosen` : name);
     };
     return { id: stop.id, marker, light };
   });

@@ -3,6 +3,7 @@ import PgBoss from "pg-boss";
 import { deps, env } from "@/lib/server/deps";
 import { bossConnection, QUEUES } from "@/lib/server/jobs";
 import { log } from "@/lib/server/log";
+import { searchBeside } from "@/lib/server/search-threads/search-beside";
 import { HANDLERS } from "@/lib/server/job-handlers";
 import type { JobName } from "@/lib/usecases/use-case";
 
@@ -46,7 +47,7 @@ async function main(): Promise<void> {
 async function run(name: JobName, data: unknown): Promise<void> {
   const started = performance.now();
   try {
-    const result = await HANDLERS[name](deps(), data as never);
+    const result = await HANDLERS[name]({ ...deps(), searchRounds: searchBeside }, data as never);
     log.info({ job: name, result, ms: Math.round(performance.now() - started) });
   } catch (error) {
     log.error({ job: name, error, ms: Math.round(performance.now() - started) }, "job failed");

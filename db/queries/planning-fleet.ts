@@ -26,6 +26,29 @@ export async function loadSitesToPlan(db: Kysely<Database>, scope: FleetScope) {
   return sites.map((site) => ({ ...site, closures: closures.filter((c) => c.siteId === site.id) }));
 }
 
+/**
+ * Sites whose last visit could not be done and where a day from which to try again is given that
+ * lies ahead. A visit that was done since, or a later "can't do it" without a day, takes it away.
+ */
+export async function loadReturnDays(db: Kysely<Database>, today: string) {
+  const last = db
+    .selectFrom("stop")
+    .innerJoin("round", "round.id", "stop.roundId")
+    .distinctOn("stop.siteId")
+    .select(["stop.siteId", "stop.state", "stop.cannotReason", "stop.returnOn"])
+    .where("stop.state", "in", ["cannot_do", "done"])
+    .orderBy("stop.siteId")
+    .orderBy("round.day", "desc")
+    .orderBy("stop.state", "desc");
+  return db
+    .selectFrom(last.as("last"))
+    .select(["siteId", "cannotReason as reason"])
+    .select((eb) => eb.ref("returnOn").$notNull().as("day"))
+    .where("state", "=", "cannot_do")
+    .where("returnOn", ">", today)
+    .execute();
+}
+
 /** `in ()` is not SQL: a list is never empty with this id in it, which nothing has. */
 const NOBODY = "00000000-0000-0000-0000-000000000000";
 

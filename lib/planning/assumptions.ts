@@ -17,6 +17,12 @@ export const NEXT_ROUND_H = 7 * 24;
  * 8 % of capacity and 15 % of draw together, as a forecast assumes them before anything is read.
  */
 export const FUTURE_LIFE_SD = 0.17;
+/**
+ * How many times its reckoned long-run cost a day of service is held to cost. Measured in simulated
+ * years (README.md), no theory: more than 1, because what a swap brings forward is reckoned from
+ * its own expected life, and the packs to come will be taken out early again.
+ */
+export const KEEP_FACTOR = 1.25;
 /** What an urgent trip costs beside its own drive and work: a planned round is torn up. */
 export const URGENT_DISRUPTION_H = 1;
 /**
@@ -26,7 +32,15 @@ export const URGENT_DISRUPTION_H = 1;
 export const NEAR_DAYS = 56;
 /** How far ahead a later visit is looked for: beyond the life of the longest-lived packs. */
 export const LATER_DAYS = 15 * 365;
+/**
+ * A plan also looks at the days after its own: what is better done there, with company, waits.
+ * Only its own days become rounds. Measured; see README.md.
+ */
+export const LOOK_AHEAD_DAYS = 7;
 /** Visit, drive and overtime are priced in thousandths of a minor unit: rounding stays unseen. */
 export const COST_UNITS_A_MINOR = 1000;
-/** A changed day or technician of a published visit: a message, a phone call. */
-export const CHANGE_MINOR = { day: 600, technician: 300, drop: 600 } as const;
+/**
+ * A changed day or technician of a published visit: a message, a phone call, somebody's diary.
+ * Common practice, no source.
+ */
+export const CHANGE_MINOR = { day: 1200, technician: 600, drop: 1200 } as const;

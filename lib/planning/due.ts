@@ -15,11 +15,12 @@ const READ_WITHIN_DAYS = 400;
 /** ... and its spread (p95 − p05) is at least this share of the time left ... */
 const READ_SPREAD = 0.6;
 /**
- * ... and half of what not knowing costs at the best moment pays for the minutes. About half of
- * it goes when a window of 10 % of life becomes one of 4.5 %, as between forecasts of alkaline
- * packs at mid-life and at nine tenths of it (lib/battery's table).
+ * ... and this share of what not knowing costs at the best moment pays for the minutes. Measured in
+ * simulated years (README.md): with a half, which a window narrowed from 10 % of life to 4.5 %
+ * would save, the minutes cost several times what the readings saved; most are of packs whose
+ * visit comes soon anyway.
  */
-const READ_TELLS = 0.5;
+const READ_TELLS = 0.15;
 
 export interface DueSite {
   readonly site: PlanningSite;
@@ -88,17 +89,37 @@ function readTask({ pack }: PackOutlook): PlannedTask {
 /** Cells that may still be given out, by cell type; types that are missing have none. */
 export type CellsOnHand = ReadonlyMap<string, number>;
 
-/** Gives cells to the most urgent packs first. @returns packs that get none */
+/**
+ * Scarce cells are shared by the search, which sees the drives; it is offered the packs that lose
+ * most by waiting, up to so many times the cells there are. The rest would only make it slower.
+ */
+const OFFERED_TIMES_STOCK = 1.5;
+
+/** Offers cells to the most urgent packs first. @returns packs that are not offered any */
 function rationCells(wanted: readonly PackOutlook[], onHand: CellsOnHand): Set<PackOutlook> {
-  const left = new Map(onHand);
+  const offered = new Map<string, number>();
   const without = new Set<PackOutlook>();
   for (const outlook of [...wanted].sort((a, b) => b.gainMinor - a.gainMinor)) {
     const { cellTypeId, cells } = outlook.pack;
-    const have = left.get(cellTypeId) ?? 0;
-    if (have < cells) without.add(outlook);
-    else left.set(cellTypeId, have - cells);
+    const have = onHand.get(cellTypeId) ?? 0;
+    const before = offered.get(cellTypeId) ?? 0;
+    if (have < cells || before + cells > OFFERED_TIMES_STOCK * have) without.add(outlook);
+    else offered.set(cellTypeId, before + cells);
   }
   return without;
+}
+
+/** One visit cannot swap more than there is: its most urgent packs first. */
+function withinStock(swaps: readonly PackOutlook[], onHand: CellsOnHand): PackOutlook[] {
+  const left = new Map(onHand);
+  return [...swaps]
+    .sort((a, b) => b.gainMinor - a.gainMinor)
+    .filter(({ pack: { cellTypeId, cells } }) => {
+      const have = left.get(cellTypeId) ?? 0;
+      if (have < cells) return false;
+      left.set(cellTypeId, have - cells);
+      return true;
+    });
 }
 
 export interface SiteOutlooks {
@@ -108,8 +129,8 @@ export interface SiteOutlooks {
 }
 
 /**
- * The sites that may go into a plan, with the work that a visit would do there. Cells go to the
- * packs that lose most by waiting.
+ * The sites that may go into a plan, with the work that a visit would do there, so far as there
+ * are cells for it at all.
  */
 export function dueSites(
   sites: readonly SiteOutlooks[],
@@ -120,7 +141,9 @@ export function dueSites(
   const without = rationCells(wanted.flat(), onHand);
   return sites.flatMap(({ site, outlooks }, i): DueSite[] => {
     if (wanted[i]!.length === 0) return [];
-    const swaps = wanted[i]!.filter((outlook) => !without.has(outlook));
+    const offered = wanted[i]!.filter((outlook) => !without.has(outlook));
+    const possible = new Set(withinStock(offered, onHand));
+    const swaps = offered.filter((outlook) => possible.has(outlook));
     const stays = outlooks.filter((outlook) => !swaps.includes(outlook));
     const reads = swaps.length > 0 ? stays.filter((o) => worthReading(o, context)) : [];
     const due: DueSite = {
@@ -128,7 +151,7 @@ export function dueSites(
       outlooks,
       swaps,
       tasks: [...swaps.map(swapTask), ...reads.map(readTask)],
-      withoutCells: wanted[i]!.filter((outlook) => without.has(outlook)),
+      withoutCells: wanted[i]!.filter((outlook) => !possible.has(outlook)),
       laterTrips: tripsSaved(swaps),
     };
     return [due];

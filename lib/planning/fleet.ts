@@ -49,6 +49,12 @@ export interface ClosedSeason {
   readonly reason: string;
 }
 
+/** A technician could not do the work and named a day from which it can be tried again. */
+export interface ReturnDay {
+  readonly day: IsoDay;
+  readonly reason: "no_access" | "flooded" | "not_found" | "unsafe" | "no_cells" | "other";
+}
+
 export interface PlanningSite extends PointOnEarth {
   readonly siteId: string;
   readonly code: string;
@@ -58,6 +64,8 @@ export interface PlanningSite extends PointOnEarth {
   readonly closures: readonly ClosedSeason[];
   readonly tickets: readonly Ticket[];
   readonly keyCode: string | null;
+  /** Left out or null: nobody said that it cannot be done before some day. */
+  readonly returnOn?: ReturnDay | null;
 }
 
 export interface Absence {

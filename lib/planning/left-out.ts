@@ -4,11 +4,12 @@ import { type LeftOutReasons, whyLeftOut } from "../routing/evaluate";
 import type { Routes } from "../routing/problem";
 import type { RefusalCode } from "../routing/schedule";
 import type { DueSite } from "./due";
+import type { ReturnDay } from "./fleet";
 import { addDays, daysBetween, localDay } from "./local-time";
 import type { PackOutlook } from "./outlook";
 import type { RoundsProblem } from "./problem";
-import { ticketWords } from "./refusal-words";
-import { closureOn } from "./site-days";
+import { foundWords, ticketWords } from "./refusal-words";
+import { closureOn, isClosed } from "./site-days";
 import { greatCircleM } from "./travel";
 import type { Visit } from "./visit";
 
@@ -45,7 +46,7 @@ interface Why {
 function firstOpenDay(visit: Visit, after: IsoDay): IsoDay | null {
   for (let ahead = 1; ahead <= 366; ahead++) {
     const day = addDays(after, ahead);
-    if (!closureOn(visit.site.closures, day)) return day;
+    if (!isClosed(visit.site, day)) return day;
   }
   return null;
 }
@@ -60,7 +61,19 @@ function ofNotice(visit: Visit, today: IsoDay): Why {
   };
 }
 
+/** The day that a technician named, or the first open one after it. */
+function ofReturn(visit: Visit, returnOn: ReturnDay): Why {
+  const earliestDay = firstOpenDay(visit, addDays(returnOn.day, -1));
+  return {
+    reason: "closed",
+    detail: `${foundWords(returnOn)}, not to be tried before`,
+    earliestDay,
+  };
+}
+
 function ofClosure(visit: Visit, rounds: RoundsProblem): Why {
+  const { returnOn } = visit.site;
+  if (returnOn && returnOn.day > rounds.frame.firstDay) return ofReturn(visit, returnOn);
   const season = closureOn(visit.site.closures, rounds.frame.firstDay);
   const because = season?.reason ? `: ${season.reason}` : "";
   return {
@@ -79,8 +92,7 @@ function neighboursOf(visit: Visit, day: IsoDay, others: readonly Visit[]): numb
   ).length;
 }
 
-function ofCost(visit: Visit, outlook: PackOutlook, others: readonly Visit[]): Why {
-  const { day } = outlook.later;
+function ofCost(visit: Visit, day: IsoDay, others: readonly Visit[]): Why {
   const count = neighboursOf(visit, day, others);
   const company =
     count === 0 ? "" : count === 1 ? " with its neighbour" : ` with its ${count} neighbours`;
@@ -98,6 +110,7 @@ function ofRefusals(
   outlook: PackOutlook,
   why: LeftOutReasons,
   others: readonly Visit[],
+  intended: IsoDay | null,
 ): Why {
   const today = localDay(rounds.frame.now, rounds.frame.timeZone);
   const tickets = visit.site.tickets.map(ticketWords).join(" and a ");
@@ -114,18 +127,32 @@ function ofRefusals(
     };
   }
   if (everywhere(why, "notice", "site_closed", "skill_missing")) return ofNoDay(visit, today);
+  if (why.shortTypes.length > 0) return ofStock(rounds, visit, why);
   if (!why.fits) {
     return {
       reason: "no_time",
       detail: "every round that may go there is full",
-      earliestDay: addDays(rounds.frame.lastDay, 1),
+      earliestDay: intended ?? addDays(rounds.frame.lastDay, 1),
     };
   }
-  return ofCost(visit, outlook, others);
+  return ofCost(visit, intended ?? outlook.later.day, others);
+}
+
+function ofStock(rounds: RoundsProblem, { outlooks }: Visit, { shortTypes }: LeftOutReasons): Why {
+  const ids = shortTypes.map((type) => rounds.cellTypeIds[type]);
+  const short = outlooks.map(({ pack }) => pack).filter((pack) => ids.includes(pack.cellTypeId));
+  return noCells(short.map((pack) => pack.designation));
+}
+
+function noCells(designations: readonly string[]): Why {
+  const names = [...new Set(designations)].join(" and ");
+  return { reason: "no_cells", detail: `not enough ${names} on hand`, earliestDay: null };
 }
 
 function ofNoDay(visit: Visit, today: IsoDay): Why {
-  const earliestDay = addDays(today, visit.site.noticeDays);
+  const noticeEnds = addDays(today, visit.site.noticeDays);
+  const returnDay = visit.site.returnOn?.day ?? noticeEnds;
+  const earliestDay = returnDay > noticeEnds ? returnDay : noticeEnds;
   const reason = visit.site.noticeDays > 0 ? "notice" : "closed";
   return {
     reason,
@@ -143,27 +170,34 @@ function row(outlook: PackOutlook, why: Why): LeftOut {
   };
 }
 
-/** Due and near-due packs in no round of the plan, the dearest to wait for first. */
+/**
+ * Due and near-due packs in no round of the plan, the dearest to wait for first.
+ * @param lastDay of the plan's rounds; routes on later days are only an intention
+ */
 export function leftOut(
   rounds: RoundsProblem,
   routes: Routes,
+  lastDay: IsoDay,
   due: readonly DueSite[],
   excludedAssets: ReadonlySet<string>,
 ): LeftOut[] {
-  const visited = new Set(routes.flat());
-  const absent = rounds.visits.filter((_, i) => !visited.has(i));
+  const dayOf = new Map(routes.flatMap((route, r) => route.map((s) => [s, rounds.slots[r]!.day])));
+  const inPlan = (s: number) => (dayOf.get(s) ?? "9999") <= lastDay;
+  const absent = rounds.visits.filter((_, s) => !inPlan(s));
+  const lastIndex = daysBetween(rounds.frame.firstDay, lastDay);
+  const own = { ...rounds, frame: { ...rounds.frame, lastDay } };
   const rows: LeftOut[] = [];
   rounds.visits.forEach((visit, s) => {
-    if (visited.has(s)) return;
-    const why = whyLeftOut(rounds.problem, routes, s);
+    if (inPlan(s)) return;
+    const why = whyLeftOut(rounds.problem, routes, s, lastIndex);
+    const intended = dayOf.get(s) ?? null;
     const swaps = new Set(visit.tasks.flatMap((t) => (t.kind === "swap" ? [t.assetId] : [])));
     for (const outlook of visit.outlooks.filter((o) => swaps.has(o.pack.assetId))) {
-      rows.push(row(outlook, ofRefusals(rounds, visit, outlook, why, absent)));
+      rows.push(row(outlook, ofRefusals(own, visit, outlook, why, absent, intended)));
     }
   });
   for (const outlook of due.flatMap((site) => site.withoutCells)) {
-    const detail = `not enough ${outlook.pack.designation} on hand`;
-    rows.push(row(outlook, { reason: "no_cells", detail, earliestDay: null }));
+    rows.push(row(outlook, noCells([outlook.pack.designation])));
   }
   return rows
     .map((r) =>

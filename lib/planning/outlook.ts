@@ -6,6 +6,7 @@
 import type { EpochDays, IsoDay, Minor } from "@/lib/units";
 import {
   ARRIVAL_S,
+  KEEP_FACTOR,
   LATER_DAYS,
   NEAR_DAYS,
   NEXT_ROUND_H,
@@ -21,7 +22,7 @@ import type {
   PointOnEarth,
 } from "./fleet";
 import { addDays, daysBetween, daysFrom, midday, weekdayOf } from "./local-time";
-import { closureOn } from "./site-days";
+import { isClosed } from "./site-days";
 import { longRunPremium } from "./long-run";
 import { greatCircleM, type RoadAssumption } from "./travel";
 import {
@@ -61,6 +62,8 @@ export interface OutlookContext {
   readonly now: EpochDays;
   readonly days: readonly IsoDay[];
   readonly moments: readonly EpochDays[];
+  /** The last of those days on which the plan makes rounds; it only looks at those after it. */
+  readonly lastMoment: EpochDays;
   /** Days after the plan on which a later visit is looked for, nearest first. */
   readonly laterDays: readonly IsoDay[];
   readonly laterMoments: readonly EpochDays[];
@@ -83,12 +86,16 @@ function laterDaysOf(frame: PlanningFrame): IsoDay[] {
   return days;
 }
 
-/** Prepares what the outlooks of one plan share. */
+/**
+ * Prepares what the outlooks of one plan share.
+ * @param lastDay the last day of rounds, where the frame looks further
+ */
 export function outlookContext(
   frame: PlanningFrame,
   prices: PlanningPrices,
   depots: readonly PointOnEarth[],
   road: RoadAssumption,
+  lastDay = frame.lastDay,
 ): OutlookContext {
   const days = daysFrom(frame.firstDay, frame.lastDay);
   const laterDays = laterDaysOf(frame);
@@ -97,6 +104,7 @@ export function outlookContext(
     now: frame.now.getTime() / 86_400_000,
     days,
     moments: days.map(at),
+    lastMoment: at(lastDay),
     laterDays,
     laterMoments: laterDays.map(at),
     prices,
@@ -150,7 +158,8 @@ export function waitingPack(
     life: pack.life,
     keepMinorPerDay:
       keepCostPerDay(pack.life, pack.installedAt, cycleMinor) *
-      longRunPremium(costOfFailure(silence), cycleMinor),
+      longRunPremium(costOfFailure(silence), cycleMinor) *
+      KEEP_FACTOR,
   };
 }
 
@@ -172,7 +181,7 @@ export function outlookOf(
   context: OutlookContext,
 ): PackOutlook {
   const trip = tripOf(site, context);
-  const open = context.laterDays.flatMap((day, i) => (closureOn(site.closures, day) ? [] : [i]));
+  const open = context.laterDays.flatMap((day, i) => (isClosed(site, day) ? [] : [i]));
   const choices = open.length > 0 ? open : context.laterDays.map((_, i) => i);
   const waiting = waitingPack(pack, trip, context.prices);
   const { index, price } = cheapestVisit(
@@ -190,7 +199,7 @@ export function outlookOf(
     later: { day, price },
     gainMinor,
     standing: standingOf(gainMinor, trip.shareMinor, day, context),
-    waitingMinorPerWeek: waitingCostPerWeek(waiting, context.now, context.moments.at(-1)!),
+    waitingMinorPerWeek: waitingCostPerWeek(waiting, context.now, context.lastMoment),
     sufferedMinor: sufferedSoFar(waiting, context.now),
   };
 }

@@ -3,6 +3,7 @@ import { solve, type OnProgress, type Options, type Stop } from "../routing/solv
 import type { Routes } from "../routing/problem";
 import type { Rng } from "../routing/rng";
 import { dueSites, type CellsOnHand, type DueSite, type SiteOutlooks } from "./due";
+import { effortFor } from "./effort";
 import type {
   KnownVisit,
   PlannedTask,
@@ -13,6 +14,7 @@ import type {
   PlanningTechnician,
   TravelTable,
 } from "./fleet";
+import { addDays } from "./local-time";
 import { leftOut, type LeftOut } from "./left-out";
 import { outlookContext, outlookOf, tripOf, type OutlookContext } from "./outlook";
 import { knownRoutes, roundsProblem, type RoundsProblem } from "./problem";
@@ -22,6 +24,8 @@ import { visitOf, type Visit } from "./visit";
 
 export interface PlanInput {
   readonly frame: PlanningFrame;
+  /** Days after the frame's last on which visits may be set down, to be planned later. */
+  readonly lookAheadDays?: number;
   readonly prices: PlanningPrices;
   readonly road: RoadAssumption;
   readonly technicians: readonly PlanningTechnician[];
@@ -36,10 +40,14 @@ export interface PlanInput {
 
 export interface PreparedPlan {
   readonly input: PlanInput;
+  /** The frame with the days that are only looked at. */
+  readonly horizon: PlanningFrame;
   readonly context: OutlookContext;
   readonly outlooks: readonly SiteOutlooks[];
   readonly due: readonly DueSite[];
   readonly visits: readonly Visit[];
+  /** Cells that the visits share; null: nothing is held against stores. */
+  readonly stock: CellsOnHand | null;
 }
 
 /** Outlooks of every pack, by site. */
@@ -66,8 +74,9 @@ function mergedTasks(known: KnownVisit | undefined, due: DueSite | undefined): P
 /** Prices waiting for every pack and decides which visits the plan may make. */
 export function preparePlan(input: PlanInput): PreparedPlan {
   const { frame, prices, road } = input;
+  const horizon = { ...frame, lastDay: addDays(frame.lastDay, input.lookAheadDays ?? 0) };
   const depots = input.technicians.map((technician) => technician.depot);
-  const context = outlookContext(frame, prices, depots, road);
+  const context = outlookContext(horizon, prices, depots, road, frame.lastDay);
   const outlooks = siteOutlooks(input.sites, input.packs, context);
   const wanted = outlooks.map((site) => ({
     ...site,
@@ -80,7 +89,7 @@ export function preparePlan(input: PlanInput): PreparedPlan {
     const tasks = mergedTasks(knownBySite.get(site.siteId), dueBySite.get(site.siteId));
     return tasks.length > 0 ? [visitOf(site, tasks, all, context)] : [];
   });
-  return { input, context, outlooks, due, visits };
+  return { input, horizon, context, outlooks, due, visits, stock: input.cellsOnHand };
 }
 
 /** The visits that stand already, and `extra` ones, with nothing else: enough to price edits. */
@@ -96,13 +105,15 @@ export function prepareKnown(
     const tasks = tasksOf.get(site.siteId);
     return tasks ? [visitOf(site, tasks, all, context)] : [];
   });
-  return { input, context, outlooks, due: [], visits };
+  const horizon = input.frame;
+  return { input, horizon, context, outlooks, due: [], visits, stock: null };
 }
 
 /** The routing problem of a prepared plan; `travel` covers its technicians' depots and visits. */
 export function problemOf(prepared: PreparedPlan, travel: TravelTable): RoundsProblem {
-  const { frame, prices, technicians, known } = prepared.input;
-  return roundsProblem({ frame, prices, technicians, known, travel, visits: prepared.visits });
+  const { prices, technicians, known } = prepared.input;
+  const { horizon: frame, visits, stock } = prepared;
+  return roundsProblem({ frame, prices, technicians, known, travel, visits, stock });
 }
 
 export interface FinishedPlan {
@@ -118,11 +129,13 @@ export function finishPlan(
   problem: RoundsProblem,
   routes: Routes,
 ): FinishedPlan {
+  const { frame, excludedAssets } = prepared.input;
+  const own = routes.map((route, r) => (problem.slots[r]!.day <= frame.lastDay ? route : []));
   return {
-    rounds: roundsOf(problem, routes),
-    figures: planFigures(problem, routes),
-    leftOut: leftOut(problem, routes, prepared.due, prepared.input.excludedAssets),
-    routes,
+    rounds: roundsOf(problem, own),
+    figures: planFigures(problem, own),
+    leftOut: leftOut(problem, routes, frame.lastDay, prepared.due, excludedAssets),
+    routes: own,
   };
 }
 
@@ -140,8 +153,8 @@ export function makePlan(
   search: Search,
 ): FinishedPlan {
   const problem = problemOf(prepared, travel);
-  const start = knownRoutes(problem, prepared.input.known);
-  const options = { ...search.options, ...(start.some((r) => r.length > 0) && { start }) };
+  const known = knownRoutes(problem, prepared.input.known);
+  const options = { ...effortFor(prepared.visits.length, known).options, ...search.options };
   const { routes } = solve(problem.problem, search.stop, search.rng, options, search.onProgress);
   return finishPlan(prepared, problem, routes);
 }

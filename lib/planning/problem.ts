@@ -7,6 +7,7 @@ import {
   type Site,
   type Slot,
 } from "../routing/problem";
+import type { CellsOnHand } from "./due";
 import { CHANGE_MINOR, COST_UNITS_A_MINOR, LOADING_S, OVERTIME_S } from "./assumptions";
 import {
   TICKETS,
@@ -116,6 +117,23 @@ interface Parts {
   readonly travel: TravelTable;
   /** Visits that people know already; locked ones stay, moving others has a price. */
   readonly known: readonly KnownVisit[];
+  readonly stock: CellsOnHand | null;
+}
+
+/**
+ * Cells on hand by type, the same on every day. What known visits were promised is theirs, even
+ * where stores hold less by now: publishing names the shortage, a plan does not undo the promise.
+ */
+function stockOf({ stock, known, frame }: Parts, cellTypeIds: readonly string[]) {
+  if (!stock) return {};
+  const days = daysFrom(frame.firstDay, frame.lastDay);
+  const tasks = known.flatMap((visit) => visit.tasks);
+  const cells = cellTypeIds.map((id) => {
+    const promised = tasks.filter((task) => task.cellTypeId === id);
+    const sum = promised.reduce((total, task) => total + task.cells, 0);
+    return Math.min(LARGEST_INTEGER, Math.max(0, sum, stock.get(id) ?? 0));
+  });
+  return { stock: cells.map((most) => days.map(() => most)) };
 }
 
 function slotOf(key: SlotKey, parts: Parts, cellTypeIds: readonly string[]): Slot {
@@ -200,6 +218,7 @@ export function roundsProblem(parts: Parts): RoundsProblem {
     cellTypes: cellTypeIds.length,
     sites: visits.map((visit, i) => siteOf(visit, i, parts, slots, cellTypeIds)),
     slots: slots.map((key) => slotOf(key, parts, cellTypeIds)),
+    ...stockOf(parts, cellTypeIds),
     places: technicians.length + visits.length,
     travelS: travel.seconds,
     travelM: travel.metres,

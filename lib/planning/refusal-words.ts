@@ -1,7 +1,7 @@
 /** Why a stop cannot go somewhere, in words a dispatcher can act on. */
 import type { IsoDay, Seconds } from "@/lib/units";
 import type { Refusal } from "../routing/schedule";
-import type { PlanningTechnician, Ticket } from "./fleet";
+import type { PlanningTechnician, ReturnDay, Ticket } from "./fleet";
 import { addDays, localDay } from "./local-time";
 import { whyNotWorking, type RoundsProblem } from "./problem";
 import { closureOn } from "./site-days";
@@ -39,8 +39,26 @@ export function noticeWords(visit: Visit, today: IsoDay, write: WriteDay): strin
   return `needs ${days} notice: not before ${write(addDays(today, noticeDays))}`;
 }
 
-/** "closed that day: nesting birds", or its hours are too short for the work. */
-export function closedWords(visit: Visit, day: IsoDay): string {
+const FOUND_WORDS: Record<ReturnDay["reason"], string> = {
+  no_access: "no way in at the last visit",
+  flooded: "flooded at the last visit",
+  not_found: "not found at the last visit",
+  unsafe: "unsafe at the last visit",
+  no_cells: "no cells at the last visit",
+  other: "could not be done at the last visit",
+};
+
+/** What a technician found who could not do the work. */
+export function foundWords({ reason }: ReturnDay): string {
+  return FOUND_WORDS[reason];
+}
+
+/** "flooded at the last visit: not before Mon 14 Dec", "closed that day: nesting birds", ... */
+export function closedWords(visit: Visit, day: IsoDay, write: WriteDay): string {
+  const { returnOn } = visit.site;
+  if (returnOn && day < returnOn.day) {
+    return `${foundWords(returnOn)}, not before ${write(returnOn.day)}`;
+  }
   const season = closureOn(visit.site.closures, day);
   if (season) return `closed that day${season.reason ? `: ${season.reason}` : ""}`;
   return "its opening hours are too short for the work";
@@ -61,6 +79,13 @@ export function notWorkingWords(technician: PlanningTechnician, day: IsoDay): st
   return `${technician.name} is away${why.reason ? `: ${why.reason}` : ""}`;
 }
 
+/** The cell type that is short, as people call it. */
+function designationOf({ cellTypeIds, visits }: RoundsProblem, { type }: Refusal): string {
+  const packs = visits.flatMap((visit) => visit.outlooks.map((outlook) => outlook.pack));
+  const short = packs.find((pack) => pack.cellTypeId === cellTypeIds[type ?? -1]);
+  return short?.designation || "cells";
+}
+
 /** One refusal of the routing engine in words. */
 export function refusalWords(rounds: RoundsProblem, refusal: Refusal, write: WriteDay): string {
   const { technician, day } = rounds.slots[refusal.slot]!;
@@ -76,13 +101,15 @@ export function refusalWords(rounds: RoundsProblem, refusal: Refusal, write: Wri
     case "skill_missing":
       return visit ? `${name}${missingTicketWords(visit, technician)}` : "needs a ticket";
     case "site_closed":
-      return visit ? `${name}is not open: ${closedWords(visit, day)}` : "closed";
+      return visit ? `${name}is not open: ${closedWords(visit, day, write)}` : "closed";
     case "outside_hours":
       return `${name}would be reached ${minutes(excess)} too late for its hours${
         visit?.site.hours ? ` (closes ${clock(visit.site.hours.closesS)})` : ""
       }`;
     case "outside_shift":
       return `the round would end ${minutes(excess)} beyond ${technician.name}'s shift and the overtime allowed`;
+    case "stock_short":
+      return `stores and vans lack ${excess} ${designationOf(rounds, refusal)} for the rounds up to that day`;
     case "van_full":
       return `the van would need to hold ${excess} more cells than it can`;
   }

@@ -17,6 +17,12 @@ export function closureOn(
   );
 }
 
+/** Whether nobody may go to a site on a day: a closed season, or a technician said not before. */
+export function isClosed(site: PlanningSite, day: IsoDay): boolean {
+  const tooEarly = site.returnOn ? day < site.returnOn.day : false;
+  return tooEarly || closureOn(site.closures, day) !== undefined;
+}
+
 /**
  * When work of `serviceS` may start so that it also ends within the site's hours; null where the
  * site is closed that day or its hours are too short. Seconds that pass from local midnight.
@@ -27,7 +33,7 @@ export function startWindow(
   serviceS: number,
   timeZone: string,
 ): DayWindow | null {
-  if (closureOn(site.closures, day)) return null;
+  if (isClosed(site, day)) return null;
   if (!site.hours) return { openS: 0, closeS: 93_600 };
   const openS = elapsedOfWall(day, site.hours.opensS, timeZone);
   const closeS = elapsedOfWall(day, site.hours.closesS, timeZone) - serviceS;

@@ -5,7 +5,8 @@
 import type { IsoDay } from "@/lib/units";
 import measured from "./policy-record.json";
 
-export type PolicyName = "fixed-interval" | "inspection-threshold" | "run-to-failure" | "wanewright";
+export type PolicyName =
+  "fixed-interval" | "inspection-threshold" | "run-to-failure" | "wanewright";
 
 /** Where the money goes; `wornStock` is charge used up beyond what was put in (may be negative). */
 export type PolicyCause =

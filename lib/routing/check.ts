@@ -16,7 +16,8 @@ export type PlanFaultCode =
   | "site_closed"
   | "outside_hours"
   | "outside_shift"
-  | "van_full";
+  | "van_full"
+  | "stock_short";
 
 export interface PlanFault {
   readonly code: PlanFaultCode;
@@ -133,6 +134,26 @@ function skippedCost(problem: Problem, visited: ReadonlySet<number>): [number, n
   return [cost, missedMust];
 }
 
+/** Days by whose evening more cells of a type are used up than had come in. */
+function stockFaults(problem: Problem, routes: Routes): PlanFault[] {
+  const faults: PlanFault[] = [];
+  problem.stock?.forEach((byDay, type) => {
+    let used = 0;
+    byDay.forEach((most, day) => {
+      let last = -1;
+      problem.slots.forEach((slot, r) => {
+        if (slot.day !== day) return;
+        const frozen = slot.frozen.length;
+        const cells = (routes[r] ?? []).map((site) => problem.sites[site]?.demand[type] ?? 0);
+        used += cells.reduce((sum, count) => sum + count, 0);
+        if (cells.slice(frozen).some((count) => count > 0)) last = r;
+      });
+      if (used > most && last >= 0) faults.push({ code: "stock_short", slot: last });
+    });
+  });
+  return faults;
+}
+
 /** Checks a plan against every rule and prices it. A sound plan has no faults. */
 export function checkPlan(problem: Problem, routes: Routes): PlanCheck {
   const faults: PlanFault[] = [];
@@ -152,6 +173,7 @@ export function checkPlan(problem: Problem, routes: Routes): PlanCheck {
     const known = route.filter((site) => problem.sites[site]);
     if (known.length > 0) cost += walk(problem, r, known, faults);
   });
+  faults.push(...stockFaults(problem, routes));
   const [skipped, missedMust] = skippedCost(problem, visited);
   return { faults, cost: cost + skipped, missedMust };
 }

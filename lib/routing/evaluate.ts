@@ -5,6 +5,7 @@
 import { addCosts, isMust, NO_COST, skipPrice, type CostParts } from "./price";
 import type { Problem, Routes } from "./problem";
 import { scheduleRoute, slotRefusals, type Refusal, type RouteSchedule } from "./schedule";
+import { holdsCells, shortTypes, stockLeft, stockRefusals } from "./stock";
 
 /** `position` counts stops from 0; without it the cheapest place that can be driven is taken. */
 export type Edit =
@@ -123,6 +124,7 @@ export function priceEdit(problem: Problem, routes: Routes, edit: Edit): PricedE
     refusals: [
       ...lockRefusals(problem, routes, next, edit),
       ...refusals.filter((refusal) => isNew(refusal, before)),
+      ...stockRefusals(problem, routes, next),
     ],
   };
 }
@@ -147,22 +149,34 @@ export function missedMust(problem: Problem, routes: Routes): number[] {
 }
 
 export interface LeftOutReasons {
-  /** By slot: what speaks against it whatever its route. */
+  /** By slot asked: what speaks against it whatever its route. */
   readonly fixed: readonly (readonly Refusal[])[];
   /** Some route could take the site: then it costs more than it saves. */
   readonly fits: boolean;
+  /** Cell types of which stores hold too few for the site by the last day. */
+  readonly shortTypes: readonly number[];
 }
 
-/** Why a site is in no route, as seen beside `routes`. Stops looking at the first route that fits. */
-export function whyLeftOut(problem: Problem, routes: Routes, site: number): LeftOutReasons {
-  const fixed = problem.slots.map((_, r) => slotRefusals(problem, site, r));
-  const fits = fixed.some((refusals, r) => {
-    if (refusals.length > 0) return false;
+/**
+ * Why a site is in no route, as seen beside `routes`. Stops looking at the first route that fits.
+ * @param lastDay slots of later days are not asked
+ */
+export function whyLeftOut(
+  problem: Problem,
+  routes: Routes,
+  site: number,
+  lastDay = problem.days,
+): LeftOutReasons {
+  const asked = problem.slots.flatMap(({ day }, r) => (day <= lastDay ? [r] : []));
+  const fixed = asked.map((r) => slotRefusals(problem, site, r));
+  const left = stockLeft(problem, routes);
+  const fits = asked.some((r, i) => {
+    if (fixed[i]!.length > 0 || !holdsCells(problem, left, site, r)) return false;
     const route = routes[r] ?? [];
     const before = scheduleRoute(problem, r, route);
     const position = bestPosition(problem, r, route, site);
     const { refusals: after } = scheduleRoute(problem, r, withStop(route, site, position));
     return !after.some((refusal) => isNew(refusal, [before]));
   });
-  return { fixed, fits };
+  return { fixed, fits, shortTypes: fits ? [] : shortTypes(problem, left, site) };
 }

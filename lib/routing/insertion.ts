@@ -6,7 +6,7 @@
  * The best place of a site in a route stays true until the route changes. It is kept with the
  * route's version; a rejected change brings the old version back, and with it all that is kept.
  */
-import { fitsVan } from "./fit";
+import { fitsStock, fitsVan } from "./fit";
 import { FORBIDDEN, MUST_PENALTY, type Model } from "./model";
 import type { Rng } from "./rng";
 import { FIELDS, LATEST, LEAVE, NODE, PRICE, TAIL, type RouteState } from "./state";
@@ -73,6 +73,14 @@ export class Inserter {
     return this.route >= 0;
   }
 
+  /** Finds the cheapest place in one route, whatever leaving the site out costs. */
+  searchIn(site: number, r: number): boolean {
+    this.best = Infinity;
+    this.route = -1;
+    this.consider(site, r);
+    return this.route >= 0;
+  }
+
   /** Looks at the routes of the nearest sites, and at empty slots. */
   private searchNearby(site: number): void {
     const { model, state, turn } = this;
@@ -94,6 +102,8 @@ export class Inserter {
     const at = site * this.model.slots + r;
     if (this.keptVersion[at] !== this.state.version[r]) this.keep(site, r);
     if (this.keptPrice[at]! >= this.best) return;
+    // Not kept: what stores hold changes with every other route.
+    if (this.model.stocks > 0 && !fitsStock(this.state, site, r)) return;
     if (this.blinks && this.toBlink-- === 0) return this.rearm();
     this.best = this.keptPrice[at]!;
     this.route = r;

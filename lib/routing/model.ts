@@ -53,6 +53,12 @@ export interface Model {
   readonly loads: number;
   readonly demand: Int32Array;
   readonly capacity: Int32Array;
+  /** Types whose stock can bind: the first so many load dimensions. */
+  readonly stocks: number;
+  readonly days: number;
+  readonly dayOf: Int32Array;
+  /** Cells of such a type that may be taken up to a day, by [type * days + day]. */
+  readonly stock: Int32Array;
   /** Nearest sites of each site, nearest first, itself at the head: [site * near + i]. */
   readonly near: number;
   readonly neighbours: Int32Array;
@@ -145,10 +151,14 @@ function windows(problem: Problem) {
 }
 
 function loads(problem: Problem) {
-  const { sites, slots, cellTypes } = problem;
-  const types = Array.from({ length: cellTypes }, (_, type) => type).filter((type) =>
-    slots.some((slot) => slot.capacity[type]! < sites.reduce((sum, x) => sum + x.demand[type]!, 0)),
+  const { sites, slots, days } = problem;
+  const wanted = Array.from({ length: problem.cellTypes }, (_, type) =>
+    sites.reduce((sum, site) => sum + site.demand[type]!, 0),
   );
+  const every = wanted.map((_, type) => type);
+  const short = every.filter((type) => problem.stock?.[type]!.some((most) => most < wanted[type]!));
+  const full = every.filter((type) => slots.some((slot) => slot.capacity[type]! < wanted[type]!));
+  const types = [...short, ...full.filter((type) => !short.includes(type))];
   const all = sites.map((site) => site.demand.reduce((sum, cells) => sum + cells, 0));
   const whole = all.reduce((sum, cells) => sum + cells, 0);
   const total = slots.some((slot) => slot.capacityTotal < whole);
@@ -159,7 +169,9 @@ function loads(problem: Problem) {
   ];
   const demand = Int32Array.from(sites.flatMap((site, s) => row(site.demand, all[s]!)));
   const capacity = Int32Array.from(slots.flatMap((slot) => row(slot.capacity, slot.capacityTotal)));
-  return { loads: width, demand, capacity };
+  const stock = Int32Array.from(short.flatMap((type) => problem.stock![type]!));
+  const dayOf = Int32Array.from(slots, (slot) => slot.day);
+  return { loads: width, demand, capacity, stocks: short.length, days, dayOf, stock };
 }
 
 function slotKey(slot: Slot, column: Int32Array): string {

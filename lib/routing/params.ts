@@ -13,8 +13,10 @@ export interface Params {
   /** Share of turns that empty a whole route, and that open an empty slot. */
   readonly closeShare: number;
   readonly openShare: number;
-  /** Sites left out that each turn tries to bring in. */
+  /** Sites left out that each turn tries to bring in, at least: a mean route's worth if longer. */
   readonly absentTried: number;
+  /** Sites left out that a newly opened slot is offered, at least: four mean routes' worth. */
+  readonly openOffer: number;
   /** How many times its price an absence counts in the start plan: opens routes that single
    * insertions would not pay for. */
   readonly startWorth: number;
@@ -38,6 +40,7 @@ export const DEFAULT_PARAMS: Params = {
   closeShare: 0.02,
   openShare: 0.03,
   absentTried: 12,
+  openOffer: 40,
   startWorth: 4,
   startHeat: 1,
   endHeat: 0.03,

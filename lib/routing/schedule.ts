@@ -15,7 +15,9 @@ export type RefusalCode =
   /** Open that day, but the work would start after its hours. */
   | "outside_hours"
   | "outside_shift"
-  | "van_full";
+  | "van_full"
+  /** Stores and vans together hold too few cells of its type by that day. */
+  | "stock_short";
 
 export interface Refusal {
   readonly code: RefusalCode;
@@ -24,6 +26,8 @@ export interface Refusal {
   readonly site?: number;
   /** By how much: seconds late, or cells too many. */
   readonly excess?: number;
+  /** The cell type that is short. */
+  readonly type?: number;
 }
 
 export interface StopTimes {

@@ -2,6 +2,7 @@
 import { exportRoutes, importRoutes } from "./elite";
 import { fits } from "./fit";
 import { Inserter } from "./insertion";
+import { LastTouch } from "./last-touch";
 import { FORBIDDEN, type Model } from "./model";
 import type { Params } from "./params";
 import type { Routes } from "./problem";
@@ -10,8 +11,6 @@ import type { Rng } from "./rng";
 import { Ruin } from "./ruin";
 import { RouteState } from "./state";
 
-/** Neighbours that a newly opened slot is offered. */
-const OPEN_OFFER = 40;
 /** Long routes need more heat to be reshaped: so far the start temperature grows with length. */
 const LEAST_TENS = 0.7;
 const MOST_TENS = 4;
@@ -21,8 +20,11 @@ export class Search {
   private readonly inserter: Inserter;
   private readonly ruin: Ruin;
   private readonly recreate: Recreate;
+  private readonly lastTouch: LastTouch;
   private typicalLeg = 1;
   private startHeat = 1;
+  private absentTried = 0;
+  private openOffer = 0;
   private bestRoutes: Routes;
   bestTotal: number;
 
@@ -36,46 +38,19 @@ export class Search {
     this.inserter = new Inserter(model, this.state, rng, params.blinkShare, params.nearby);
     this.ruin = new Ruin(model, this.state, rng, params);
     this.recreate = new Recreate(model, this.state, this.inserter, rng);
+    this.lastTouch = new LastTouch(model, this.state, this.inserter, this.recreate);
     if (start) importRoutes(this.state, start);
-    this.construct();
+    this.lastTouch.fill(params.startWorth);
     this.bestRoutes = exportRoutes(this.state);
     this.bestTotal = this.state.total;
-    this.setHeat();
+    this.setScale();
   }
 
-  /** Cheapest insertion of everything that is out. */
-  private construct(worth = this.params.startWorth): void {
-    this.state.mark();
-    this.recreate.clear();
-    for (let i = this.state.absentCount - 1; i >= 0; i--) this.recreate.list(this.state.absent[i]!);
-    this.recreate.run(worth);
-    this.state.mark();
-    this.trim();
-  }
-
-  /** Takes out every stop that costs more than its absence. */
-  private trim(): void {
-    const { state, model } = this;
-    for (let r = 0; r < model.slots; r++) {
-      for (let k = state.length[r]!; k > model.frozen[r]!; k--) {
-        const before = state.total;
-        state.mark();
-        state.remove(r, k, 1);
-        if (state.total >= before) state.rollBack();
-      }
-    }
-    state.mark();
-  }
-
-  /** Last touch: nothing is left in or out of the best plan that would pay to change alone. */
+  /** Leaves no stop in, out or elsewhere that would pay to change alone. */
   finish(): void {
     importRoutes(this.state, this.bestRoutes);
     this.inserter.blinks = false;
-    let before = Infinity;
-    while (this.state.total < before) {
-      before = this.state.total;
-      this.construct(1);
-    }
+    this.lastTouch.run();
     this.inserter.blinks = true;
     this.keepIfBest();
   }
@@ -86,8 +61,8 @@ export class Search {
     this.bestRoutes = exportRoutes(this.state);
   }
 
-  /** Sets the scale of the temperature by the start plan: mean price of a leg, mean length. */
-  private setHeat(): void {
+  /** Sets temperature and reach by the start plan: mean price of a leg, mean length of a route. */
+  private setScale(): void {
     let price = 0;
     let stops = 0;
     let open = 0;
@@ -98,7 +73,10 @@ export class Search {
       open += 1;
     }
     this.typicalLeg = Math.max(1, price / Math.max(1, stops + open));
-    const tens = Math.min(MOST_TENS, Math.max(LEAST_TENS, stops / Math.max(1, open) / 10));
+    const length = stops / Math.max(1, open);
+    this.absentTried = Math.max(this.params.absentTried, Math.round(length));
+    this.openOffer = Math.max(this.params.openOffer, Math.round(4 * length));
+    const tens = Math.min(MOST_TENS, Math.max(LEAST_TENS, length / 10));
     this.startHeat = Math.max(this.params.endHeat, this.params.startHeat * tens);
   }
 
@@ -143,7 +121,7 @@ export class Search {
     else ruin.strings(seed);
     if (draw > 1 - params.openShare) this.openSlot();
     for (let i = 0; i < ruin.removedCount; i++) recreate.list(ruin.removed[i]!);
-    if (state.absentCount > ruin.removedCount) recreate.listAbsent(seed, params.absentTried);
+    if (state.absentCount > ruin.removedCount) recreate.listAbsent(seed, this.absentTried);
     recreate.run();
   }
 
@@ -157,7 +135,7 @@ export class Search {
     state.insert(site, r, 0);
     const row = site * model.near;
     let offered = 0;
-    for (let i = 1; i < model.near && offered < OPEN_OFFER; i++) {
+    for (let i = 1; i < model.near && offered < this.openOffer; i++) {
       const other = model.neighbours[row + i]!;
       if (state.routeOf[other]! >= 0) continue;
       recreate.list(other);
@@ -181,7 +159,7 @@ export class Search {
   /** Takes a better plan over as the current and best one. */
   take(routes: Routes): void {
     importRoutes(this.state, routes);
-    this.construct();
+    this.lastTouch.fill(this.params.startWorth);
     this.keepIfBest();
     if (this.state.total > this.bestTotal) importRoutes(this.state, this.bestRoutes);
   }

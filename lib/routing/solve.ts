@@ -2,11 +2,12 @@
  * The engine: slack-induced ruin and recreate under simulated annealing over technician-days.
  * Pure: time enters through `stop`, chance through `rng`; same seed and iterations, same plan.
  */
+import { assertProblem } from "./assert-problem";
 import { planCost, missedMust } from "./evaluate";
 import { compileModel } from "./model";
 import { DEFAULT_PARAMS, type Params } from "./params";
 import type { CostParts } from "./price";
-import { assertProblem, type Problem, type Routes } from "./problem";
+import type { Problem, Routes } from "./problem";
 import type { Rng } from "./rng";
 import { Search } from "./search";
 

@@ -7,6 +7,7 @@
  * seconds from start of work here to the return if nothing waits. Position 0 is the start depot,
  * `length + 1` the end depot.
  */
+import { Cells } from "./cells";
 import type { Model } from "./model";
 
 export const NODE = 0;
@@ -30,7 +31,7 @@ export class RouteState {
   readonly price: Float64Array;
   /** Working time of the return. */
   readonly end: Int32Array;
-  readonly load: Int32Array;
+  readonly cells: Cells;
   /** A number of its own for each content a route has had; a roll-back brings the old one back. */
   readonly version: Int32Array;
   private versions = 0;
@@ -49,17 +50,16 @@ export class RouteState {
   private readonly oldPrice: Float64Array;
   private readonly oldEnd: Int32Array;
   private readonly oldVersion: Int32Array;
-  private readonly oldLoad: Int32Array;
   private oldTotal = 0;
 
   constructor(readonly model: Model) {
-    const { sites, slots, loads } = model;
+    const { sites, slots } = model;
     this.row = 32 * FIELDS;
     this.data = new Int32Array(2 * slots * this.row);
     this.length = new Int32Array(slots);
     this.price = new Float64Array(slots);
     this.end = new Int32Array(slots);
-    this.load = new Int32Array(slots * loads);
+    this.cells = new Cells(model);
     this.version = new Int32Array(slots);
     this.routeOf = new Int32Array(sites).fill(-1);
     this.positionOf = new Int32Array(sites);
@@ -72,7 +72,6 @@ export class RouteState {
     this.oldPrice = new Float64Array(slots);
     this.oldEnd = new Int32Array(slots);
     this.oldVersion = new Int32Array(slots);
-    this.oldLoad = new Int32Array(slots * loads);
     for (let s = 0; s < sites; s++) this.total += model.skip[s]!;
     for (let r = 0; r < slots; r++) this.begin(r);
     this.mark();
@@ -163,8 +162,7 @@ export class RouteState {
     this.oldPrice[r] = this.price[r]!;
     this.oldEnd[r] = this.end[r]!;
     this.oldVersion[r] = this.version[r]!;
-    const { loads } = this.model;
-    for (let i = r * loads; i < (r + 1) * loads; i++) this.oldLoad[i] = this.load[i]!;
+    this.cells.save(r);
   }
 
   /** Puts a site behind position k of a route. The caller has tested that it fits. */
@@ -187,9 +185,7 @@ export class RouteState {
       this.data[at + FIELDS + PRICE]! -
       oldLeg +
       model.visit[site * model.slots + r]!;
-    for (let i = 0; i < model.loads; i++) {
-      this.load[r * model.loads + i]! += model.demand[site * model.loads + i]!;
-    }
+    this.cells.add(site, r, 1);
     this.routeOf[site] = r;
     this.dropAbsent(site);
     this.forward(r, k + 1);
@@ -210,9 +206,7 @@ export class RouteState {
     for (let i = 0, p = at; i < count; i++, p += FIELDS) {
       const site = data[p + NODE]!;
       gone += data[p + PRICE]! + model.visit[site * model.slots + r]!;
-      for (let j = 0; j < model.loads; j++) {
-        this.load[r * model.loads + j]! -= model.demand[site * model.loads + j]!;
-      }
+      this.cells.add(site, r, -1);
       this.addAbsent(site);
       skipped += model.skip[site]!;
     }
@@ -267,8 +261,7 @@ export class RouteState {
     this.price[r] = this.oldPrice[r]!;
     this.end[r] = this.oldEnd[r]!;
     this.version[r] = this.oldVersion[r]!;
-    const { loads } = this.model;
-    for (let i = r * loads; i < (r + 1) * loads; i++) this.load[i] = this.oldLoad[i]!;
+    this.cells.restore(r);
     for (let k = 1; k <= length; k++) {
       const site = this.siteAt(r, k);
       this.routeOf[site] = r;

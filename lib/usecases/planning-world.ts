@@ -6,6 +6,7 @@ import {
   loadAcceptedCells,
   loadLotsOnHand,
   loadPacksToPlan,
+  loadReturnDays,
   loadSitesToPlan,
   loadTechniciansToPlan,
 } from "@/db/queries/planning-fleet";
@@ -14,9 +15,10 @@ import type {
   PlanningPack,
   PlanningSite,
   PlanningTechnician,
+  ReturnDay,
   Ticket,
 } from "@/lib/planning/fleet";
-import { localDay, secondsOfClock } from "@/lib/planning/local-time";
+import { addDays, localDay, secondsOfClock } from "@/lib/planning/local-time";
 import type { PlanInput } from "@/lib/planning/plan";
 import { toEpochDays } from "@/lib/units";
 
@@ -42,6 +44,8 @@ export interface WorldOptions {
   readonly siteIds: readonly string[] | null;
   readonly known: readonly KnownVisit[];
   readonly excludedAssets: ReadonlySet<string>;
+  /** Days after the covered ones that a new plan looks at; left out: none. */
+  readonly lookAheadDays?: number;
 }
 
 /** Whether a plan may change a round: published and not begun, of a covered technician and day. */
@@ -67,23 +71,29 @@ export async function loadWorld(
 ): Promise<PlanningWorld> {
   const organisation = await getOrganisation(db);
   const today = localDay(now, organisation.timeZone);
-  const [technicians, sites, packs, accepted, lots, booked] = await Promise.all([
+  const [technicians, sites, packs, accepted, lots, booked, returns] = await Promise.all([
     loadTechniciansToPlan(db, cover.crewIds),
     loadSitesToPlan(db, { crewIds: cover.crewIds, siteIds: options.siteIds }),
     loadPacksToPlan(db, options.siteIds),
     loadAcceptedCells(db),
     loadLotsOnHand(db),
     bookedSwaps(db, today),
+    loadReturnDays(db, today),
   ]);
+  const returnOf = new Map(returns.map((row) => [row.siteId, row]));
   const covered = new Set(technicians.map((technician) => technician.id));
   const elsewhere = booked.filter((swap) => !isCovered(swap, cover, covered));
   const onHand = cellsOnHand(lots, elsewhere);
   const bookedAssets = new Set(elsewhere.map((swap) => swap.assetId));
-  const binding = await loadBindingRounds(db, [...covered], cover.firstDay, cover.lastDay);
+  const { lookAheadDays = 0 } = options;
+  const lookedAt = addDays(cover.lastDay, lookAheadDays);
+  const bound = await loadBindingRounds(db, [...covered], cover.firstDay, lookedAt);
+  const binding = bound.filter((round) => round.day <= cover.lastDay);
   const input: PlanInput = {
     ...reckoning(organisation, now, cover),
-    technicians: technicians.map((row) => technicianOf(row, binding)),
-    sites: sites.map(siteOf),
+    lookAheadDays,
+    technicians: technicians.map((row) => technicianOf(row, bound, cover)),
+    sites: sites.map((row) => siteOf(row, returnOf.get(row.id))),
     packs: packs
       .filter((pack) => !bookedAssets.has(pack.assetId))
       .map((pack) => packOf(pack, accepted, onHand)),
@@ -124,7 +134,11 @@ function cellsOnHand(
   return onHand;
 }
 
-function technicianOf(row: TechnicianRow, binding: readonly StoredRound[]): PlanningTechnician {
+function technicianOf(
+  row: TechnicianRow,
+  bound: readonly StoredRound[],
+  { lastDay }: PlanCover,
+): PlanningTechnician {
   return {
     technicianId: row.id,
     name: row.name,
@@ -142,13 +156,17 @@ function technicianOf(row: TechnicianRow, binding: readonly StoredRound[]): Plan
     })),
     absences: row.absences,
     vanCells: row.cellCapacity,
-    takenDays: binding
-      .filter((round) => round.technicianId === row.id && round.state !== "published")
+    takenDays: bound
+      .filter((round) => round.technicianId === row.id)
+      .filter((round) => round.state !== "published" || round.day > lastDay)
       .map((round) => round.day),
   };
 }
 
-function siteOf(row: Awaited<ReturnType<typeof loadSitesToPlan>>[number]): PlanningSite {
+function siteOf(
+  row: Awaited<ReturnType<typeof loadSitesToPlan>>[number],
+  back: Awaited<ReturnType<typeof loadReturnDays>>[number] | undefined,
+): PlanningSite {
   const { id, opens, closes, tickets, ...rest } = row;
   return {
     ...rest,
@@ -156,6 +174,7 @@ function siteOf(row: Awaited<ReturnType<typeof loadSitesToPlan>>[number]): Plann
     tickets: tickets as Ticket[],
     hours:
       opens && closes ? { opensS: secondsOfClock(opens), closesS: secondsOfClock(closes) } : null,
+    returnOn: back ? { day: back.day, reason: back.reason as ReturnDay["reason"] } : null,
   };
 }
 

@@ -3,6 +3,8 @@ import { appendAudit } from "@/db/queries/audit";
 import { loadBindingRounds, loadPlanRounds } from "@/db/queries/plan-rounds";
 import { changePlan, findPlan, lockPlan, noteProgress, type PlanRow } from "@/db/queries/plans";
 import { loadTechniciansToPlan } from "@/db/queries/planning-fleet";
+import { LOOK_AHEAD_DAYS } from "@/lib/planning/assumptions";
+import { effortFor, type Effort } from "@/lib/planning/effort";
 import { habitCost } from "@/lib/planning/habit";
 import {
   finishPlan,
@@ -12,22 +14,19 @@ import {
   type FinishedPlan,
 } from "@/lib/planning/plan";
 import type { KnownVisit } from "@/lib/planning/fleet";
+import { daysBetween } from "@/lib/planning/local-time";
 import { knownRoutes, placesOf } from "@/lib/planning/problem";
 import { toMinor } from "@/lib/planning/rounds";
-import { solve } from "@/lib/routing/solve";
-import { seededRng } from "@/lib/routing/rng";
 import type { Problem, Routes } from "@/lib/routing/problem";
 import { excludedAssets } from "./open-plan";
 import type { StoredPlanCost } from "./plan-cost";
 import type { BuildProgress } from "./plan-progress";
+import { searchWithin } from "./search-within";
 import { storeBuiltPlan } from "./store-built-plan";
 import { isCovered, knownVisits, loadWorld } from "./planning-world";
 import { travelTimes } from "./travel-times";
 import { type Deps, defineUseCase } from "./use-case";
 
-/** Turns of the search in one go, and how often its progress is shown meanwhile. */
-export const PLAN_ITERATIONS = 48_000;
-const CHUNKS = 12;
 const SEED = 20_261_201;
 
 const MODES = ["build", "improve", "repair"] as const;
@@ -79,17 +78,19 @@ async function build(
   const world = await loadWorld(deps.db, deps.now(), plan, {
     siteIds: mode === "repair" ? known.map((visit) => visit.siteId) : null,
     known,
+    lookAheadDays: mode === "repair" ? 0 : LOOK_AHEAD_DAYS,
     excludedAssets: await excludedAssets(deps.db, plan.id),
   });
   const prepared = mode === "repair" ? prepareKnown(world.input, []) : preparePlan(world.input);
   const places = placesOf(world.input.technicians, prepared.visits);
   const travel = await travelTimes(deps, world.organisation, places);
   const problem = problemOf(prepared, travel.table);
-  const routes = await search(deps, plan.id, problem.problem, knownRoutes(problem, known));
+  const effort = effortFor(prepared.visits.length, knownRoutes(problem, known), mode === "improve");
+  const routes = await search(deps, plan.id, problem.problem, effort);
   if (!routes) return null;
   const finished = finishPlan(prepared, problem, routes);
   const habit = habitCost(prepared.outlooks, prepared.context);
-  const minor = habit.minorPerWeek * (prepared.context.days.length / 7);
+  const minor = habit.minorPerWeek * (planDays(plan) / 7);
   const cost: StoredPlanCost = {
     figures: finished.figures,
     // A repair looks at its own visits only; the whole fleet's habit is not theirs.
@@ -99,32 +100,30 @@ async function build(
   return { plan: finished, cost };
 }
 
+function planDays({ firstDay, lastDay }: PlanRow): number {
+  return daysBetween(firstDay, lastDay) + 1;
+}
+
 /**
- * Searches in chunks, noting the falling cost between them, until somebody asks it to stop.
- * Null: the plan was discarded.
+ * Seeks the rounds, noting the falling cost meanwhile, until somebody asks it to stop. Null: the
+ * plan was discarded.
  */
 async function search(
   deps: Deps,
   planId: string,
   problem: Problem,
-  known: Routes,
+  effort: Effort,
 ): Promise<Routes | null> {
-  const rng = seededRng(SEED);
-  const chunk = PLAN_ITERATIONS / CHUNKS;
-  let start = known;
   const costs: number[] = [];
-  for (let k = 0; k < CHUNKS; k++) {
-    const share = (turns: number) => (turns >= chunk ? 1 : (k + turns / chunk) / CHUNKS);
-    const { routes, cost } = solve(problem, share, rng, { start });
-    start = routes;
-    costs.push(Math.round(toMinor(cost.total)));
-    const progress: BuildProgress = { share: (k + 1) / CHUNKS, costs };
+  const seek = deps.searchRounds ?? searchWithin;
+  return seek({ problem, ...effort, seed: SEED }, async ({ share, cost }) => {
+    costs.push(Math.round(toMinor(cost)));
+    const progress: BuildProgress = { share: Math.min(1, share), costs: [...costs] };
     await noteProgress(deps.db, planId, progress);
     const plan = await findPlan(deps.db, planId);
-    if (plan?.state !== "building") return null;
-    if (plan.stopAskedAt) break;
-  }
-  return start;
+    if (plan?.state !== "building") return "drop";
+    return plan.stopAskedAt ? "enough" : "go on";
+  });
 }
 
 async function giveUp(deps: Deps, planId: string): Promise<void> {

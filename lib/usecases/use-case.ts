@@ -3,6 +3,8 @@ import type { Kysely } from "kysely";
 import type { Database } from "@/db/client";
 import { AppError, forbidden, invalid } from "@/lib/errors";
 import type { PointOnEarth, TravelTable } from "@/lib/planning/fleet";
+import type { Problem, Routes } from "@/lib/routing/problem";
+import type { Options } from "@/lib/routing/solve";
 
 export const ROLES = ["administrator", "dispatcher", "supervisor", "technician"] as const;
 export type Role = (typeof ROLES)[number];
@@ -80,6 +82,27 @@ export interface TravelService {
   >;
 }
 
+/**
+ * Seeks rounds beside the process's own work: same problem, turns and seed, same routes.
+ * @param onNews is told how far the search is and its cost; it answers whether to go on, to stop
+ * with the best so far, or to drop it all
+ * @returns null when it was told to drop it
+ */
+export interface RoundsSearch {
+  (
+    asked: {
+      readonly problem: Problem;
+      readonly turns: number;
+      readonly options: Options;
+      readonly seed: number;
+    },
+    onNews: (news: {
+      readonly share: number;
+      readonly cost: number;
+    }) => Promise<"go on" | "enough" | "drop">,
+  ): Promise<Routes | null>;
+}
+
 /** Keeps pictures and documents by key, outside the database. */
 export interface ObjectStorage {
   /** Overwrites. @throws AppError unavailable when it cannot be kept now */
@@ -120,6 +143,8 @@ export interface Deps {
   readonly appUrl: string;
   /** Without it driving times are reckoned by the great circle. */
   readonly travel?: TravelService;
+  /** Without it rounds are sought within the process, which does nothing else meanwhile. */
+  readonly searchRounds?: RoundsSearch;
   /** Photos are taken in and shown by the web process alone; the worker needs neither. */
   readonly storage?: ObjectStorage;
   readonly cleanImage?: ImageCleaner;

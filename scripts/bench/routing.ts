@@ -7,9 +7,10 @@
  * hold a bks.csv (columns set, instance, bks). Every plan is checked and priced by the independent
  * checker. --cpu counts processor time, for a machine that is busy with other work.
  */
+import { assertProblem } from "../../lib/routing/assert-problem";
 import { checkPlan } from "../../lib/routing/check";
-import { bestKnown, listInstances, loadInstance, type Listed } from "./routing/folder";
-import { Race } from "./routing/race";
+import { bestKnown, listInstances, loadInstance, nameInTable, type Listed } from "./routing/folder";
+import { Race, type Limit } from "../../lib/server/search-threads/race";
 
 interface Row {
   readonly set: string;
@@ -63,16 +64,16 @@ async function measure(
   asked: Asked,
   best: number | null,
 ) {
-  const from = performance.now();
-  const { seconds, cpu } = asked;
-  const end = await race.run({ instance: listed, seed, seconds, cpu });
-  const spent = cpu ? seconds : (performance.now() - from) / 1000;
   const { problem, scale } = loadInstance(listed);
+  assertProblem(problem);
+  const { seconds, cpu } = asked;
+  const limit: Limit = { kind: cpu ? "processor" : "seconds", seconds };
+  const end = await race.run({ problem, options: {}, seed, limit });
+  const spent = cpu ? seconds : end.seconds;
   const check = checkPlan(problem, end.routes);
   if (check.faults.length > 0 || check.missedMust > 0) {
     const what = JSON.stringify(check.faults.slice(0, 3));
-    process.stderr.write(`${listed.name}: no sound plan (${check.missedMust} missed, ${what})\n`);
-    process.exitCode = 1;
+    complain(`${listed.name}: no sound plan (${check.missedMust} missed, ${what})`);
   }
   const cost = check.cost / scale;
   const gapPct = best === null ? null : Number((100 * (cost / best - 1)).toFixed(3));
@@ -81,6 +82,24 @@ async function measure(
     seconds: Number(spent.toFixed(2)),
   };
   return { row, iterations: end.iterations, sites: problem.sites.length };
+}
+
+/** A broken instance is named and passed over; the others are still measured. */
+function complain(what: string): void {
+  process.stderr.write(`${what}\n`);
+  process.exitCode = 1;
+}
+
+async function measureAll(race: Race, listed: Listed, asked: Asked, best: number | null) {
+  const measured = [];
+  try {
+    for (let seed = 1; seed <= asked.seeds; seed++) {
+      measured.push(await measure(race, listed, seed, asked, best));
+    }
+  } catch (error) {
+    complain(`${listed.name}: ${error instanceof Error ? error.message : String(error)}`);
+  }
+  return measured;
 }
 
 function sayMeans(gaps: ReadonlyMap<string, readonly number[]>): void {
@@ -97,15 +116,15 @@ async function main(): Promise<void> {
   const rows: Row[] = [];
   const gaps = new Map<string, number[]>();
   for (const listed of listInstances(asked.folder, asked.only)) {
-    for (let seed = 1; seed <= asked.seeds; seed++) {
-      const best = known.get(`${listed.set}/${listed.name}`) ?? null;
-      const { row, iterations, sites } = await measure(race, listed, seed, asked, best);
+    const best = known.get(nameInTable(listed)) ?? null;
+    for (const { row, iterations, sites } of await measureAll(race, listed, asked, best)) {
       rows.push(row);
       const group = `${row.set}-${sites}`;
       if (row.gapPct !== null) gaps.set(group, [...(gaps.get(group) ?? []), row.gapPct]);
       if (asked.json) continue;
       const gap = row.gapPct === null ? "no best known" : `${row.gapPct.toFixed(2)} %`;
-      say(`${row.instance.padEnd(18)} seed ${seed}  ${row.cost}  ${gap}  ${iterations} iterations`);
+      const [name, seed] = [row.instance.padEnd(18), row.seed];
+      say(`${name} seed ${seed}  ${row.cost}  ${gap}  ${iterations} iterations`);
     }
   }
   await race.close();

@@ -164,6 +164,71 @@ it("lays two drafts side by side: figures, and the visit that stands elsewhere",
   for (const planId of [first, second]) await discardPlan(deps, dispatcher, { planId });
 });
 
+/** A done round of last week whose stop at the site could not be done. */
+async function couldNotBeDone(day: string, returnOn: string | null) {
+  const [planId, roundId] = [randomUUID(), randomUUID()];
+  const at = new Date(`${day}T10:00:00Z`);
+  const days = { firstDay: day, lastDay: day };
+  const plan = {
+    id: planId,
+    name: "Before",
+    ...days,
+    state: "published",
+    createdAt: at,
+    publishedAt: at,
+  };
+  await db.insertInto("plan").values(plan).execute();
+  await db
+    .insertInto("round")
+    .values({
+      ...{ id: roundId, planId, technicianId: crew.ada, day, state: "done", icalUid: roundId },
+      ...{ startsAt: at, endsAt: at, driveS: 0, workS: 0, distanceM: 0, overtimeS: 0 },
+    })
+    .execute();
+  await db
+    .insertInto("stop")
+    .values({
+      ...{ id: randomUUID(), roundId, siteId: register.siteId, position: 1, arrivesAt: at },
+      ...{ departsAt: at, state: "cannot_do", cannotReason: "flooded", returnOn },
+    })
+    .execute();
+}
+
+it("does not go before the day a technician named, and says so where that leaves no day", async () => {
+  await couldNotBeDone("2026-11-26", "2026-12-10");
+  const within = await builtPlan();
+  const days = (await board(within)).rounds.map((round) => round.day);
+  expect(days.length).toBeGreaterThan(0);
+  expect(days.every((day) => day >= "2026-12-10")).toBe(true);
+  const early = { kind: "move" as const, siteId: register.siteId, day: "2026-12-08" };
+  const { refusals } = await pricePlanAct(deps, dispatcher, {
+    planId: within,
+    act: { ...early, technicianId: crew.ada },
+  });
+  expect(refusals).toEqual([
+    expect.stringMatching(/flooded at the last visit, not before .*10 Dec/),
+  ]);
+  await discardPlan(deps, dispatcher, { planId: within });
+
+  await couldNotBeDone("2026-11-27", "2026-12-21");
+  const beyond = await builtPlan();
+  const { rounds, leftOut } = await board(beyond);
+  expect(rounds).toEqual([]);
+  expect(leftOut.map(({ tag, why }) => [tag, why])).toEqual(
+    ["QF-0001", "QF-0002", "QF-0003"].map((tag) => [
+      tag,
+      expect.stringMatching(/^flooded at the last visit, .*: earliest .*21 Dec/),
+    ]),
+  );
+  await discardPlan(deps, dispatcher, { planId: beyond });
+
+  // A later "can't do it" without a day: the next plan may go at once.
+  await couldNotBeDone("2026-11-30", null);
+  const again = await builtPlan();
+  expect((await board(again)).rounds).not.toEqual([]);
+  await discardPlan(deps, dispatcher, { planId: again });
+});
+
 it("publishes, then changes, then repairs: one mail to each whose day changed, RFC 5545 rules", async () => {
   const planId = await builtPlan();
   const first = await board(planId);

@@ -16,6 +16,8 @@ export interface DisturbanceRow {
   readonly dropped: number;
   /** Visits of before that are on another day or with somebody else, or gone. */
   readonly movedShare: number;
+  /** Cost of the new plan over that of one sought anew, changes themselves not priced. */
+  readonly overFreePlan: number;
 }
 
 /** New readings have come for a share of the packs: each gets a new date within its life. */
@@ -35,16 +37,24 @@ const placed = (rounds: readonly PlannedRound[]) =>
   );
 
 /** Plans, changes one pack in `1 / share`, plans again from the published rounds. */
-export function disturbanceRow(seed: number, assets: number, share: number): DisturbanceRow {
+export async function disturbanceRow(
+  seed: number,
+  assets: number,
+  share: number,
+): Promise<DisturbanceRow> {
   const input = fleetInput(assets, 2, seededRng(seed));
-  const before = planFleet(input).plan.rounds;
+  const before = (await planFleet(input)).plan.rounds;
   const [news, changedPacks] = withNews(input, share, seededRng(seed + 1000));
-  const after = planFleet({ ...news, known: knownOf(before) }).plan.rounds;
+  const informed = { ...news, known: knownOf(before) };
+  const mended = await planFleet(informed);
+  const free = await planFleet(informed, true);
+  const after = mended.plan.rounds;
   const { moved, added, dropped } = planDifference(placed(before), placed(after));
   const visits = placed(before).length;
   return {
     ...{ seed, changedPacks, visits },
     ...{ moved: moved.length, added: added.length, dropped: dropped.length },
     movedShare: (moved.length + dropped.length) / visits,
+    overFreePlan: mended.bareCost / free.bareCost - 1,
   };
 }

@@ -1,5 +1,6 @@
 /** How the time of a first plan, and of one act on it, grows with the fleet. */
 import { priceAct, slotIndex, visitIndex } from "@/lib/planning/edits";
+import { effortFor } from "@/lib/planning/effort";
 import type { KnownVisit } from "@/lib/planning/fleet";
 import {
   finishPlan,
@@ -11,9 +12,10 @@ import {
 import { knownRoutes, placesOf } from "@/lib/planning/problem";
 import type { PlannedRound } from "@/lib/planning/rounds";
 import { greatCircleTable } from "@/lib/planning/travel";
+import { checkPlan } from "@/lib/routing/check";
+import type { Problem } from "@/lib/routing/problem";
 import { seededRng } from "@/lib/routing/rng";
-import { afterIterations, solve } from "@/lib/routing/solve";
-import { PLAN_ITERATIONS } from "@/lib/usecases/run-plan-job";
+import { searchBeside } from "@/lib/server/search-threads/search-beside";
 import { median } from "../timing";
 import { fleetInput } from "./fleet";
 
@@ -23,6 +25,7 @@ export interface ScaleRow {
   /** Sites of which the plan could choose, and those that it visits. */
   readonly offered: number;
   readonly visited: number;
+  readonly turns: number;
   readonly prepareSeconds: number;
   readonly searchSeconds: number;
   /** From the fleet to finished rounds. */
@@ -42,21 +45,34 @@ export function knownOf(rounds: readonly PlannedRound[]): KnownVisit[] {
   );
 }
 
-/** Plans as the worker does: great circle, the same number of turns, one seed. */
-export function planFleet(input: PlanInput, iterations = PLAN_ITERATIONS) {
+/** The problem without what people know: no change has a price. */
+function unknown(problem: Problem): Problem {
+  return { ...problem, sites: problem.sites.map(({ previous: _, ...site }) => site) };
+}
+
+/**
+ * Plans as the worker does: great circle, the same turns in the same two threads, one seed.
+ * @param free sought anew, as if nobody knew of any round
+ */
+export async function planFleet(input: PlanInput, free = false) {
   const began = performance.now();
   const prepared = preparePlan(input);
   const travel = greatCircleTable(placesOf(input.technicians, prepared.visits), input.road);
   const problem = problemOf(prepared, travel);
   const searched = performance.now();
-  const start = knownRoutes(problem, input.known);
-  const from = start.some((route) => route.length > 0) ? { start } : {};
-  const { routes } = solve(problem.problem, afterIterations(iterations), seededRng(1), from);
+  const bare = unknown(problem.problem);
+  const known = free ? [] : knownRoutes(problem, input.known);
+  const { turns, options } = effortFor(prepared.visits.length, known);
+  const sought = { problem: free ? bare : problem.problem, turns, options, seed: 1 };
+  const routes = (await searchBeside(sought, async () => "go on"))!;
   const finished = performance.now();
   const plan = finishPlan(prepared, problem, routes);
   return {
     plan,
+    /** What the plan costs beside changes, in the engine's units, by the independent checker. */
+    bareCost: checkPlan(bare, routes).cost,
     offered: prepared.visits.length,
+    turns,
     prepareSeconds: (searched - began) / 1000,
     searchSeconds: (finished - searched) / 1000,
     planSeconds: (performance.now() - began) / 1000,
@@ -87,9 +103,9 @@ function actTimes(input: PlanInput, rounds: readonly PlannedRound[], times: numb
 }
 
 /** One size of fleet, planned for so many weeks. */
-export function scaleRow(assets: number, weeks: number): ScaleRow {
+export async function scaleRow(assets: number, weeks: number): Promise<ScaleRow> {
   const input = fleetInput(assets, weeks, seededRng(assets));
-  const { plan, ...times } = planFleet(input);
+  const { plan, bareCost: _, ...times } = await planFleet(input);
   return {
     assets,
     technicians: input.technicians.length,

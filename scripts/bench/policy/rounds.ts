@@ -1,5 +1,5 @@
 /** Packs worth a visit to rounds: the product's own planner and search, for every policy. */
-import { ARRIVAL_S } from "@/lib/planning/assumptions";
+import { ARRIVAL_S, LOOK_AHEAD_DAYS } from "@/lib/planning/assumptions";
 import type { PlannedTask, PlanningPack } from "@/lib/planning/fleet";
 import { dayOfNumber } from "@/lib/planning/local-time";
 import { makePlan, type PlanInput, type PreparedPlan } from "@/lib/planning/plan";
@@ -34,6 +34,7 @@ export function weekInput(
       lastDay: dayOfNumber(monday + 6),
       workingDays: [1, 2, 3, 4, 5],
     },
+    lookAheadDays: LOOK_AHEAD_DAYS,
     prices: PRICES,
     road: ROAD,
     technicians: fleet.technicians,
@@ -87,5 +88,7 @@ export function roundsForWanted(
       cells: new Map(),
     };
   });
-  return roundsFor({ input, context, outlooks: [], due: [], visits }, monday);
+  const horizon = input.frame;
+  const outlook = { outlooks: [], due: [], visits, stock: null };
+  return roundsFor({ input, horizon, context, ...outlook }, monday);
 }

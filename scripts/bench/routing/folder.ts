@@ -34,7 +34,8 @@ function setOf(path: string): string | undefined {
   if (kind === ".json") return text.includes('"technicians"') ? "field" : undefined;
   if (kind === ".vrp") return text.includes("PRIZE_SECTION") ? "pcvrptw" : "vrplib";
   if (!/READY TIME/.test(text)) return undefined;
-  return readSolomon(text).sites.length > 100 ? "homberger" : "solomon";
+  const customers = text.match(/^\s*\d+(\s+-?[\d.]+){6}\s*$/gm)?.length ?? 0;
+  return customers > 101 ? "homberger" : "solomon";
 }
 
 export function listInstances(folder: string, only: RegExp): Listed[] {
@@ -53,7 +54,12 @@ export function loadInstance({ path, set, name }: Listed): Instance {
   return { set, name, problem: readSolomon(text), scale: 10 };
 }
 
-/** Best known costs by "set/instance", from every bks.csv of the folder. */
+/** Tables and file names differ in upper and lower case. */
+export function nameInTable({ set, name }: Pick<Listed, "set" | "name">): string {
+  return `${set}/${name}`.toLowerCase();
+}
+
+/** Best known costs by `nameInTable`, from every bks.csv of the folder. */
 export function bestKnown(folder: string): Map<string, number> {
   const best = new Map([...FIELD_BEST].map(([name, cost]) => [`field/${name}`, cost]));
   for (const path of filesUnder(folder).filter((file) => basename(file) === "bks.csv")) {
@@ -63,7 +69,7 @@ export function bestKnown(folder: string): Map<string, number> {
     for (const line of lines.slice(1)) {
       const cells = line.split(",");
       const value = Number(cells[cost!]);
-      if (value > 0) best.set(`${cells[set!]}/${cells[instance!]}`, value);
+      if (value > 0) best.set(nameInTable({ set: cells[set!]!, name: cells[instance!]! }), value);
     }
   }
   return best;

@@ -124,7 +124,7 @@ export function readVrplib(text: string): Problem {
     openS: 10 * (windows[i]?.[1] ?? 0),
     closeS: 10 * (windows[i]?.[2] ?? 10_000_000),
     serviceS: 10 * (services[i]?.[1] ?? service),
-    ...(prizes[i]?.[1] !== undefined && { prize: 10 * prizes[i][1] }),
+    ...(prizes[i]?.[1] !== undefined && { prize: Math.round(10 * prizes[i][1]) }),
   }));
   return oneDay(rows, single("VEHICLES", rows.length - 1), single("CAPACITY", 100_000_000));
 }

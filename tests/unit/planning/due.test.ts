@@ -23,11 +23,11 @@ function tasksWhenReadingTakes(readS: number, silenceMinorPerHour = 60) {
 describe("voltages taken on the way", () => {
   // Common sense, no source: a reading cannot save more than not knowing costs.
   it("are taken where they may save more than their minutes cost", () => {
-    expect(tasksWhenReadingTakes(120)).toEqual(["swap asset-0", "read asset-1"]);
+    expect(tasksWhenReadingTakes(120, 600)).toEqual(["swap asset-0", "read asset-1"]);
   });
 
   it("are left alone where the minutes cost more", () => {
-    expect(tasksWhenReadingTakes(7200)).toEqual(["swap asset-0"]);
+    expect(tasksWhenReadingTakes(7200, 600)).toEqual(["swap asset-0"]);
   });
 
   it("are left alone where a failure costs nothing", () => {

@@ -102,10 +102,27 @@ function addVan(problem: Problem, r: number, here: readonly number[], out: Lines
   out.rows.push(`${sum(all)} <= ${slot.capacityTotal}`);
 }
 
+/** Cells of each type that all slots up to a day may take. */
+function addStock(problem: Problem, out: Lines): void {
+  problem.stock?.forEach((byDay, type) =>
+    byDay.forEach((most, day) => {
+      const terms = problem.slots.flatMap((slot, r) =>
+        slot.day > day
+          ? []
+          : problem.sites.flatMap((site, i) =>
+              allowed(problem, i, r) ? [`${site.demand[type]} z_${r}_${i}`] : [],
+            ),
+      );
+      if (terms.length > 0) out.rows.push(`${terms.join(" + ")} <= ${most}`);
+    }),
+  );
+}
+
 /** LP text; a missed must or locked site costs `missed` beside its drop cost. */
 export function milpText(problem: Problem, missed: number): string {
   const out: Lines = { cost: [], rows: [], bounds: [], binaries: [] };
   problem.slots.forEach((_, r) => addSlot(problem, r, out));
+  addStock(problem, out);
   problem.sites.forEach((site, i) => {
     const must = site.must || site.lockedTo !== undefined;
     const skip = (must ? missed : site.skipCost) + (site.previous?.dropCost ?? 0);

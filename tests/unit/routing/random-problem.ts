@@ -8,6 +8,8 @@ export interface Shape {
   readonly technicians: number;
   /** Breaks stand on the wall clock; the MILP of the exact tests has none. */
   readonly breaks: boolean;
+  /** Stores hold too little for everybody, and a delivery comes on the last day. */
+  readonly stock?: boolean;
 }
 
 const HOUR = 3600;
@@ -58,6 +60,17 @@ function randomSlot(rng: Rng, day: number, technician: number, breaks: boolean):
   };
 }
 
+function randomStock(seed: number, shape: Shape): number[][] {
+  const rng = seededRng(seed + 7_777);
+  return [0, 1].map(() => {
+    const first = rng.below(Math.max(2, shape.sites));
+    const delivered = rng.below(4);
+    return Array.from({ length: shape.days }, (_, day) =>
+      day < shape.days - 1 ? first : first + delivered,
+    );
+  });
+}
+
 /** Places 0 and 1 are depots; travel is metric but not symmetric. */
 export function randomProblem(seed: number, shape: Shape): Problem {
   const rng = seededRng(seed);
@@ -77,6 +90,7 @@ export function randomProblem(seed: number, shape: Shape): Problem {
     places,
     travelS,
     travelM: travelS.map((seconds) => seconds * 14),
+    ...(shape.stock && { stock: randomStock(seed, shape) }),
     prices: { drivingPerS: 1, dutyPerS: rng.below(2), perM: rng.below(2) },
   };
 }

@@ -1,6 +1,7 @@
 import { describe, expect, it } from "vitest";
 import { latestStartS, wallAtEndS, wallAtStartS, workedS } from "../../../lib/routing/clock";
-import { assertProblem, type Problem, type Site } from "../../../lib/routing/problem";
+import { assertProblem } from "../../../lib/routing/assert-problem";
+import type { Problem, Site } from "../../../lib/routing/problem";
 import { scheduleRoute } from "../../../lib/routing/schedule";
 import { AppError } from "../../../lib/errors";
 

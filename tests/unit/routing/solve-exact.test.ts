@@ -24,10 +24,16 @@ describe("small problems reach the MILP optimum", () => {
     { sites: 6, days: 2, technicians: 2, breaks: false },
     { sites: 7, days: 1, technicians: 2, breaks: false },
   ];
-  const cases = shapes.flatMap((shape) => [1, 2, 3, 4].map((seed) => ({ ...shape, seed })));
+  const scarce = [
+    { sites: 5, days: 2, technicians: 1, breaks: false, stock: true },
+    { sites: 6, days: 2, technicians: 2, breaks: false, stock: true },
+  ];
+  const cases = [...shapes, ...scarce].flatMap((shape) =>
+    [1, 2, 3, 4].map((seed) => ({ stock: false, ...shape, seed })),
+  );
 
   it.each(cases)(
-    "$sites sites, $days days, $technicians technicians, seed $seed",
+    "$sites sites, $days days, $technicians technicians, seed $seed, stock short: $stock",
     (shape) => {
       const problem = randomProblem(shape.seed, shape);
       const exact = highs.solve(milpText(problem, MISSED), { mip_rel_gap: 0, output_flag: false });

@@ -12,6 +12,7 @@ const shape = fc.record({
   days: fc.integer({ min: 1, max: 3 }),
   technicians: fc.integer({ min: 0, max: 3 }),
   breaks: fc.boolean(),
+  stock: fc.boolean(),
 });
 const anyProblem = fc
   .tuple(fc.integer({ min: 1, max: 1_000_000 }), shape)

@@ -10,6 +10,8 @@ import { openBrowser, openPage, productUrl, signIn } from "../support/browser";
 
 const db = connect(process.env.DATABASE_URL ?? "", { max: 2 });
 const PATIENCE_MS = 120_000;
+/** A busy machine redraws late. */
+const PATIENT = { timeout: 20_000 };
 let browser: Browser;
 let watched: Awaited<ReturnType<typeof openPage>>;
 let page: Page;
@@ -84,7 +86,7 @@ describe("the map and the board", () => {
   it("a stop clicked on the map is picked out in the list", async () => {
     await numbered(2).click();
     const second = panel().locator("ol > li").nth(1).getByRole("button").first();
-    await expect.poll(() => second.getAttribute("aria-pressed")).toBe("true");
+    await expect.poll(() => second.getAttribute("aria-pressed"), PATIENT).toBe("true");
     expect(await lit().count()).toBe(1);
     expect(await chosenOnMap()).toBe(`2. ${await second.innerText()}, chosen`);
   });
@@ -93,7 +95,7 @@ describe("the map and the board", () => {
     const first = panel().locator("ol > li").first().getByRole("button").first();
     await first.focus();
     await page.keyboard.press("Enter");
-    await expect.poll(chosenOnMap).toBe(`1. ${await first.innerText()}, chosen`);
+    await expect.poll(chosenOnMap, PATIENT).toBe(`1. ${await first.innerText()}, chosen`);
     expect(await lit().count()).toBe(1);
   });
 
@@ -101,7 +103,7 @@ describe("the map and the board", () => {
     await numbered(2).focus();
     await page.keyboard.press("Enter");
     const second = panel().locator("ol > li").nth(1).getByRole("button").first();
-    await expect.poll(() => second.getAttribute("aria-pressed")).toBe("true");
+    await expect.poll(() => second.getAttribute("aria-pressed"), PATIENT).toBe("true");
     const focused = await page.evaluate(() => document.activeElement?.getAttribute("title"));
     expect(focused).toBe(`2. ${await second.innerText()}, chosen`);
   });
@@ -114,7 +116,7 @@ describe("the map and the board", () => {
       .first();
     const [site] = ((await other.getAttribute("title")) ?? "").split(", ");
     await other.dispatchEvent("click");
-    await expect.poll(() => chosen.getAttribute("aria-label")).not.toBe(before);
+    await expect.poll(() => chosen.getAttribute("aria-label"), PATIENT).not.toBe(before);
     expect(await lit().innerText()).toBe(site);
   });
 });
@@ -137,7 +139,7 @@ describe("improving", () => {
     expect((await visits()).length).toBeGreaterThan(0);
     const kept = await visits();
     await page.getByTitle("Undo the improvement").click();
-    await expect.poll(visits).toEqual(before);
+    await expect.poll(visits, PATIENT).toEqual(before);
     expect(kept.length).toBeGreaterThan(0);
     expect(watched.errors).toEqual([]);
   }, 240_000);

@@ -4,22 +4,13 @@ import "leaflet/dist/leaflet.css";
 import L from "leaflet";
 import Supercluster from "supercluster";
 import { useEffect, useRef } from "react";
-import {
-  clusterMarker,
-  discMarker,
-  districtLayer,
-  type MapDisc,
-  type MapRound,
-  roundLayer,
-} from "./map-layers";
+import { clusterMarker, discMarker, districtLayer, type MapDisc } from "./map-layers";
+import { type RoundMarks, useRounds } from "./use-rounds";
 
-export interface LeafletMapProps {
+export interface LeafletMapProps extends RoundMarks {
   /** What the map shows, for those who cannot see it; a list with the same stands beside it. */
   label: string;
   discs: readonly MapDisc[];
-  rounds: readonly MapRound[];
-  /** The round drawn with its numbers. */
-  chosenRound?: string | null;
   chosenDisc?: string | null;
   tileUrl?: string | null;
   onSelect?: (id: string) => void;
@@ -52,15 +43,14 @@ export function LeafletMap(props: LeafletMapProps) {
   useEffect(() => {
     const on = map.current;
     if (!on) return;
-    const layers = rounds.map((r) => roundLayer(r, r.id === chosenRound, onSelect).addTo(on));
     const shown = rounds.find((round) => round.id === chosenRound);
     const points = shown ? [shown.depot, ...shown.stops] : discs;
     if (points.length > 0) {
       const bounds = L.latLngBounds(points.map((p) => [p.latitude, p.longitude]));
       on.fitBounds(bounds, { padding: [24, 24], maxZoom: 14, animate: false });
     }
-    return () => layers.forEach((layer) => void layer.remove());
-  }, [rounds, chosenRound, discs, onSelect]);
+  }, [rounds, chosenRound, discs]);
+  useRounds(map, props);
 
   useEffect(() => {
     const on = map.current;

@@ -1,6 +1,6 @@
 import L from "leaflet";
 import type { WaneDiscModel } from "@/lib/present/wane-disc";
-import { clusterMarkup, depotMarkup, discMarkup, stopMarkup } from "./disc-icon";
+import { clusterMarkup, depotMarkup, discMarkup, dotMarkup, stopMarkup } from "./disc-icon";
 
 export interface MapPoint {
   readonly latitude: number;
@@ -77,11 +77,11 @@ export function clusterMarker(at: MapPoint, count: number, onOpen: () => void): 
   return marker.on("click", onOpen);
 }
 
-/** A round: its line from depot to depot, its depot and its numbered stops. */
-export function roundLayer(
+/** A round's line from depot to depot, and its depot. */
+export function roundLine(
   round: MapRound,
-  numbered: boolean,
-  onSelect: (id: string) => void,
+  chosen: boolean,
+  onRound: (roundId: string) => void,
 ): L.LayerGroup {
   const path = [round.depot, ...round.stops, round.depot].map((p): L.LatLngTuple => [
     p.latitude,
@@ -89,26 +89,52 @@ export function roundLayer(
   ]);
   const line = L.polyline(path, {
     color: token("dusk"),
-    weight: numbered ? 2.5 : 1.5,
-    opacity: numbered ? 1 : 0.55,
+    weight: chosen ? 2.5 : 1.5,
+    opacity: chosen ? 1 : 0.55,
   });
-  line.on("click", () => onSelect(round.id));
+  line.on("click", () => onRound(round.id));
   const depot = L.marker([round.depot.latitude, round.depot.longitude], {
     icon: icon(depotMarkup, 16),
     title: "Depot",
     alt: "Depot",
     keyboard: false,
   });
-  const stops = numbered
-    ? round.stops.map((stop, i) =>
-        L.marker([stop.latitude, stop.longitude], {
-          icon: icon(stopMarkup(i + 1), 22),
-          title: `${i + 1}. ${stop.label}`,
-          alt: `${i + 1}. ${stop.label}`,
-          keyboard: false,
-          zIndexOffset: 500,
-        }).on("click", () => onSelect(stop.id)),
-      )
-    : [];
-  return L.layerGroup([line, depot, ...stops]);
+  return L.layerGroup([line, depot]);
+}
+
+export interface StopMark {
+  readonly id: string;
+  readonly marker: L.Marker;
+  /** Makes it stand out, or no longer; the focus stays where it is. */
+  readonly light: (chosen: boolean) => void;
+}
+
+/** A round's stops: numbered and reached by the keyboard where it is the chosen one, else dots. */
+export function stopMarks(
+  round: MapRound,
+  numbered: boolean,
+  onStop: (stopId: string, roundId: string) => void,
+): StopMark[] {
+  return round.stops.map((stop, i) => {
+    const name = numbered ? `${i + 1}. ${stop.label}` : `${stop.label}, ${round.label}`;
+    const look = (chosen: boolean) =>
+      numbered ? icon(stopMarkup(i + 1, chosen), chosen ? 30 : 22) : icon(dotMarkup, 12);
+    const marker = L.marker([stop.latitude, stop.longitude], {
+      icon: look(false),
+      title: name,
+      keyboard: numbered,
+    });
+    const choose = () => onStop(stop.id, round.id);
+    marker.on("click", choose);
+    // Leaflet lets a marker have the focus, but Enter clicks none
+    marker.on("keypress", ({ originalEvent }: L.LeafletKeyboardEvent) => {
+      if (originalEvent.key === "Enter") choose();
+    });
+    const light = (chosen: boolean) => {
+      const stands = numbered && chosen;
+      marker.setIcon(look(stands)).setZIndexOffset(stands ? 800 : numbered ? 500 : 200);
+      marker.getElement()?.setAttribute("title", stands ? `${name}, chosen` : name);
+    };
+    return { id: stop.id, marker, light };
+  });
 }

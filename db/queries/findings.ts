@@ -10,6 +10,8 @@ export interface FoundFinding {
   readonly since: string | null;
   readonly factor: number;
   readonly chance: number;
+  /** Draw shifts: how well the factor is known, one standard deviation as a share. */
+  readonly relativeSd: number | null;
   readonly packsBehind: number;
 }
 
@@ -26,14 +28,14 @@ export async function replaceFindings(
   at: Date,
 ): Promise<void> {
   for (const finding of found) {
-    const { factor, chance, packsBehind, since } = finding;
+    const { factor, chance, packsBehind, since, relativeSd } = finding;
     const again = sql<boolean>`excluded.since > finding.since + ${ANOTHER_SHIFT_DAYS}::int`;
     await trx
       .insertInto("finding")
       .values({ ...finding, foundAt: at, seenAt: at })
       .onConflict((conflict) =>
         conflict.column(finding.kind === "bad-lot" ? "lotId" : "deviceModelId").doUpdateSet({
-          ...{ factor, chance, packsBehind, since, seenAt: at },
+          ...{ factor, chance, packsBehind, since, relativeSd, seenAt: at },
           foundAt: sql<Date>`case when ${again} then excluded.found_at else finding.found_at end`,
           dismissedAt: sql<Date | null>`case when ${again} then null else finding.dismissed_at end`,
           dismissedBy: sql<
@@ -171,6 +173,18 @@ export async function badLotIds(db: Kysely<Database>): Promise<ReadonlySet<strin
   return new Set(rows.flatMap((row) => row.lotId ?? []));
 }
 
+/** Packs in service in devices of a model. */
+export async function packsOfModel(db: Kysely<Database>, deviceModelId: string): Promise<string[]> {
+  const rows = await db
+    .selectFrom("pack")
+    .innerJoin("asset", "asset.id", "pack.assetId")
+    .select("pack.id")
+    .where("asset.deviceModelId", "=", deviceModelId)
+    .where("pack.removedAt", "is", null)
+    .execute();
+  return rows.map((row) => row.id);
+}
+
 /** A finding to be dismissed, locked; null when it is gone. */
 export async function lockFinding(trx: Transaction<Database>, id: string) {
   const row = await trx
@@ -181,6 +195,7 @@ export async function lockFinding(trx: Transaction<Database>, id: string) {
       "finding.id",
       "finding.kind",
       "finding.dismissedAt",
+      "finding.deviceModelId",
       "lot.code as lotCode",
       "deviceModel.name as modelName",
     ])

@@ -4,7 +4,7 @@ import type { Database } from "../client";
 
 /** What every forecast of a run shares: few rows, read once. */
 export async function loadForecastCatalogue(db: Kysely<Database>) {
-  const [cellTypes, points, models, states, climates, depots] = await Promise.all([
+  const [cellTypes, points, models, states, climates, depots, shifts] = await Promise.all([
     db.selectFrom("cellType").selectAll().execute(),
     db.selectFrom("capacityPoint").selectAll().execute(),
     db
@@ -14,10 +14,28 @@ export async function loadForecastCatalogue(db: Kysely<Database>) {
     db.selectFrom("dutyState").selectAll().orderBy("deviceModelId").orderBy("position").execute(),
     db.selectFrom("climate").select(["id", "monthlyMeanDc"]).execute(),
     db.selectFrom("depot").select(["latitude", "longitude"]).execute(),
+    loadDrawShifts(db),
   ]);
-  return { cellTypes, points, models, states, climates, depots };
+  return { cellTypes, points, models, states, climates, depots, shifts };
 }
 export type ForecastCatalogueRows = Awaited<ReturnType<typeof loadForecastCatalogue>>;
+
+export interface DrawShiftRow {
+  readonly deviceModelId: string;
+  /** The day from which the model draws otherwise. */
+  readonly since: string;
+  readonly factor: number;
+  readonly relativeSd: number;
+  readonly foundAt: Date;
+}
+
+/** Shifts of models' draws that were found and not dismissed. */
+async function loadDrawShifts(db: Kysely<Database>): Promise<DrawShiftRow[]> {
+  const result = await sql<DrawShiftRow>`
+    select device_model_id, since, factor, relative_sd, found_at from finding
+    where kind = 'draw-shift' and dismissed_at is null and relative_sd is not null`.execute(db);
+  return result.rows;
+}
 
 const BEARS_ON_LIFE = [
   "pack.id as packId",
@@ -35,6 +53,7 @@ const BEARS_ON_LIFE = [
   "site.latitude",
   "site.longitude",
   "measured.averageUa as measuredAverageUa",
+  "measured.at as measuredAt",
 ] as const;
 
 /**

@@ -1,25 +1,26 @@
-import { type Kysely, sql, type SqlBool } from "kysely";
-import type { Insertable } from "kysely";
+import { type Insertable, type Kysely, sql } from "kysely";
 import type { Database } from "../client";
 
 export type OutcomeRow = Insertable<Database["forecastOutcome"]>;
 
 /** Packs that came out and have no outcome kept, or no promised life beside it, oldest first. */
-export async function unjudgedPackIds(db: Kysely<Database>, limit: number): Promise<string[]> {
-  const rows = await db
+export async function unjudgedPacks(
+  db: Kysely<Database>,
+  limit: number,
+): Promise<{ readonly id: string; readonly kept: boolean }[]> {
+  return db
     .selectFrom("pack")
     .leftJoin("forecastOutcome", "forecastOutcome.packId", "pack.id")
-    .select("pack.id")
+    .select(["pack.id", sql<boolean>`forecast_outcome.pack_id is not null`.as("kept")])
     .where("pack.removedAt", "is not", null)
     .where("forecastOutcome.promisedDays", "is", null)
     .orderBy("pack.removedAt")
     .orderBy("pack.id")
     .limit(limit)
     .execute();
-  return rows.map((row) => row.id);
 }
 
-/** Keeps outcomes; one that is kept already stays as it is but for the promised life. */
+/** Keeps outcomes; one that is kept already stays as it is. */
 export async function insertOutcomes(
   db: Kysely<Database>,
   rows: readonly OutcomeRow[],
@@ -28,47 +29,66 @@ export async function insertOutcomes(
   await db
     .insertInto("forecastOutcome")
     .values([...rows])
-    .onConflict((conflict) =>
-      conflict.column("packId").doUpdateSet((eb) => ({
-        promisedDays: eb.ref("excluded.promisedDays"),
-      })),
-    )
+    .onConflict((conflict) => conflict.column("packId").doNothing())
     .execute();
+}
+
+export interface PackPromise {
+  readonly packId: string;
+  /** Median life by the data sheet alone, days. */
+  readonly promisedDays: number;
+}
+
+/** Puts beside kept outcomes what the data sheets had promised. */
+export async function keepPromises(
+  db: Kysely<Database>,
+  promises: readonly PackPromise[],
+): Promise<void> {
+  const ids = promises.map(({ packId }) => packId);
+  const days = promises.map(({ promisedDays }) => promisedDays);
+  await sql`
+    update forecast_outcome o set promised_days = p.days
+    from unnest(${ids}::uuid[], ${days}::real[]) as p(id, days)
+    where o.pack_id = p.id`.execute(db);
 }
 
 /** How much there is to learn of each chemistry: changes when a pack comes out. */
 export async function finishedByChemistry(db: Kysely<Database>) {
   return db
-    .selectFrom("forecastOutcome as outcome")
-    .innerJoin("pack", "pack.id", "outcome.packId")
+    .selectFrom("pack")
     .innerJoin("cellType", "cellType.id", "pack.cellTypeId")
-    .select([
-      "cellType.chemistry",
-      sql<string>`count(*) || ' ' || max(outcome.recorded_at)`.as("version"),
-    ])
+    .select(["cellType.chemistry", sql<string>`count(*) || ' ' || max(removed_at)`.as("version")])
+    .where("pack.removedAt", "is not", null)
     .groupBy("cellType.chemistry")
     .execute();
 }
 
-/** The latest finished packs on cells of a chemistry, at most so many of a device model. */
+/**
+ * The latest packs on cells of a chemistry that came out before a moment (any, where null), at
+ * most so many of a device model.
+ */
 export async function listFinishedPacks(
   db: Kysely<Database>,
   chemistry: string,
   ofEachModel: number,
+  before: Date | null,
 ) {
   return db
     .with("latest", (eb) =>
       eb
-        .selectFrom("forecastOutcome as outcome")
-        .innerJoin("pack", "pack.id", "outcome.packId")
+        .selectFrom("pack")
         .innerJoin("asset", "asset.id", "pack.assetId")
         .innerJoin("cellType", "cellType.id", "pack.cellTypeId")
-        .select(["pack.id as packId", "pack.lotId", "outcome.censored", "outcome.endedAt"])
-        .select(
+        .select(["pack.id as packId", "pack.lotId"])
+        .select([
+          sql<boolean>`stopped_at is null`.as("censored"),
+          sql<Date>`coalesce(stopped_at, removed_at)`.as("endedAt"),
           sql<number>`row_number() over (partition by asset.device_model_id
-            order by outcome.ended_at desc, pack.id)`.as("place"),
-        )
-        .where("cellType.chemistry", "=", chemistry),
+            order by coalesce(stopped_at, removed_at) desc, pack.id)`.as("place"),
+        ])
+        .where("cellType.chemistry", "=", chemistry)
+        .where("pack.removedAt", "is not", null)
+        .$if(before !== null, (q) => q.where("pack.removedAt", "<", before)),
     )
     .selectFrom("latest")
     .select(["packId", "lotId", "censored", "endedAt"])
@@ -76,59 +96,21 @@ export async function listFinishedPacks(
     .execute();
 }
 
-export interface OutcomeFilter {
-  /** Removals since then. */
-  readonly since: Date;
-  readonly chemistry: string | null;
-  readonly deviceModelId: string | null;
-  readonly crewId: string | null;
-}
-
-const JUDGED = [
-  "outcome.packId",
-  "asset.tag",
-  "asset.name as assetName",
-  "deviceModel.name as modelName",
-  "crew.name as crewName",
-  "cellType.designation",
-  "cellType.chemistry",
-  "pack.installedAt",
-  "pack.removedAt",
-  "pack.stoppedAt",
-  "pack.reasonOut",
-  "outcome.forecastAt",
-  "outcome.endedAt",
-  "outcome.p05",
-  "outcome.p20",
-  "outcome.p50",
-  "outcome.p80",
-  "outcome.p95",
-  "outcome.shareLeftPermille",
-  "outcome.chanceStoppedPermille",
-  "outcome.censored",
-  "outcome.inHindsight",
-] as const;
-
-/** Removals with the forecast that stood at the visit before, newest first. */
-export async function listOutcomes(db: Kysely<Database>, filter: OutcomeFilter) {
-  return db
+/** Mean share of charge that packs had left, by forecast, when they came out alive; null: none. */
+export async function meanShareLeft(
+  db: Kysely<Database>,
+  since: Date,
+  crewId: string | null,
+): Promise<number | null> {
+  const row = await db
     .selectFrom("forecastOutcome as outcome")
     .innerJoin("pack", "pack.id", "outcome.packId")
     .innerJoin("asset", "asset.id", "pack.assetId")
-    .innerJoin("deviceModel", "deviceModel.id", "asset.deviceModelId")
     .innerJoin("site", "site.id", "asset.siteId")
-    .leftJoin("crew", "crew.id", "site.crewId")
-    .innerJoin("cellType", "cellType.id", "pack.cellTypeId")
-    .select(JUDGED)
-    .where(sql<SqlBool>`pack.removed_at >= ${filter.since}`)
-    .$if(filter.chemistry !== null, (q) =>
-      q.where("cellType.chemistry", "=", filter.chemistry ?? ""),
-    )
-    .$if(filter.deviceModelId !== null, (q) =>
-      q.where("asset.deviceModelId", "=", filter.deviceModelId ?? ""),
-    )
-    .$if(filter.crewId !== null, (q) => q.where("site.crewId", "=", filter.crewId ?? ""))
-    .orderBy("pack.removedAt", "desc")
-    .execute();
+    .select(sql<number | null>`(avg(share_left_permille) / 1000)::float8`.as("share"))
+    .where("outcome.censored", "=", true)
+    .where("pack.removedAt", ">=", since)
+    .$if(crewId !== null, (q) => q.where("site.crewId", "=", crewId ?? ""))
+    .executeTakeFirstOrThrow();
+  return row.share;
 }
-export type OutcomeLine = Awaited<ReturnType<typeof listOutcomes>>[number];

@@ -14,6 +14,8 @@ export interface PlanRow {
   readonly cost: unknown;
   readonly progress: unknown;
   readonly problem: string | null;
+  /** When somebody asked the search under way to stop and keep the best. */
+  readonly stopAskedAt: Date | null;
   readonly createdBy: string | null;
   readonly createdAt: Date;
   readonly publishedAt: Date | null;
@@ -30,6 +32,7 @@ const COLUMNS = [
   "cost",
   "progress",
   "problem",
+  "stopAskedAt",
   "createdBy",
   "createdAt",
   "publishedAt",
@@ -91,6 +94,7 @@ export interface PlanChange {
   readonly cost?: unknown;
   readonly progress?: unknown;
   readonly problem?: string | null;
+  readonly stopAskedAt?: Date | null;
   readonly publishedAt?: Date;
   readonly publishedBy?: string | null;
   readonly crewIds?: readonly string[];

@@ -214,6 +214,10 @@ export interface Finding {
    * Packs whose evidence it rests on.
    */
   packsBehind: number;
+  /**
+   * Draw shifts: one standard deviation of the factor, as a share; null: from before it was kept.
+   */
+  relativeSd: number | null;
   seenAt: Timestamp;
   since: string | null;
 }
@@ -238,10 +242,24 @@ export interface Forecast {
   weights: Generated<Json>;
 }
 
+export interface ForecastClaim {
+  cdfDays: number[];
+  /**
+   * When it was worked out; long after made_at: from imported history.
+   */
+  keptAt: Timestamp;
+  /**
+   * Start of the quarter in the organisation's time zone.
+   */
+  madeAt: Timestamp;
+  packId: string;
+  quarter: string;
+}
+
 export interface ForecastOutcome {
   censored: boolean;
   /**
-   * Chance, by that forecast, of stopping by ended_at: uniform from 0 to 1000 over many packs if the forecasts are sound, censored ones counted as such.
+   * Chance, by that forecast, of stopping by ended_at. Not uniform over removals even where forecasts are sound: whether a pack is among them depends on how it ended.
    */
   chanceStoppedPermille: Generated<number>;
   endedAt: Timestamp;
@@ -424,6 +442,10 @@ export interface Plan {
   publishedAt: Timestamp | null;
   publishedBy: string | null;
   state: Generated<string>;
+  /**
+   * Somebody asked the search under way to stop and keep the best so far; null: nobody did.
+   */
+  stopAskedAt: Timestamp | null;
   /**
    * Counts edits; an edit names the version it saw, so two dispatchers cannot overwrite each other.
    */
@@ -680,6 +702,7 @@ export interface DB {
   fieldMatter: FieldMatter;
   finding: Finding;
   forecast: Forecast;
+  forecastClaim: ForecastClaim;
   forecastOutcome: ForecastOutcome;
   importRun: ImportRun;
   lot: Lot;

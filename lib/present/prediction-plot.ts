@@ -2,12 +2,12 @@ import { scaleLog } from "d3-scale";
 import { formatPercent } from "./format-share";
 import { formatNumber, NBSP } from "./locale";
 
-/** One pack at the visit before it came out: days left as said and as found. */
+/** One pack from the day a forecast of it was put on record: days left as said and as found. */
 export interface Prediction {
   readonly key: string;
   readonly saidDays: number;
   readonly foundDays: number;
-  /** False: it came out alive, so it would have lasted longer than found. */
+  /** False: it runs or came out alive, so it would have lasted longer than found. */
   readonly stopped: boolean;
 }
 

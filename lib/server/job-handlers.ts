@@ -6,17 +6,19 @@ import { refreshForecasts } from "@/lib/usecases/refresh-forecasts";
 import { runImportApply, runImportCheck } from "@/lib/usecases/run-import";
 import { sendDigests } from "@/lib/usecases/send-digests";
 import type { Actor, Deps, JobName } from "@/lib/usecases/use-case";
+import { env } from "./deps";
+import { renewForecasts } from "./threads/renew-forecasts";
 
 const system: Actor = { kind: "system" };
 
 /** What the worker does for each queue. Every handler may run twice for one job. */
 export const HANDLERS: Record<JobName, (deps: Deps, data: never) => Promise<unknown>> = {
   forecast: (deps, data) => refreshForecasts(deps, system, data),
-  // Judging comes first: packs that came out teach the forecasts of those still in.
+  // Renewing comes last: packs that came out and shifts that were found bear on forecasts.
   "forecast-all": async (deps) => ({
     ...(await judgeHistory(deps, system, {})),
-    ...(await refreshForecasts(deps, system, { packIds: null })),
     ...(await lookForFindings(deps, system, {})),
+    ...(await renewForecasts(deps, env().DATABASE_URL)),
   }),
   plan: (deps, data) => runPlanJob(deps, system, data),
   mail: (deps, data) => deliverMail(deps, system, data),

@@ -1,8 +1,9 @@
 import { z } from "zod";
 import { appendAudit } from "@/db/queries/audit";
-import { lockFinding, setDismissal } from "@/db/queries/findings";
+import { lockFinding, packsOfModel, setDismissal } from "@/db/queries/findings";
 import { forbidden, notFound } from "@/lib/errors";
 import { textEntry } from "./form-entries";
+import { touchForecasts } from "./touch-forecasts";
 import { type Actor, type Deps, defineUseCase, personIdOf } from "./use-case";
 
 interface Settled {
@@ -42,6 +43,10 @@ async function settle(
     if (!finding) throw notFound("The finding");
     const about = finding.lotCode ?? finding.modelName ?? "";
     await setDismissal(trx, id, because === null ? null : { at, by, because });
+    if (finding.deviceModelId) {
+      // a shift of the draw bears on forecasts while it is open
+      await touchForecasts(trx, deps, await packsOfModel(trx, finding.deviceModelId));
+    }
     await appendAudit(trx, {
       ...{ at, personId: by, act: because === null ? "reopen-finding" : "dismiss-finding" },
       ...{ subjectKind: "finding", subjectId: id },

@@ -8,9 +8,20 @@ import {
   type ReadingToForecast,
 } from "@/db/queries/forecast-inputs";
 import { finishedByChemistry, listFinishedPacks } from "@/db/queries/outcomes";
-import { type FinishedHistory, type FleetLesson, type FleetPrior, learnFleet } from "@/lib/battery";
+import {
+  type Chemistry,
+  type FinishedHistory,
+  type FleetLesson,
+  type FleetPrior,
+  learnFleet,
+} from "@/lib/battery";
 import { toEpochDays } from "@/lib/units";
-import { type ForecastCatalogue, forecastInputOf, groupBy } from "./forecast-input";
+import {
+  type ForecastCatalogue,
+  forecastInputOf,
+  groupBy,
+  withoutFindings,
+} from "./forecast-input";
 
 interface Member {
   readonly assetId: string;
@@ -36,6 +47,9 @@ interface Learned {
 /** What was learned from each database, by chemistry, until another pack comes out. */
 const LEARNED = new WeakMap<Kysely<Database>, Map<string, Learned>>();
 
+/** What is known beforehand of a pack, given what happened to its device; null: nothing. */
+export type PriorOf = (pack: Forecastable, events: readonly DeviceEventRow[]) => FleetPrior | null;
+
 /** Packs alike: the same device model on the same cells in the same climate. */
 function cohortOf(member: Member): string {
   return `${member.deviceModelId} ${member.cellTypeId} ${member.climateId ?? ""}`;
@@ -49,24 +63,48 @@ export async function fleetPriors(
   db: Kysely<Database>,
   catalogue: ForecastCatalogue,
   packs: readonly Forecastable[],
-): Promise<(pack: Forecastable, events: readonly DeviceEventRow[]) => FleetPrior | null> {
-  const chemistryOf = (pack: Member) => catalogue.cells.get(pack.cellTypeId)?.chemistry;
-  const wanted = new Set(packs.map(chemistryOf));
+): Promise<PriorOf> {
+  const wanted = new Set(packs.map((pack) => chemistryOf(catalogue, pack)));
   const known = LEARNED.get(db) ?? new Map<string, Learned>();
   LEARNED.set(db, known);
   for (const { chemistry, version } of await finishedByChemistry(db)) {
     const stands = known.get(chemistry)?.version === version;
     if (stands || ![...wanted].some((one) => one === chemistry)) continue;
-    const lesson = learnFleet(await loadHistories(db, catalogue, chemistry));
+    const lesson = learnFleet(await loadHistories(db, catalogue, chemistry, null));
     known.set(chemistry, { version, lesson });
   }
+  return priorFrom(catalogue, (chemistry) => known.get(chemistry)?.lesson);
+}
+
+/** What the packs that had come out by then taught: nothing that came out later is in it. */
+export async function fleetPriorsBefore(
+  db: Kysely<Database>,
+  catalogue: ForecastCatalogue,
+  before: Date,
+): Promise<PriorOf> {
+  const lessons = new Map<string, FleetLesson>();
+  for (const { chemistry } of await finishedByChemistry(db)) {
+    const histories = await loadHistories(db, catalogue, chemistry, before);
+    lessons.set(chemistry, learnFleet(histories));
+  }
+  return priorFrom(catalogue, (chemistry) => lessons.get(chemistry));
+}
+
+function priorFrom(
+  catalogue: ForecastCatalogue,
+  lessonOf: (chemistry: Chemistry) => FleetLesson | undefined,
+): PriorOf {
   return (pack, events) => {
-    const chemistry = chemistryOf(pack);
+    const chemistry = chemistryOf(catalogue, pack);
     if (!chemistry) return null;
     const changedAt = changedBefore(pack, events);
     const member = { deviceKey: pack.assetId, cohort: cohortOf(pack), chemistry, changedAt };
-    return known.get(chemistry)?.lesson.priorFor(member) ?? null;
+    return lessonOf(chemistry)?.priorFor(member) ?? null;
   };
+}
+
+function chemistryOf(catalogue: ForecastCatalogue, pack: Member): Chemistry | undefined {
+  return catalogue.cells.get(pack.cellTypeId)?.chemistry;
 }
 
 /** The last change of the device before this pack went in; later ones are the filter's to hear. */
@@ -82,8 +120,9 @@ async function loadHistories(
   db: Kysely<Database>,
   catalogue: ForecastCatalogue,
   chemistry: string,
+  before: Date | null,
 ): Promise<FinishedHistory[]> {
-  const finished = await listFinishedPacks(db, chemistry, OF_EACH_MODEL);
+  const finished = await listFinishedPacks(db, chemistry, OF_EACH_MODEL, before);
   const histories: FinishedHistory[] = [];
   for (let from = 0; from < finished.length; from += BATCH) {
     const page = finished.slice(from, from + BATCH);
@@ -106,7 +145,8 @@ function historyOf(
 ): FinishedHistory {
   // lives are told beside the duty cycle: a current measured since says nothing of them
   const unmeasured = { ...row, measuredAverageUa: null, lastHeardAt: null };
-  const input = forecastInputOf(catalogue, unmeasured, readings, [], null, endedAt);
+  const sheets = withoutFindings(catalogue);
+  const input = forecastInputOf(sheets, unmeasured, readings, [], null, endedAt);
   return {
     packKey: row.packId,
     deviceKey: row.assetId,

@@ -1,5 +1,6 @@
 import type {
   DeviceEventRow,
+  DrawShiftRow,
   ForecastCatalogueRows,
   PackToForecast,
   ReadingToForecast,
@@ -14,6 +15,7 @@ import type {
   PackEvent,
   PackReading,
 } from "@/lib/battery/pack";
+import { withDrawShift } from "@/lib/battery";
 import { toEpochDays } from "@/lib/units";
 
 /** Where a site has no climate: a temperate lowland year (assumption, shown in Settings). */
@@ -38,6 +40,8 @@ export interface ForecastCatalogue {
   /** Price of one cell, minor units. */
   readonly cellPrices: ReadonlyMap<string, number>;
   readonly depots: readonly { latitude: number; longitude: number }[];
+  /** Found shifts of the draw, by device model. */
+  readonly drawShifts: ReadonlyMap<string, DrawShiftRow>;
 }
 
 export function arrangeCatalogue(rows: ForecastCatalogueRows): ForecastCatalogue {
@@ -51,7 +55,13 @@ export function arrangeCatalogue(rows: ForecastCatalogueRows): ForecastCatalogue
     climates: new Map(rows.climates.map((row) => [row.id, row.monthlyMeanDc])),
     cellPrices: new Map(rows.cellTypes.map((row) => [row.id, row.unitCostMinor])),
     depots: rows.depots,
+    drawShifts: new Map(rows.shifts.map((shift) => [shift.deviceModelId, shift])),
   };
+}
+
+/** The catalogue without what readings of the fleet showed: the sheets' word alone. */
+export function withoutFindings(catalogue: ForecastCatalogue): ForecastCatalogue {
+  return { ...catalogue, drawShifts: new Map() };
 }
 
 function cellSpecOf(
@@ -74,7 +84,10 @@ function cellSpecOf(
   };
 }
 
-/** One pack's rows as the battery core wants them. */
+/**
+ * One pack's rows as the battery core wants them. A shift of its model's draw counts where it had
+ * been found by `now`.
+ */
 export function forecastInputOf(
   catalogue: ForecastCatalogue,
   pack: PackToForecast,
@@ -86,7 +99,7 @@ export function forecastInputOf(
   const cell = catalogue.cells.get(pack.cellTypeId);
   const model = catalogue.models.get(pack.deviceModelId);
   if (!cell || !model) throw new Error(`pack ${pack.packId} names an unknown cell type or model`);
-  return {
+  const input: ForecastInput = {
     pack: {
       cell,
       series: pack.series,
@@ -107,6 +120,17 @@ export function forecastInputOf(
     prior,
     now: toEpochDays(now),
   };
+  const shift = catalogue.drawShifts.get(pack.deviceModelId);
+  return shift && shift.foundAt <= now ? shifted(input, shift, pack.measuredAt) : input;
+}
+
+function shifted(
+  input: ForecastInput,
+  { since, factor, relativeSd }: DrawShiftRow,
+  measuredAt: Date | null,
+): ForecastInput {
+  const at = toEpochDays(new Date(since));
+  return withDrawShift(input, { at, factor, relativeSd }, measuredAt && toEpochDays(measuredAt));
 }
 
 /** Mean temperature of each month where this climate holds, January first, in tenths of a degree. */

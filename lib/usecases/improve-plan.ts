@@ -15,7 +15,11 @@ export const improvePlan = defineUseCase({
       const plan = await lockPlan(trx, planId);
       if (!plan) throw notFound("This plan");
       assertDraft(plan, version);
-      await changePlan(trx, planId, { state: "building", progress: { share: 0, costs: [] } });
+      await changePlan(trx, planId, {
+        state: "building",
+        progress: { share: 0, costs: [] },
+        stopAskedAt: null,
+      });
       await deps.jobs.enqueue(trx, "plan", { planId, mode: "improve" });
       await appendAudit(trx, {
         at: deps.now(),

@@ -17,6 +17,7 @@ import {
   type ForecastCatalogue,
   forecastInputOf,
   groupBy,
+  withoutFindings,
 } from "./forecast-input";
 import { type Deps, defineUseCase } from "./use-case";
 
@@ -36,7 +37,9 @@ export const lookForFindings = defineUseCase({
     if (!organisation) return { findings: 0 };
     const now = deps.now();
     const since = new Date(now.getTime() - LOOKED_BACK_DAYS * MS_PER_DAY);
-    const catalogue = arrangeCatalogue(await loadForecastCatalogue(deps.db));
+    const stored = await loadForecastCatalogue(deps.db);
+    // what was found before must not speak for itself
+    const catalogue = withoutFindings(arrangeCatalogue(stored));
     const rows = await listWatchedPacks(deps.db, since, now);
     const observations = await observe(deps, catalogue, rows);
     const found = watchFleet(await watched(deps, catalogue, rows), observations);
@@ -51,13 +54,13 @@ function rowsOf(found: FleetFindings, newId: () => string, timeZone: string): Fo
   return [
     ...found.lots.map((lot): FoundFinding => ({
       ...{ id: newId(), kind: "bad-lot", lotId: lot.lot, deviceModelId: null, since: null },
-      ...{ factor: lot.lifeFactor, chance: chanceOf(lot.chance) },
+      ...{ factor: lot.lifeFactor, chance: chanceOf(lot.chance), relativeSd: null },
       packsBehind: lot.packKeys.length,
     })),
     ...found.shifts.map((shift): FoundFinding => ({
       ...{ id: newId(), kind: "draw-shift", lotId: null, deviceModelId: shift.model },
       since: dayOfInstant(fromEpochDays(shift.at), timeZone),
-      ...{ factor: shift.factor, chance: chanceOf(shift.chance) },
+      ...{ factor: shift.factor, chance: chanceOf(shift.chance), relativeSd: shift.relativeSd },
       packsBehind: shift.packKeys.length,
     })),
   ];

@@ -93,6 +93,7 @@ async function planShown(deps: Deps, plan: PlanRow, shown: readonly { planId: st
   return {
     ...{ id, name, state, version, firstDay, lastDay, problem },
     progress: state === "building" ? storedProgress(plan.progress) : null,
+    stopping: plan.stopAskedAt !== null,
     undo: step?.words ?? null,
     roundCount: shown.filter((round) => round.planId === id).length,
     travelTrouble: storedCost(plan.cost)?.travel.trouble ?? null,

@@ -1,12 +1,16 @@
 import { z } from "zod";
 import { listCrewNames } from "@/db/queries/crew-names";
-import { listOutcomes, type OutcomeLine } from "@/db/queries/outcomes";
+import { listClaims } from "@/db/queries/forecast-claims";
+import { meanShareLeft } from "@/db/queries/outcomes";
 import { getOrganisation } from "@/db/queries/organisation";
 import { surpriseFacts } from "@/db/queries/surprise-facts";
 import { dayOfInstant } from "@/lib/present/calendar-days";
-import { expectedEnds, reliabilityCurve, type StatedEnd } from "@/lib/stats/reliability";
+import { expectedEnds, reliabilityCurve } from "@/lib/stats/reliability";
+import { survivalQuantile, survivalSteps } from "@/lib/stats/survival";
 import { MS_PER_DAY } from "@/lib/units";
 import { groupBy } from "./forecast-input";
+import { type HeldClaim, holdClaims } from "./held-claims";
+import { quarterAround } from "./quarters";
 import { type Deps, defineUseCase } from "./use-case";
 
 export const TRUST_GROUPS = ["chemistry", "model", "crew", "quarter"] as const;
@@ -15,107 +19,129 @@ export type TrustGroup = (typeof TRUST_GROUPS)[number];
 /** An end surprises outside the middle nine tenths of what had been said. */
 const SURPRISE = 0.05;
 const SURPRISES_SHOWN = 20;
+/** Worked out so long after its quarter began, a claim was never shown to anybody. */
+const HINDSIGHT_MS = 3 * MS_PER_DAY;
 
 export const trustInput = z.object({
-  days: z.coerce.number().int().min(30).max(3650).catch(365),
+  days: z.coerce.number().int().min(30).max(1100).catch(365),
   group: z.enum(TRUST_GROUPS).catch("chemistry"),
   crew: z.uuid().nullable().catch(null),
 });
 
-/** Stated chances against what was found at each removal, whole and by group. */
+/**
+ * What was said at the start of each quarter against what came, whole and by group. Every pack
+ * in service counts, not only those that came out: a pack that stops always comes out, so that
+ * removals alone show more stops than were to be expected.
+ */
 export const readTrust = defineUseCase({
   name: "read-trust",
   allow: { roles: ["administrator", "dispatcher", "supervisor"] },
   input: trustInput,
   async run(deps, _actor, input) {
-    const organisation = await getOrganisation(deps.db);
-    const since = new Date(deps.now().getTime() - input.days * MS_PER_DAY);
-    const [lines, crews] = await Promise.all([
-      listOutcomes(deps.db, { since, chemistry: null, deviceModelId: null, crewId: input.crew }),
-      listCrewNames(deps.db),
-    ]);
-    const named = (line: OutcomeLine) => groupName(line, input.group, organisation.timeZone);
+    const { organisation, since, held } = await heldSince(deps, input);
+    const crews = await listCrewNames(deps.db);
+    const firsts = held.filter((claim) => claim.first);
+    const surprising = firsts.filter(isSurprise).sort(latestFirst);
+    const shareLeft = await meanShareLeft(deps.db, since.at, input.crew);
     return {
       organisation,
       input,
       crews,
+      since: since.day,
       today: dayOfInstant(deps.now(), organisation.timeZone),
-      whole: tally(lines),
-      curve: reliabilityCurve(lines.map(statedOf)),
-      groups: [...groupBy(lines, named)]
-        .map(([name, members]) => ({ name, ...tally(members) }))
-        .sort((a, b) => (input.group === "quarter" ? 0 : b.removals - a.removals)),
-      predictions: lines.map(predictionOf),
-      surprises: await explained(deps, lines.filter(isSurprise).slice(0, SURPRISES_SHOWN)),
-      surprising: lines.filter(isSurprise).length,
+      whole: { ...tally(held, firsts), shareLeft },
+      inHindsight: held.filter(isHindsight).length / Math.max(1, held.length),
+      curve: reliabilityCurve(firsts.map((claim) => claim.life)),
+      groups: groupsOf(held, input.group),
+      predictions: firsts.map(predictionOf),
+      surprises: await explained(deps, surprising.slice(0, SURPRISES_SHOWN)),
+      surprising: surprising.length,
     };
   },
 });
-
-/** Each with what may explain it. */
-async function explained(deps: Deps, lines: readonly OutcomeLine[]) {
-  const facts = await surpriseFacts(
-    deps.db,
-    lines.map((line) => line.packId),
-  );
-  return lines.map((line) => ({ ...line, facts: facts.get(line.packId) ?? null }));
-}
-
-/** Days left at the visit before, as said and as found. */
-function predictionOf(line: OutcomeLine) {
-  const from = line.forecastAt.getTime();
-  return {
-    key: line.packId,
-    saidDays: (line.p50.getTime() - from) / MS_PER_DAY,
-    foundDays: (line.endedAt.getTime() - from) / MS_PER_DAY,
-    stopped: !line.censored,
-  };
-}
-
 export type TrustView = Awaited<ReturnType<typeof readTrust>>;
 
-function statedOf(line: OutcomeLine): StatedEnd {
-  return { chance: line.chanceStoppedPermille / 1000, ended: !line.censored };
+/** Claims of the quarters since the one in which the span of days begins, held against what came. */
+export async function heldSince(
+  deps: Deps,
+  { days, crew }: { readonly days: number; readonly crew: string | null },
+) {
+  const organisation = await getOrganisation(deps.db);
+  const from = new Date(deps.now().getTime() - days * MS_PER_DAY);
+  const since = quarterAround(from, organisation.timeZone);
+  const lines = await listClaims(deps.db, since.day, crew);
+  return { organisation, since, held: holdClaims(lines, deps.now()) };
+}
+
+function isHindsight(claim: HeldClaim): boolean {
+  return claim.keptAt.getTime() - claim.madeAt.getTime() > HINDSIGHT_MS;
+}
+
+function latestFirst(a: HeldClaim, b: HeldClaim): number {
+  const moment = (claim: HeldClaim) => claim.endedAt?.getTime() ?? Infinity;
+  return moment(a) === moment(b) ? b.life.chance - a.life.chance : moment(b) - moment(a);
+}
+
+/** Each with what may explain it. */
+async function explained(deps: Deps, claims: readonly HeldClaim[]) {
+  const facts = await surpriseFacts(
+    deps.db,
+    claims.map((claim) => claim.packId),
+  );
+  return claims.map((claim) => ({ ...claim, facts: facts.get(claim.packId) ?? null }));
+}
+
+function predictionOf({ packId, saidDays, foundDays, life }: HeldClaim) {
+  return { key: packId, saidDays, foundDays, stopped: life.ended };
 }
 
 /** Alive beyond the window surprises too; alive within it says nothing yet. */
-function isSurprise(line: OutcomeLine): boolean {
-  const { chance, ended } = statedOf(line);
-  return chance > 1 - SURPRISE || (ended && chance < SURPRISE);
+function isSurprise({ life }: HeldClaim): boolean {
+  return life.chance > 1 - SURPRISE || (life.ended && life.chance < SURPRISE);
 }
 
-/** Removals, how many had stopped, how many should have by what was said, and surprises. */
-function tally(lines: readonly OutcomeLine[]) {
-  const stated = lines.map(statedOf);
-  const expected = expectedEnds(stated);
-  const left = lines.filter((line) => line.censored);
+/** A pack has one claim in a quarter; in other groups its first is the one to judge whole lives by. */
+function groupsOf(held: readonly HeldClaim[], group: TrustGroup) {
+  const groups = [...groupBy(held, (claim) => groupName(claim, group))].map(([name, members]) => ({
+    name,
+    ...tally(
+      members,
+      members.filter((claim) => group === "quarter" || claim.first),
+    ),
+  }));
+  return group === "quarter" ? groups.reverse() : groups.sort((a, b) => b.packs - a.packs);
+}
+
+/** Stops against those expected while the claims stood, and lives against the days said. */
+function tally(held: readonly HeldClaim[], lives: readonly HeldClaim[]) {
+  const stood = held.map((claim) => claim.stretch);
+  const expected = expectedEnds(stood);
   return {
-    removals: lines.length,
-    stopped: stated.filter((s) => s.ended).length,
+    packs: lives.length,
+    stopped: stood.filter((stretch) => stretch.ended).length,
     expected: expected.mean,
     spread: expected.spread,
-    surprises: lines.filter(isSurprise).length,
-    daysOff: medianDaysOff(lines),
-    shareLeft:
-      left.length > 0
-        ? left.reduce((sum, line) => sum + line.shareLeftPermille, 0) / (1000 * left.length)
-        : null,
+    surprises: lives.filter(isSurprise).length,
+    lasted: medianLasted(lives),
   };
 }
 
-/** Of those that stopped: likely date less true date, in days; late is positive. */
-function medianDaysOff(lines: readonly OutcomeLine[]): number | null {
-  const off = lines
-    .flatMap((line) => (line.stoppedAt ? [line.p50.getTime() - line.stoppedAt.getTime()] : []))
-    .sort((a, b) => a - b);
-  const middle = off[Math.floor(off.length / 2)];
-  return middle === undefined ? null : middle / MS_PER_DAY;
+/**
+ * Median of days found over days said, packs that run or came out alive counted as far as they
+ * got (Kaplan-Meier); null while fewer than half have ended.
+ */
+function medianLasted(lives: readonly HeldClaim[]): number | null {
+  const ratios = lives.map(({ saidDays, foundDays, life }) => ({
+    time: foundDays / Math.max(1, saidDays),
+    ended: life.ended,
+  }));
+  return survivalQuantile(survivalSteps(ratios));
 }
 
-function groupName(line: OutcomeLine, group: TrustGroup, timeZone: string): string {
-  if (group === "chemistry") return line.chemistry;
-  if (group === "model") return line.modelName;
-  if (group === "crew") return line.crewName ?? "no crew";
-  const [year, month] = dayOfInstant(line.removedAt ?? line.p50, timeZone).split("-");
+function groupName(claim: HeldClaim, group: TrustGroup): string {
+  if (group === "chemistry") return claim.chemistry;
+  if (group === "model") return claim.modelName;
+  if (group === "crew") return claim.crewName ?? "no crew";
+  const [year, month] = claim.quarter.split("-");
   return `${year} Q${Math.ceil(Number(month) / 3)}`;
 }

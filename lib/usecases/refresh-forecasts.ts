@@ -44,7 +44,7 @@ function* pagesOf(packIds: readonly string[]): Generator<readonly string[]> {
 }
 
 /** Every pack in service, page by page. */
-async function* installedPages({ db }: Deps): AsyncGenerator<readonly string[]> {
+export async function* installedPages({ db }: Pick<Deps, "db">): AsyncGenerator<readonly string[]> {
   let page = await installedPackPage(db, null, BATCH);
   while (page.length > 0) {
     yield page;

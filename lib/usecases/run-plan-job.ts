@@ -50,7 +50,7 @@ export const runPlanJob = defineUseCase({
       const known = await knownFor(deps, plan, mode);
       const built = await build(deps, plan, known, mode);
       if (!built) return { built: false };
-      return { built: await storeBuiltPlan(deps, planId, built.plan, built.cost) };
+      return { built: await storeBuiltPlan(deps, planId, built, mode === "improve") };
     } catch (error) {
       await giveUp(deps, planId);
       throw error;
@@ -112,7 +112,10 @@ function planDays({ firstDay, lastDay }: PlanRow): number {
   return daysBetween(firstDay, lastDay) + 1;
 }
 
-/** Seeks the rounds, noting the falling cost meanwhile. Null: the plan was discarded. */
+/**
+ * Seeks the rounds, noting the falling cost meanwhile, until somebody asks it to stop. Null: the
+ * plan was discarded.
+ */
 async function search(
   deps: Deps,
   planId: string,
@@ -125,7 +128,9 @@ async function search(
     costs.push(Math.round(toMinor(cost)));
     const progress: BuildProgress = { share: Math.min(1, share), costs: [...costs] };
     await noteProgress(deps.db, planId, progress);
-    return (await findPlan(deps.db, planId))?.state === "building";
+    const plan = await findPlan(deps.db, planId);
+    if (plan?.state !== "building") return "drop";
+    return plan.stopAskedAt ? "enough" : "go on";
   });
 }
 

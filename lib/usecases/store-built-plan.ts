@@ -1,24 +1,37 @@
+import type { Transaction } from "kysely";
+import type { Database } from "@/db/client";
 import { appendAudit } from "@/db/queries/audit";
-import { replaceLeftOut } from "@/db/queries/plan-left-out";
-import { loadPlanRounds, replaceRounds } from "@/db/queries/plan-rounds";
-import { deletePlanSteps } from "@/db/queries/plan-steps";
-import { changePlan, lockPlan } from "@/db/queries/plans";
+import { loadLeftOut, replaceLeftOut } from "@/db/queries/plan-left-out";
+import { loadPlanRounds, replaceRounds, type StoredRound } from "@/db/queries/plan-rounds";
+import { deletePlanSteps, insertPlanStep } from "@/db/queries/plan-steps";
+import { changePlan, lockPlan, type PlanRow } from "@/db/queries/plans";
 import type { FinishedPlan } from "@/lib/planning/plan";
 import type { StoredPlanCost } from "./plan-cost";
 import { toStored } from "./stored-rounds";
 import type { Deps } from "./use-case";
 
-/** Writes a finished build as a draft. @returns false when the plan no longer waits for it */
+export interface BuiltPlan {
+  readonly plan: FinishedPlan;
+  readonly cost: StoredPlanCost;
+}
+
+/**
+ * Writes a finished build as a draft.
+ * @param improved the draft as it was is kept, so that the improvement can be undone
+ * @returns false when the plan no longer waits for it
+ */
 export async function storeBuiltPlan(
   deps: Deps,
   planId: string,
-  built: FinishedPlan,
-  cost: StoredPlanCost,
+  { plan: built, cost }: BuiltPlan,
+  improved: boolean,
 ): Promise<boolean> {
   return deps.db.transaction().execute(async (trx) => {
     const plan = await lockPlan(trx, planId);
     if (plan?.state !== "building") return false;
     const before = await loadPlanRounds(trx, planId);
+    if (improved) await keepBefore(trx, plan, before, deps.now());
+    else await deletePlanSteps(trx, planId);
     await replaceRounds(trx, planId, toStored(planId, built.rounds, before, deps.newId));
     await replaceLeftOut(
       trx,
@@ -28,8 +41,7 @@ export async function storeBuiltPlan(
         waitingCostMinorPerWeek: waitingMinorPerWeek,
       })),
     );
-    await deletePlanSteps(trx, planId);
-    await changePlan(trx, planId, { state: "draft", cost });
+    await changePlan(trx, planId, { state: "draft", cost, stopAskedAt: null });
     await appendAudit(trx, {
       at: deps.now(),
       personId: null,
@@ -40,4 +52,16 @@ export async function storeBuiltPlan(
     });
     return true;
   });
+}
+
+async function keepBefore(
+  trx: Transaction<Database>,
+  plan: PlanRow,
+  rounds: readonly StoredRound[],
+  takenAt: Date,
+): Promise<void> {
+  const content = { rounds, leftOut: await loadLeftOut(trx, plan.id), cost: plan.cost };
+  const { id: planId, version } = plan;
+  const step = { planId, version, act: "improve", words: "the improvement", content };
+  await insertPlanStep(trx, { ...step, takenAt, takenBy: null });
 }

@@ -84,8 +84,9 @@ export interface TravelService {
 
 /**
  * Seeks rounds beside the process's own work: same problem, turns and seed, same routes.
- * @param onNews is told how far the search is and its cost; it answers whether to go on
- * @returns null when it was told not to go on
+ * @param onNews is told how far the search is and its cost; it answers whether to go on, to stop
+ * with the best so far, or to drop it all
+ * @returns null when it was told to drop it
  */
 export interface RoundsSearch {
   (
@@ -95,7 +96,10 @@ export interface RoundsSearch {
       readonly options: Options;
       readonly seed: number;
     },
-    onNews: (news: { readonly share: number; readonly cost: number }) => Promise<boolean>,
+    onNews: (news: {
+      readonly share: number;
+      readonly cost: number;
+    }) => Promise<"go on" | "enough" | "drop">,
   ): Promise<Routes | null>;
 }
 

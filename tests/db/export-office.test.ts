@@ -4,7 +4,7 @@ import { beforeAll, expect, it } from "vitest";
 import { exportAudit } from "@/lib/usecases/export-audit";
 import { exportCosts } from "@/lib/usecases/export-costs";
 import { exportPeople } from "@/lib/usecases/export-people";
-import { exportRemovals } from "@/lib/usecases/export-removals";
+import { exportClaims } from "@/lib/usecases/export-claims";
 import type { PersonActor } from "@/lib/usecases/use-case";
 import { testDatabase } from "../support/database";
 import { testDeps } from "../support/deps";
@@ -47,6 +47,6 @@ it("writes its head even where there is nothing", async () => {
   const audit = { page: 1, act: null, personId: null, fromDay: null, toDay: null };
   expect(records(await exportAudit(deps, administrator, audit))).toHaveLength(1);
   expect(records(await exportCosts(deps, administrator, { days: 730 }))).toHaveLength(1);
-  const removals = await exportRemovals(deps, administrator, { days: 365, crew: null });
-  expect(records(removals)[0]).toContain("chance by then %");
+  const claims = await exportClaims(deps, administrator, { days: 365, crew: null });
+  expect(records(claims)[0]).toContain("chance by then %");
 });

@@ -161,6 +161,7 @@ describe("what is no longer found", () => {
   const shift = (since: string) => ({
     ...{ id: randomUUID(), kind: "draw-shift" as const, lotId: null, since },
     ...{ deviceModelId: register.modelId, factor: 1.3, chance: 1e-9, packsBehind: 20 },
+    relativeSd: 0.1,
   });
   const look = async (rows: Parameters<typeof replaceFindings>[1]) => {
     deps.setNow(new Date(deps.now().getTime() + MS_PER_DAY));

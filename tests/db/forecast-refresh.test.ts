@@ -7,6 +7,7 @@
 import { randomUUID } from "node:crypto";
 import { beforeAll, describe, expect, it } from "vitest";
 import { MS_PER_DAY } from "@/lib/units";
+import { dismissFinding } from "@/lib/usecases/dismiss-finding";
 import { judgeHistory } from "@/lib/usecases/judge-history";
 import { readHorizon } from "@/lib/usecases/read-horizon";
 import { refreshForecasts } from "@/lib/usecases/refresh-forecasts";
@@ -109,6 +110,44 @@ describe("refreshing forecasts", () => {
   });
 });
 
+describe("a found shift of a model's draw", () => {
+  const found = (foundAt: Date) =>
+    db
+      .insertInto("finding")
+      .values({
+        ...{ id: randomUUID(), kind: "draw-shift", deviceModelId: register.modelId },
+        ...{ since: "2026-11-15", factor: 1.5, relativeSd: 0.05, chance: 1e-9, packsBehind: 20 },
+        ...{ foundAt, seenAt: foundAt },
+      })
+      .execute();
+  const daysLeft = async () => {
+    await refreshForecasts(deps, systemActor, { packIds: [fresh] });
+    return ((await forecastOf(fresh)).p50.getTime() - deps.now().getTime()) / MS_PER_DAY;
+  };
+
+  it("brings dates forward by about the factor, and back again when it is dismissed", async () => {
+    const before = await daysLeft();
+    await found(deps.now());
+    // charge left over draw: half as much again is drawn (current x time)
+    expect((await daysLeft()) * 1.5).toBeGreaterThan(before * 0.85);
+    expect((await daysLeft()) * 1.5).toBeLessThan(before * 1.15);
+    const { id } = await db.selectFrom("finding").select("id").executeTakeFirstOrThrow();
+    const dispatcher = await register.actor(["dispatcher"]);
+    await dismissFinding(deps, dispatcher, { id, because: "Known." });
+    expect(deps.enqueued.at(-1)?.name).toBe("forecast");
+    expect(deps.enqueued.at(-1)?.data.packIds).toContain(fresh);
+    expect(await daysLeft()).toBe(before);
+    await db.deleteFrom("finding").execute();
+  });
+
+  it("is not known to a forecast of a day before it was found", async () => {
+    const before = await daysLeft();
+    await found(new Date(deps.now().getTime() + MS_PER_DAY));
+    expect(await daysLeft()).toBe(before);
+    await db.deleteFrom("finding").execute();
+  });
+});
+
 describe("packs that came out", () => {
   /** Packs one after another in one device, each stopped after so many days. */
   async function livedThrough(days: readonly number[]) {
@@ -139,8 +178,8 @@ describe("packs that came out", () => {
     const before = await forecastOf(fresh);
     // 15 Ah at 1 mA is 625 days: these lived well short of it.
     await livedThrough([360, 380, 400, 420, 440]);
-    expect(await judgeHistory(deps, systemActor, {})).toEqual({ judged: 5 });
-    expect(await judgeHistory(deps, systemActor, {})).toEqual({ judged: 0 });
+    expect(await judgeHistory(deps, systemActor, {})).toMatchObject({ judged: 5 });
+    expect(await judgeHistory(deps, systemActor, {})).toEqual({ judged: 0, claims: 0 });
     await refreshForecasts(deps, systemActor, { packIds: [fresh] });
     const after = await forecastOf(fresh);
     expect(after.p50.getTime()).toBeLessThan(before.p50.getTime());

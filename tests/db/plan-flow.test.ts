@@ -12,6 +12,7 @@ import { previewPublication } from "@/lib/usecases/read-publication";
 import { readRoundsBoard } from "@/lib/usecases/read-rounds-board";
 import { revisePlan } from "@/lib/usecases/revise-plan";
 import { runPlanJob } from "@/lib/usecases/run-plan-job";
+import { stopSearch } from "@/lib/usecases/stop-search";
 import { undoPlanEdit } from "@/lib/usecases/undo-plan-edit";
 import { testDatabase } from "../support/database";
 import { systemActor, testDeps } from "../support/deps";
@@ -133,6 +134,32 @@ it("improves a draft from where it stands, also by moves that nobody has been to
   // By hand it went to a dearer day; back on its own the plan costs what it did.
   expect(rounds.map((r) => r.day)).toEqual(first.rounds.map((r) => r.day));
   expect(plan?.state).toBe("draft");
+  await discardPlan(deps, dispatcher, { planId });
+});
+
+it("improves a draft, ends when asked to stop, and takes the improvement back", async () => {
+  const planId = await builtPlan();
+  const act = await otherPlace(planId);
+  const { version } = await board(planId);
+  const moved = await editPlan(deps, dispatcher, { planId, version, act });
+  const where = async () =>
+    (await board(planId)).rounds.map((r) => [r.technicianId, r.day, r.stops.map((s) => s.siteId)]);
+  const before = await where();
+  await improvePlan(deps, dispatcher, { planId, version: moved.version });
+  expect(deps.enqueued.at(-1)).toMatchObject({ name: "plan", data: { mode: "improve" } });
+  await stopSearch(deps, dispatcher, { planId });
+  await stopSearch(deps, dispatcher, { planId });
+  expect((await board(planId)).plan).toMatchObject({ state: "building", stopping: true });
+  expect(await runPlanJob(deps, systemActor, { planId, mode: "improve" })).toEqual({ built: true });
+  const improved = await board(planId);
+  expect(improved.plan).toMatchObject({
+    ...{ state: "draft", stopping: false, undo: "the improvement" },
+  });
+  const undone = await undoPlanEdit(deps, dispatcher, { planId, version: improved.version });
+  expect(await where()).toEqual(before);
+  // the edit before it can still be taken back
+  expect((await board(planId)).plan?.undo).toBe("moving a stop");
+  await undoPlanEdit(deps, dispatcher, { planId, version: undone.version });
   await discardPlan(deps, dispatcher, { planId });
 });
 

@@ -28,11 +28,13 @@ const OFFICE = [
   "/stores",
   "/stores/demand",
   "/stores/lots",
+  "/stores/moves",
   "/stores/return-box",
   "/record",
   "/record/findings",
   "/record/readings",
   "/record/costs",
+  "/record/policies",
 ];
 const SETTINGS = [
   "/settings/organisation",
@@ -47,6 +49,7 @@ const PAGES: readonly [role: DemoRole, size: Size, paths: readonly string[]][] =
   ["dispatcher", "desktop", [...OFFICE, "/import"]],
   ["dispatcher", "phone", OFFICE],
   ["supervisor", "desktop", ["/horizon", "/record", "/settings/digests"]],
+  ["supervisor", "phone", ["/settings/digests"]],
   ["administrator", "desktop", SETTINGS],
   ["administrator", "phone", SETTINGS],
   ["technician", "phone", ["/today", "/find", "/outbox"]],

@@ -25,7 +25,7 @@ export default async function RecordPage(props: {
     <>
       <PageHead
         title="Can the dates be trusted?"
-        lede="Each pack that came out is held against the forecast of the visit before: what chance had that given to stopping by then?"
+        lede="On the first day of each quarter the forecast of every pack in service goes on record. Here each is held against what has come since."
       />
       <RecordTabs current="trust" />
       <TrustFigures view={view} />

@@ -29,6 +29,8 @@ export interface Place {
   readonly receive: MessagePort;
   readonly send: MessagePort;
   readonly sent: Int32Array;
+  /** One number: 1 tells every thread to stop with the best it has. */
+  readonly enough: Int32Array;
 }
 
 /** What a thread is asked to do. `run` tells elites of this task from those of the one before. */
@@ -55,6 +57,7 @@ export interface Finish {
 export class Race {
   private readonly workers: Worker[];
   private readonly sent: Int32Array;
+  private readonly enough = new Int32Array(new SharedArrayBuffer(4));
   private runs = 0;
 
   constructor(private readonly threads: number) {
@@ -65,7 +68,8 @@ export class Race {
     this.workers.forEach((worker, index) => {
       const send = channels[(index + 1) % threads]!.port1;
       const receive = channels[index]!.port2;
-      const place: Place = { index, threads, receive, send, sent: this.sent };
+      const { sent, enough } = this;
+      const place: Place = { index, threads, receive, send, sent, enough };
       worker.postMessage(place, [receive, send]);
     });
   }
@@ -77,6 +81,7 @@ export class Race {
    */
   async run(task: Task, onNews: (news: News) => void = () => {}): Promise<Finish> {
     this.sent.fill(0);
+    this.enough.fill(0);
     this.runs += 1;
     const order: Order = { ...task, run: this.runs };
     const ends = await Promise.all(
@@ -87,6 +92,11 @@ export class Race {
     );
     const best = ends.reduce((a, b) => (b.rank < a.rank ? b : a));
     return { ...best, iterations: ends.reduce((sum, end) => sum + end.iterations, 0) };
+  }
+
+  /** Lets the run end soon, with the best plan found by then. */
+  stop(): void {
+    Atomics.store(this.enough, 0, 1);
   }
 
   /** Ends the threads, whatever they are at. */

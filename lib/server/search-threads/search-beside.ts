@@ -12,8 +12,9 @@ export const searchBeside: RoundsSearch = async ({ problem, turns, options, seed
   const task = { problem, options, seed, limit: { kind: "turns", turns } } as const;
   try {
     const end = await race.run(task, ({ share, rank }) => {
-      const answer = onNews({ share, cost: rank }).then(async (goOn) => {
-        if (goOn) return;
+      const answer = onNews({ share, cost: rank }).then(async (word) => {
+        if (word === "enough") race.stop();
+        if (word !== "drop") return;
         wanted = false;
         await race.close();
       });

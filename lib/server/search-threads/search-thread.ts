@@ -62,6 +62,12 @@ function exchangeOnce(place: Place, mine: Elite, inStep: boolean): Elite | undef
   return next?.message;
 }
 
+/** Nobody waits for a thread that is through: told to stop, threads are not in step any more. */
+function release({ sent, index }: Place): void {
+  Atomics.store(sent, index, 2 ** 30);
+  Atomics.notify(sent, index);
+}
+
 /** Sends the best plan on and takes over a better one, at even shares of the run. */
 function exchange(order: Order, place: Place): OnProgress {
   const inStep = order.limit.kind === "turns";
@@ -82,8 +88,11 @@ function exchange(order: Order, place: Place): OnProgress {
 function run(order: Order, place: Place): Finish {
   const { problem, options, seed, limit } = order;
   const began = performance.now();
-  const stop = stopAt(limit, place.threads);
+  const limited = stopAt(limit, place.threads);
+  const stop: Stop = (iterations) =>
+    Atomics.load(place.enough, 0) === 1 ? 1 : limited(iterations);
   const end = solve(problem, stop, seededRng(seed), options, exchange(order, place));
+  release(place);
   const rank = end.cost.total + MISSED_RANK * end.missedMust.length;
   const seconds = (performance.now() - began) / 1000;
   return { kind: "finish", routes: end.routes, rank, iterations: end.iterations, seconds };

@@ -1,17 +1,11 @@
-import { Worker } from "node:worker_threads";
 import { connect } from "../../../db/client";
-import { installedPackPage } from "../../../db/queries/forecasts";
+import { ThreadPool } from "../../../lib/server/threads/pool";
+import { startRenewal } from "../../../lib/server/threads/renew-forecasts";
+import { installedPages } from "../../../lib/usecases/refresh-forecasts";
+import { NOW } from "./fleet";
 
 /** `forecast`: the whole renewal. `io`: the same rows read and written, nothing computed. */
 export type Run = "forecast" | "io";
-
-export interface Task {
-  readonly run: Run;
-  readonly packIds: readonly string[];
-}
-
-/** Packs handed to a thread at a time. */
-const PAGE = 500;
 
 export interface Taken {
   readonly seconds: number;
@@ -20,48 +14,23 @@ export interface Taken {
 }
 
 /** What some threads take for every installed pack, their start left out. */
-export async function runOnThreads(count: number, url: string, run: Run): Promise<Taken> {
-  const start = new URL("./thread-start.mjs", import.meta.url);
-  const workers = Array.from({ length: count }, () => new Worker(start, { workerData: { url } }));
+export async function runOnThreads(threads: number, url: string, run: Run): Promise<Taken> {
+  const pool = await start(threads, url, run);
   const db = connect(url, { max: 1 });
   try {
-    await Promise.all(workers.map((worker) => answer(worker)));
     const from = performance.now();
     const cpu = process.cpuUsage();
-    let page: Promise<string[]> = installedPackPage(db, null, PAGE);
-    const next = async (): Promise<string[]> => {
-      const now = page;
-      page = now.then((ids) =>
-        ids.length < PAGE ? [] : installedPackPage(db, ids[ids.length - 1]!, PAGE),
-      );
-      return now;
-    };
-    await Promise.all(workers.map((worker) => serve(worker, run, next)));
+    await pool.work(installedPages({ db }));
     const { user, system } = process.cpuUsage(cpu);
     return { seconds: (performance.now() - from) / 1000, cpuSeconds: (user + system) / 1e6 };
   } finally {
-    await Promise.all(workers.map((worker) => worker.terminate()));
+    await pool.end();
     await db.destroy();
   }
 }
 
-/** Gives a thread page after page until there are none left. */
-async function serve(worker: Worker, run: Run, next: () => Promise<string[]>): Promise<void> {
-  for (;;) {
-    const packIds = await next();
-    if (packIds.length === 0) return;
-    const done = answer(worker);
-    worker.postMessage({ run, packIds } satisfies Task);
-    await done;
-  }
-}
-
-function answer(worker: Worker): Promise<unknown> {
-  return new Promise((resolve, reject) => {
-    worker.once("error", reject);
-    worker.once("message", (message) => {
-      worker.off("error", reject);
-      resolve(message);
-    });
-  });
+function start(threads: number, url: string, run: Run): Promise<ThreadPool> {
+  if (run === "forecast") return startRenewal({ url, at: NOW.toISOString() }, threads);
+  const file = new URL("./io-start.mjs", import.meta.url);
+  return ThreadPool.start({ start: file, threads, workerData: { url } });
 }

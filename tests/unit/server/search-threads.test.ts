@@ -1,5 +1,6 @@
 import { afterAll, describe, expect, it } from "vitest";
 import { checkPlan } from "@/lib/routing/check";
+import { planCost } from "@/lib/routing/evaluate";
 import { Race } from "@/lib/server/search-threads/race";
 import { searchBeside } from "@/lib/server/search-threads/search-beside";
 import { randomProblem } from "../routing/random-problem";
@@ -27,13 +28,32 @@ describe("two searches that hand each other their plans", () => {
   it("say how far they are, and stop when nobody wants the plan any more", async () => {
     const shares: number[] = [];
     const asked = { problem, turns: 4000, options: {}, seed: 5 };
-    const routes = await searchBeside(asked, async ({ share }) => shares.push(share) > 0);
+    const routes = await searchBeside(asked, async ({ share }) => {
+      shares.push(share);
+      return "go on";
+    });
     expect(routes).not.toBeNull();
     expect(shares.length).toBeGreaterThan(5);
     expect(shares).toEqual([...shares].sort((a, b) => a - b));
     const long = { ...asked, turns: 600_000 };
-    expect(await searchBeside(long, async () => false)).toBeNull();
+    expect(await searchBeside(long, async () => "drop")).toBeNull();
   }, 20_000);
+
+  it("stop early with the best so far, and never with less than they began with", async () => {
+    const { routes: start } = await race.run({ problem, options: {}, seed: 5, limit });
+    const costs: number[] = [];
+    const long = { problem, turns: 600_000, options: { start }, seed: 6 };
+    const routes = await searchBeside(long, async ({ cost }) => {
+      costs.push(cost);
+      return "enough";
+    });
+    // a dozen news are sent in a whole run
+    expect(costs.length).toBeLessThan(6);
+    expect(checkPlan(problem, routes ?? [])).toMatchObject({ faults: [] });
+    expect(planCost(problem, routes ?? []).total).toBeLessThanOrEqual(
+      planCost(problem, start).total + 1e-6,
+    );
+  }, 60_000);
 
   it("pass an error of a thread on", async () => {
     const broken = new Race(2);

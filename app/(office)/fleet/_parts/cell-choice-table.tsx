@@ -36,7 +36,7 @@ export function CellChoiceTable({ view }: { view: CellComparison }) {
 }
 
 function Wrapped({ children, wide }: { children: ReactNode; wide?: boolean }) {
-  const width = wide ? "w-68" : "w-44";
+  const width = wide ? "w-56" : "w-36";
   return <span className={`block py-1.5 whitespace-normal ${width}`}>{children}</span>;
 }
 
@@ -66,7 +66,13 @@ function columns({ organisation, choice, subject }: CellComparison): Column<Opti
     },
     {
       key: "cost",
-      head: "Cost a year, visits included",
+      head: (
+        <>
+          Cost a year,
+          <br />
+          visits included
+        </>
+      ),
       align: "right",
       cell: ({ costPerYear: c }) => (
         <>

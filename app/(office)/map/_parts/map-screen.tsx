@@ -70,6 +70,7 @@ export function MapScreen({ initial }: { initial: MapView }) {
           chosenDisc={chosen}
           tileUrl={view.tileUrl}
           onSelect={choose}
+          onRound={chooseRound}
         />
         <div className="flex min-w-0 flex-col">
           <RoundChoice rounds={view.rounds} chosen={round} onChoose={chooseRound} />

@@ -5,6 +5,7 @@ const TABS = [
   ["findings", "Findings", "/record/findings"],
   ["readings", "Readings in doubt", "/record/readings"],
   ["costs", "Costs", "/record/costs"],
+  ["policies", "Policies", "/record/policies"],
 ] as const;
 
 /** The parts of the record. */

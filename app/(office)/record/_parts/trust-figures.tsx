@@ -1,28 +1,33 @@
 import { Figure, FigureRow } from "@/components/ui/figure";
+import { formatDay } from "@/lib/present/format-day";
 import { formatPercent } from "@/lib/present/format-share";
-import { formatNumber, NOTHING } from "@/lib/present/locale";
+import { formatNumber, NBSP, NOTHING } from "@/lib/present/locale";
 import type { TrustView } from "@/lib/usecases/read-trust";
 
-/** Removals, stopped against expected, score and surprises. */
+/** Packs watched, stops against those expected, lives against those said, surprises. */
 export function TrustFigures({ view }: { view: TrustView }) {
-  const { whole, organisation } = view;
+  const { whole, organisation, since, today } = view;
   const { locale } = organisation;
   const low = Math.max(0, Math.round(whole.expected - whole.spread));
   const high = Math.round(whole.expected + whole.spread);
   const sound = whole.stopped >= low && whole.stopped <= high;
   return (
     <FigureRow>
-      <Figure label="Packs that came out" value={formatNumber(whole.removals, locale)} />
       <Figure
-        label="Found stopped"
+        label="Packs watched"
+        value={formatNumber(whole.packs, locale)}
+        range={`since ${formatDay(since, locale, { today })}`}
+      />
+      <Figure
+        label="Stopped"
         value={formatNumber(whole.stopped, locale)}
         range={`expected ${formatNumber(low, locale)}–${formatNumber(high, locale)}`}
         tone={sound ? "order" : "soon"}
       />
       <Figure
-        label="Likely date was off by"
-        value={whole.daysOff === null ? NOTHING : daysOff(whole.daysOff, locale)}
-        range="median of those that stopped"
+        label="Days found over days said"
+        value={whole.lasted === null ? NOTHING : timesSaid(whole.lasted, locale)}
+        range="median"
       />
       <Figure
         label="Surprises"
@@ -38,9 +43,7 @@ export function TrustFigures({ view }: { view: TrustView }) {
   );
 }
 
-/** "12 d late": the likely date lay twelve days after the true one. */
-export function daysOff(days: number, locale: string): string {
-  const whole = Math.round(Math.abs(days));
-  if (whole === 0) return "0 d";
-  return `${formatNumber(whole, locale)} d ${days > 0 ? "late" : "early"}`;
+/** "0.94 ×": it lasted 94 days for each 100 said. */
+export function timesSaid(ratio: number, locale: string): string {
+  return `${formatNumber(ratio, locale, 2)}${NBSP}×`;
 }

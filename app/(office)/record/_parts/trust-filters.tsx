@@ -4,7 +4,7 @@ import { hrefWith } from "@/lib/present/paging";
 import { TRUST_GROUPS, type TrustView } from "@/lib/usecases/read-trust";
 
 const SPANS = [
-  [90, "Last 90 days"],
+  [90, "Last quarter"],
   [365, "Last year"],
   [1100, "Three years"],
 ] as const;
@@ -25,7 +25,7 @@ export function TrustFilters(props: {
   return (
     <FilterBar
       actions={
-        <LinkButton href={hrefWith("/api/v1/exports/removals", params, {})} download>
+        <LinkButton href={hrefWith("/api/v1/exports/claims", params, {})} download>
           Export CSV
         </LinkButton>
       }

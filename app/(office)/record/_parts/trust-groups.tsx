@@ -5,7 +5,7 @@ import { CHEMISTRY_WORDS } from "@/lib/present/chemistry-words";
 import { formatPercent } from "@/lib/present/format-share";
 import { formatNumber, NOTHING } from "@/lib/present/locale";
 import type { TrustView } from "@/lib/usecases/read-trust";
-import { daysOff } from "./trust-figures";
+import { timesSaid } from "./trust-figures";
 
 type GroupRow = TrustView["groups"][number];
 
@@ -13,19 +13,30 @@ export function TrustGroups({ view }: { view: TrustView }) {
   return (
     <Section title={`By ${view.input.group}`}>
       <DataTable
-        caption={`Removals by ${view.input.group}`}
+        caption={`Forecasts on record by ${view.input.group}`}
         columns={columns(view.organisation.locale)}
         rows={view.groups}
         rowKey={(row) => row.name}
         empty={
-          <EmptyState title="No pack has come out in this time.">
-            Widen the time, or import past installs: each past swap is judged with what was known
-            before it.
+          <EmptyState title="No forecast is on record in this time.">
+            Widen the time, or import past installs and voltages: the next night works out what
+            would have been said at the start of each quarter, from what was known then.
           </EmptyState>
         }
       />
+      <p className="max-w-prose px-3 py-2.5 text-soft">
+        Every pack in service counts, not only those that came out: one that stops always comes out,
+        one that runs on does not. The range allows for chance between packs, not for a cold winter
+        that meets all of them at once.
+        {view.inHindsight > 0 && ` ${hindsightWords(view)}`}
+      </p>
     </Section>
   );
+}
+
+function hindsightWords({ inHindsight, organisation }: TrustView): string {
+  const share = formatPercent(inHindsight, organisation.locale);
+  return `Worked out afterwards, from what was known on the day and nothing later: ${share} of these forecasts.`;
 }
 
 function columns(locale: string): Column<GroupRow>[] {
@@ -37,8 +48,8 @@ function columns(locale: string): Column<GroupRow>[] {
       rowHeader: true,
       cell: (row) => CHEMISTRY_WORDS[row.name] ?? row.name,
     },
-    { key: "removals", head: "Came out", align: "right", cell: (row) => number(row.removals) },
-    { key: "stopped", head: "Had stopped", align: "right", cell: (row) => number(row.stopped) },
+    { key: "packs", head: "Packs", align: "right", cell: (row) => number(row.packs) },
+    { key: "stopped", head: "Stopped", align: "right", cell: (row) => number(row.stopped) },
     {
       key: "expected",
       head: "Expected",
@@ -52,18 +63,12 @@ function columns(locale: string): Column<GroupRow>[] {
       cell: (row) => <span className={verdict(row).tone}>{verdict(row).words}</span>,
     },
     {
-      key: "off",
-      head: "Likely date off by",
+      key: "lasted",
+      head: "Days found over said",
       align: "right",
-      cell: (row) => (row.daysOff === null ? NOTHING : daysOff(row.daysOff, locale)),
+      cell: (row) => (row.lasted === null ? NOTHING : timesSaid(row.lasted, locale)),
     },
     { key: "surprises", head: "Surprises", align: "right", cell: (row) => number(row.surprises) },
-    {
-      key: "left",
-      head: "Left when alive",
-      align: "right",
-      cell: (row) => (row.shareLeft === null ? NOTHING : formatPercent(row.shareLeft, locale)),
-    },
   ];
 }
 

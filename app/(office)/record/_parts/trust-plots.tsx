@@ -16,15 +16,16 @@ export function TrustPlots({ view }: { view: TrustView }) {
       <Section title="Chance stated, share that had stopped">
         <PlotWithWords plot={<ReliabilityPlot model={chances} />}>
           On the diagonal the windows can be taken at their word: by the date with a chance of 30 %,
-          30 % had stopped. Above it, packs end earlier than said. Packs taken out alive count up to
-          that day (Kaplan–Meier); bars are 90 % intervals.
+          30 % had stopped. Above it, packs end earlier than said. Each pack counts once, with the
+          first forecast on record; those that run, or came out alive, count up to that day
+          (Kaplan–Meier). Bars are 90 % intervals.
         </PlotWithWords>
       </Section>
       <Section title="Days left, as said and as found">
         <PlotWithWords plot={<PredictionPlot model={days} />}>
-          One mark a pack, at the visit before it came out. Filled: it had stopped. Open: it came
-          out alive and would have lasted longer. In the shaded band it lasted half to twice the
-          days said: {days.description}.
+          One mark a pack, from its first forecast on record. Filled: it stopped. Open: it runs, or
+          came out alive, and would have lasted longer. In the shaded band it lasted half to twice
+          the days said: {days.description}.
         </PlotWithWords>
       </Section>
     </div>

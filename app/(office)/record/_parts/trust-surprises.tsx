@@ -5,7 +5,6 @@ import { EmptyState } from "@/components/ui/states";
 import { dayOfInstant } from "@/lib/present/calendar-days";
 import { formatDay, formatWindow } from "@/lib/present/format-day";
 import { formatPercent } from "@/lib/present/format-share";
-import { NOTHING } from "@/lib/present/locale";
 import { surpriseCause } from "@/lib/present/surprise-cause";
 import type { TrustView } from "@/lib/usecases/read-trust";
 
@@ -29,10 +28,11 @@ export function TrustSurprises({ view }: { view: TrustView }) {
   );
 }
 
-function columns({ organisation, today }: TrustView): Column<Surprise>[] {
+function columns(view: TrustView): Column<Surprise>[] {
+  const { organisation, today } = view;
   const { locale, timeZone } = organisation;
   const day = (at: Date | null) =>
-    at ? formatDay(dayOfInstant(at, timeZone), locale, { today }) : NOTHING;
+    at ? formatDay(dayOfInstant(at, timeZone), locale, { today }) : "";
   return [
     {
       key: "tag",
@@ -49,15 +49,16 @@ function columns({ organisation, today }: TrustView): Column<Surprise>[] {
     },
     { key: "model", head: "Model", cell: (row) => row.modelName },
     { key: "cell", head: "Cell", cell: (row) => row.designation },
+    { key: "said", head: "Said on", cell: (row) => day(row.madeAt) },
     {
       key: "window",
       head: "Window said",
       cell: (row) =>
         formatWindow(
           {
-            p5: dayOfInstant(row.p05, timeZone),
-            p50: dayOfInstant(row.p50, timeZone),
-            p95: dayOfInstant(row.p95, timeZone),
+            p5: dayOfInstant(row.window.p05, timeZone),
+            p50: dayOfInstant(row.window.p50, timeZone),
+            p95: dayOfInstant(row.window.p95, timeZone),
           },
           locale,
           today,
@@ -67,34 +68,35 @@ function columns({ organisation, today }: TrustView): Column<Surprise>[] {
       key: "chance",
       head: "Chance by then",
       align: "right",
-      cell: (row) => formatPercent(row.chanceStoppedPermille / 1000, locale),
+      cell: (row) => formatPercent(row.life.chance, locale),
     },
-    {
-      key: "found",
-      head: "Found",
-      cell: (row) => (row.censored ? "still running" : `stopped ${day(row.stoppedAt)}`),
-    },
-    { key: "removed", head: "Came out", cell: (row) => day(row.removedAt) },
+    { key: "found", head: "Found", cell: (row) => `${howEnded(row)} ${day(row.endedAt)}`.trim() },
     {
       key: "cause",
       head: "Likely cause",
       cell: (row) => (
-        <span className="block min-w-44 py-1 whitespace-normal">{causeOf(row, organisation)}</span>
+        <span className="block min-w-44 py-1 whitespace-normal">{causeOf(row, view)}</span>
       ),
     },
   ];
 }
 
-function causeOf(row: Surprise, { locale, timeZone }: TrustView["organisation"]): string {
+function howEnded(row: Surprise): string {
+  if (row.endedAt === null) return "still running";
+  return row.stopped ? "stopped" : "taken out alive";
+}
+
+function causeOf(row: Surprise, { organisation, today }: TrustView): string {
+  const { locale, timeZone } = organisation;
   const { facts } = row;
   const told = {
     ...{ readings: facts?.readings ?? 0, monthlyMeanDc: facts?.monthlyMeanDc ?? null },
     ...{ weakLot: facts?.weakLot ?? null, drawShiftSince: facts?.drawShiftSince ?? null },
     drawFactor: facts?.drawFactor ?? null,
   };
-  const endedOn = dayOfInstant(row.endedAt, timeZone);
+  const endedOn = row.endedAt ? dayOfInstant(row.endedAt, timeZone) : today;
   return surpriseCause(
-    { ...told, endedOn, stopped: !row.censored, reasonOut: row.reasonOut },
+    { ...told, endedOn, stopped: row.life.ended, reasonOut: row.reasonOut },
     locale,
   );
 }

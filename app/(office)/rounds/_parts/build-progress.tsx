@@ -1,10 +1,17 @@
+import { Button } from "@/components/ui/button";
 import type { RoundsBoard } from "@/lib/usecases/read-rounds-board";
+import type { BoardActs } from "./use-board";
 
 const WIDTH = 240;
 const HEIGHT = 36;
 
-/** How a build goes: the cost of the best plan so far, falling. It may be left. */
-export function BuildProgress({ plan }: { plan: NonNullable<RoundsBoard["plan"]> }) {
+interface BuildProgressProps {
+  plan: NonNullable<RoundsBoard["plan"]>;
+  acts: BoardActs;
+}
+
+/** How a build goes: the cost of the best plan so far, falling. It may be left, and stopped. */
+export function BuildProgress({ plan, acts }: BuildProgressProps) {
   const { share, costs } = plan.progress ?? { share: 0, costs: [] };
   const percent = Math.round(share * 100);
   return (
@@ -18,6 +25,11 @@ export function BuildProgress({ plan }: { plan: NonNullable<RoundsBoard["plan"]>
       </span>
       <progress max={100} value={percent} className="h-2 w-40 accent-spruce" aria-label="Build" />
       {costs.length > 1 && <CostCurve costs={costs} />}
+      {acts.board.mayEdit && (
+        <Button onClick={acts.stop} disabled={acts.busy || plan.stopping}>
+          {plan.stopping ? "Stopping …" : "Stop, keep the best"}
+        </Button>
+      )}
     </div>
   );
 }

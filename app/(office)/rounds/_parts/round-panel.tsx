@@ -1,6 +1,6 @@
 "use client";
 
-import { useMemo, useState } from "react";
+import { useMemo } from "react";
 import { DistrictMap } from "@/components/map/district-map";
 import { LinkButton } from "@/components/ui/button";
 import { EmptyState } from "@/components/ui/states";
@@ -15,11 +15,17 @@ export interface RoundPanelProps {
   acts: BoardActs;
   editable: boolean;
   placing: Placing;
+  /** Site of the stop that is picked out, here and on the map. */
+  site: string | null;
+  onStop: (siteId: string, roundId: string) => void;
+  onRound: (roundId: string) => void;
+  /** A pack that is left out was picked on the map. */
+  onLeftOut: (assetId: string) => void;
 }
 
 /** The chosen round: its map, its stops in order, and what can be done to each. */
-export function RoundPanel({ board, round, acts, editable, placing }: RoundPanelProps) {
-  const [site, setSite] = useState<string | null>(null);
+export function RoundPanel(props: RoundPanelProps) {
+  const { board, round, acts, editable, placing, site, onStop } = props;
   const rounds = useMemo(
     () =>
       board.rounds.map((r) => ({
@@ -54,7 +60,10 @@ export function RoundPanel({ board, round, acts, editable, placing }: RoundPanel
         rounds={rounds}
         discs={discs}
         chosenRound={round?.roundId ?? null}
-        onSelect={setSite}
+        chosenStop={site}
+        onSelect={props.onLeftOut}
+        onRound={props.onRound}
+        onStop={onStop}
       />
       {!round && <EmptyState title="No round chosen.">Choose a round on the board.</EmptyState>}
       {round && (
@@ -76,6 +85,7 @@ export function RoundPanel({ board, round, acts, editable, placing }: RoundPanel
                 index={i}
                 round={round}
                 lit={site === stop.siteId}
+                onLight={() => onStop(stop.siteId, round.roundId)}
                 editable={editable && round.state === "proposed"}
                 busy={acts.busy}
                 acts={acts}

@@ -1,6 +1,6 @@
 "use client";
 
-import { useMemo, useState } from "react";
+import { useCallback, useMemo, useState } from "react";
 import { Notice } from "@/components/ui/notice";
 import type { RoundsBoard } from "@/lib/usecases/read-rounds-board";
 import { BoardFigures } from "./board-figures";
@@ -25,6 +25,13 @@ export function RoundsScreen({ initial, chosenRound, crewId }: RoundsScreenProps
   const { plan, rounds } = board;
   const placing = usePlacing(plan?.id ?? null, plan?.version ?? null);
   const [chosenId, choose] = useState(chosenRound);
+  // the board's rounds, the list of stops and the map show one choice
+  const [site, chooseSite] = useState<string | null>(null);
+  const [leftOut, chooseLeftOut] = useState<string | null>(null);
+  const chooseStop = useCallback((siteId: string, roundId: string) => {
+    choose(roundId);
+    chooseSite(siteId);
+  }, []);
   const chosen = useMemo(
     () => rounds.find((r) => r.roundId === chosenId) ?? rounds[0] ?? null,
     [rounds, chosenId],
@@ -53,7 +60,7 @@ export function RoundsScreen({ initial, chosenRound, crewId }: RoundsScreenProps
       {plan?.travelTrouble && (
         <Notice kind="warn">Driving times are only estimates: {plan.travelTrouble}.</Notice>
       )}
-      {plan?.state === "building" && <BuildProgress plan={plan} />}
+      {plan?.state === "building" && <BuildProgress plan={plan} acts={acts} />}
       <div className="grid gap-4 xl:grid-cols-[minmax(0,1fr)_27rem]">
         <div className="min-w-0">
           <BoardGrid
@@ -67,6 +74,7 @@ export function RoundsScreen({ initial, chosenRound, crewId }: RoundsScreenProps
             <LeftOutList
               title={`Left out of ${board.weekLabel} · and why`}
               rows={board.leftOut}
+              lit={leftOut}
               {...(editable && { placing })}
             />
           )}
@@ -77,6 +85,10 @@ export function RoundsScreen({ initial, chosenRound, crewId }: RoundsScreenProps
           acts={acts}
           editable={editable}
           placing={placing}
+          site={site}
+          onStop={chooseStop}
+          onRound={choose}
+          onLeftOut={chooseLeftOut}
         />
       </div>
     </>

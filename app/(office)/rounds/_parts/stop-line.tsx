@@ -1,5 +1,6 @@
 "use client";
 
+import { useEffect, useRef } from "react";
 import { WaneDisc } from "@/components/charts/wane-disc";
 import type { BoardRound } from "@/lib/usecases/read-rounds-board";
 import type { BoardActs } from "./use-board";
@@ -8,7 +9,9 @@ export interface StopLineProps {
   stop: BoardRound["stops"][number];
   index: number;
   round: BoardRound;
+  /** Picked out, here and on the map. */
   lit: boolean;
+  onLight: () => void;
   editable: boolean;
   busy: boolean;
   acts: BoardActs;
@@ -23,8 +26,13 @@ const act =
 /** One stop of the chosen round. */
 export function StopLine(props: StopLineProps) {
   const { stop, lit, editable, onMove, onDragEnd } = props;
+  const line = useRef<HTMLLIElement>(null);
+  useEffect(() => {
+    if (lit) line.current?.scrollIntoView({ block: "nearest" });
+  }, [lit]);
   return (
     <li
+      ref={line}
       draggable={editable && !stop.locked}
       onDragStart={onMove}
       onDragEnd={onDragEnd}
@@ -35,7 +43,14 @@ export function StopLine(props: StopLineProps) {
       </span>
       <span className="font-mono">{stop.time}</span>
       <span className="min-w-0">
-        <span className="font-medium">{stop.siteName}</span>
+        <button
+          type="button"
+          aria-pressed={lit}
+          onClick={props.onLight}
+          className={`text-left font-medium hover:underline ${lit ? "underline decoration-dusk decoration-2 underline-offset-2" : ""}`}
+        >
+          {stop.siteName}
+        </button>
         {stop.state === "done" && <span className="text-spruce-ink"> · done</span>}
         {stop.state === "cannot_do" && <span className="text-brick-ink"> · could not be done</span>}
         {stop.locked && <span className="text-soft"> · locked</span>}

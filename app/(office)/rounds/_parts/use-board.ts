@@ -73,6 +73,7 @@ function useEdits(board: RoundsBoard, again: () => Promise<void>, setTrouble: Se
       mutate({ path: "acts", body: { act } }, { onSuccess: () => toast({ text: done, undo }) }),
     lock: (siteId: string, locked: boolean) => mutate({ path: "locks", body: { siteId, locked } }),
     improve: () => mutate({ path: "improve", body: {} }),
+    stop: () => mutate({ path: "stop", body: {} }),
   };
 }
 

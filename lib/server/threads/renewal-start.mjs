@@ -2,4 +2,4 @@
 import { register } from "tsx/esm/api";
 
 register();
-await import("./batch-thread.ts");
+await import("./renewal-thread.ts");

@@ -1,6 +1,5 @@
-/** One thread of the renewal: see threads.ts. */
-import { randomUUID } from "node:crypto";
-import { parentPort, workerData } from "node:worker_threads";
+/** One thread that reads and writes what the renewal does, and computes nothing. */
+import { workerData } from "node:worker_threads";
 import { connect } from "../../../db/client";
 import {
   loadDeviceEvents,
@@ -8,24 +7,10 @@ import {
   loadReadingsToForecast,
 } from "../../../db/queries/forecast-inputs";
 import { type ForecastRow, saveForecasts } from "../../../db/queries/forecasts";
-import { refreshForecasts } from "../../../lib/usecases/refresh-forecasts";
-import type { Deps } from "../../../lib/usecases/use-case";
+import { answerPages } from "../../../lib/server/threads/answer-pages";
 import { NOW } from "./fleet";
-import type { Task } from "./threads";
 
 const db = connect((workerData as { url: string }).url, { max: 3 });
-
-const refuse = (): never => {
-  throw new Error("The benchmark sends and enqueues nothing.");
-};
-const deps: Deps = {
-  db,
-  now: () => NOW,
-  newId: randomUUID,
-  jobs: { enqueue: refuse },
-  mailer: { send: refuse },
-  appUrl: "http://localhost",
-};
 
 /** What a forecast's row looks like; only its size matters here. */
 function rowLike(packId: string, readingIds: readonly string[]): ForecastRow {
@@ -49,7 +34,7 @@ function rowLike(packId: string, readingIds: readonly string[]): ForecastRow {
   };
 }
 
-async function readAndWrite(packIds: readonly string[]): Promise<void> {
+async function readAndWrite(packIds: readonly string[]): Promise<number> {
   const packs = await loadPacksToForecast(db, packIds);
   const assetIds = packs.map((pack) => pack.assetId);
   const [readings] = await Promise.all([
@@ -60,14 +45,7 @@ async function readAndWrite(packIds: readonly string[]): Promise<void> {
   for (const reading of readings) idsOf.get(reading.packId)?.push(reading.id);
   const rows = packs.map(({ packId }) => rowLike(packId, idsOf.get(packId) ?? []));
   await saveForecasts(db, rows, NOW);
+  return rows.length;
 }
 
-async function work({ run, packIds }: Task): Promise<void> {
-  if (run === "io") await readAndWrite(packIds);
-  else await refreshForecasts(deps, { kind: "system" }, { packIds: [...packIds] });
-}
-
-parentPort?.on("message", (task: Task) => {
-  void work(task).then(() => parentPort?.postMessage("done"));
-});
-parentPort?.postMessage("ready");
+answerPages(readAndWrite);

@@ -1,9 +1,9 @@
 import { csvResponse } from "@/lib/server/csv-response";
 import { defineRoute } from "@/lib/server/define-route";
-import { exportRemovals } from "@/lib/usecases/export-removals";
+import { exportClaims } from "@/lib/usecases/export-claims";
 
 /** The list as CSV, under the filters of its own address. */
-export const GET = defineRoute(exportRemovals, {
+export const GET = defineRoute(exportClaims, {
   input: (request) => {
     const query = new URL(request.url).searchParams;
     return {
@@ -11,5 +11,5 @@ export const GET = defineRoute(exportRemovals, {
       crew: query.get("crew"),
     };
   },
-  respond: (text) => csvResponse("removals", text),
+  respond: (text) => csvResponse("forecasts-on-record", text),
 });

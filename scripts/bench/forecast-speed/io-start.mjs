@@ -1,0 +1,5 @@
+/** Lets a worker thread read TypeScript: on Node 20 `--import tsx` reaches the main thread alone. */
+import { register } from "tsx/esm/api";
+
+register();
+await import("./io-thread.ts");

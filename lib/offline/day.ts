@@ -1,5 +1,6 @@
 import type { DayAsset, DayPack, DayStop } from "@/lib/sync/day-pack";
 
+export { stopsInOrder } from "@/lib/sync/merge-day";
 export { checkLoad, type LoadFound, loadOfRound } from "@/lib/sync/load-of-round";
 
 export function findAsset(day: DayPack, assetId: string | null): DayAsset | null {

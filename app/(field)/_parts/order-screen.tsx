@@ -6,9 +6,9 @@ import { FieldBar } from "@/components/ui/field-bar";
 import { FieldPage } from "@/components/ui/field-page";
 import { Notice } from "@/components/ui/notice";
 import { fieldStore } from "@/lib/offline/browser-store";
+import { stopsInOrder } from "@/lib/offline/day";
 import { formatTime } from "@/lib/present/format-time";
 import type { DayPack, DayRound } from "@/lib/sync/day-pack";
-import { stopsInOrder } from "@/lib/sync/merge-day";
 import { closedThen, stopTitle } from "./day-view";
 
 const arrow =

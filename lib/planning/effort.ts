@@ -3,12 +3,13 @@ import type { Routes } from "../routing/problem";
 import type { Options } from "../routing/solve";
 
 /**
- * Turns of a first plan. Measured on invented fortnights of some 350 visits: 200,000 turns in
- * place of 48,000 made them 3 to 5 % cheaper. Large plans get fewer, since a turn costs more there.
+ * Turns of a first plan in each thread. Measured on invented fortnights of some 350 visits: 200,000
+ * turns in all in place of 48,000 made them 3 to 5 % cheaper. Large plans get fewer, since a turn
+ * costs more there.
  */
-const MOST_TURNS = 200_000;
-const LEAST_TURNS = 48_000;
-const TURNS_TIMES_VISITS = 60_000_000;
+const MOST_TURNS = 100_000;
+const LEAST_TURNS = 32_000;
+const TURNS_TIMES_VISITS = 36_000_000;
 const TURNS_A_VISIT = 4_000;
 /** Rounds that people know are mended, not sought anew: a share of the turns, and of the heat. */
 const MENDING_SHARE = 0.25;

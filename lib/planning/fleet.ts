@@ -122,6 +122,8 @@ export interface KnownVisit {
   readonly day: IsoDay;
   readonly position: number;
   readonly locked: boolean;
+  /** Only a draft has it there: moving it costs no message. Left out: people know of it. */
+  readonly untold?: boolean;
   readonly tasks: readonly PlannedTask[];
 }
 

@@ -173,6 +173,7 @@ function standing(
     ({ technician, day }) => technician.technicianId === known?.technicianId && day === known.day,
   );
   if (!known || slot < 0) return {};
+  if (known.untold) return known.locked ? { lockedTo: slot } : {};
   const dayCost = units(CHANGE_MINOR.day);
   const technicianCost = units(CHANGE_MINOR.technician);
   const dropCost = units(CHANGE_MINOR.drop);

@@ -60,13 +60,21 @@ export const runPlanJob = defineUseCase({
 
 async function knownFor(deps: Deps, plan: PlanRow, mode: Mode): Promise<KnownVisit[]> {
   const own = await loadPlanRounds(deps.db, plan.id);
-  if (mode === "improve") return knownVisits(own);
-  if (own.length > 0) return knownVisits(own).map((visit) => ({ ...visit, locked: true }));
+  if (own.length > 0 && mode !== "improve")
+    return knownVisits(own).map((visit) => ({ ...visit, locked: true }));
   const technicians = await loadTechniciansToPlan(deps.db, plan.crewIds);
   const ids = new Set(technicians.map((technician) => technician.id));
   const binding = await loadBindingRounds(deps.db, [...ids], plan.firstDay, plan.lastDay);
   const open = knownVisits(binding.filter((round) => isCovered(round, plan, ids)));
+  if (mode === "improve") return draftVisits(knownVisits(own), open);
   return mode === "repair" ? open.map((visit) => ({ ...visit, locked: true })) : open;
+}
+
+/** A draft's visits: only those that stand where published rounds have them are dear to move. */
+function draftVisits(own: readonly KnownVisit[], published: readonly KnownVisit[]): KnownVisit[] {
+  const place = (visit: KnownVisit) => [visit.siteId, visit.technicianId, visit.day].join();
+  const told = new Set(published.map(place));
+  return own.map((visit) => ({ ...visit, untold: !told.has(place(visit)) }));
 }
 
 async function build(

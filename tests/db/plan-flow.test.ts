@@ -144,6 +144,25 @@ it("improves a draft, ends when asked to stop, and takes the improvement back", 
   await discardPlan(deps, dispatcher, { planId });
 });
 
+it("improves a draft from where it stands, also by moves that nobody has been told of", async () => {
+  const planId = await builtPlan();
+  const first = await board(planId);
+  await editPlan(deps, dispatcher, {
+    planId,
+    version: first.version,
+    act: await otherPlace(planId),
+  });
+  const { version } = await board(planId);
+  await improvePlan(deps, dispatcher, { planId, version });
+  expect(await runPlanJob(deps, systemActor, { planId, mode: "improve" })).toEqual({ built: true });
+  const { rounds, plan } = await board(planId);
+  expect(rounds.flatMap((r) => r.stops.flatMap((s) => s.tasks))).toHaveLength(3);
+  // By hand it went to a dearer day; back on its own the plan costs what it did.
+  expect(rounds.map((r) => r.day)).toEqual(first.rounds.map((r) => r.day));
+  expect(plan?.state).toBe("draft");
+  await discardPlan(deps, dispatcher, { planId });
+});
+
 it("lets only one of two dispatchers win, and names the reason of a refusal", async () => {
   const planId = await builtPlan();
   const { version } = await board(planId);

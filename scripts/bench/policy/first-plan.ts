@@ -29,7 +29,7 @@ function whyLine(fleet: Fleet, now: number, kind: string, own: readonly PackOutl
     `${own.length}`,
     `${due.length}`,
     `${near.length}`,
-    of((o) => o.visits.at(-1)!.chanceOut).toFixed(3),
+    of((o) => o.visits[6]!.chanceOut).toFixed(3),
     of((o) => o.pack.shareLeft).toFixed(2),
     `${days(2)} / ${days(25)} / ${days(47)}`,
   ];

@@ -11,7 +11,7 @@ export const ASSUMED = {
    * ln(life) from pack to pack in one device: cells of one type differ little (Dong & Gupta
    * found their lives' variation negligible), a device's draw hardly more from pack to pack.
    */
-  packLifeSd: 0.06,
+  packLifeSd: 0.05,
   /** Device draw against its duty cycle. */
   drawSd: 0.15,
   /** Draw of a load that never pauses, against what is stated of it. */

@@ -14,6 +14,8 @@ import type { TimeLeft } from "./time-left";
 const FINE_STEPS = 4;
 const FINE_MONTHS = 48;
 const DONE = 0.9995;
+/** With less than this the evidence leaves nothing to go by. */
+const LEAST_MASS = 1e-6;
 
 /** Chance of having stopped by each of some days, both ascending. */
 export interface StopCurve {
@@ -41,7 +43,7 @@ export function coldStops(left: TimeLeft, nodes: EndNodes, course: Course): Stop
     return new Alive(left, weight, course.progress(course.from), { lost, ...nodes });
   });
   const total = packs.reduce((sum, pack) => sum + pack.total(), 0);
-  if (!(total > 0)) return { days: [course.from, course.until], chances: [0, 0] };
+  if (!(total > LEAST_MASS)) return { days: [course.from, course.until], chances: [0, 0] };
   let from = course.from;
   for (let k = 0; from < course.until && chances.at(-1)! < DONE; k++) {
     const to = Math.min(course.until, nextMonth(from));
@@ -84,6 +86,8 @@ interface Frosts {
 class Alive {
   private readonly mass: Float64Array;
   private readonly sums: Float64Array;
+  /** The first bin that holds anything. */
+  private first = 0;
 
   constructor(
     private readonly left: TimeLeft,
@@ -91,8 +95,9 @@ class Alive {
     reached: number,
     private readonly frosts: Frosts,
   ) {
-    // it ran at the start: what had no time left then is not it
-    this.mass = left.mass.map((m, i) => (left.from + i * left.step > reached ? m * weight : 0));
+    // it ran at the start: what even the mildest hour would have stopped by then is not it
+    const least = reached + Math.min(...frosts.lost.flat());
+    this.mass = left.mass.map((m, i) => (left.from + i * left.step > least ? m * weight : 0));
     this.sums = new Float64Array(this.mass.length);
     this.addUp();
   }
@@ -127,23 +132,26 @@ class Alive {
       stopped[s - 1]! += (atStart * part * s) / steps + by(reached[s]!) - atStart;
     }
     this.leave(lost, reached[0]!, reached[steps]!, part);
-    this.addUp();
   }
 
+  /** Takes out what has stopped: only what the coldest hour could reach is looked at. */
   private leave(lost: readonly number[], start: number, end: number, part: number): void {
     const { left, mass } = this;
     const { severities } = this.frosts;
-    for (let i = 0; i < mass.length; i++) {
-      if (mass[i] === 0) continue;
-      const days = left.from + i * left.step;
+    const farthest = (end + Math.max(...lost) - left.from) / left.step + 0.5;
+    const last = Math.min(mass.length - 1, Math.floor(farthest));
+    for (let i = this.first; i <= last; i++) {
+      const place = i - 0.5 + left.from / left.step;
       let gone = 0;
       for (let k = 0; k < lost.length; k++) {
-        const before = within((start + lost[k]! - days) / left.step + 0.5);
-        const after = within((end + lost[k]! - days) / left.step + 0.5);
+        const before = within((start + lost[k]!) / left.step - place);
+        const after = within((end + lost[k]!) / left.step - place);
         gone += severities[k]! * (before * part + after - before);
       }
       mass[i]! *= Math.max(0, 1 - gone);
+      if (mass[i] === 0 && i === this.first) this.first++;
     }
+    if (last >= this.first) this.addUp();
   }
 }
 

@@ -16,7 +16,7 @@ import { CURVES } from "./curve-tables";
 import { atDepth } from "./curves";
 import { freshDropMv } from "./cutoff";
 import { DAYS_PER_YEAR } from "./climate";
-import { type Spent, depthAfter, endUnder, paceTo } from "./end-lesson";
+import { type Spent, depthAfter, paceTold } from "./end-lesson";
 import type { CurveLesson, PackReading } from "./pack";
 import { type PackModel, resistanceAge } from "./pack-model";
 
@@ -67,6 +67,8 @@ interface Placed {
   readonly index: number;
   readonly stoppedAt: EpochDays;
   readonly model: PackModel;
+  /** How surely its pace is known, one standard deviation of ln(pace). */
+  readonly paceSd: number;
   depthAt(at: EpochDays): number;
 }
 
@@ -106,13 +108,15 @@ export function learnCurves(
 /** Depth runs at one pace from the start to where such packs stop. */
 function place({ history, spent }: TaughtBy, index: number, endFactor: number): Placed {
   const { model, outAt } = spent;
-  const pace = paceTo(spent, endUnder(spent, endFactor), outAt);
+  const told = paceTold(spent, endFactor);
+  const pace = Math.exp(told.lnPace);
   return {
     cohort: history.cohort,
     readings: history.readings,
     index,
     stoppedAt: outAt,
     model,
+    paceSd: told.sd,
     depthAt: (at) => depthAfter(spent, pace, at),
   };
 }
@@ -127,13 +131,17 @@ const counts = (placed: Placed, kind: PackReading["kind"]): PackReading[] =>
   );
 
 /** Variance of a resting voltage of one element at a depth, apart from the curve's own error. */
-function restVariance({ stoppedAt, model }: Placed, reading: PackReading, depth: number): number {
+function restVariance(
+  { stoppedAt, model, paceSd }: Placed,
+  reading: PackReading,
+  depth: number,
+): number {
   const { curve, pack } = model;
   const life = (reading.at - pack.installedAt) / (stoppedAt - pack.installedAt);
   const course = 2 * COURSE_SD * Math.sqrt(Math.max(0, life * (1 - life)));
   const reach = 0.02;
   const fall = atDepth(curve.restMv, depth - reach) - atDepth(curve.restMv, depth + reach);
-  const bent = (fall / (2 * reach)) * Math.hypot(course, ASSUMED.curveDepthSd);
+  const bent = (fall / (2 * reach)) * Math.hypot(course, paceSd * depth, ASSUMED.curveDepthSd);
   const warmth = reading.temperatureDc === null ? ASSUMED.temperatureSdK : 1;
   const accuracy = (reading.accuracyMv ?? ASSUMED.accuracyMv) / curve.restScale;
   const drift = (curve.driftMvPerKelvin / curve.restScale) * warmth;

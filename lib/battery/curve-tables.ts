@@ -63,7 +63,7 @@ export const CURVES: Readonly<Record<Chemistry, ChemistryCurves>> = {
     endDepthSd: 0.04,
     resistanceGrowthPerYear: 0.1,
     spreadMv: 40,
-    ownSpreadMv: 32,
+    ownSpreadMv: 22,
   },
   // Rest: 15 ohm log of an FR6 plus current times (V15 - V3)/(I3 - I15), Newton1026/
   // BatteryProject, on 3050 mAh. A hardly used cell rests near 1.75 V (Linden 4e p. 14.76).
@@ -80,7 +80,7 @@ export const CURVES: Readonly<Record<Chemistry, ChemistryCurves>> = {
     endDepthSd: 0.012,
     resistanceGrowthPerYear: 0.03,
     spreadMv: 17,
-    ownSpreadMv: 17,
+    ownSpreadMv: 15,
   },
   // From memory (plateau 3.6 V to about 95 %, fresh 3.67 V); plateau against temperature from
   // the span of Linden 4e Fig. 14.17b.

@@ -16,8 +16,8 @@ const TINY = 1e-9;
 const RESISTANCE_Z = [-Math.sqrt(3), 0, Math.sqrt(3)] as const;
 const RESISTANCE_W = [1 / 6, 2 / 3, 1 / 6] as const;
 /** Seven severities of a month's coldest hour, mild to cold. */
-const SPREAD_Z = [-2.4, -1.6, -0.8, 0, 0.8, 1.6, 2.4] as const;
-const SPREAD_W = [0.018, 0.0892, 0.2328, 0.32, 0.2328, 0.0892, 0.018] as const;
+const SEVERITY_Z = [-2.4, -1.6, -0.8, 0, 0.8, 1.6, 2.4] as const;
+export const SEVERITY_W = [0.018, 0.0892, 0.2328, 0.32, 0.2328, 0.0892, 0.018] as const;
 
 /** Resistance of this pack relative to its sheet: mean and one standard deviation. */
 export interface ResistanceBelief {
@@ -83,16 +83,21 @@ function endAt(terms: EndTerms, dc: Decicelsius, resistance: number): number {
 }
 
 function endNodes(terms: EndTerms, { mean, sd }: ResistanceBelief): EndNodes {
-  const { pack } = terms;
-  const below = coldHourDc(pack);
-  const swing = 10 * ASSUMED.coldHourSdK * (below / (10 * ASSUMED.coldHourK));
   const resistances = RESISTANCE_Z.map((z, k) => ({
     weight: RESISTANCE_W[k]!,
-    months: pack.monthlyMeanDc.map((dc) =>
-      SPREAD_Z.map((cold) => endAt(terms, dc - below - cold * swing, Math.max(0, mean + z * sd))),
-    ),
+    months: endsBySeverity(terms, Math.max(0, mean + z * sd)),
   }));
-  return { severities: SPREAD_W, resistances };
+  return { severities: SEVERITY_W, resistances };
+}
+
+/** End depth at a resistance by month (January first) and severity of its coldest hour. */
+export function endsBySeverity(terms: EndTerms, resistance: number): number[][] {
+  const { pack } = terms;
+  const below = coldHourDc(pack);
+  const swing = below * (ASSUMED.coldHourSdK / ASSUMED.coldHourK);
+  return pack.monthlyMeanDc.map((dc) =>
+    SEVERITY_Z.map((cold) => endAt(terms, dc - below - cold * swing, resistance)),
+  );
 }
 
 /**

@@ -9,7 +9,7 @@ import { ASSUMED } from "./assumptions";
 import { DAYS_PER_YEAR } from "./climate";
 import { calibrate, endScores } from "./calibration";
 import { learnCurves } from "./curve-lesson";
-import { endSdAt, endUnder, learnEnds, paceTo, type Spent, spent } from "./end-lesson";
+import { endUnder, learnEnds, paceTo, paceTold, type Spent, spent } from "./end-lesson";
 import { expectedLife } from "./expected-life";
 import {
   type CohortLife,
@@ -30,7 +30,6 @@ import type {
 
 /** Forecasts of this many packs are judged: enough to know a spread to a few percent. */
 const MOST_JUDGED = 200;
-const MOST_END_SD = 0.4;
 
 export interface FinishedHistory {
   readonly packKey: string;
@@ -213,12 +212,23 @@ function judge({ told, lifeOf, endOf, withLesson }: Raw): Calibration | null {
   return scores.length > 0 ? calibrate(scores, days / told.length / DAYS_PER_YEAR) : null;
 }
 
-/** Its life beside the sheet's, at the depth where such a pack stops in that month. */
+/** Its life beside the sheet's; of one swapped early at least what it had lived. */
 function finishedPack({ history, spent: one }: Told, endFactor: number): FinishedPack {
   const { packKey, deviceKey, cohort, lot, ranOut } = history;
-  const pace = paceTo(one, endUnder(one, endFactor), history.outAt);
-  const endSd = Math.min(MOST_END_SD, endSdAt(one, endFactor));
-  return { packKey, deviceKey, cohort, lot, lifeRatio: lifeRatio(pace), ranOut, endSd };
+  if (!ranOut) {
+    const pace = paceTo(one, endUnder(one, endFactor), history.outAt);
+    return { packKey, deviceKey, cohort, lot, lifeRatio: lifeRatio(pace), ranOut };
+  }
+  const { lnPace, sd } = paceTold(one, endFactor);
+  return {
+    packKey,
+    deviceKey,
+    cohort,
+    lot,
+    lifeRatio: lifeRatio(Math.exp(lnPace)),
+    ranOut,
+    endSd: sd,
+  };
 }
 
 /** Life relative to a pack of the assumed capacity and the sheet's draw. */

@@ -7,7 +7,7 @@ import { gridQuantile } from "../stats/grid-quantile";
 import type { EpochDays } from "../units";
 import { type Filtered, filterPack } from "./filter";
 import { depthMarginal, rateMarginal } from "./grid";
-import { outDates } from "./out-dates";
+import { type OutDates, outDates } from "./out-dates";
 import type { Forecast, ForecastInput } from "./pack";
 import { assertForecastable } from "./validate";
 
@@ -41,7 +41,7 @@ function summarise(input: ForecastInput, filtered: Filtered): Forecast {
       p95: dates.quantile(0.95),
     },
     cdfDays: CDF_PROBABILITIES.map((p) => dates.quantile(p)),
-    shareLeft: shareLeft(filtered),
+    shareLeft: shareLeft(filtered, dates),
     drawUa: drawNow(filtered),
     outNow: dates.outNow,
     weights: filtered.weights,
@@ -55,12 +55,12 @@ function summarise(input: ForecastInput, filtered: Filtered): Forecast {
   };
 }
 
-function shareLeft({ end, grid }: Filtered): Forecast["shareLeft"] {
+function shareLeft({ grid }: Filtered, dates: OutDates): Forecast["shareLeft"] {
   const marginal = depthMarginal(grid);
-  const at = (probability: number): number => {
-    const depth = gridQuantile(marginal, grid.depthFrom, grid.depthStep, 1 - probability);
-    return Math.min(1, Math.max(0, 1 - depth / end.warm));
-  };
+  const depthAt = (p: number): number => gridQuantile(marginal, grid.depthFrom, grid.depthStep, p);
+  const end = dates.endDepth(depthAt(0.5));
+  const at = (probability: number): number =>
+    Math.min(1, Math.max(0, 1 - depthAt(1 - probability) / end));
   return { p05: at(0.05), p50: at(0.5), p95: at(0.95) };
 }
 

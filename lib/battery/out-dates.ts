@@ -16,6 +16,7 @@ import { type TimeLeft, cumulative, daysAt, massBelow, timeLeftOf } from "./time
 
 /** When the evidence leaves no mass at all, the stop is put into this many days. */
 const FALLBACK_DAYS = 30;
+const SHALLOWEST = 1e-3;
 /** A colder or a milder night that moves the end by less than this share is not followed. */
 const WORTH_WEATHER = 0.01;
 
@@ -27,6 +28,8 @@ export interface OutDates {
   readonly clock: SeasonalClock;
   /** Probability of having stopped by `now`. */
   readonly outNow: number;
+  /** Depth at which it will likely stop: the warmest end, or what a frost leaves of it. */
+  endDepth(depthNow: number): number;
 }
 
 /** Distribution of the day the device stops. */
@@ -53,7 +56,12 @@ export function outDates(filtered: Filtered, now: EpochDays): OutDates {
   };
   const share = found.known ? found.chanceBy(now) : 0;
   const outNow = stoppedAt === null ? held(share, model.calibration) : 1;
-  return { quantile, daysLeft, clock, outNow };
+  const endDepth = (depthNow: number): number => {
+    if (!(end.weather > WORTH_WEATHER) || !found.known) return end.warm;
+    const likely = depthNow + left.ratePerDay * clock.progress(found.dateOf(0.5));
+    return Math.min(end.warm, Math.max(SHALLOWEST, likely));
+  };
+  return { quantile, daysLeft, clock, outNow, endDepth };
 }
 
 interface Range {
@@ -99,7 +107,7 @@ function byWeather(filtered: Filtered, clock: SeasonalClock, now: EpochDays): Fo
   });
   const all = stoppedAt === null ? 1 : chances.at(-1)!;
   return {
-    known: all > 1e-9,
+    known: chances.at(-1)! > 1e-9,
     dateOf: (probability) => interpolate(chances, days, probability * all),
     chanceBy: (date) => Math.min(1, interpolate(days, chances, date) / all),
   };

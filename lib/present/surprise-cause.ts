@@ -3,7 +3,7 @@ import { dayNumber } from "./calendar-days";
 import { formatDay } from "./format-day";
 
 export interface SurpriseInput {
-  /** It had stopped; else it outlived the window. */
+  /** It stopped before its window; else it outlived the window. */
   readonly stopped: boolean;
   readonly endedOn: IsoDay;
   readonly reasonOut: string | null;

@@ -224,7 +224,7 @@ describe("what a key may read", () => {
 
 const LISTS = [
   ...["assets", "sites", "installs", "readings", "cell-types", "device-models", "lots", "moves"],
-  ...["horizon", "removals", "costs"],
+  ...["horizon", "claims", "costs"],
 ];
 const FOR_ADMINISTRATORS = ["people", "mails", "audit"];
 const ALLOWED: readonly [role: DemoRole, yes: readonly string[], no: readonly string[]][] = [

@@ -95,8 +95,7 @@ function causeOf(row: Surprise, { organisation, today }: TrustView): string {
     drawFactor: facts?.drawFactor ?? null,
   };
   const endedOn = row.endedAt ? dayOfInstant(row.endedAt, timeZone) : today;
-  return surpriseCause(
-    { ...told, endedOn, stopped: row.life.ended, reasonOut: row.reasonOut },
-    locale,
-  );
+  // one that stopped after its window outlived it as well
+  const stopped = row.life.ended && row.life.chance < 0.5;
+  return surpriseCause({ ...told, endedOn, stopped, reasonOut: row.reasonOut }, locale);
 }

@@ -15,7 +15,7 @@ export function discMarkup(model: WaneDiscModel, size: number): string {
 export function stopMarkup(number: number, chosen: boolean): string {
   const look = chosen
     ? "size-7.5 border-3 border-dusk bg-sheet text-sm text-dusk-ink"
-    : "size-5.5 border-2 border-sheet bg-dusk text-xs text-on-dusk";
+    : "size-6 border-2 border-sheet bg-dusk text-xs text-on-dusk";
   return `<span class="flex items-center justify-center rounded-full font-cond font-semibold ${look}">${number}</span>`;
 }
 

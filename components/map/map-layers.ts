@@ -118,7 +118,7 @@ export function stopMarks(
   return round.stops.map((stop, i) => {
     const name = numbered ? `${i + 1}. ${stop.label}` : `${stop.label}, ${round.label}`;
     const look = (chosen: boolean) =>
-      numbered ? icon(stopMarkup(i + 1, chosen), chosen ? 30 : 22) : icon(dotMarkup, 12);
+      numbered ? icon(stopMarkup(i + 1, chosen), chosen ? 30 : 24) : icon(dotMarkup, 12);
     const marker = L.marker([stop.latitude, stop.longitude], {
       icon: look(false),
       title: name,

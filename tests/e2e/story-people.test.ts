@@ -65,7 +65,7 @@ describe.each(SIZES)("a supervisor at %s size", (size) => {
   it("reads in the Record whether dates can be trusted and what swapping cost", async () => {
     await page.goto(productUrl("/record"));
     await page.getByRole("heading", { name: "Can the dates be trusted?" }).waitFor();
-    await page.getByText("Likely date was off by").waitFor();
+    await page.getByText("Days found over days said").first().waitFor();
     await expectNoSidewaysScroll(page);
     await page.goto(productUrl("/record/costs"));
     expect(await page.getByRole("table").first().getByRole("row").count()).toBeGreaterThan(12);

@@ -33,6 +33,10 @@ beforeAll(async () => {
     .where("cellType.designation", "=", "LR6")
     .where("pack.removedAt", "is", null)
     .where("forecast.outNowPermille", "<", 10)
+    // Something was logged since it went in.
+    .where(({ exists, selectFrom }) =>
+      exists(selectFrom("reading").select("reading.id").whereRef("reading.packId", "=", "pack.id")),
+    )
     .orderBy("forecast.shareLeftPermille", "desc")
     .executeTakeFirstOrThrow();
   tag = row.tag;

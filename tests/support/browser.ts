@@ -87,18 +87,23 @@ export async function signIn(page: Page, role: DemoRole): Promise<void> {
   await page.waitForURL((url) => !url.pathname.startsWith("/sign-in"));
 }
 
+/**
+ * Marks on a map stand where the places are, also close together. Criterion 2.5.8 lets a target be
+ * small where the same can be done by another one on the page: the list beside the map does it.
+ */
+const isOnMap = (node: { html: string } | undefined) =>
+  /class="[^"]*leaflet-marker/.test(node?.html ?? "");
+
 /** WCAG 2.2 AA by axe; the rules' sources are the W3C's success criteria. */
 export async function expectAccessible(page: Page): Promise<void> {
   const { violations } = await new AxeBuilder({ page })
     .withTags(["wcag2a", "wcag2aa", "wcag21a", "wcag21aa", "wcag22aa"])
     .analyze();
-  const told = violations.map(
-    (v) =>
-      `${v.id}: ${v.help} (${v.nodes
-        .map((n) => n.target.join(" "))
-        .slice(0, 3)
-        .join("; ")})`,
-  );
+  const told = violations.flatMap(({ id, help, nodes }) => {
+    const places = nodes.map((node) => node.target.join(" "));
+    const held = id === "target-size" ? places.filter((_, n) => !isOnMap(nodes[n])) : places;
+    return held.length > 0 ? [`${id}: ${help} (${held.slice(0, 3).join("; ")})`] : [];
+  });
   expect(told, `accessibility of ${page.url()}`).toEqual([]);
 }
 

@@ -1,6 +1,5 @@
 import { Figure, FigureRow } from "@/components/ui/figure";
 import { formatNumber, NBSP } from "@/lib/present/locale";
-import { formatPercent } from "@/lib/present/format-share";
 import { POLICY_WORDS, pounds } from "@/lib/present/policy-comparison";
 import type { PoliciesView } from "@/lib/usecases/read-policies";
 
@@ -19,7 +18,7 @@ export function PolicyFigures({ view }: { view: PoliciesView }) {
       />
       <Figure
         label={saving >= 0 ? "Cheaper than the best other" : "Dearer than the best other"}
-        value={formatPercent(Math.min(1, Math.abs(saving)), locale)}
+        value={`${formatNumber(100 * Math.abs(saving), locale, 1)}${NBSP}%`}
         range={other}
         tone={saving >= 0 ? "order" : "out"}
       />
